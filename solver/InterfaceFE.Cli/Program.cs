@@ -1,0 +1,2 @@
+Console.Error.WriteLine("interfacefe");
+return 1;

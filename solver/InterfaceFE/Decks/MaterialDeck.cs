@@ -1,0 +1,65 @@
+using InterfaceFE.Units;
+
+namespace InterfaceFE.Decks;
+
+/// <summary>
+/// Elastic material. Isotropic when <see cref="Young"/> and <see cref="Poisson"/> hold one number, else orthotropic with axes x (along), y (through the thickness), z (out of plane).
+/// </summary>
+[Block("An elastic material. One number each makes it isotropic; values by direction make it orthotropic: x along, y through the thickness, z out of plane.")]
+[NotBuiltYet("yield curve")]
+[NotBuiltYet("plies")]
+public sealed record MaterialDeck
+{
+    /// <summary>Young's modulus or moduli [MPa].</summary>
+    [Key("young", "Young's modulus, one number or by direction {x, y, z}.", Dimension = Dimension.Stress, Example = "70 GPa", Above = 0)]
+    public required Directional Young { get; init; }
+
+    /// <summary>Poisson's ratio, or ratios ij: stress along i, contraction along j.</summary>
+    [Key("poisson", "Poisson's ratio, one number or {xy, xz, zy}; ij is stress along i, contraction along j.", Example = "0.33", Above = -1, Below = 10)]
+    public required PoissonRatios Poisson { get; init; }
+
+    /// <summary>In-plane shear modulus xy [MPa]; orthotropic only.</summary>
+    [Key("shear modulus", "Shear modulus {xy}; needed when young is given by direction, derived otherwise.")]
+    public ShearModuli? ShearModulus { get; init; }
+
+    /// <summary>Thermal expansion [1/K].</summary>
+    [Key("expansion", "Thermal expansion, one number or by direction {x, y, z}.", Dimension = Dimension.Expansion, Example = "23e-6 1/K", Default = "0 1/K", Above = -1e-3, Below = 1e-3)]
+    public Directional Expansion { get; init; } = new(0);
+
+    /// <summary>Note on the origin of the data.</summary>
+    [Key("source", "Where the data come from, free text.", Example = "invented for the demo")]
+    public string? Source { get; init; }
+}
+
+/// <summary>A value by direction; a single number stands for all three. Written as a number or as a map {x, y, z}.</summary>
+/// <param name="X">Along.</param>
+/// <param name="Y">Through the thickness.</param>
+/// <param name="Z">Out of plane.</param>
+public readonly record struct Directional(double X, double Y, double Z)
+{
+    /// <summary>The same value in all directions.</summary>
+    public Directional(double all) : this(all, all, all)
+    {
+    }
+}
+
+/// <summary>Poisson's ratios ij (stress along i, contraction along j). Written as a number or as a map {xy, xz, zy}.</summary>
+/// <param name="Xy">Stress along x, contraction along y.</param>
+/// <param name="Xz">Stress along x, contraction along z.</param>
+/// <param name="Zy">Stress along z, contraction along y.</param>
+public readonly record struct PoissonRatios(double Xy, double Xz, double Zy)
+{
+    /// <summary>The same ratio for all pairs.</summary>
+    public PoissonRatios(double all) : this(all, all, all)
+    {
+    }
+}
+
+/// <summary>Shear moduli of an orthotropic material.</summary>
+[Block("Shear moduli of an orthotropic material.")]
+public sealed record ShearModuli
+{
+    /// <summary>Shear modulus in the plane of the model [MPa].</summary>
+    [Key("xy", "Shear modulus in the plane of the model.", Dimension = Dimension.Stress, Example = "3.6 GPa", Above = 0)]
+    public required double Xy { get; init; }
+}
