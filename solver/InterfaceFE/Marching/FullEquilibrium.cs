@@ -1,0 +1,496 @@
+using InterfaceFE.Model;
+using InterfaceFE.Sparse;
+
+namespace InterfaceFE.Marching;
+
+/// <summary>
+/// The plain form of equilibrium: every element is evaluated at every evaluation, in slot order. It is the measure for faster forms.
+/// Tangents go to a symmetric factor; once a slot's tangent is skew, solves use a general factor and the symmetric one keeps the symmetric parts for stability counts.
+/// </summary>
+public sealed class FullEquilibrium : IEquilibrium
+{
+    private const double SkewTolerance = 1e-12;
+
+    private readonly SpecimenModel _model;
+    private readonly ElementTable _table;
+    private readonly SparsePlan _plan;
+    private readonly WorkingFactor _symmetric;
+    private GeneralFactor? _general;
+    private readonly StateStore _state;
+    private readonly double[] _u, _accepted, _internal, _layerForce, _magnitudes, _temperatureRate, _external, _externalRate, _held, _heldRate;
+    private readonly double[] _rightSide, _solution, _tangentSolution, _gradient, _base, _noMagnitudes = [];
+    private readonly double[] _largestDamage, _leastDamage;
+    private readonly double[][] _slotTangents;
+    private readonly bool[] _skew;
+    private readonly bool[] _isHeld;
+    private readonly double[] _native, _force, _rate, _tangent, _work, _transformed;
+    private int[] _heldUnknowns = [];
+    private double[] _heldStart = [], _heldEnd = [];
+    private readonly double[] _externalStart, _externalEnd;
+    private double _temperatureStart, _temperatureEnd, _baseProgress, _correctionProgress;
+    private int _skewCount;
+    private bool _factored, _generalFactored;
+    private FactorOutcome _outcome;
+    private LoadStage? _stage;
+
+    /// <summary>Makes the equilibrium of a model at its stress-free state, with the constant tangents in place.</summary>
+    public FullEquilibrium(SpecimenModel model)
+    {
+        _model = model;
+        _table = new ElementTable(model);
+        _plan = SparsePlan.Analyze(_table.Pattern);
+        _symmetric = new WorkingFactor(_plan);
+        _state = new StateStore(_table.Blocks);
+        int n = model.Unknowns.Count;
+        _u = new double[n];
+        _accepted = new double[n];
+        _internal = new double[n];
+        _layerForce = new double[n];
+        _magnitudes = new double[n];
+        _temperatureRate = new double[n];
+        _external = new double[n];
+        _externalRate = new double[n];
+        _externalStart = new double[n];
+        _externalEnd = new double[n];
+        _held = new double[n];
+        _heldRate = new double[n];
+        _rightSide = new double[n];
+        _solution = new double[n];
+        _tangentSolution = new double[n];
+        _gradient = new double[n];
+        _base = new double[n];
+        _isHeld = new bool[n];
+        int layerElements = model.Layers.Sum(l => l.Count);
+        _largestDamage = new double[layerElements];
+        _leastDamage = new double[layerElements];
+        _slotTangents = new double[_table.SlotCount][];
+        _skew = new bool[_table.SlotCount];
+        int native = _table.LargestNative, slot = _table.LargestSlot;
+        _native = new double[native];
+        _force = new double[native];
+        _rate = new double[native];
+        _tangent = new double[native * native];
+        _work = new double[native * slot];
+        _transformed = new double[slot * slot];
+        Temperature = AcceptedTemperature = _temperatureStart = _temperatureEnd = model.StressFreeTemperature;
+    }
+
+    /// <summary>The model.</summary>
+    public SpecimenModel Model => _model;
+
+    /// <summary>The plan of the factorisation, for its counts.</summary>
+    public SparsePlan Plan => _plan;
+
+    /// <inheritdoc/>
+    public double Progress { get; set; }
+
+    /// <inheritdoc/>
+    public double AcceptedProgress { get; private set; }
+
+    /// <summary>Temperature at the tentative progress [K].</summary>
+    public double Temperature { get; private set; }
+
+    /// <summary>Temperature of the accepted point [K].</summary>
+    public double AcceptedTemperature { get; private set; }
+
+    /// <inheritdoc/>
+    public ReadOnlySpan<double> Displacement => _u;
+
+    /// <inheritdoc/>
+    public ReadOnlySpan<double> AcceptedDisplacement => _accepted;
+
+    /// <inheritdoc/>
+    public ReadOnlySpan<double> InternalForce => _internal;
+
+    /// <inheritdoc/>
+    public ReadOnlySpan<double> LayerForce => _layerForce;
+
+    /// <inheritdoc/>
+    public EnergyState Energy { get; private set; }
+
+    /// <inheritdoc/>
+    public double LayerWorkByProgress { get; private set; }
+
+    /// <summary>Number of layer elements in which damage grew in the latest evaluation.</summary>
+    public int GrowingElements { get; private set; }
+
+    /// <summary>Number of factorisations so far.</summary>
+    public long Factorisations { get; private set; }
+
+    /// <summary>Unknowns held in the current stage.</summary>
+    public ReadOnlySpan<int> HeldUnknowns => _heldUnknowns;
+
+    /// <summary>External force on an unknown at the tentative progress: the reaction where it is held, else the applied force [N or N·mm].</summary>
+    public double ExternalForce(int unknown) => _isHeld[unknown] ? _internal[unknown] : _external[unknown];
+
+    /// <summary>Begins a stage from the accepted point: values held, forces from where they are, temperature.</summary>
+    public void StartStage(LoadStage stage)
+    {
+        _stage = stage;
+        Array.Copy(_accepted, _u, _u.Length);
+        for (int i = 0; i < _externalStart.Length; i++)
+        {
+            _externalStart[i] = _isHeld[i] ? _internal[i] : _external[i];
+            _externalEnd[i] = _isHeld[i] ? 0 : _external[i];
+        }
+        Array.Clear(_isHeld);
+        _heldUnknowns = [.. stage.Held.Select(h => h.Unknown)];
+        _heldStart = new double[_heldUnknowns.Length];
+        _heldEnd = new double[_heldUnknowns.Length];
+        for (int i = 0; i < _heldUnknowns.Length; i++)
+        {
+            HeldTarget target = stage.Held[i];
+            _isHeld[target.Unknown] = true;
+            _heldStart[i] = _accepted[target.Unknown];
+            _heldEnd[i] = target.Kind switch
+            {
+                TargetKind.MoveTo => target.Value,
+                TargetKind.MoveBy => _heldStart[i] + target.Value,
+                _ => _heldStart[i],
+            };
+        }
+        foreach (ForceTarget force in stage.Forces)
+            _externalEnd[force.Unknown] = force.Value;
+        for (int i = 0; i < _externalRate.Length; i++)
+        {
+            if (_isHeld[i])
+                _externalStart[i] = _externalEnd[i] = 0;
+            _externalRate[i] = _externalEnd[i] - _externalStart[i];
+        }
+        Array.Clear(_heldRate);
+        for (int i = 0; i < _heldUnknowns.Length; i++)
+            _heldRate[_heldUnknowns[i]] = _heldEnd[i] - _heldStart[i];
+        _temperatureStart = AcceptedTemperature;
+        _temperatureEnd = stage.Temperature ?? AcceptedTemperature;
+        Progress = AcceptedProgress = 0;
+    }
+
+    /// <inheritdoc/>
+    public ResidualReport Evaluate(Wanted wanted)
+    {
+        LoadStage stage = _stage ?? throw new InvalidOperationException("no stage has been started");
+        Temperature = _temperatureStart + Progress * (_temperatureEnd - _temperatureStart);
+        for (int i = 0; i < _external.Length; i++)
+            _external[i] = _externalStart[i] + Progress * _externalRate[i];
+        for (int i = 0; i < _heldUnknowns.Length; i++)
+            _held[_heldUnknowns[i]] = _heldStart[i] + Progress * (_heldEnd[i] - _heldStart[i]);
+
+        var at = new PathPoint(Progress, Temperature, stage.Duration * Math.Max(Progress - AcceptedProgress, 0), stage.Number);
+        Array.Clear(_internal);
+        Array.Clear(_layerForce);
+        Array.Clear(_magnitudes);
+        Array.Clear(_temperatureRate);
+        wanted |= Wanted.Force | Wanted.Energy;
+        int changed = 0;
+        GrowingElements = 0;
+        double storedSolids = 0, storedLayers = 0, spent = 0, byTemperature = 0, layersByTemperature = 0;
+        for (int block = 0; block < _table.Blocks.Count; block++)
+        {
+            IElementBlock elements = _table.Blocks[block];
+            bool layer = block >= _table.FirstLayerBlock;
+            int n = 2 * elements.NodesPerElement;
+            var buffers = new ElementBuffers { Force = _force.AsSpan(0, n), Tangent = _tangent.AsSpan(0, n * n), LoadRate = _rate.AsSpan(0, n) };
+            Span<double> native = _native.AsSpan(0, n);
+            for (int e = 0; e < elements.Count; e++)
+            {
+                int slot = _table.Slot(block, e);
+                Wanted own = wanted;
+                if (elements.Kind == TangentKind.Constant && _slotTangents[slot] is not null)
+                    own &= ~Wanted.Tangent;
+                _table.Gather(slot, _u, native);
+                ElementAnswer answer = elements.Evaluate(e, at, native, _state.Accepted(block, e), _state.Tentative(block, e), own, buffers);
+                _table.Scatter(slot, buffers.Force, _internal, _magnitudes);
+                if (layer)
+                    _table.Scatter(slot, buffers.Force, _layerForce, _noMagnitudes);
+                if ((own & Wanted.LoadRate) != 0)
+                    _table.Scatter(slot, buffers.LoadRate, _temperatureRate, _noMagnitudes);
+                if ((own & Wanted.Tangent) != 0 && Store(slot, _table.TransformTangent(slot, buffers.Tangent, _work, _transformed)))
+                    changed++;
+                byTemperature += answer.StoredByTemperature;
+                if (layer)
+                {
+                    storedLayers += answer.Stored;
+                    spent += answer.Dissipated;
+                    layersByTemperature += answer.StoredByTemperature;
+                    if (answer.Growing)
+                        GrowingElements++;
+                    int layerElement = slot - _table.Slot(_table.FirstLayerBlock, 0);
+                    _largestDamage[layerElement] = answer.LargestDamage;
+                    _leastDamage[layerElement] = answer.LeastDamage;
+                }
+                else
+                    storedSolids += answer.Stored;
+            }
+        }
+        Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature);
+        LayerWorkByProgress = layersByTemperature * (_temperatureEnd - _temperatureStart);
+
+        double worst = 0, reference = 0;
+        bool finite = true;
+        for (int i = 0; i < _internal.Length; i++)
+        {
+            double difference = _isHeld[i] ? 0 : Math.Abs(_external[i] - _internal[i]);
+            finite &= double.IsFinite(_internal[i]);
+            worst = Math.Max(worst, difference);
+            reference = Math.Max(reference, Math.Max(_magnitudes[i], Math.Abs(_external[i])));
+        }
+        for (int i = 0; i < _heldUnknowns.Length; i++)
+        {
+            int h = _heldUnknowns[i];
+            if (Math.Abs(_held[h] - _u[h]) > 1e-14 * Math.Max(Math.Abs(_held[h]), Math.Abs(_heldEnd[i] - _heldStart[i])))
+                worst = Math.Max(worst, reference);
+        }
+        return new ResidualReport(worst, reference, finite, changed);
+    }
+
+    /// <inheritdoc/>
+    public double ResidualFloor()
+    {
+        Array.Clear(_rightSide);
+        for (int slot = 0; slot < _table.SlotCount; slot++)
+        {
+            ReadOnlySpan<int> ids = _table.Pattern.Unknowns(slot);
+            double[] k = _slotTangents[slot];
+            for (int i = 0; i < ids.Length; i++)
+            {
+                double sum = 0;
+                for (int j = 0; j < ids.Length; j++)
+                    sum += Math.Abs(k[i * ids.Length + j] * _u[ids[j]]);
+                _rightSide[ids[i]] += sum;
+            }
+        }
+        double largest = 0;
+        foreach (double value in _rightSide)
+            largest = Math.Max(largest, value);
+        return 50 * Math.ScaleB(1, -52) * largest;
+    }
+
+    /// <inheritdoc/>
+    public Correction Solve(IControl control)
+    {
+        FactorIfNeeded();
+        for (int i = 0; i < _rightSide.Length; i++)
+        {
+            _rightSide[i] = _external[i] - _internal[i];
+            _solution[i] = _isHeld[i] ? _held[i] - _u[i] : 0;
+        }
+        SolveWith(_rightSide, _solution);
+        double equation = control.Equation(this, _gradient, out double byProgress);
+        _correctionProgress = 0;
+        if (!control.FixesProgress)
+        {
+            double temperatureRate = _temperatureEnd - _temperatureStart;
+            for (int i = 0; i < _rightSide.Length; i++)
+            {
+                _rightSide[i] = _externalRate[i] - _temperatureRate[i] * temperatureRate;
+                _tangentSolution[i] = _isHeld[i] ? _heldRate[i] : 0;
+            }
+            SolveWith(_rightSide, _tangentSolution);
+            double along = byProgress, rest = equation;
+            for (int i = 0; i < _gradient.Length; i++)
+            {
+                along += _gradient[i] * _tangentSolution[i];
+                rest += _gradient[i] * _solution[i];
+            }
+            _correctionProgress = -rest / along;
+            for (int i = 0; i < _solution.Length; i++)
+                _solution[i] += _correctionProgress * _tangentSolution[i];
+        }
+        double largest = 0;
+        bool finite = double.IsFinite(_correctionProgress);
+        foreach (double value in _solution)
+        {
+            largest = Math.Max(largest, Math.Abs(value));
+            finite &= double.IsFinite(value);
+        }
+        Array.Copy(_u, _base, _u.Length);
+        _baseProgress = Progress;
+        int singular = _outcome.Status == FactorStatus.Done ? -1 : _outcome.Unknown;
+        return new Correction(largest, _correctionProgress, Math.Abs(equation) / control.Stride, singular, finite);
+    }
+
+    /// <inheritdoc/>
+    public void Move(double share)
+    {
+        for (int i = 0; i < _u.Length; i++)
+            _u[i] = _base[i] + share * _solution[i];
+        Progress = _baseProgress + share * _correctionProgress;
+    }
+
+    /// <inheritdoc/>
+    public void Guess(ReadOnlySpan<double> way, double wayProgress, double share)
+    {
+        for (int i = 0; i < _u.Length; i++)
+            _u[i] = _accepted[i] + share * way[i];
+        Progress = AcceptedProgress + share * wayProgress;
+    }
+
+    /// <inheritdoc/>
+    public void RollBack()
+    {
+        Array.Copy(_accepted, _u, _u.Length);
+        Progress = AcceptedProgress;
+    }
+
+    /// <inheritdoc/>
+    public void Accept()
+    {
+        Array.Copy(_u, _accepted, _u.Length);
+        AcceptedProgress = Progress;
+        AcceptedTemperature = Temperature;
+        _state.Accept();
+    }
+
+    /// <summary>
+    /// Directions in which the equilibrium is unstable while the stage's held unknowns are held: negative eigenvalues of the tangent (of its symmetric part where it is skew)
+    /// by the latest evaluation with tangents. Second: the first unknown with a numerically zero pivot, or -1.
+    /// </summary>
+    public (int Negative, int Singular) Stability()
+    {
+        FactorSymmetric();
+        Inertia inertia = _symmetric.Inertia(_heldUnknowns);
+        return (inertia.Negative, _outcome.Status == FactorStatus.Done && inertia.Zero == 0 ? -1 : Math.Max(_outcome.Unknown, 0));
+    }
+
+    /// <summary>
+    /// Unknowns that arc length watches: the translations at the root and the unknowns of layer elements that are giving way, by the latest evaluation.
+    /// </summary>
+    public int[] WatchedUnknowns()
+    {
+        var watched = new SortedSet<int>();
+        foreach (int slotUnknown in Enumerable.Range(0, _u.Length))
+            if (_model.Unknowns.IsRoot[_model.Unknowns.VertexOfUnknown[slotUnknown]] && !_model.Unknowns.IsRotation(slotUnknown))
+                watched.Add(slotUnknown);
+        int first = _table.SlotCount - _largestDamage.Length;
+        for (int e = 0; e < _largestDamage.Length; e++)
+        {
+            if (_largestDamage[e] <= 0 || _leastDamage[e] >= 1)
+                continue;
+            foreach (int unknown in _table.Pattern.Unknowns(first + e))
+                if (!_model.Unknowns.IsRotation(unknown))
+                    watched.Add(unknown);
+        }
+        return [.. watched];
+    }
+
+    /// <summary>
+    /// Bodies of the specimen that hang together: adherends joined by at least one layer element that still carries, by the latest evaluation. Second: length of bond that still carries,
+    /// as a share of the bond at the start (1 when there is none).
+    /// </summary>
+    public (int Bodies, double CarryingShare) Connections()
+    {
+        int adherends = _model.Solids.Count, bodies = adherends, index = 0;
+        var parent = Enumerable.Range(0, adherends).ToArray();
+        double carrying = 0, all = 0;
+        foreach (LayerBlock layer in _model.Layers)
+        {
+            for (int e = 0; e < layer.Count; e++, index++)
+            {
+                all += layer.Length(e);
+                if (_leastDamage[index] >= 1)
+                    continue;
+                carrying += layer.Length(e);
+                int a = Root(parent, layer.LowerAdherend), b = Root(parent, layer.UpperAdherend);
+                if (a == b)
+                    continue;
+                parent[a] = b;
+                bodies--;
+            }
+        }
+        return (bodies, all > 0 ? carrying / all : 1);
+    }
+
+    /// <summary>State of a layer element at the accepted point.</summary>
+    public ReadOnlySpan<double> AcceptedLayerState(int joint, int element) => _state.Accepted(_table.FirstLayerBlock + joint, element);
+
+    private static int Root(int[] parent, int i)
+    {
+        while (parent[i] != i)
+            i = parent[i];
+        return i;
+    }
+
+    private bool Store(int slot, ReadOnlySpan<double> tangent)
+    {
+        double[]? stored = _slotTangents[slot];
+        if (stored is not null && tangent.SequenceEqual(stored))
+            return false;
+        stored ??= _slotTangents[slot] = new double[tangent.Length];
+        tangent.CopyTo(stored);
+        int n = _table.Pattern.Unknowns(slot).Length;
+        bool skew = IsSkew(stored, n);
+        if (skew != _skew[slot])
+        {
+            _skew[slot] = skew;
+            _skewCount += skew ? 1 : -1;
+        }
+        if (skew && _general is null)
+            StartGeneral();
+        _general?.Replace(slot, stored);
+        if (skew)
+        {
+            Span<double> symmetric = _transformed.AsSpan(0, n * n);
+            for (int i = 0; i < n; i++)
+                for (int j = 0; j < n; j++)
+                    symmetric[i * n + j] = 0.5 * (stored[i * n + j] + stored[j * n + i]);
+            _symmetric.Replace(slot, symmetric);
+        }
+        else
+            _symmetric.Replace(slot, stored);
+        _factored = _generalFactored = false;
+        return true;
+    }
+
+    private void StartGeneral()
+    {
+        _general = new GeneralFactor(_plan);
+        for (int slot = 0; slot < _slotTangents.Length; slot++)
+            if (_slotTangents[slot] is not null)
+                _general.Replace(slot, _slotTangents[slot]);
+    }
+
+    private static bool IsSkew(double[] tangent, int n)
+    {
+        double scale = 0, difference = 0;
+        for (int i = 0; i < n; i++)
+        {
+            for (int j = 0; j < i; j++)
+            {
+                scale = Math.Max(scale, Math.Abs(tangent[i * n + j]));
+                difference = Math.Max(difference, Math.Abs(tangent[i * n + j] - tangent[j * n + i]));
+            }
+        }
+        return difference > SkewTolerance * scale;
+    }
+
+    private void FactorIfNeeded()
+    {
+        if (_skewCount == 0)
+        {
+            FactorSymmetric();
+            return;
+        }
+        if (_generalFactored)
+            return;
+        _outcome = _general!.Factor();
+        _generalFactored = true;
+        Factorisations++;
+    }
+
+    private void FactorSymmetric()
+    {
+        if (_factored)
+            return;
+        _outcome = _symmetric.Factor();
+        _factored = true;
+        Factorisations++;
+    }
+
+    private void SolveWith(double[] rightSide, double[] solution)
+    {
+        if (_skewCount == 0)
+            _symmetric.Solve(rightSide, solution, _heldUnknowns);
+        else
+            _general!.Solve(rightSide, solution, _heldUnknowns);
+    }
+}

@@ -1,0 +1,91 @@
+using InterfaceFE.Model;
+
+namespace InterfaceFE.Marching;
+
+/// <summary>What an evaluation of the residual found.</summary>
+/// <param name="OutOfBalance">Largest force out of balance over the unknowns that are not held [N].</param>
+/// <param name="Reference">Largest summed magnitude of element forces at an unknown [N].</param>
+/// <param name="Finite">Whether every number is finite.</param>
+/// <param name="ChangedElements">Elements whose tangent differs from the one in the factor; 0 unless tangents were wanted.</param>
+public readonly record struct ResidualReport(double OutOfBalance, double Reference, bool Finite, int ChangedElements)
+{
+    /// <summary>Out of balance over reference; 0 when nothing carries force.</summary>
+    public double Relative => Reference > 0 ? OutOfBalance / Reference : 0;
+}
+
+/// <summary>A solved correction.</summary>
+/// <param name="Largest">Largest change of a displacement [mm].</param>
+/// <param name="Progress">Change of progress.</param>
+/// <param name="ControlError">Value of the control equation before the correction, relative to its stride.</param>
+/// <param name="Singular">The unknown of the first pivot that was numerically zero; -1 when none.</param>
+/// <param name="Finite">Whether the correction is finite.</param>
+public readonly record struct Correction(double Largest, double Progress, double ControlError, int Singular, bool Finite);
+
+/// <summary>
+/// The discrete equilibrium of one stage at a tentative displacement and progress. Newton sees only this; a lazy form that evaluates what changed can stand
+/// in for the full one.
+/// </summary>
+public interface IEquilibrium
+{
+    /// <summary>Share of the stage's target.</summary>
+    double Progress { get; set; }
+
+    /// <summary>Tentative values of the unknowns.</summary>
+    ReadOnlySpan<double> Displacement { get; }
+
+    /// <summary>Values of the unknowns at the accepted point.</summary>
+    ReadOnlySpan<double> AcceptedDisplacement { get; }
+
+    /// <summary>Progress of the accepted point.</summary>
+    double AcceptedProgress { get; }
+
+    /// <summary>Internal force at the tentative displacement, by the latest evaluation [N].</summary>
+    ReadOnlySpan<double> InternalForce { get; }
+
+    /// <summary>Part of <see cref="InternalForce"/> that the layers carry: the gradient of <see cref="LayerWork"/> [N].</summary>
+    ReadOnlySpan<double> LayerForce { get; }
+
+    /// <summary>Energies by the latest evaluation.</summary>
+    EnergyState Energy { get; }
+
+    /// <summary>Area under the laws over all joints: stored and dissipated [mJ].</summary>
+    double LayerWork => Energy.StoredInLayers + Energy.SpentInLayers;
+
+    /// <summary>d layer work / d progress at fixed displacement (free opening by temperature) [mJ].</summary>
+    double LayerWorkByProgress { get; }
+
+    /// <summary>Evaluates force, tangent and energies at the tentative displacement and progress.</summary>
+    ResidualReport Evaluate(Wanted wanted);
+
+    /// <summary>Force below which rounding rules [N]: 50 units of rounding of the largest stiffness times displacement.</summary>
+    double ResidualFloor();
+
+    /// <summary>Solves for a correction of displacement and progress by the latest tangents and the control.</summary>
+    Correction Solve(IControl control);
+
+    /// <summary>Applies a share of the solved correction to the displacement and progress it started from.</summary>
+    void Move(double share);
+
+    /// <summary>Sets the tentative point to the accepted one plus a share of a way, as a first guess.</summary>
+    /// <param name="way">Way of every unknown [mm or rad].</param>
+    /// <param name="wayProgress">Way of the progress.</param>
+    /// <param name="share">Share of the way.</param>
+    void Guess(ReadOnlySpan<double> way, double wayProgress, double share);
+
+    /// <summary>Back to the accepted point.</summary>
+    void RollBack();
+
+    /// <summary>Accepts the tentative point.</summary>
+    void Accept();
+}
+
+/// <summary>Energies of the model [mJ].</summary>
+/// <param name="StoredInAdherends">Elastic energy of the adherends.</param>
+/// <param name="StoredInLayers">Elastic energy of the layers, contact included.</param>
+/// <param name="SpentInLayers">Dissipated by the layers.</param>
+/// <param name="ByTemperature">d stored / d temperature at fixed displacement [mJ/K], whole model.</param>
+public readonly record struct EnergyState(double StoredInAdherends, double StoredInLayers, double SpentInLayers, double ByTemperature)
+{
+    /// <summary>Sum of all.</summary>
+    public double Total => StoredInAdherends + StoredInLayers + SpentInLayers;
+}

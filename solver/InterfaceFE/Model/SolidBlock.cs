@@ -1,0 +1,168 @@
+using InterfaceFE.Geometry;
+using InterfaceFE.Mechanics.Elements;
+using InterfaceFE.Mechanics.Materials;
+
+namespace InterfaceFE.Model;
+
+/// <summary>
+/// Elements of one adherend. Linear elastic at small rotation: stiffness, thermal force and blocked thermal energy of each element are computed once, after which
+/// force = K·u + thermal force·dT, energy = ½·u·K·u + dT·(thermal force·u) + ½·c·dT².
+/// </summary>
+public abstract class SolidBlock : IElementBlock
+{
+    private protected SolidBlock(MeshedAdherend adherend, double stressFreeTemperature)
+    {
+        Adherend = adherend;
+        StressFreeTemperature = stressFreeTemperature;
+    }
+
+    /// <summary>The meshed adherend.</summary>
+    public MeshedAdherend Adherend { get; }
+
+    /// <summary>Temperature without thermal stress [K].</summary>
+    protected double StressFreeTemperature { get; }
+
+    /// <inheritdoc/>
+    public string Name => Adherend.Name;
+
+    /// <inheritdoc/>
+    public abstract int Count { get; }
+
+    /// <inheritdoc/>
+    public abstract int NodesPerElement { get; }
+
+    /// <inheritdoc/>
+    public int StateSize => 0;
+
+    /// <inheritdoc/>
+    public TangentKind Kind => TangentKind.Constant;
+
+    /// <inheritdoc/>
+    public ReadOnlySpan<int> Nodes(int element) => Adherend.Connectivity.AsSpan(element * NodesPerElement, NodesPerElement);
+
+    /// <inheritdoc/>
+    public abstract ElementAnswer Evaluate(int element, in PathPoint at, ReadOnlySpan<double> displacement, ReadOnlySpan<double> accepted, Span<double> tentative, Wanted wanted, in ElementBuffers into);
+
+    /// <summary>Material of an element, in the model's axes.</summary>
+    public abstract PlaneElasticity Material(int element);
+
+    /// <summary>Stresses at the four Gauss points of an element.</summary>
+    /// <param name="element">Element index.</param>
+    /// <param name="displacement">Native displacements [mm].</param>
+    /// <param name="temperature">Temperature [K].</param>
+    /// <param name="stresses">Point after point xx, yy, zz, xy [MPa]; length 16, overwritten.</param>
+    public abstract void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> stresses);
+
+    /// <summary>Displacement gradients at the Gauss points: du/dx, du/dy, dv/dx, dv/dy, point after point; length 16, overwritten.</summary>
+    public abstract void Gradients(int element, ReadOnlySpan<double> displacement, Span<double> gradients);
+
+    /// <summary>Derivatives of the shape functions at the Gauss points [1/mm] (point after point, one per node) and the areas the points stand for [mm²].</summary>
+    public abstract void ShapeGradients(int element, Span<double> byX, Span<double> byY, Span<double> areas);
+
+    /// <summary>Positions of the Gauss points x, y [mm], point after point; length 8, overwritten.</summary>
+    public abstract void GaussPositions(int element, Span<double> positions);
+
+    /// <summary>Values at the nodes from values at the Gauss points.</summary>
+    public abstract void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues);
+
+    /// <summary>Makes the block of an adherend in the mesh's kind of element.</summary>
+    /// <param name="mesh">The mesh.</param>
+    /// <param name="adherend">Adherend.</param>
+    /// <param name="material">Material in the axes of the adherend: x along it.</param>
+    /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
+    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature) =>
+        mesh.NodesPerSolid == Quadrilateral8.NodeCount
+            ? new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature)
+            : new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature);
+}
+
+/// <summary>The block for one kind of element.</summary>
+/// <typeparam name="TElement">Kind of element.</typeparam>
+internal sealed class SolidBlock<TElement> : SolidBlock
+    where TElement : struct, IPlaneElement
+{
+    private readonly double[] _coordinates, _stiffness, _thermal, _blocked;
+    private readonly PlaneElasticity[] _materials;
+
+    public SolidBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature)
+        : base(adherend, stressFreeTemperature)
+    {
+        int n = TElement.Unknowns;
+        Count = adherend.Connectivity.Length / TElement.Nodes;
+        _coordinates = new double[Count * n];
+        _stiffness = new double[checked(Count * n * n)];
+        _thermal = new double[Count * n];
+        _blocked = new double[Count];
+        _materials = new PlaneElasticity[Count];
+        Span<double> zero = stackalloc double[n];
+        for (int e = 0; e < Count; e++)
+        {
+            ReadOnlySpan<int> nodes = Nodes(e);
+            Span<double> xy = _coordinates.AsSpan(e * n, n);
+            for (int i = 0; i < nodes.Length; i++)
+            {
+                xy[2 * i] = mesh.X[nodes[i]];
+                xy[2 * i + 1] = mesh.Y[nodes[i]];
+            }
+            _materials[e] = adherend.StraightAlongX ? material : material.Rotated(AngleAlong(xy));
+            TElement.Stiffness(xy, _materials[e], adherend.Width, _stiffness.AsSpan(e * n * n, n * n));
+            TElement.ThermalForce(xy, _materials[e], adherend.Width, _thermal.AsSpan(e * n, n));
+            _blocked[e] = 2 * TElement.StrainEnergy(xy, _materials[e], adherend.Width, zero, 1);
+        }
+    }
+
+    public override int Count { get; }
+
+    public override int NodesPerElement => TElement.Nodes;
+
+    public override ElementAnswer Evaluate(int element, in PathPoint at, ReadOnlySpan<double> displacement, ReadOnlySpan<double> accepted, Span<double> tentative, Wanted wanted, in ElementBuffers into)
+    {
+        int n = TElement.Unknowns;
+        double change = at.Temperature - StressFreeTemperature;
+        ReadOnlySpan<double> k = _stiffness.AsSpan(element * n * n, n * n);
+        ReadOnlySpan<double> thermal = _thermal.AsSpan(element * n, n);
+        double work = 0, thermalWork = 0;
+        for (int i = 0; i < n; i++)
+        {
+            double sum = Dot(k.Slice(i * n, n), displacement);
+            work += displacement[i] * sum;
+            thermalWork += displacement[i] * thermal[i];
+            into.Force[i] = sum + thermal[i] * change;
+        }
+        if ((wanted & Wanted.Tangent) != 0)
+            k.CopyTo(into.Tangent);
+        if ((wanted & Wanted.LoadRate) != 0)
+            thermal.CopyTo(into.LoadRate);
+        double stored = 0.5 * work + change * thermalWork + 0.5 * _blocked[element] * change * change;
+        return new ElementAnswer(stored, 0, thermalWork + _blocked[element] * change, 0, 0, false);
+    }
+
+    public override PlaneElasticity Material(int element) => _materials[element];
+
+    public override void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> stresses) =>
+        TElement.Stresses(Coordinates(element), _materials[element], displacement, temperature - StressFreeTemperature, stresses);
+
+    public override void Gradients(int element, ReadOnlySpan<double> displacement, Span<double> gradients) =>
+        TElement.DisplacementGradients(Coordinates(element), _materials[element], displacement, gradients);
+
+    public override void ShapeGradients(int element, Span<double> byX, Span<double> byY, Span<double> areas) =>
+        TElement.ShapeGradients(Coordinates(element), byX, byY, areas);
+
+    public override void GaussPositions(int element, Span<double> positions) => TElement.GaussPositions(Coordinates(element), positions);
+
+    public override void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues) =>
+        TElement.ExtrapolateToNodes(components, gaussValues, nodeValues);
+
+    private ReadOnlySpan<double> Coordinates(int element) => _coordinates.AsSpan(element * TElement.Unknowns, TElement.Unknowns);
+
+    private static double Dot(ReadOnlySpan<double> a, ReadOnlySpan<double> b)
+    {
+        double sum = 0;
+        for (int i = 0; i < a.Length; i++)
+            sum += a[i] * b[i];
+        return sum;
+    }
+
+    private static double AngleAlong(ReadOnlySpan<double> xy) =>
+        Math.Atan2(xy[3] + xy[5] - xy[1] - xy[7], xy[2] + xy[4] - xy[0] - xy[6]);
+}

@@ -1,0 +1,204 @@
+using InterfaceFE.Geometry;
+using InterfaceFE.Marching;
+using InterfaceFE.Mechanics.Layers;
+using InterfaceFE.Model;
+
+namespace InterfaceFE.Results;
+
+/// <summary>
+/// Energy release rate of a front in two independent ways besides the law's own work, each null where it is not valid, with the reason.
+/// <para>
+/// By path (Rice 1968): sections through both adherends behind and ahead of the front, and the law's energy density where the section ahead cuts the bond, so that it is the
+/// whole J at the starter tip. Valid where both adherends are straight rectangles along x, no grip and no other joint touches them between the sections.
+/// </para>
+/// <para>
+/// By rotation (Paris and Paris 1988; Olsson and Stigh 1989): J = -(1/b)·sum of Fy·θ over all grips, in the linear kinematics of small rotation, plus M²/(2·b·E'I) for each couple M on an end face behind
+/// the front. Valid with one joint of straight adherends at constant temperature.
+/// </para>
+/// </summary>
+public sealed class EnergyReleaseRates
+{
+    private readonly SpecimenModel _model;
+    private readonly BondFront _front;
+    private readonly MeshedJoint _joint;
+    private readonly SolidBlock _upper, _lower;
+    private readonly double _behindFrom, _behindTo, _aheadFrom, _aheadTo;
+
+    /// <summary>Prepares the sections of a front.</summary>
+    public EnergyReleaseRates(SpecimenModel model, BondFront front)
+    {
+        _model = model;
+        _front = front;
+        _joint = model.Mesh.Joints[front.Joint];
+        _upper = model.Solids[_joint.UpperAdherend];
+        _lower = model.Solids[_joint.LowerAdherend];
+        double tip = model.Mesh.X[front.TipNode];
+        PathReason = Place(tip, out double behind, out double ahead);
+        _behindFrom = Math.Min(tip + 0.3 * (behind - tip), tip + 0.7 * (behind - tip));
+        _behindTo = Math.Max(tip + 0.3 * (behind - tip), tip + 0.7 * (behind - tip));
+        _aheadFrom = Math.Min(tip + 0.85 * (ahead - tip), tip + 0.95 * (ahead - tip));
+        _aheadTo = Math.Max(tip + 0.85 * (ahead - tip), tip + 0.95 * (ahead - tip));
+        RotationReason = CheckRotation(tip);
+    }
+
+    /// <summary>Why J by path has no value; null when it has.</summary>
+    public string? PathReason { get; }
+
+    /// <summary>Why J by rotation has no value; null when it has.</summary>
+    public string? RotationReason { get; }
+
+    /// <summary>J by path [N/mm] at the accepted point; null where not valid.</summary>
+    public double? Path(LayerSample sample, double[] ux, double[] uy, double temperature)
+    {
+        if (PathReason is not null)
+            return null;
+        double j = 0;
+        foreach (SolidBlock solid in (ReadOnlySpan<SolidBlock>)[_upper, _lower])
+        {
+            double? behind = SectionIntegral.Mean(solid, _behindFrom, _behindTo, ux, uy, temperature, _model.StressFreeTemperature);
+            double? ahead = SectionIntegral.Mean(solid, _aheadFrom, _aheadTo, ux, uy, temperature, _model.StressFreeTemperature);
+            if (behind is null || ahead is null)
+                return null;
+            j += (behind.Value - ahead.Value) * solid.Adherend.Width / _joint.Width;
+        }
+        return j + WorkAhead(sample);
+    }
+
+    /// <summary>J by rotation [N/mm] at the accepted point; null where not valid.</summary>
+    public double? Rotation(IReadOnlyList<GripReading> readings, double[] ux, double[] uy, bool temperatureChanged)
+    {
+        if (RotationReason is not null || temperatureChanged)
+            return null;
+        double sum = 0;
+        for (int g = 0; g < _model.Grips.Count; g++)
+        {
+            GripBody body = _model.Unknowns.Bodies[_model.Grips[g].Bodies[0]];
+            if (Math.Abs(readings[g].ForceY) > 0)
+            {
+                double? slope = readings[g].Rotation ?? Slope(body, ux, uy);
+                if (slope is null)
+                    return null;
+                sum -= readings[g].ForceY * slope.Value;
+            }
+            if (readings[g].Moment is { } moment && IsEndFace(body))
+            {
+                SolidBlock solid = BlockOf(body.Nodes[0]);
+                double inertia = solid.Adherend.Width * Math.Pow(solid.Adherend.Thickness, 3) / 12;
+                double share = moment * moment / (2 * solid.Material(0).YoungAlongX * inertia);
+                sum += Math.Sign(_model.Mesh.X[_front.TipNode] - body.PinX) * share;
+            }
+        }
+        return _front.Sense * sum / _joint.Width;
+    }
+
+    private double WorkAhead(LayerSample sample)
+    {
+        double sum = 0, length = 0;
+        double offset = _model.Mesh.X[_joint.LowerNodes[0]] - _joint.Position[0];
+        for (int i = 0; i < sample.Position.Length; i++)
+        {
+            double x = sample.Position[i] + offset;
+            if (x < _aheadFrom || x > _aheadTo)
+                continue;
+            LayerResponse r = sample.Response[i];
+            sum += sample.Length[i] * (r.Stored + r.Dissipated);
+            length += sample.Length[i];
+        }
+        return length > 0 ? sum / length : 0;
+    }
+
+    private string? Place(double tip, out double behind, out double ahead)
+    {
+        Mesh mesh = _model.Mesh;
+        behind = ahead = tip;
+        if (!_upper.Adherend.StraightAlongX || !_lower.Adherend.StraightAlongX)
+            return "an adherend is bent";
+        double left = Math.Max(Extent(_upper, mesh).From, Extent(_lower, mesh).From), right = Math.Min(Extent(_upper, mesh).To, Extent(_lower, mesh).To);
+        double offset = mesh.X[_joint.LowerNodes[0]] - _joint.Position[0];
+        double end = _front.StretchEnd + offset;
+        (left, right) = _front.Sense > 0 ? (left, Math.Min(right, end)) : (Math.Max(left, end), right);
+        foreach (Grip grip in _model.Grips)
+        {
+            foreach (int b in grip.Bodies)
+            {
+                foreach (int node in _model.Unknowns.Bodies[b].Nodes)
+                {
+                    if (!Belongs(_upper, node) && !Belongs(_lower, node))
+                        continue;
+                    double x = mesh.X[node];
+                    if (x <= tip)
+                        left = Math.Max(left, x);
+                    if (x >= tip)
+                        right = Math.Min(right, x);
+                }
+            }
+        }
+        (behind, ahead) = _front.Sense > 0 ? (left, right) : (right, left);
+        double thickness = Math.Max(_upper.Adherend.Thickness, _lower.Adherend.Thickness);
+        if (Math.Abs(behind - tip) < thickness)
+            return "no free arms longer than they are thick lie behind the front";
+        if (Math.Abs(ahead - tip) < thickness)
+            return "the bond ahead of the front is shorter than an arm is thick";
+        for (int j = 0; j < mesh.Joints.Count; j++)
+        {
+            MeshedJoint other = mesh.Joints[j];
+            bool shares = other.UpperAdherend == _joint.UpperAdherend || other.LowerAdherend == _joint.LowerAdherend || other.UpperAdherend == _joint.LowerAdherend || other.LowerAdherend == _joint.UpperAdherend;
+            if (j != _front.Joint && shares)
+                return "another joint touches the adherends";
+        }
+        return null;
+    }
+
+    private string? CheckRotation(double tip)
+    {
+        if (_model.Mesh.Joints.Count != 1)
+            return "the formula holds for a single joint";
+        if (!_upper.Adherend.StraightAlongX || !_lower.Adherend.StraightAlongX)
+            return "an adherend is bent";
+        if (_model.Solids.Count != 2)
+            return "there are further adherends";
+        return Math.Abs(_front.StarterTip - (_front.Sense > 0 ? _joint.Position[0] : _joint.Position[^1])) > 0 || PathReason is null ? null : $"no crack lies behind the front at x = {tip.ToString("G6", System.Globalization.CultureInfo.InvariantCulture)} mm";
+    }
+
+    private bool IsEndFace(GripBody body)
+    {
+        Mesh mesh = _model.Mesh;
+        return body.Rigid && Math.Abs(mesh.X[body.Nodes[0]] - mesh.X[body.Nodes[^1]]) < 1e-9 * BlockOf(body.Nodes[0]).Adherend.Thickness;
+    }
+
+    /// <summary>Slope of the edge at a pin: mean over one element to each side, so that the dent under the load, which is even, drops out; null at the end of an edge.</summary>
+    private double? Slope(GripBody body, double[] ux, double[] uy)
+    {
+        if (body.Nodes.Length != 1)
+            return null;
+        int node = body.Nodes[0];
+        Mesh mesh = _model.Mesh;
+        int reach = mesh.NodesPerFace - 1;
+        foreach (MeshedEdge edge in BlockOf(node).Adherend.Edges.Values)
+        {
+            int at = Array.IndexOf(edge.Nodes, node);
+            if (at < reach || at + reach >= edge.Nodes.Length)
+                continue;
+            int before = edge.Nodes[at - reach], after = edge.Nodes[at + reach];
+            if (Math.Abs(mesh.X[after] - mesh.X[before]) < Math.Abs(mesh.Y[after] - mesh.Y[before]))
+                continue;
+            return (uy[after] - uy[before]) / (mesh.X[after] - mesh.X[before]);
+        }
+        return null;
+    }
+
+    private SolidBlock BlockOf(int node) => _model.Solids.First(s => Belongs(s, node));
+
+    private static bool Belongs(SolidBlock solid, int node) => node >= solid.Adherend.FirstNode && node < solid.Adherend.FirstNode + solid.Adherend.NodeCount;
+
+    private static (double From, double To) Extent(SolidBlock solid, Mesh mesh)
+    {
+        double from = double.PositiveInfinity, to = double.NegativeInfinity;
+        for (int i = solid.Adherend.FirstNode; i < solid.Adherend.FirstNode + solid.Adherend.NodeCount; i++)
+        {
+            from = Math.Min(from, mesh.X[i]);
+            to = Math.Max(to, mesh.X[i]);
+        }
+        return (from, to);
+    }
+}

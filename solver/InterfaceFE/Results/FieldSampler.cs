@@ -1,0 +1,160 @@
+using InterfaceFE.Geometry;
+using InterfaceFE.Marching;
+using InterfaceFE.Mechanics.Layers;
+using InterfaceFE.Model;
+
+namespace InterfaceFE.Results;
+
+/// <summary>Stresses at the nodes and layer values at the stations, from nodal displacements at an accepted point. Reuses its arrays from point to point.</summary>
+public sealed class FieldSampler
+{
+    private readonly SpecimenModel _model;
+    private readonly double[] _share;
+    private readonly double[][] _stress = new double[4][];
+    private readonly bool[] _atGrip;
+
+    /// <summary>Prepares the averaging at nodes.</summary>
+    public FieldSampler(SpecimenModel model)
+    {
+        _model = model;
+        int nodes = model.Mesh.NodeCount;
+        DisplacementX = new double[nodes];
+        DisplacementY = new double[nodes];
+        Equivalent = new double[nodes];
+        for (int i = 0; i < 4; i++)
+            _stress[i] = new double[nodes];
+        _share = new double[nodes];
+        foreach (SolidBlock solid in model.Solids)
+            foreach (int node in solid.Adherend.Connectivity)
+                _share[node]++;
+        _atGrip = NearGrips(model);
+    }
+
+    /// <summary>Displacement of each node along x [mm].</summary>
+    public double[] DisplacementX { get; }
+
+    /// <summary>Displacement of each node along y [mm].</summary>
+    public double[] DisplacementY { get; }
+
+    /// <summary>Equivalent stress at each node [MPa].</summary>
+    public double[] Equivalent { get; }
+
+    /// <summary>Whether a node belongs to an element that touches a grip, where stresses are those of the grip's idealisation.</summary>
+    public IReadOnlyList<bool> AtGrip => _atGrip;
+
+    /// <summary>Samples displacement and stress.</summary>
+    public void Sample(FullEquilibrium equilibrium)
+    {
+        for (int node = 0; node < DisplacementX.Length; node++)
+            (DisplacementX[node], DisplacementY[node]) = _model.Unknowns.Displacement(node, equilibrium.AcceptedDisplacement);
+        foreach (double[] component in _stress)
+            Array.Clear(component);
+        Span<double> native = stackalloc double[16], gauss = stackalloc double[16], nodal = stackalloc double[32];
+        foreach (SolidBlock solid in _model.Solids)
+        {
+            int n = solid.NodesPerElement;
+            for (int e = 0; e < solid.Count; e++)
+            {
+                ReadOnlySpan<int> nodes = solid.Nodes(e);
+                LayerSample.Gather(nodes, DisplacementX, DisplacementY, native);
+                solid.Stresses(e, native[..(2 * n)], equilibrium.AcceptedTemperature, gauss);
+                solid.ExtrapolateToNodes(4, gauss, nodal[..(4 * n)]);
+                for (int i = 0; i < n; i++)
+                    for (int c = 0; c < 4; c++)
+                        _stress[c][nodes[i]] += nodal[4 * i + c] / _share[nodes[i]];
+            }
+        }
+        for (int node = 0; node < Equivalent.Length; node++)
+        {
+            double xx = _stress[0][node], yy = _stress[1][node], zz = _stress[2][node], xy = _stress[3][node];
+            Equivalent[node] = Math.Sqrt(0.5 * ((xx - yy) * (xx - yy) + (yy - zz) * (yy - zz) + (zz - xx) * (zz - xx)) + 3 * xy * xy);
+        }
+    }
+
+    /// <summary>A copy of the fields for keeping.</summary>
+    public FieldSnapshot Snapshot(MarchPoint point, IReadOnlyList<LayerSample> layers) => new()
+    {
+        Point = point.Number,
+        Stage = point.Stage,
+        Time = point.Time,
+        Temperature = point.Temperature,
+        DisplacementX = [.. DisplacementX],
+        DisplacementY = [.. DisplacementY],
+        StressXx = [.. _stress[0]],
+        StressYy = [.. _stress[1]],
+        StressZz = [.. _stress[2]],
+        StressXy = [.. _stress[3]],
+        EquivalentStress = [.. Equivalent],
+        PlasticStrain = new double[Equivalent.Length],
+        Layers = [.. layers.Select((sample, joint) => Layer(sample, joint))],
+    };
+
+    private LayerField Layer(LayerSample sample, int joint)
+    {
+        MeshedJoint mesh = _model.Mesh.Joints[joint];
+        int stations = _model.Mesh.NodesPerFace, count = mesh.ElementCount * stations, points = sample.Layer.PointsPerElement;
+        var field = new LayerField
+        {
+            Joint = joint,
+            Position = new double[count],
+            Opening = new double[count],
+            Sliding = new double[count],
+            Peel = new double[count],
+            Shear = new double[count],
+            Damage = new double[count],
+        };
+        Array.Fill(field.Damage, 1);
+        Span<double> native = stackalloc double[4 * stations];
+        for (int e = 0, bonded = 0; e < mesh.ElementCount; e++)
+        {
+            for (int s = 0; s < stations; s++)
+            {
+                int i = e * stations + s;
+                field.Position[i] = mesh.Position[e] + (mesh.Position[e + 1] - mesh.Position[e]) * s / (stations - 1);
+                int lower = mesh.LowerNodes[i], upper = mesh.UpperNodes[i];
+                Separation jump = sample.Layer.Jump(mesh, e, DisplacementX[upper] - DisplacementX[lower], DisplacementY[upper] - DisplacementY[lower]);
+                field.Opening[i] = jump.Opening;
+                field.Sliding[i] = jump.Sliding;
+            }
+            if (!mesh.Bonded[e])
+                continue;
+            for (int s = 0; s < stations; s++)
+            {
+                int i = e * stations + s;
+                int near = bonded * points + (s == 0 ? 0 : s == stations - 1 ? points - 1 : points / 2);
+                int other = s == 0 ? near + 1 : near - 1;
+                double share = (field.Position[i] - sample.Position[near]) / (sample.Position[other] - sample.Position[near]);
+                field.Peel[i] = Along(sample.Response[near].Peel, sample.Response[other].Peel, share);
+                field.Shear[i] = Along(sample.Response[near].Shear, sample.Response[other].Shear, share);
+                field.Damage[i] = Math.Clamp(Along(sample.Response[near].Damage, sample.Response[other].Damage, share), 0, 1);
+            }
+            bonded++;
+        }
+        return field;
+    }
+
+    private static double Along(double near, double other, double share) => near + share * (other - near);
+
+    private static bool[] NearGrips(SpecimenModel model)
+    {
+        var gripped = new bool[model.Mesh.NodeCount];
+        foreach (GripBody body in model.Unknowns.Bodies)
+            foreach (int node in body.Nodes)
+                gripped[node] = true;
+        var near = new bool[gripped.Length];
+        foreach (SolidBlock solid in model.Solids)
+        {
+            for (int e = 0; e < solid.Count; e++)
+            {
+                bool touches = false;
+                foreach (int node in solid.Nodes(e))
+                    touches |= gripped[node];
+                if (!touches)
+                    continue;
+                foreach (int node in solid.Nodes(e))
+                    near[node] = true;
+            }
+        }
+        return near;
+    }
+}

@@ -1,0 +1,132 @@
+using InterfaceFE.Geometry;
+using InterfaceFE.Marching;
+using InterfaceFE.Mechanics.Layers;
+using InterfaceFE.Model;
+
+namespace InterfaceFE.Results;
+
+/// <summary>Keeps the largest values of joints and adherends over a run, and the first damage.</summary>
+public sealed class RunMaxima
+{
+    private readonly SpecimenModel _model;
+    private readonly IReadOnlyList<bool> _leftOut;
+    private readonly double[] _opening, _sliding, _damage, _peel, _shear, _separated, _zone, _stress;
+    private readonly int[] _stressNode, _stressPoint;
+
+    /// <summary>Starts from nothing.</summary>
+    /// <param name="model">The model.</param>
+    /// <param name="leftOut">Nodes at grips, whose stresses do not count.</param>
+    public RunMaxima(SpecimenModel model, IReadOnlyList<bool> leftOut)
+    {
+        _model = model;
+        _leftOut = leftOut;
+        int joints = model.Layers.Count, adherends = model.Solids.Count;
+        _opening = new double[joints];
+        _sliding = new double[joints];
+        _damage = new double[joints];
+        _peel = new double[joints];
+        _shear = new double[joints];
+        _separated = new double[joints];
+        _zone = new double[joints];
+        Array.Fill(_zone, double.PositiveInfinity);
+        _stress = new double[adherends];
+        _stressNode = new int[adherends];
+        _stressPoint = new int[adherends];
+    }
+
+    /// <summary>First damage; null while none.</summary>
+    public EventSummary? FirstDamage { get; private set; }
+
+    /// <summary>Points with an equilibrium that is not stable.</summary>
+    public int UnstablePoints { get; private set; }
+
+    /// <summary>Takes an accepted point in.</summary>
+    public void Take(MarchPoint point, LayerSample[] samples, BondFront[][] fronts, double[] equivalent)
+    {
+        if (!point.Stable)
+            UnstablePoints++;
+        for (int j = 0; j < samples.Length; j++)
+        {
+            TakeJoint(j, point, samples[j]);
+            foreach (BondFront front in fronts[j])
+                if (front.ZoneStart is { } start && front.CrackTip != front.StarterTip && !front.RunThrough)
+                    _zone[j] = Math.Min(_zone[j], Math.Abs(start - front.CrackTip));
+        }
+        for (int a = 0; a < _stress.Length; a++)
+        {
+            MeshedAdherend adherend = _model.Mesh.Adherends[a];
+            for (int node = adherend.FirstNode; node < adherend.FirstNode + adherend.NodeCount; node++)
+            {
+                if (_leftOut[node] || equivalent[node] <= _stress[a])
+                    continue;
+                _stress[a] = equivalent[node];
+                _stressNode[a] = node;
+                _stressPoint[a] = point.Number;
+            }
+        }
+    }
+
+    /// <summary>Summaries of the joints.</summary>
+    public IEnumerable<JointSummary> Joints()
+    {
+        for (int j = 0; j < _opening.Length; j++)
+        {
+            MeshedJoint joint = _model.Mesh.Joints[j];
+            double thickness = _model.Layers[j].Thickness, length = 0;
+            for (int e = 0; e < joint.ElementCount; e++)
+                if (joint.Bonded[e])
+                    length = Math.Max(length, joint.Position[e + 1] - joint.Position[e]);
+            double zone = double.IsFinite(_zone[j]) ? _zone[j] : joint.ProcessZoneEstimate;
+            yield return new JointSummary
+            {
+                Name = joint.Name,
+                LargestOpening = _opening[j],
+                LargestSliding = _sliding[j],
+                LargestPeelStrain = _opening[j] / thickness,
+                LargestShearStrain = _sliding[j] / thickness,
+                LargestDamage = _damage[j],
+                LargestPeel = _peel[j],
+                LargestShear = _shear[j],
+                SeparatedLength = _separated[j],
+                ElementLength = length,
+                ElementsPerProcessZone = zone / length,
+            };
+        }
+    }
+
+    /// <summary>Summaries of the adherends.</summary>
+    public IEnumerable<AdherendSummary> Adherends()
+    {
+        for (int a = 0; a < _stress.Length; a++)
+        {
+            yield return new AdherendSummary
+            {
+                Name = _model.Mesh.Adherends[a].Name,
+                LargestEquivalentStress = _stress[a],
+                X = _model.Mesh.X[_stressNode[a]],
+                Y = _model.Mesh.Y[_stressNode[a]],
+                Point = _stressPoint[a],
+                LargestPlasticStrain = 0,
+            };
+        }
+    }
+
+    private void TakeJoint(int j, MarchPoint point, LayerSample sample)
+    {
+        double separated = 0;
+        for (int i = 0; i < sample.Response.Length; i++)
+        {
+            LayerResponse r = sample.Response[i];
+            _opening[j] = Math.Max(_opening[j], sample.Separation[i].Opening);
+            _sliding[j] = Math.Max(_sliding[j], Math.Abs(sample.Separation[i].Sliding));
+            _damage[j] = Math.Max(_damage[j], r.Damage);
+            _peel[j] = Math.Max(_peel[j], r.Peel);
+            _shear[j] = Math.Max(_shear[j], Math.Abs(r.Shear));
+            if (r.Damage >= 1)
+                separated += sample.Length[i];
+            if (r.Damage > 0 && FirstDamage is null)
+                FirstDamage = new EventSummary(string.Create(System.Globalization.CultureInfo.InvariantCulture, $"joint '{sample.Layer.Name}' at {sample.Position[i]:G6} mm along it"), point.Number, point.Stage, point.Progress);
+        }
+        _separated[j] = Math.Max(_separated[j], separated);
+    }
+}

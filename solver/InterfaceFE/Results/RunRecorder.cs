@@ -1,0 +1,202 @@
+using InterfaceFE.Geometry;
+using InterfaceFE.Marching;
+using InterfaceFE.Mechanics.Layers;
+using InterfaceFE.Model;
+
+namespace InterfaceFE.Results;
+
+/// <summary>Watches a march and makes its records: points, fronts, energies, iterations, fields, maxima.</summary>
+public sealed class RunRecorder : IMarchObserver
+{
+    private readonly SpecimenModel _model;
+    private readonly FullEquilibrium _equilibrium;
+    private readonly RunHistory _history;
+    private readonly IRecordSink _sink;
+    private readonly GripReader _grips;
+    private readonly GaugeReader _gauges;
+    private readonly FieldSampler _fields;
+    private readonly BondFront[][] _fronts;
+    private readonly EnergyReleaseRates[][] _rates;
+    private readonly int _fieldInterval;
+    private readonly RunMaxima _maxima;
+    private bool _temperatureChanged;
+    private LayerSample[] _samples = [];
+
+    /// <summary>Prepares the records of a run.</summary>
+    /// <param name="equilibrium">Equilibrium that is marched.</param>
+    /// <param name="history">History to fill.</param>
+    /// <param name="gauges">Reader of the gauges.</param>
+    /// <param name="fieldInterval">Points between stored fields; 0 for none.</param>
+    /// <param name="sink">Told of each record.</param>
+    public RunRecorder(FullEquilibrium equilibrium, RunHistory history, GaugeReader gauges, int fieldInterval, IRecordSink sink)
+    {
+        _model = equilibrium.Model;
+        _equilibrium = equilibrium;
+        _history = history;
+        _sink = sink;
+        _grips = new GripReader(_model, history.Grips);
+        _gauges = gauges;
+        _fields = new FieldSampler(_model);
+        _fronts = [.. _model.Layers.Select((layer, joint) => BondFront.Of(layer, joint).ToArray())];
+        _rates = [.. _fronts.Select(fronts => fronts.Select(front => new EnergyReleaseRates(_model, front)).ToArray())];
+        _fieldInterval = fieldInterval;
+        _maxima = new RunMaxima(_model, _fields.AtGrip);
+    }
+
+    /// <summary>Maxima over the run so far.</summary>
+    public RunMaxima Maxima => _maxima;
+
+    /// <summary>Why a front has no J by path or rotation, one line each.</summary>
+    public IEnumerable<string> Remarks()
+    {
+        for (int joint = 0; joint < _fronts.Length; joint++)
+        {
+            for (int f = 0; f < _fronts[joint].Length; f++)
+            {
+                string where = $"joint '{_model.Layers[joint].Name}', front {_fronts[joint][f].Number}";
+                if (_rates[joint][f].PathReason is { } path)
+                    yield return $"{where}: no J path, since {path}";
+                if (_rates[joint][f].RotationReason is { } rotation)
+                    yield return $"{where}: no J rotation, since {rotation}";
+            }
+        }
+        if (_temperatureChanged)
+            yield return "J rotation and J under law are left empty once the temperature has changed: they hold at constant temperature only";
+    }
+
+    /// <inheritdoc/>
+    public void PointAccepted(MarchPoint point)
+    {
+        _temperatureChanged |= point.Temperature != _model.StressFreeTemperature;
+        _fields.Sample(_equilibrium);
+        _samples = [.. _model.Layers.Select((layer, joint) => new LayerSample(layer, joint, _equilibrium, _fields.DisplacementX, _fields.DisplacementY))];
+        IReadOnlyList<GripReading> readings = _grips.Read(_equilibrium);
+        var row = new PointRow
+        {
+            Point = point.Number,
+            Stage = point.Stage,
+            Progress = point.Progress,
+            Time = point.Time,
+            Temperature = point.Temperature,
+            LoadFactor = point.Progress,
+            Stable = point.Stable,
+            Grips = readings,
+            Gauges = _gauges.Read(_fields.DisplacementX, _fields.DisplacementY),
+        };
+        var fronts = new List<FrontRow>();
+        for (int joint = 0; joint < _fronts.Length; joint++)
+            for (int f = 0; f < _fronts[joint].Length; f++)
+                fronts.Add(Front(point, joint, f, readings));
+        EnergyRow energy = Energy(point);
+        _maxima.Take(point, _samples, _fronts, _fields.Equivalent);
+        _history.Points.Add(row);
+        _history.Fronts.AddRange(fronts);
+        _history.Energies.Add(energy);
+        for (int joint = 0; joint < _samples.Length; joint++)
+            _history.Damage.Add(new DamageRow(point.Number, joint, DamageOf(_samples[joint], _model.Mesh.Joints[joint])));
+        _sink.Write(row, fronts, energy);
+        if (_fieldInterval > 0 && (point.StageEnd || point.Number % _fieldInterval == 0))
+            KeepFields(point);
+    }
+
+    /// <inheritdoc/>
+    public void IterationMade(in MarchIteration iteration)
+    {
+        var row = new IterationRow
+        {
+            Stage = iteration.Stage,
+            Point = iteration.Point,
+            Retries = iteration.Retries,
+            Iteration = iteration.Newton.Iteration,
+            Control = iteration.Control,
+            Stride = iteration.Stride,
+            Progress = iteration.Progress,
+            LoadFactor = iteration.Progress,
+            Root = 0,
+            OutOfBalance = iteration.Newton.OutOfBalance,
+            Relative = iteration.Newton.Relative,
+            Correction = iteration.Newton.Correction,
+            UnstableDirections = iteration.UnstableDirections,
+            ChangedElements = iteration.Newton.ChangedElements,
+            Reason = iteration.Newton.Reason,
+        };
+        _history.Iterations.Add(row);
+        _sink.Write(row);
+    }
+
+    /// <inheritdoc/>
+    public void Said(string line) => _sink.Say(line);
+
+    private void KeepFields(MarchPoint point)
+    {
+        FieldSnapshot snapshot = _fields.Snapshot(point, _samples);
+        _history.Snapshots.Add(snapshot);
+        _sink.Write(snapshot);
+    }
+
+    private FrontRow Front(MarchPoint point, int joint, int f, IReadOnlyList<GripReading> readings)
+    {
+        BondFront front = _fronts[joint][f];
+        LayerSample sample = _samples[joint];
+        front.Follow(sample, _model.Mesh, _fields.DisplacementX, _fields.DisplacementY, point.Temperature);
+        double peel = 0, shear = 0;
+        foreach (LayerResponse response in sample.Response)
+        {
+            peel = Math.Max(peel, response.Peel);
+            shear = Math.Max(shear, Math.Abs(response.Shear));
+        }
+        return new FrontRow
+        {
+            Joint = _model.Layers[joint].Name,
+            Front = front.Number,
+            Point = point.Number,
+            CrackTip = front.CrackTip,
+            ProcessZoneStart = front.ZoneStart,
+            ProcessZone = front.ZoneStart is { } start ? Math.Abs(start - front.CrackTip) : null,
+            Opening = front.TipSeparation.Opening,
+            Sliding = front.TipSeparation.Sliding,
+            JPath = _rates[joint][f].Path(sample, _fields.DisplacementX, _fields.DisplacementY, point.Temperature),
+            JRotation = _rates[joint][f].Rotation(readings, _fields.DisplacementX, _fields.DisplacementY, _temperatureChanged),
+            JUnderLaw = _temperatureChanged ? null : front.TipWork,
+            ModeMixDegrees = front.ModeMixDegrees,
+            LargestPeel = peel,
+            LargestShear = shear,
+        };
+    }
+
+    private static EnergyRow Energy(MarchPoint point) => new()
+    {
+        Point = point.Number,
+        Stage = point.Stage,
+        PutIn = point.Energy.PutIn,
+        StoredInAdherends = point.Energy.State.StoredInAdherends,
+        StoredInLayers = point.Energy.State.StoredInLayers,
+        SpentInLayers = point.Energy.State.SpentInLayers,
+        SpentInYielding = 0,
+        SpentInFriction = 0,
+        Thermal = point.Energy.Thermal,
+        ReleasedInJumps = 0,
+        Balance = point.Energy.Balance,
+        PathError = point.Energy.PathError,
+    };
+
+    private static float[] DamageOf(LayerSample sample, MeshedJoint joint)
+    {
+        var damage = new float[joint.ElementCount];
+        int points = sample.Layer.PointsPerElement;
+        for (int e = 0, bonded = 0; e < damage.Length; e++)
+        {
+            if (!joint.Bonded[e])
+            {
+                damage[e] = float.NaN;
+                continue;
+            }
+            double largest = 0;
+            for (int p = 0; p < points; p++)
+                largest = Math.Max(largest, sample.Response[bonded * points + p].Damage);
+            damage[e] = (float)largest;
+            bonded++;
+        }
+        return damage;
+    }
+}
