@@ -15,6 +15,8 @@ public readonly record struct EnergyAccount(double PutIn, double Thermal, Energy
 /// </summary>
 public sealed class EnergyLedger
 {
+    private const double SmallShare = 0.02;
+
     private readonly FullEquilibrium _equilibrium;
     private readonly double[] _displacement, _internal, _external;
     private EnergyState _energy;
@@ -34,14 +36,15 @@ public sealed class EnergyLedger
     }
 
     /// <summary>
-    /// Error of the tentative stride: energy put in against change of the elements' energies, over the stride's turnover (half the sum of magnitudes).
-    /// 0 for a stride without turnover.
+    /// Error of the tentative stride: energy put in against change of the elements' energies, over the stride's turnover (half the sum of magnitudes) or a fiftieth of the
+    /// whole turnover so far, whichever is larger, so that a kink of a law passed in a small stride is no reason to creep up to it. 0 without turnover.
     /// </summary>
     public double StrideError()
     {
         Stride stride = Measure();
         double error = Math.Abs(stride.PutIn + stride.Thermal - (_equilibrium.Energy.Total - _energy.Total));
-        return stride.Turnover > 0 ? error / stride.Turnover : 0;
+        double turnover = Math.Max(stride.Turnover, SmallShare * (_turnover + stride.Turnover));
+        return turnover > 0 ? error / turnover : 0;
     }
 
     /// <summary>Books the tentative stride; to be called when the march accepts it.</summary>

@@ -11,6 +11,9 @@ public sealed class FullEquilibrium : IEquilibrium
 {
     private const double SkewTolerance = 1e-12;
 
+    /// <summary>Damage from which a point counts as separated; what it still carries is lost in the tolerance of equilibrium.</summary>
+    private const double Separated = 1 - 1e-7;
+
     private readonly SpecimenModel _model;
     private readonly ElementTable _table;
     private readonly SparsePlan _plan;
@@ -234,13 +237,13 @@ public sealed class FullEquilibrium : IEquilibrium
             worst = Math.Max(worst, difference);
             reference = Math.Max(reference, Math.Max(_magnitudes[i], Math.Abs(_external[i])));
         }
+        bool inPlace = true;
         for (int i = 0; i < _heldUnknowns.Length; i++)
         {
             int h = _heldUnknowns[i];
-            if (Math.Abs(_held[h] - _u[h]) > 1e-14 * Math.Max(Math.Abs(_held[h]), Math.Abs(_heldEnd[i] - _heldStart[i])))
-                worst = Math.Max(worst, reference);
+            inPlace &= Math.Abs(_held[h] - _u[h]) <= 1e-13 * Math.Max(Math.Abs(_held[h]), Math.Abs(_heldEnd[i] - _heldStart[i]));
         }
-        return new ResidualReport(worst, reference, finite, changed);
+        return new ResidualReport(worst, reference, finite, inPlace, changed);
     }
 
     /// <inheritdoc/>
@@ -353,24 +356,36 @@ public sealed class FullEquilibrium : IEquilibrium
     }
 
     /// <summary>
-    /// Unknowns that arc length watches: the translations at the root and the unknowns of layer elements that are giving way, by the latest evaluation.
+    /// Separations that arc length watches, as pairs of unknowns: those of layer elements that are giving way by the latest evaluation, or of all that still carry while none is.
     /// </summary>
-    public int[] WatchedUnknowns()
+    public IReadOnlyList<(int Upper, int Lower)> WatchedSeparations()
     {
-        var watched = new SortedSet<int>();
-        foreach (int slotUnknown in Enumerable.Range(0, _u.Length))
-            if (_model.Unknowns.IsRoot[_model.Unknowns.VertexOfUnknown[slotUnknown]] && !_model.Unknowns.IsRotation(slotUnknown))
-                watched.Add(slotUnknown);
-        int first = _table.SlotCount - _largestDamage.Length;
-        for (int e = 0; e < _largestDamage.Length; e++)
+        List<(int, int)> pairs = Separations(e => _largestDamage[e] > 0 && _leastDamage[e] < Separated);
+        return pairs.Count > 0 ? pairs : Separations(e => _leastDamage[e] < Separated);
+    }
+
+    private List<(int, int)> Separations(Func<int, bool> watched)
+    {
+        var pairs = new SortedSet<(int, int)>();
+        int index = 0;
+        foreach (LayerBlock layer in _model.Layers)
         {
-            if (_largestDamage[e] <= 0 || _leastDamage[e] >= 1)
-                continue;
-            foreach (int unknown in _table.Pattern.Unknowns(first + e))
-                if (!_model.Unknowns.IsRotation(unknown))
-                    watched.Add(unknown);
+            for (int e = 0; e < layer.Count; e++, index++)
+            {
+                if (!watched(index))
+                    continue;
+                ReadOnlySpan<int> nodes = layer.Nodes(e);
+                for (int i = 0; i < layer.Stations; i++)
+                {
+                    int lower = _model.Unknowns.OfNode(nodes[i]), upper = _model.Unknowns.OfNode(nodes[layer.Stations + i]);
+                    if (lower < 0 || upper < 0)
+                        continue;
+                    pairs.Add((upper, lower));
+                    pairs.Add((upper + 1, lower + 1));
+                }
+            }
         }
-        return [.. watched];
+        return [.. pairs];
     }
 
     /// <summary>
@@ -387,7 +402,7 @@ public sealed class FullEquilibrium : IEquilibrium
             for (int e = 0; e < layer.Count; e++, index++)
             {
                 all += layer.Length(e);
-                if (_leastDamage[index] >= 1)
+                if (_leastDamage[index] > Separated)
                     continue;
                 carrying += layer.Length(e);
                 int a = Root(parent, layer.LowerAdherend), b = Root(parent, layer.UpperAdherend);

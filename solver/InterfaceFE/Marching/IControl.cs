@@ -72,15 +72,13 @@ public sealed class LayerWorkControl(double target, double stride) : IControl
 }
 
 /// <summary>
-/// Arc length over watched unknowns: the length of the way of the watched unknowns and the progress (scaled) from the accepted point (after Riks 1979 and
-/// Crisfield 1981, with a normal that follows the iterations).
+/// Arc length over watched separations: the length of their way from the accepted point (after Riks 1979 and Crisfield 1981, with a normal that follows the iterations). Only
+/// separations are watched, since they grow while travel and load may turn back together.
 /// </summary>
-/// <param name="watched">Unknowns that are watched: grips and layers that are giving way.</param>
-/// <param name="progressScale">Length that a progress of 1 counts for [mm].</param>
-/// <param name="direction">Direction of the last stride over all unknowns, used while the way is still zero [mm].</param>
-/// <param name="directionProgress">Its progress.</param>
+/// <param name="watched">Pairs of unknowns whose difference is watched: upper less lower; a lower of -1 watches the unknown itself.</param>
+/// <param name="direction">Way of the last stride over all unknowns, used while the way is still zero [mm].</param>
 /// <param name="stride">Arc length [mm].</param>
-public sealed class ArcLengthControl(int[] watched, double progressScale, double[] direction, double directionProgress, double stride) : IControl
+public sealed class ArcLengthControl(IReadOnlyList<(int Upper, int Lower)> watched, double[] direction, double stride) : IControl
 {
     /// <inheritdoc/>
     public string Name => "arc length";
@@ -95,31 +93,38 @@ public sealed class ArcLengthControl(int[] watched, double progressScale, double
     public double Equation(IEquilibrium equilibrium, Span<double> gradient, out double byProgress)
     {
         gradient.Clear();
+        byProgress = 0;
         ReadOnlySpan<double> now = equilibrium.Displacement, before = equilibrium.AcceptedDisplacement;
-        double length = Length(now, before, equilibrium.Progress - equilibrium.AcceptedProgress);
-        bool standing = length < 1e-12 * Stride;
-        double norm = standing ? DirectionLength() : length;
-        foreach (int i in watched)
-            gradient[i] = (standing ? direction[i] : now[i] - before[i]) / norm;
-        double progress = standing ? directionProgress : equilibrium.Progress - equilibrium.AcceptedProgress;
-        byProgress = progressScale * progressScale * progress / norm;
+        double length = Length(now, before);
+        bool standing = length < 1e-9 * Stride;
+        double norm = standing ? Length(direction, []) : length;
+        foreach ((int upper, int lower) in watched)
+        {
+            double way = (standing ? Way(direction, [], upper, lower) : Way(now, before, upper, lower)) / norm;
+            gradient[upper] += way;
+            if (lower >= 0)
+                gradient[lower] -= way;
+        }
         return length - Stride;
     }
 
-    /// <summary>Length of a way in this control's measure [mm].</summary>
-    public double Length(ReadOnlySpan<double> to, ReadOnlySpan<double> from, double progress)
+    /// <summary>Length of a way of the watched separations [mm].</summary>
+    /// <param name="to">Unknowns at its end.</param>
+    /// <param name="from">Unknowns at its start; empty for zeros.</param>
+    public double Length(ReadOnlySpan<double> to, ReadOnlySpan<double> from)
     {
-        double sum = progressScale * progress * progressScale * progress;
-        foreach (int i in watched)
-            sum += (to[i] - from[i]) * (to[i] - from[i]);
+        double sum = 0;
+        foreach ((int upper, int lower) in watched)
+        {
+            double way = Way(to, from, upper, lower);
+            sum += way * way;
+        }
         return Math.Sqrt(sum);
     }
 
-    private double DirectionLength()
+    private static double Way(ReadOnlySpan<double> to, ReadOnlySpan<double> from, int upper, int lower)
     {
-        double sum = progressScale * directionProgress * progressScale * directionProgress;
-        foreach (int i in watched)
-            sum += direction[i] * direction[i];
-        return Math.Sqrt(sum);
+        double way = to[upper] - (from.IsEmpty ? 0 : from[upper]);
+        return lower < 0 ? way : way - (to[lower] - (from.IsEmpty ? 0 : from[lower]));
     }
 }

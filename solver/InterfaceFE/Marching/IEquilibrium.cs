@@ -6,8 +6,9 @@ namespace InterfaceFE.Marching;
 /// <param name="OutOfBalance">Largest force out of balance over the unknowns that are not held [N].</param>
 /// <param name="Reference">Largest summed magnitude of element forces at an unknown [N].</param>
 /// <param name="Finite">Whether every number is finite.</param>
+/// <param name="HeldInPlace">Whether every held unknown stands where the progress wants it.</param>
 /// <param name="ChangedElements">Elements whose tangent differs from the one in the factor; 0 unless tangents were wanted.</param>
-public readonly record struct ResidualReport(double OutOfBalance, double Reference, bool Finite, int ChangedElements)
+public readonly record struct ResidualReport(double OutOfBalance, double Reference, bool Finite, bool HeldInPlace, int ChangedElements)
 {
     /// <summary>Out of balance over reference; 0 when nothing carries force.</summary>
     public double Relative => Reference > 0 ? OutOfBalance / Reference : 0;

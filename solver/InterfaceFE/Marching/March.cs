@@ -65,6 +65,7 @@ public sealed class March(FullEquilibrium equilibrium, MarchSettings settings, I
 internal sealed class StageMarch
 {
     private const int RetriesBeforeSwitch = 2;
+    private const int RetriesBeforeArc = 3;
     private const int MostRetries = 14;
     private const double Shorter = 0.4;
     private const double AllowedOverAim = 4;
@@ -79,7 +80,7 @@ internal sealed class StageMarch
     private readonly double _timeAtStart;
     private readonly int _bodiesAtStart;
     private readonly double[] _way;
-    private double _wayProgress, _wayWork, _furthest;
+    private double _wayProgress, _wayWork, _wayArc, _acceptedWork, _furthest;
     private bool _hasWay;
     private bool _onPath;
     private double _ownStride, _pathStride;
@@ -112,6 +113,7 @@ internal sealed class StageMarch
     {
         // Bring residual, tangents and energies to the stage's start: held unknowns and forces may have changed hands.
         _equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
+        _acceptedWork = ((IEquilibrium)_equilibrium).LayerWork;
         (_unstable, int loose) = _equilibrium.Stability();
         if (loose >= 0 && !Severed())
             return new MarchOutcome(MarchStatus.StoppedEarly, CanStillMove(_equilibrium, loose));
@@ -181,8 +183,8 @@ internal sealed class StageMarch
 
     private Attempt TryPath(int retry)
     {
-        IControl control = MakePathControl();
-        double measure = control is LayerWorkControl ? _wayWork : _lastArc;
+        IControl control = MakePathControl(retry);
+        double measure = control is LayerWorkControl ? _wayWork : _wayArc;
         if (_hasWay && retry == 0 && measure > 0 && _pathStride <= 2.5 * measure)
             _equilibrium.Guess(_way, _wayProgress, _pathStride / measure);
         else
@@ -200,27 +202,22 @@ internal sealed class StageMarch
         return Search(new OwnControl(1, 1 - start), retry);
     }
 
-    private double _lastArc;
+    /// <summary>
+    /// Layer work cannot pass the point where a bond gives up its last work; there separations take over as arc length, which goes on growing.
+    /// </summary>
+    private IControl MakePathControl(int retry) => _settings.Path == PathControl.LayerWork && retry < RetriesBeforeArc
+        ? new LayerWorkControl(_acceptedWork + _pathStride, _pathStride)
+        : MakeArcLength(retry);
 
-    private IControl MakePathControl()
+    private ArcLengthControl MakeArcLength(int retry)
     {
-        if (_settings.Path == PathControl.LayerWork)
-            return new LayerWorkControl(_acceptedWork + _pathStride, _pathStride);
-        double scale = ArcScale(out int[] watched);
-        return new ArcLengthControl(watched, scale, (double[])_way.Clone(), _wayProgress, _pathStride);
+        IReadOnlyList<(int, int)> watched = _equilibrium.WatchedSeparations();
+        double[] way = (double[])_way.Clone();
+        if (_settings.Path == PathControl.ArcLength)
+            return new ArcLengthControl(watched, way, _pathStride);
+        double last = new ArcLengthControl(watched, way, 1).Length(way, []);
+        return new ArcLengthControl(watched, way, last * Math.Pow(Shorter, retry - RetriesBeforeArc));
     }
-
-    private double ArcScale(out int[] watched)
-    {
-        watched = _equilibrium.WatchedUnknowns();
-        double sum = 0;
-        foreach (int i in watched)
-            sum += _way[i] * _way[i];
-        return _arcScale = _arcScale > 0 ? _arcScale : Math.Sqrt(sum) / Math.Max(Math.Abs(_wayProgress), 1e-12);
-    }
-
-    private double _arcScale;
-    private double _acceptedWork;
 
     private Attempt Search(IControl control, int retry)
     {
@@ -237,14 +234,11 @@ internal sealed class StageMarch
     private void Accept(Attempt attempt)
     {
         double work = ((IEquilibrium)_equilibrium).LayerWork;
-        double arc = attempt.Control is ArcLengthControl arcLength
-            ? arcLength.Length(_equilibrium.Displacement, _equilibrium.AcceptedDisplacement, _equilibrium.Progress - _equilibrium.AcceptedProgress)
-            : 0;
+        _wayArc = attempt.Control is ArcLengthControl arcLength ? arcLength.Length(_equilibrium.Displacement, _equilibrium.AcceptedDisplacement) : 0;
         for (int i = 0; i < _way.Length; i++)
             _way[i] = _equilibrium.Displacement[i] - _equilibrium.AcceptedDisplacement[i];
         _wayProgress = _equilibrium.Progress - _equilibrium.AcceptedProgress;
         _wayWork = work - _acceptedWork;
-        _lastArc = arc;
         _acceptedWork = work;
         _hasWay = true;
         EnergyAccount account = _ledger.Book();
@@ -258,9 +252,10 @@ internal sealed class StageMarch
         double factor = Factor(attempt);
         if (_onPath)
         {
-            _pathStride = attempt.Control.FixesProgress ? _pathStride : _pathStride * factor;
             if (_settings.Path == PathControl.LayerWork)
-                _pathStride = Math.Min(_pathStride, _settings.LargestLayerWork);
+                _pathStride = Math.Min(attempt.Control is LayerWorkControl ? _pathStride * factor : Math.Max(_wayWork, _pathStride), _settings.LargestLayerWork);
+            else if (!attempt.Control.FixesProgress)
+                _pathStride *= factor;
             _calmPoints = _unstable == 0 && _wayProgress > 0 ? _calmPoints + 1 : 0;
             if (_calmPoints >= _calmNeeded)
             {
@@ -290,14 +285,12 @@ internal sealed class StageMarch
     {
         _onPath = true;
         _calmPoints = 0;
-        _arcScale = 0;
         if (_settings.Path == PathControl.LayerWork)
             _pathStride = Math.Min(0.5 * _wayWork, _settings.LargestLayerWork);
         else
         {
-            double scale = ArcScale(out int[] watched);
-            _lastArc = new ArcLengthControl(watched, scale, _way, _wayProgress, 1).Length(_way, new double[_way.Length], _wayProgress);
-            _pathStride = 0.5 * _lastArc;
+            _wayArc = new ArcLengthControl(_equilibrium.WatchedSeparations(), _way, 1).Length(_way, []);
+            _pathStride = 0.5 * _wayArc;
         }
         _observer.Said(string.Create(CultureInfo.InvariantCulture, $"control: {(_settings.Path == PathControl.LayerWork ? "layer work" : "arc length")} takes over at progress {_equilibrium.AcceptedProgress:G4} ({reason})"));
     }

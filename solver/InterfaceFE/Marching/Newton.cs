@@ -71,8 +71,8 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             double controlError = Math.Abs(control.Equation(equilibrium, _gradient, out _)) / control.Stride;
             slow = residual.OutOfBalance > 0.5 * previous ? slow + 1 : 0;
             bool controlled = control.FixesProgress || controlError <= controlTolerance;
-            bool balanced = residual.Relative <= tolerance;
-            bool atFloor = !balanced && controlled && slow >= 2 && residual.Relative < 1e-6 && residual.OutOfBalance <= equilibrium.ResidualFloor();
+            bool balanced = residual.Relative <= tolerance && residual.HeldInPlace;
+            bool atFloor = !balanced && residual.HeldInPlace && controlled && slow >= 1 && residual.OutOfBalance <= equilibrium.ResidualFloor();
             if (controlled && (balanced || atFloor))
             {
                 report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, atFloor ? "converged at the floor" : "converged"));
@@ -92,7 +92,7 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             correction = solved.Largest;
             equilibrium.Move(1);
             residual = equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
-            if (iteration > 0 && !(residual.OutOfBalance <= 1.5 * previous))
+            if (iteration > 0 && previous > 0 && !(residual.OutOfBalance <= 1.5 * previous))
                 residual = Backtrack(equilibrium, residual);
         }
     }

@@ -141,15 +141,6 @@ public sealed class UnknownMap
     /// <summary>The rigid body that a node follows; -1 when it has unknowns of its own.</summary>
     public int BodyOfNode(int node) => _bodyOfNode[node];
 
-    /// <summary>Whether an unknown is the rotation of a rigid body.</summary>
-    public bool IsRotation(int unknown)
-    {
-        foreach (int first in _ofBody)
-            if (first >= 0 && unknown == first + 2)
-                return true;
-        return false;
-    }
-
     /// <summary>The bodies.</summary>
     public IReadOnlyList<GripBody> Bodies => _bodies;
 

@@ -104,17 +104,19 @@ public sealed class FieldSampler
             Damage = new double[count],
         };
         Array.Fill(field.Damage, 1);
-        Span<double> native = stackalloc double[4 * stations];
         for (int e = 0, bonded = 0; e < mesh.ElementCount; e++)
         {
+            int start = mesh.LowerNodes[e * stations], end = mesh.LowerNodes[(e + 1) * stations - 1];
+            double length = mesh.Position[e + 1] - mesh.Position[e];
+            double tangentX = (_model.Mesh.X[end] - _model.Mesh.X[start]) / length, tangentY = (_model.Mesh.Y[end] - _model.Mesh.Y[start]) / length;
             for (int s = 0; s < stations; s++)
             {
                 int i = e * stations + s;
                 field.Position[i] = mesh.Position[e] + (mesh.Position[e + 1] - mesh.Position[e]) * s / (stations - 1);
                 int lower = mesh.LowerNodes[i], upper = mesh.UpperNodes[i];
-                Separation jump = sample.Layer.Jump(mesh, e, DisplacementX[upper] - DisplacementX[lower], DisplacementY[upper] - DisplacementY[lower]);
-                field.Opening[i] = jump.Opening;
-                field.Sliding[i] = jump.Sliding;
+                double jumpX = DisplacementX[upper] - DisplacementX[lower], jumpY = DisplacementY[upper] - DisplacementY[lower];
+                field.Opening[i] = jumpY * tangentX - jumpX * tangentY;
+                field.Sliding[i] = jumpX * tangentX + jumpY * tangentY;
             }
             if (!mesh.Bonded[e])
                 continue;

@@ -1,0 +1,60 @@
+using InterfaceFE.Decks;
+using InterfaceFE.Mechanics.Layers;
+
+namespace InterfaceFE.Model;
+
+/// <summary>Layers of a deck as cohesive laws.</summary>
+public static class LayerLawFactory
+{
+    /// <summary>The law of a layer.</summary>
+    /// <exception cref="DeckException">The numbers do not make a law.</exception>
+    public static ILayerLaw Create(string name, LayerDeck layer, OutOfPlane outOfPlane)
+    {
+        ConfinedStiffness? bulk = Bulk(layer, outOfPlane);
+        ITractionCurve peel = Curve(layer.Peel, layer.Peel.Opening, bulk?.Peel, $"layers.{name}.peel");
+        ITractionCurve shear = Curve(layer.Shear, layer.Shear.Sliding, bulk?.Shear, $"layers.{name}.shear");
+        double contact = layer.ContactStiffness ?? peel.Stiffness;
+        try
+        {
+            return layer.Mixing == Mixing.BenzeggaghKenane
+                ? new BenzeggaghKenaneLaw((BilinearCurve)peel, (BilinearCurve)shear, layer.Exponent ?? throw new DeckException($"layers.{name}.exponent", "is needed with benzeggagh-kenane"), contact)
+                : new IndependentModesLaw(peel, shear, contact, layer.ReleaseLength, layer.CountedBy == EnergyCount.NetWork ? EnergyCounting.NetWork : EnergyCounting.LargestSeparation);
+        }
+        catch (ArgumentException fault)
+        {
+            throw new DeckException($"layers.{name}", fault.Message);
+        }
+    }
+
+    /// <summary>Stiffness and free opening of a layer from its bulk properties; null when none are given.</summary>
+    public static ConfinedStiffness? Bulk(LayerDeck layer, OutOfPlane outOfPlane)
+    {
+        if (layer.Bulk is not { } bulk)
+            return null;
+        LayerRestraint restraint = bulk.BetweenFaces == Confinement.Confined ? LayerRestraint.Confined
+            : outOfPlane == OutOfPlane.Held ? LayerRestraint.UnconfinedHeld : LayerRestraint.UnconfinedFree;
+        return new ConfinedStiffness(bulk.Young, bulk.Poisson, bulk.Expansion, layer.Thickness, restraint);
+    }
+
+    private static ITractionCurve Curve(CurveDeck curve, IReadOnlyList<double>? separations, double? bulkStiffness, string path)
+    {
+        try
+        {
+            if (curve.Law == CurveShape.Table)
+                return new TableCurve([.. separations ?? []], [.. curve.Traction ?? []]);
+            double stiffness = curve.Stiffness ?? bulkStiffness ?? throw new DeckException($"{path}.stiffness", "is needed, or `bulk` properties of the layer");
+            double strength = curve.Strength ?? throw new DeckException($"{path}.strength", "is needed");
+            double toughness = curve.Toughness ?? throw new DeckException($"{path}.toughness", "is needed");
+            return curve.Law switch
+            {
+                CurveShape.Bilinear => new BilinearCurve(stiffness, strength, toughness),
+                CurveShape.Trapezoid => new TrapezoidCurve(stiffness, strength, toughness, curve.PlateauUntil ?? double.NaN, curve.FinalSeparation ?? double.NaN),
+                _ => new ExponentialCurve(stiffness, strength, toughness, curve.FinalSeparation ?? throw new DeckException($"{path}.final separation", "is needed by an exponential curve")),
+            };
+        }
+        catch (ArgumentException fault)
+        {
+            throw new DeckException(path, fault.Message);
+        }
+    }
+}

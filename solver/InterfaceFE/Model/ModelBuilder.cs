@@ -1,0 +1,48 @@
+using InterfaceFE.Decks;
+using InterfaceFE.Geometry;
+using InterfaceFE.Mechanics.Layers;
+using InterfaceFE.Mechanics.Materials;
+
+namespace InterfaceFE.Model;
+
+/// <summary>Makes the model that is marched from a deck and its mesh.</summary>
+public static class ModelBuilder
+{
+    /// <summary>Builds the model.</summary>
+    /// <exception cref="DeckException">The deck asks for something that the mesh or the mechanics cannot give.</exception>
+    public static SpecimenModel Build(Deck deck, Mesh mesh)
+    {
+        PlaneElasticity[] materials = [.. mesh.Adherends.Select(a => MaterialFactory.Create(deck, a.Material))];
+        SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature))];
+        LayerBlock[] layers = [.. mesh.Joints.Select(joint => Layer(deck, mesh, joint, materials))];
+        (IReadOnlyList<GripBody> bodies, IReadOnlyList<Grip> grips) = GripPlanner.Plan(deck, mesh);
+        var unknowns = new UnknownMap(mesh, bodies);
+        return new SpecimenModel
+        {
+            Mesh = mesh,
+            Unknowns = unknowns,
+            Solids = solids,
+            Layers = layers,
+            Grips = grips,
+            Stages = SequencePlanner.Plan(deck, unknowns, grips),
+            StressFreeTemperature = deck.StressFreeTemperature,
+        };
+    }
+
+    private static LayerBlock Layer(Deck deck, Mesh mesh, MeshedJoint joint, PlaneElasticity[] materials)
+    {
+        LayerDeck layer = deck.Layers![joint.Layer];
+        ILayerLaw law = LayerLawFactory.Create(joint.Layer, layer, deck.Model.OutOfPlane);
+        LayerRule rule = deck.Model.LayerIntegration switch
+        {
+            LayerIntegration.Gauss => LayerRule.Gauss(mesh.NodesPerFace),
+            LayerIntegration.Lobatto => LayerRule.Lobatto(mesh.NodesPerFace),
+            _ => LayerRule.SubIntervals(mesh.NodesPerFace),
+        };
+        double along = 0.5 * (materials[joint.UpperAdherend].Expansion[0] + materials[joint.LowerAdherend].Expansion[0]);
+        double across = deck.Model.OutOfPlane == OutOfPlane.Held ? 0
+            : 0.5 * (deck.Materials[mesh.Adherends[joint.UpperAdherend].Material].Expansion.Z + deck.Materials[mesh.Adherends[joint.LowerAdherend].Material].Expansion.Z);
+        double perKelvin = LayerLawFactory.Bulk(layer, deck.Model.OutOfPlane)?.FreeOpening(1, along, across) ?? 0;
+        return new LayerBlock(mesh, joint, law, layer.Thickness, rule, perKelvin, deck.StressFreeTemperature);
+    }
+}
