@@ -8,7 +8,8 @@ namespace InterfaceFE.Mechanics.Elements;
 /// Why 2×2: with 3×3 points the element locks towards incompressibility and in fully developed yielding (plastic flow keeps the volume), and its trapezoids are stiff in bending
 /// (MacNeal-Harder beam 0.899 of the exact tip movement, against 0.967 here). Four points leave one movement without strain beside the three rigid ones
 /// (u ~ xi·(3·eta² - 1), v ~ -eta·(3·xi² - 1) on a square), but neighbours cannot share it: seen from the two elements beside a common side, its movement across the side
-/// has opposite signs where its movement along the side has equal signs, so no factor fits /// both, and two joined elements have exactly three zero eigenvalues (tested). A single element that is held at a few nodes alone can still swing: a model needs two.
+/// has opposite signs where its movement along the side has equal signs, so no factor fits both. Two joined elements have exactly three zero eigenvalues (tested).
+/// A single element that is held at a few nodes alone can still swing: a model needs two.
 /// </para>
 /// Shape functions: Ergatoudis, Irons and Zienkiewicz, Int. J. Solids Struct. 4 (1968) 31-42 (from memory). Members: <see cref="IPlaneElement"/>.
 /// </summary>
