@@ -37,25 +37,37 @@ internal static class BenchmarkMeshes
             return (radius * Math.Cos(angle), radius * Math.Sin(angle));
         });
 
-    /// <summary>Tapered panel 48 wide, 44 high at the left, 16 at the right from 44 to 60 (Cook 1974).</summary>
-    public static PlaneMesh TaperedPanel(int nodesPerElement, int divisions) => PlaneMesh.Grid(
+    /// <summary>Tapered panel 48 wide, 44 high at the left, 16 at the right from 44 to 60 (Cook 1974); graded: finer towards both clamped corners, of which the one of 108° is singular.</summary>
+    public static PlaneMesh TaperedPanel(int nodesPerElement, int divisions, bool graded = false) => PlaneMesh.Grid(
         nodesPerElement,
         divisions,
         divisions,
         (i, j) =>
         {
-            double s = i / divisions, t = j / divisions, bottom = 44 * s, height = 44 - 28 * s;
+            double s = i / divisions, t = j / divisions;
+            if (graded)
+                (s, t) = (s * s, t < 0.5 ? 2 * t * t : 1 - 2 * (1 - t) * (1 - t));
+            double bottom = 44 * s, height = 44 - 28 * s;
             return (48 * s, bottom + height * t);
-        });
+        },
+        straightSides: true);
 
-    /// <summary>Quarter of an elliptic membrane, inner ellipse 2 × 1, outer 3.25 × 2.75 (NAFEMS LE1): along i from the y axis to the x axis, along j outwards.</summary>
+    /// <summary>Quarter of an elliptic membrane, inner ellipse 2 × 1, outer 3.25 × 2.75 (NAFEMS LE1): along i from the y axis to the x axis, along j outwards; finer towards (2, 0), where the stress is steep.</summary>
     public static PlaneMesh EllipticMembrane(int nodesPerElement, int around, int through) => PlaneMesh.Grid(
         nodesPerElement,
         around,
         through,
         (i, j) =>
         {
-            double angle = Math.PI / 2 * (1 - i / around), t = j / through;
+            double angle = Math.PI / 2 * Graded(around - i, around), t = Graded(j, through);
             return ((2 + 1.25 * t) * Math.Cos(angle), (1 + 1.75 * t) * Math.Sin(angle));
         });
+
+    // Stations (k/count)^1.5, linear between them: a middle node off the middle of its side would spoil the element next to the fine end at any refinement.
+    private static double Graded(double position, int count)
+    {
+        double below = Math.Floor(position);
+        double start = Math.Pow(below / count, 1.5), end = Math.Pow((below + 1) / count, 1.5);
+        return start + (end - start) * (position - below);
+    }
 }

@@ -37,9 +37,9 @@ public sealed class Quadrilateral4Tests
     }
 
     [Fact]
-    public void Inner_parameters_carry_no_inner_force()
+    public void Condensed_stiffness_holds_the_energy_of_the_recovered_modes()
     {
-        // The energy of the element is stationary in its inner parameters: any stiffer choice than the recovered one stores more. Checked through the condensed stiffness.
+        // The condensed stiffness and the recovered modes are two ways to the same energy; without the modes the element stores more.
         double[] coordinates = Samples.Distorted<Quadrilateral4>(21, curved: false), u = Samples.Displacements<Quadrilateral4>(21), k = new double[64];
         PlaneElasticity material = Samples.Laminate(OutOfPlaneState.Held);
         Quadrilateral4.Stiffness(coordinates, material, 2, k);
