@@ -3,13 +3,18 @@ namespace InterfaceFE.Tests.Mechanics.Elements;
 /// <summary>Meshes of published element tests, each as its source draws it.</summary>
 internal static class BenchmarkMeshes
 {
-    /// <summary>Distorted patch 0.24 × 0.12 with four inner nodes (MacNeal and Harder, Finite Elem. Anal. Des. 1 (1985) 3-20). Corner nodes 0 to 3 are those of the outline.</summary>
+    /// <summary>
+    /// Distorted patch 0.24 × 0.12 with four inner nodes (MacNeal and Harder, Finite Elem. Anal. Des. 1 (1985) 3-20). Corner nodes 0 to 3 are those of the
+    /// outline.
+    /// </summary>
     public static PlaneMesh DistortedPatch(int nodesPerElement) => PlaneMesh.FromCorners(
         nodesPerElement,
         [(0, 0), (0.24, 0), (0.24, 0.12), (0, 0.12), (0.04, 0.02), (0.18, 0.03), (0.16, 0.08), (0.08, 0.08)],
         [[0, 1, 5, 4], [1, 2, 6, 5], [2, 3, 7, 6], [3, 0, 4, 7], [4, 5, 6, 7]]);
 
-    /// <summary>Straight beam 6 × 0.2 of 6 × 1 elements, upright lines leaning by the given amount at the top and the opposite at the bottom (same source).</summary>
+    /// <summary>
+    /// Straight beam 6 × 0.2 of 6 × 1 elements, upright lines leaning by the given amount at the top and the opposite at the bottom (same source).
+    /// </summary>
     /// <param name="nodesPerElement">4 or 8.</param>
     /// <param name="lean">Shift of the top end of an inner upright line; the bottom end shifts by the opposite.</param>
     /// <param name="alternate">Whether neighbouring lines lean to opposite sides (trapezoids) or to one side (parallelograms).</param>
@@ -37,7 +42,10 @@ internal static class BenchmarkMeshes
             return (radius * Math.Cos(angle), radius * Math.Sin(angle));
         });
 
-    /// <summary>Tapered panel 48 wide, 44 high at the left, 16 at the right from 44 to 60 (Cook 1974); graded: finer towards both clamped corners, of which the one of 108° is singular.</summary>
+    /// <summary>
+    /// Tapered panel 48 wide, 44 high at the left, 16 at the right from 44 to 60 (Cook 1974); graded: finer towards both clamped corners, of which the one
+    /// of 108° is singular.
+    /// </summary>
     public static PlaneMesh TaperedPanel(int nodesPerElement, int divisions, bool graded = false) => PlaneMesh.Grid(
         nodesPerElement,
         divisions,
@@ -52,7 +60,10 @@ internal static class BenchmarkMeshes
         },
         straightSides: true);
 
-    /// <summary>Quarter of an elliptic membrane, inner ellipse 2 × 1, outer 3.25 × 2.75 (NAFEMS LE1): along i from the y axis to the x axis, along j outwards; finer towards (2, 0), where the stress is steep.</summary>
+    /// <summary>
+    /// Quarter of an elliptic membrane, inner ellipse 2 × 1, outer 3.25 × 2.75 (NAFEMS LE1): along i from the y axis to the x axis, along j outwards; finer
+    /// towards (2, 0), where the stress is steep.
+    /// </summary>
     public static PlaneMesh EllipticMembrane(int nodesPerElement, int around, int through) => PlaneMesh.Grid(
         nodesPerElement,
         around,

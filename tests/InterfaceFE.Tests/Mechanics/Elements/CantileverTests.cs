@@ -6,8 +6,9 @@ using Xunit;
 namespace InterfaceFE.Tests.Mechanics.Elements;
 
 /// <summary>
-/// Straight beam 6 × 0.2 × 0.1, E = 1e7, nu = 0.3, unit end loads, 6 × 1 elements (MacNeal and Harder, Finite Elem. Anal. Des. 1 (1985) 3-20): extension 3.0e-5,
-/// movement under in-plane shear 0.1081 (from memory). The gates are the project's own; values without a gate are pinned as regressions with the band stated beside them.
+/// Straight beam 6 × 0.2 × 0.1, E = 1e7, nu = 0.3, unit end loads, 6 × 1 elements (MacNeal and Harder, Finite Elem. Anal. Des. 1 (1985) 3-20): extension
+/// 3.0e-5, movement under in-plane shear 0.1081 (from memory). The gates are the project's own; values without a gate are pinned as regressions with the
+/// band stated beside them.
 /// </summary>
 public sealed class CantileverTests(ITestOutputHelper output)
 {

@@ -8,7 +8,9 @@ public sealed class ConsistencyTestsOfEightNodes : ConsistencyTests<Quadrilatera
 
 public sealed class ConsistencyTestsOfFourNodes : ConsistencyTests<Quadrilateral4>;
 
-/// <summary>Stiffness, forces, stresses and energy of one distorted element of a turned laminate, each from the others; and what must not happen under rigid motion.</summary>
+/// <summary>
+/// Stiffness, forces, stresses and energy of one distorted element of a turned laminate, each from the others; and what must not happen under rigid motion.
+/// </summary>
 public abstract class ConsistencyTests<TElement>
     where TElement : struct, IPlaneElement
 {
@@ -103,7 +105,8 @@ public abstract class ConsistencyTests<TElement>
     [Fact]
     public void Stresses_are_those_of_the_displacement_gradients()
     {
-        double[] coordinates = Samples.Distorted<TElement>(10, curved: true), u = Samples.Displacements<TElement>(10), gradients = new double[16], stresses = new double[16];
+        double[] coordinates = Samples.Distorted<TElement>(10, curved: true), u = Samples.Displacements<TElement>(10);
+        double[] gradients = new double[16], stresses = new double[16];
         PlaneElasticity material = Samples.Laminate(OutOfPlaneState.Held);
         TElement.DisplacementGradients(coordinates, material, u, gradients);
         TElement.Stresses(coordinates, material, u, 25, stresses);
@@ -139,7 +142,8 @@ public abstract class ConsistencyTests<TElement>
     [Fact]
     public void Infinitesimal_rigid_motion_gives_no_force()
     {
-        double[] coordinates = Samples.Distorted<TElement>(12, curved: true), u = new double[TElement.Unknowns], force = new double[TElement.Unknowns], k = new double[TElement.Unknowns * TElement.Unknowns];
+        int n = TElement.Unknowns;
+        double[] coordinates = Samples.Distorted<TElement>(12, curved: true), u = new double[n], force = new double[n], k = new double[n * n];
         PlaneElasticity material = Samples.Laminate(OutOfPlaneState.Held);
         TElement.Stiffness(coordinates, material, Width, k);
         for (int i = 0; i < TElement.Nodes; i++)
@@ -158,7 +162,8 @@ public abstract class ConsistencyTests<TElement>
     public void Turning_element_material_and_displacements_together_turns_the_force()
     {
         const double angle = 0.9;
-        double[] coordinates = Samples.Distorted<TElement>(13, curved: true), u = Samples.Displacements<TElement>(13), before = new double[TElement.Unknowns], after = new double[TElement.Unknowns];
+        double[] coordinates = Samples.Distorted<TElement>(13, curved: true), u = Samples.Displacements<TElement>(13);
+        double[] before = new double[TElement.Unknowns], after = new double[TElement.Unknowns];
         PlaneElasticity material = Samples.Laminate(OutOfPlaneState.Held);
         TElement.InternalForce(coordinates, material, Width, u, 20, before);
         TElement.InternalForce(Turned(coordinates), material.Rotated(angle), Width, Turned(u), 20, after);

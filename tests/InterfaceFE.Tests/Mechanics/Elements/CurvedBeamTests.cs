@@ -6,8 +6,8 @@ using Xunit;
 namespace InterfaceFE.Tests.Mechanics.Elements;
 
 /// <summary>
-/// Quarter ring of radii 4.12 and 4.32, thickness 0.1, E = 1e7, nu = 0.25, clamped at one end, unit load across the other (MacNeal and Harder, Finite Elem. Anal. Des. 1
-/// (1985) 3-20): movement along the load 0.08734.
+/// Quarter ring of radii 4.12 and 4.32, thickness 0.1, E = 1e7, nu = 0.25, clamped at one end, unit load across the other (MacNeal and Harder, Finite Elem.
+/// Anal. Des. 1 (1985) 3-20): movement along the load 0.08734.
 /// </summary>
 public sealed class CurvedBeamTests(ITestOutputHelper output)
 {

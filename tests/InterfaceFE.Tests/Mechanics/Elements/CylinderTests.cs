@@ -6,8 +6,8 @@ using Xunit;
 namespace InterfaceFE.Tests.Mechanics.Elements;
 
 /// <summary>
-/// Thick cylinder, radii 3 and 9, unit pressure inside, E = 1000, held out of plane, towards incompressibility (case of MacNeal and Harder, Finite Elem. Anal. Des. 1 (1985)
-/// 3-20); reference computed from the closed form of Lamé, u(a) = (1+nu)·p·a²·[(1-2nu)·a + b²/a]/(E·(b² - a²)).
+/// Thick cylinder, radii 3 and 9, unit pressure inside, E = 1000, held out of plane, towards incompressibility (case of MacNeal and Harder, Finite Elem.
+/// Anal. Des. 1 (1985) 3-20); reference computed from the closed form of Lamé, u(a) = (1+nu)·p·a²·[(1-2nu)·a + b²/a]/(E·(b² - a²)).
 /// </summary>
 public sealed class CylinderTests(ITestOutputHelper output)
 {
@@ -60,10 +60,11 @@ public sealed class CylinderTests(ITestOutputHelper output)
     private double InnerMovement<TElement>(int around, int through, double poisson)
         where TElement : struct, IPlaneElement
     {
-        PlaneMesh mesh = BenchmarkMeshes.QuarterRing(TElement.Nodes, around, through, 3, 9);
-        double movement = Solve<TElement>(mesh, poisson).Displacements[2 * mesh.Right[0]];
+        PlaneMesh ring = BenchmarkMeshes.QuarterRing(TElement.Nodes, around, through, 3, 9);
+        double movement = Solve<TElement>(ring, poisson).Displacements[2 * ring.Right[0]];
         double closed = (1 + poisson) * 9 * ((1 - 2 * poisson) * 3 + 27) / (1000 * 72);
-        output.WriteLine(string.Create(CultureInfo.InvariantCulture, $"{TElement.Nodes} nodes, {around} × {through}, nu {poisson}: {movement:E5}, {movement / closed:F5} of the closed form"));
+        string mesh = string.Create(CultureInfo.InvariantCulture, $"{TElement.Nodes} nodes, {around} × {through}, nu {poisson}");
+        output.WriteLine(string.Create(CultureInfo.InvariantCulture, $"{mesh}: {movement:E5}, {movement / closed:F5} of the closed form"));
         return movement;
     }
 

@@ -34,7 +34,10 @@ internal sealed class PlaneMesh
         return coordinates;
     }
 
-    /// <summary>Grid of along × through elements. The map takes positions counted in elements; middle nodes lie on the map, or half way between corners with straight sides.</summary>
+    /// <summary>
+    /// Grid of along × through elements. The map takes positions counted in elements; middle nodes lie on the map, or half way between corners with straight
+    /// sides.
+    /// </summary>
     public static PlaneMesh Grid(int nodesPerElement, int along, int through, Func<double, double, (double X, double Y)> map, bool straightSides = false)
     {
         int step = nodesPerElement == 8 ? 2 : 1;
