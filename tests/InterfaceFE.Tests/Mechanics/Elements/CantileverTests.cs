@@ -20,7 +20,7 @@ public sealed class CantileverTests(ITestOutputHelper output)
     {
         double ratio = Bend<Quadrilateral8>(shape, lean, alternate);
         Close.To(1, ratio, shape == "trapezoid" ? 0.05 : 0.02, 0, shape);
-        // Values of an independent program of the project's preparation, three digits.
+        // Ratios computed earlier for the same meshes (from memory), three digits.
         Close.To(measuredBefore, ratio, 0, 6e-4, shape);
     }
 
