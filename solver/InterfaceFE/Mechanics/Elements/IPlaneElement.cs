@@ -5,13 +5,13 @@ namespace InterfaceFE.Mechanics.Elements;
 /// <summary>
 /// A plane solid element for small rotations: kernels over spans, pure functions of their arguments, no allocation, safe to call from any thread.
 /// <para>
-/// Nodes: corners counter-clockwise, then (eight nodes) the middle of each side beginning with side 0-1. Coordinates, displacements and forces run
-/// x, y of node 0, x, y of node 1, ... [mm, mm, N], length <see cref="Unknowns"/>. Natural coordinates xi, eta in [-1, 1]; corner 0 is at (-1, -1), corner 1 at (1, -1).
-/// Gauss points: <see cref="GaussPoints.Count"/>, point i nearest to corner i. Four-component stresses run xx, yy, zz, xy.
+/// Nodes: corners counter-clockwise, then (eight nodes) the middle of each side beginning with side 0-1. Coordinates, displacements and forces run x, y of
+/// node 0, x, y of node 1, ... [mm, mm, N], length <see cref="Unknowns"/>. Natural coordinates xi, eta in [-1, 1]; corner 0 is at (-1, -1), corner 1 at (1,
+/// -1). Gauss points: <see cref="GaussPoints.Count"/>, point i nearest to corner i. Four-component stresses run xx, yy, zz, xy.
 /// </para>
 /// <para>
-/// Nothing throws on a badly shaped element: results are then wrong or not finite, so <see cref="Shape"/> is asked once when the model is built.
-/// Spans that are too short throw <see cref="ArgumentException"/> or <see cref="IndexOutOfRangeException"/>. Outputs must not alias inputs and are overwritten.
+/// Nothing throws on a badly shaped element: results are then wrong or not finite, so <see cref="Shape"/> is asked once when the model is built. Spans that
+/// are too short throw <see cref="ArgumentException"/> or <see cref="IndexOutOfRangeException"/>. Outputs must not alias inputs and are overwritten.
 /// </para>
 /// </summary>
 public interface IPlaneElement
@@ -53,8 +53,8 @@ public interface IPlaneElement
     static abstract void Stiffness(ReadOnlySpan<double> coordinates, PlaneElasticity material, double width, Span<double> stiffness);
 
     /// <summary>
-    /// Internal force per kelvin of temperature change at fixed displacements [N/K]: the derivative of <see cref="InternalForce"/> by the temperature change,
-    /// -(integral of Bᵀ·D·expansion). On the side of the loads it counts with the opposite sign.
+    /// Internal force per kelvin of temperature change at fixed displacements [N/K]: the derivative of <see cref="InternalForce"/> by the temperature
+    /// change, -(integral of Bᵀ·D·expansion). On the side of the loads it counts with the opposite sign.
     /// </summary>
     static abstract void ThermalForce(ReadOnlySpan<double> coordinates, PlaneElasticity material, double width, Span<double> force);
 
@@ -68,17 +68,19 @@ public interface IPlaneElement
     /// <param name="displacements">Node displacements.</param>
     /// <param name="temperatureChange">Temperature change [K].</param>
     /// <param name="stresses">Point after point xx, yy, zz, xy; length 16.</param>
-    static abstract void Stresses(ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, double temperatureChange, Span<double> stresses);
+    static abstract void Stresses(
+        ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, double temperatureChange, Span<double> stresses);
 
     /// <summary>
-    /// Displacement gradient at the Gauss points, the one whose strain gives <see cref="Stresses"/> (inner modes of an element included; they depend on the material's stiffness,
-    /// not on temperature).
+    /// Displacement gradient at the Gauss points, the one whose strain gives <see cref="Stresses"/> (inner modes of an element included; they depend on the
+    /// material's stiffness, not on temperature).
     /// </summary>
     /// <param name="coordinates">Node coordinates.</param>
     /// <param name="material">Material.</param>
     /// <param name="displacements">Node displacements.</param>
     /// <param name="gradients">Point after point du/dx, du/dy, dv/dx, dv/dy; length 16.</param>
-    static abstract void DisplacementGradients(ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, Span<double> gradients);
+    static abstract void DisplacementGradients(
+        ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, Span<double> gradients);
 
     /// <summary>Elastic energy of the element [mJ], out-of-plane stress included (<see cref="PlaneElasticity.EnergyDensity"/>).</summary>
     static abstract double StrainEnergy(
@@ -89,7 +91,9 @@ public interface IPlaneElement
     /// <param name="positions">Point after point x, y; length 8.</param>
     static abstract void GaussPositions(ReadOnlySpan<double> coordinates, Span<double> positions);
 
-    /// <summary>Values at the nodes from values at the Gauss points, by the bilinear function through the four points; exact for fields linear in xi and eta.</summary>
+    /// <summary>
+    /// Values at the nodes from values at the Gauss points, by the bilinear function through the four points; exact for fields linear in xi and eta.
+    /// </summary>
     /// <param name="components">Number of values a point.</param>
     /// <param name="gaussValues">Point after point; length 4·components.</param>
     /// <param name="nodeValues">Node after node; length <see cref="Nodes"/>·components.</param>

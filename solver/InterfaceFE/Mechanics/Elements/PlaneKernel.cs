@@ -3,8 +3,8 @@ using InterfaceFE.Mechanics.Materials;
 namespace InterfaceFE.Mechanics.Elements;
 
 /// <summary>
-/// What plane elements share once the gradients of their shape functions are known. Gradients run point after point, <c>count</c> functions each; an incompatible mode counts
-/// as one more function. Vectors over functions run x, y of function 0, x, y of function 1, ...
+/// What plane elements share once the gradients of their shape functions are known. Gradients run point after point, <c>count</c> functions each; an
+/// incompatible mode counts as one more function. Vectors over functions run x, y of function 0, x, y of function 1, ...
 /// </summary>
 internal static class PlaneKernel
 {
@@ -46,13 +46,19 @@ internal static class PlaneKernel
         stiffness.Clear();
         for (int point = 0; point < GaussPoints.Count; point++)
             AddStiffness(byX.Slice(point * count, count), byY.Slice(point * count, count), areas[point] * width, material.Stiffness, stiffness);
-        for (int row = 1; row < size; row++)
-            for (int column = 0; column < row; column++)
-                stiffness[row * size + column] = stiffness[column * size + row];
+        Mirror(size, stiffness);
     }
 
-    // Upper triangle of Bᵀ·D·B·factor.
-    private static void AddStiffness(ReadOnlySpan<double> byX, ReadOnlySpan<double> byY, double factor, ReadOnlySpan<double> d, Span<double> stiffness)
+    /// <summary>Copies the upper triangle of a row-major matrix to the lower.</summary>
+    public static void Mirror(int size, Span<double> matrix)
+    {
+        for (int row = 1; row < size; row++)
+            for (int column = 0; column < row; column++)
+                matrix[row * size + column] = matrix[column * size + row];
+    }
+
+    /// <summary>Adds the upper triangle of Bᵀ·D·B·factor of one point, D symmetric.</summary>
+    public static void AddStiffness(ReadOnlySpan<double> byX, ReadOnlySpan<double> byY, double factor, ReadOnlySpan<double> d, Span<double> stiffness)
     {
         int size = 2 * byX.Length;
         for (int j = 0; j < byX.Length; j++)
@@ -125,7 +131,14 @@ internal static class PlaneKernel
 
     /// <summary>Force of stresses on the first <paramref name="loaded"/> functions: integral of Bᵀ·stress, overwritten.</summary>
     public static void Force(
-        int count, int loaded, ReadOnlySpan<double> byX, ReadOnlySpan<double> byY, ReadOnlySpan<double> areas, ReadOnlySpan<double> stresses, double width, Span<double> force)
+        int count,
+        int loaded,
+        ReadOnlySpan<double> byX,
+        ReadOnlySpan<double> byY,
+        ReadOnlySpan<double> areas,
+        ReadOnlySpan<double> stresses,
+        double width,
+        Span<double> force)
     {
         force[..(2 * loaded)].Clear();
         for (int point = 0; point < GaussPoints.Count; point++)
@@ -195,7 +208,8 @@ internal static class PlaneKernel
         }
     }
 
-    private static void Strain(ReadOnlySpan<double> gradient, Span<double> strain)
+    /// <summary>Strain xx, yy, xy (engineering) of a gradient.</summary>
+    public static void Strain(ReadOnlySpan<double> gradient, Span<double> strain)
     {
         strain[0] = gradient[0];
         strain[1] = gradient[3];

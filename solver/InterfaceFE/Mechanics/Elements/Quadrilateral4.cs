@@ -3,12 +3,14 @@ using InterfaceFE.Mechanics.Materials;
 namespace InterfaceFE.Mechanics.Elements;
 
 /// <summary>
-/// Four-node quadrilateral with two incompatible modes, 2×2 Gauss points. The modes 1 - xi² and 1 - eta² (Wilson, Taylor, Doherty and Ghaboussi 1973) bend without shear locking;
-/// their gradients are taken with the Jacobian J0 of the element's centre and weighed by det J0/det J, so that their integral vanishes and every distorted mesh passes the
-/// patch test (Taylor, Beresford and Wilson, Int. J. Numer. Meth. Eng. 10 (1976) 1211-1219, from memory). Their four parameters are condensed inside the element and follow from
-/// the displacements. As the integral of their gradients is 0, a uniform temperature change moves none of them.
+/// Four-node quadrilateral with two incompatible modes, 2×2 Gauss points. The modes 1 - xi² and 1 - eta² (Wilson, Taylor, Doherty and Ghaboussi 1973) bend
+/// without shear locking; their gradients are taken with the Jacobian J0 of the element's centre and weighed by det J0/det J, so that their integral
+/// vanishes and every distorted mesh passes the patch test (Taylor, Beresford and Wilson, Int. J. Numer. Meth. Eng. 10 (1976) 1211-1219, from memory). Their
+/// four parameters are condensed inside the element and follow from the displacements. As the integral of their gradients is 0, a uniform temperature change
+/// moves none of them.
 /// <para>
-/// On trapezoids in bending the element is stiff (MacNeal-Harder beam 0.05 of the exact tip movement): use it on rectangles and parallelograms, or use eight nodes.
+/// On trapezoids in bending the element is stiff (MacNeal-Harder beam 0.05 of the exact tip movement): use it on rectangles and parallelograms, or use eight
+/// nodes.
 /// </para>
 /// Members: <see cref="IPlaneElement"/>.
 /// </summary>
@@ -113,7 +115,8 @@ public readonly struct Quadrilateral4 : IPlaneElement
     }
 
     /// <inheritdoc/>
-    public static void Stresses(ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, double temperatureChange, Span<double> stresses)
+    public static void Stresses(
+        ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, double temperatureChange, Span<double> stresses)
     {
         Span<double> gradients = stackalloc double[4 * Points];
         DisplacementGradients(coordinates, material, displacements, gradients);
@@ -121,7 +124,8 @@ public readonly struct Quadrilateral4 : IPlaneElement
     }
 
     /// <inheritdoc/>
-    public static void DisplacementGradients(ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, Span<double> gradients)
+    public static void DisplacementGradients(
+        ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, Span<double> gradients)
     {
         Span<double> byX = stackalloc double[Points * Functions], byY = stackalloc double[Points * Functions], areas = stackalloc double[Points];
         FullGradients(coordinates, byX, byY, areas);
@@ -187,7 +191,12 @@ public readonly struct Quadrilateral4 : IPlaneElement
     }
 
     private static void GradientsWithModes(
-        ReadOnlySpan<double> byX, ReadOnlySpan<double> byY, ReadOnlySpan<double> areas, PlaneElasticity material, ReadOnlySpan<double> displacements, Span<double> gradients)
+        ReadOnlySpan<double> byX,
+        ReadOnlySpan<double> byY,
+        ReadOnlySpan<double> areas,
+        PlaneElasticity material,
+        ReadOnlySpan<double> displacements,
+        Span<double> gradients)
     {
         Span<double> all = stackalloc double[FullCount];
         displacements[..UnknownCount].CopyTo(all);
@@ -197,7 +206,12 @@ public readonly struct Quadrilateral4 : IPlaneElement
 
     // Inner rows: K_aa·a = -K_au·u, by back substitution in the matrix from which the inner unknowns were eliminated.
     private static void SolveInner(
-        ReadOnlySpan<double> byX, ReadOnlySpan<double> byY, ReadOnlySpan<double> areas, PlaneElasticity material, ReadOnlySpan<double> displacements, Span<double> parameters)
+        ReadOnlySpan<double> byX,
+        ReadOnlySpan<double> byY,
+        ReadOnlySpan<double> areas,
+        PlaneElasticity material,
+        ReadOnlySpan<double> displacements,
+        Span<double> parameters)
     {
         Span<double> full = stackalloc double[FullCount * FullCount];
         PlaneKernel.Stiffness(Functions, byX, byY, areas, material, 1, full);
@@ -213,7 +227,8 @@ public readonly struct Quadrilateral4 : IPlaneElement
         }
     }
 
-    // Symmetric elimination of the inner unknowns, last first: the leading 8×8 becomes the condensed stiffness, row k keeps the equation of unknown k with the later ones gone.
+    // Symmetric elimination of the inner unknowns, last first: the leading 8×8 becomes the condensed stiffness,
+    // row k keeps the equation of unknown k with the later ones gone.
     private static void EliminateInner(Span<double> full)
     {
         for (int pivot = FullCount - 1; pivot >= UnknownCount; pivot--)

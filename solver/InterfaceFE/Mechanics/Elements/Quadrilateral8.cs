@@ -5,10 +5,11 @@ namespace InterfaceFE.Mechanics.Elements;
 /// <summary>
 /// Eight-node quadrilateral of the serendipity family, integrated with 2×2 Gauss points.
 /// <para>
-/// Why 2×2: with 3×3 points the element locks towards incompressibility and in fully developed yielding (plastic flow keeps the volume), and its trapezoids are stiff in bending
-/// (MacNeal-Harder beam 0.899 of the exact tip movement, against 0.967 here). Four points leave one movement without strain beside the three rigid ones
-/// (u ~ xi·(3·eta² - 1), v ~ -eta·(3·xi² - 1) on a square), but neighbours cannot share it: seen from the two elements beside a common side, its movement across the side
-/// has opposite signs where its movement along the side has equal signs, so no factor fits /// both, and two joined elements have exactly three zero eigenvalues (tested). A single element that is held at a few nodes alone can still swing: a model needs two.
+/// Why 2×2: with 3×3 points the element locks towards incompressibility and in fully developed yielding (plastic flow keeps the volume), and its trapezoids
+/// are stiff in bending (MacNeal-Harder beam 0.899 of the exact tip movement, against 0.967 here). Four points leave one movement without strain beside the
+/// three rigid ones (u ~ xi·(3·eta² - 1), v ~ -eta·(3·xi² - 1) on a square), but neighbours cannot share it: seen from the two elements beside a common
+/// side, its movement across the side has opposite signs where its movement along the side has equal signs, so no factor fits both. Two joined elements have
+/// exactly three zero eigenvalues (tested). A single element that is held at a few nodes alone can still swing: a model needs two.
 /// </para>
 /// Shape functions: Ergatoudis, Irons and Zienkiewicz, Int. J. Solids Struct. 4 (1968) 31-42 (from memory). Members: <see cref="IPlaneElement"/>.
 /// </summary>
@@ -121,7 +122,8 @@ public readonly struct Quadrilateral8 : IPlaneElement
     }
 
     /// <inheritdoc/>
-    public static void Stresses(ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, double temperatureChange, Span<double> stresses)
+    public static void Stresses(
+        ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, double temperatureChange, Span<double> stresses)
     {
         Span<double> gradients = stackalloc double[4 * Points];
         DisplacementGradients(coordinates, material, displacements, gradients);
@@ -129,7 +131,8 @@ public readonly struct Quadrilateral8 : IPlaneElement
     }
 
     /// <inheritdoc/>
-    public static void DisplacementGradients(ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, Span<double> gradients)
+    public static void DisplacementGradients(
+        ReadOnlySpan<double> coordinates, PlaneElasticity material, ReadOnlySpan<double> displacements, Span<double> gradients)
     {
         Span<double> byX = stackalloc double[Points * NodeCount], byY = stackalloc double[Points * NodeCount], areas = stackalloc double[Points];
         ShapeGradients(coordinates, byX, byY, areas);
@@ -145,6 +148,57 @@ public readonly struct Quadrilateral8 : IPlaneElement
         ShapeGradients(coordinates, byX, byY, areas);
         PlaneKernel.Gradients(NodeCount, byX, byY, displacements, gradients);
         return PlaneKernel.Energy(gradients, areas, material, width, temperatureChange);
+    }
+
+    /// <summary>
+    /// Force, tangent and energy of the element for any material law with a state at each Gauss point. (Four nodes with incompatible modes would have to
+    /// iterate on their inner parameters: yielding is a matter of eight nodes.)
+    /// </summary>
+    /// <typeparam name="TLaw">Type of the law.</typeparam>
+    /// <param name="coordinates">Node coordinates, length 16.</param>
+    /// <param name="law">Law, the same at all points.</param>
+    /// <param name="width">Width out of plane [mm].</param>
+    /// <param name="displacements">Node displacements at the end of the stride, length 16.</param>
+    /// <param name="temperatureChange">Temperature change from the stress-free state [K].</param>
+    /// <param name="accepted">Accepted state, point after point, length 4·StateSize.</param>
+    /// <param name="tentative">State at the end of the stride, same length, overwritten; must not alias <paramref name="accepted"/>.</param>
+    /// <param name="force">Internal force [N], length 16, overwritten.</param>
+    /// <param name="tangent">Derivative of the force by the displacements [N/mm], row-major 16×16, symmetric, overwritten.</param>
+    /// <returns>Energies of the element [mJ].</returns>
+    public static PlaneEnergy Respond<TLaw>(
+        ReadOnlySpan<double> coordinates,
+        TLaw law,
+        double width,
+        ReadOnlySpan<double> displacements,
+        double temperatureChange,
+        ReadOnlySpan<double> accepted,
+        Span<double> tentative,
+        Span<double> force,
+        Span<double> tangent)
+        where TLaw : IPlaneLaw
+    {
+        Span<double> byX = stackalloc double[Points * NodeCount], byY = stackalloc double[Points * NodeCount], areas = stackalloc double[Points];
+        Span<double> gradient = stackalloc double[4], strain = stackalloc double[3], stresses = stackalloc double[4 * Points], moduli = stackalloc double[9];
+        ShapeGradients(coordinates, byX, byY, areas);
+        tangent = tangent[..(UnknownCount * UnknownCount)];
+        tangent.Clear();
+        double stored = 0, dissipated = 0;
+        int state = law.StateSize;
+        for (int point = 0; point < Points; point++)
+        {
+            ReadOnlySpan<double> gx = byX.Slice(point * NodeCount, NodeCount), gy = byY.Slice(point * NodeCount, NodeCount);
+            PlaneKernel.Gradient(gx, gy, displacements, gradient);
+            PlaneKernel.Strain(gradient, strain);
+            PlaneEnergy energy = law.Update(
+                strain, temperatureChange, accepted.Slice(point * state, state), tentative.Slice(point * state, state), stresses.Slice(4 * point, 4), moduli);
+            double volume = areas[point] * width;
+            stored += energy.Stored * volume;
+            dissipated += energy.Dissipated * volume;
+            PlaneKernel.AddStiffness(gx, gy, volume, moduli, tangent);
+        }
+        PlaneKernel.Mirror(UnknownCount, tangent);
+        PlaneKernel.Force(NodeCount, NodeCount, byX, byY, areas, stresses, width, force);
+        return new PlaneEnergy(stored, dissipated);
     }
 
     /// <inheritdoc/>

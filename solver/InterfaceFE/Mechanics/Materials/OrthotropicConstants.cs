@@ -28,10 +28,12 @@ public readonly record struct OrthotropicConstants(
     double ExpansionY = 0,
     double ExpansionZ = 0)
 {
+    private const string Consequence = "a strain exists whose elastic energy is not positive";
+
     /// <summary>
-    /// Why these constants are no stable elastic material, in words, or null when they are one. The elastic energy must be positive for every strain:
-    /// moduli above 0, nu_ij·nu_ji below 1 for each pair, and 1 - nu_xy·nu_yx - nu_xz·nu_zx - nu_zy·nu_yz - 2·nu_xy·nu_yz·nu_zx above 0
-    /// (Lempriere, AIAA Journal 6 (1968) 2226-2227, from memory; it is the determinant of the compliance of the normal strains).
+    /// Why these constants are no stable elastic material, in words, or null when they are one. The elastic energy must be positive for every strain: moduli
+    /// above 0, nu_ij·nu_ji below 1 for each pair, and 1 - nu_xy·nu_yx - nu_xz·nu_zx - nu_zy·nu_yz - 2·nu_xy·nu_yz·nu_zx above 0 (Lempriere, AIAA Journal 6
+    /// (1968) 2226-2227, from memory; it is the determinant of the compliance of the normal strains).
     /// </summary>
     public string? Fault()
     {
@@ -44,20 +46,23 @@ public readonly record struct OrthotropicConstants(
         if (ShearXy <= 0)
             return Words($"the shear modulus xy must be greater than 0, given {ShearXy} MPa");
         double yx = PoissonXy * YoungY / YoungX, zx = PoissonXz * YoungZ / YoungX, yz = PoissonZy * YoungY / YoungZ;
-        return PairFault("xy", PoissonXy, "yx", yx) ?? PairFault("xz", PoissonXz, "zx", zx) ?? PairFault("zy", PoissonZy, "yz", yz) ?? TripleFault(yx, zx, yz);
+        return PairFault("xy", PoissonXy, "yx", yx)
+            ?? PairFault("xz", PoissonXz, "zx", zx)
+            ?? PairFault("zy", PoissonZy, "yz", yz)
+            ?? TripleFault(yx, zx, yz);
     }
 
     private static string? PairFault(string name, double given, string reverseName, double reverse) =>
         given * reverse < 1
             ? null
-            : Words($"Poisson's ratios {name} and {reverseName} multiply to {given * reverse}, which must be below 1: a strain exists whose elastic energy is not positive");
+            : Words($"Poisson's ratios {name} and {reverseName} multiply to {given * reverse}, which must be below 1: {Consequence}");
 
     private string? TripleFault(double yx, double zx, double yz)
     {
         double determinant = 1 - PoissonXy * yx - PoissonXz * zx - PoissonZy * yz - 2 * PoissonXy * yz * zx;
         return determinant > 0
             ? null
-            : Words($"Poisson's ratios together give 1 - xy·yx - xz·zx - zy·yz - 2·xy·yz·zx = {determinant}, which must be greater than 0: a strain exists whose elastic energy is not positive");
+            : Words($"Poisson's ratios together give 1 - xy·yx - xz·zx - zy·yz - 2·xy·yz·zx = {determinant}, which must be greater than 0: {Consequence}");
     }
 
     private static string Words(FormattableString text) => text.ToString(CultureInfo.InvariantCulture);

@@ -3,16 +3,17 @@ using System.Globalization;
 namespace InterfaceFE.Mechanics.Materials;
 
 /// <summary>
-/// Linear elastic law of a plane model, isotropic or orthotropic, held or free out of plane, in the model's axes. Immutable and safe to share between threads.
-/// In-plane order is xx, yy, xy with engineering shear; a four-component stress is xx, yy, zz, xy. Stress in MPa, temperature change in K from the stress-free state.
+/// Linear elastic law of a plane model, isotropic or orthotropic, held or free out of plane, in the model's axes. Immutable and safe to share between
+/// threads. In-plane order is xx, yy, xy with engineering shear; a four-component stress is xx, yy, zz, xy. Stress in MPa, temperature change in K from the
+/// stress-free state.
 /// <para>
-/// With the in-plane compliance S (3×3), the column s of out-of-plane stress on in-plane strain and s_zz = 1/E_z: held means 0 = s·stress + s_zz·szz + alpha_z·dT.
-/// Eliminating szz leaves strain = (S - s·sᵀ/s_zz)·stress + (alpha - s·alpha_z/s_zz)·dT, so the in-plane expansion is alpha_x + nu_zx·alpha_z,
+/// With the in-plane compliance S (3×3), the column s of out-of-plane stress on in-plane strain and s_zz = 1/E_z: held means 0 = s·stress + s_zz·szz +
+/// alpha_z·dT. Eliminating szz leaves strain = (S - s·sᵀ/s_zz)·stress + (alpha - s·alpha_z/s_zz)·dT, so the in-plane expansion is alpha_x + nu_zx·alpha_z,
 /// alpha_y + nu_zy·alpha_z (isotropic: (1 + nu)·alpha), and szz = nu_zx·sxx + nu_zy·syy - E_z·alpha_z·dT. Free means szz = 0 and S, alpha as they are.
 /// Derived from the three-dimensional law; the tests invert that law in full.
 /// </para>
 /// </summary>
-public sealed class PlaneElasticity
+public sealed class PlaneElasticity : IPlaneLaw
 {
     private readonly double[] _stiffness;
     private readonly double[] _expansion;
@@ -20,7 +21,8 @@ public sealed class PlaneElasticity
     private readonly double _outOfPlaneByTemperature;
     private readonly double _blockedEnergy;
 
-    private PlaneElasticity(OutOfPlaneState state, double[] stiffness, double[] expansion, double[] outOfPlaneByStress, double outOfPlaneByTemperature, double blockedEnergy)
+    private PlaneElasticity(
+        OutOfPlaneState state, double[] stiffness, double[] expansion, double[] outOfPlaneByStress, double outOfPlaneByTemperature, double blockedEnergy)
     {
         State = state;
         _stiffness = stiffness;
@@ -34,6 +36,9 @@ public sealed class PlaneElasticity
     /// <summary>State out of plane.</summary>
     public OutOfPlaneState State { get; }
 
+    /// <summary>0: elasticity has no memory.</summary>
+    public int StateSize => 0;
+
     /// <summary>Plane stiffness [MPa]: 9 numbers, row-major 3×3, order xx, yy, xy, acting on engineering shear.</summary>
     public ReadOnlySpan<double> Stiffness => _stiffness;
 
@@ -41,8 +46,8 @@ public sealed class PlaneElasticity
     public ReadOnlySpan<double> Expansion => _expansion;
 
     /// <summary>
-    /// Modulus of a bar along x that is free across y [MPa], for beam formulas: stress over strain along x with no other in-plane stress. Held isotropic E/(1 - nu²),
-    /// free E. Of these axes: for a turned material along the model's x, so ask the material before it is turned for the modulus along a sheet.
+    /// Modulus of a bar along x that is free across y [MPa], for beam formulas: stress over strain along x with no other in-plane stress. Held isotropic
+    /// E/(1 - nu²), free E. Of these axes: for a turned material along the model's x, so ask the material before it is turned for the modulus along a sheet.
     /// </summary>
     public double YoungAlongX { get; }
 
@@ -58,7 +63,10 @@ public sealed class PlaneElasticity
     public static PlaneElasticity Isotropic(double young, double poisson, double expansion, OutOfPlaneState state)
     {
         if (!(poisson is > -1 and < 0.5))
-            throw new ArgumentException(string.Create(CultureInfo.InvariantCulture, $"Poisson's ratio of an isotropic material must be above -1 and below 0.5, given {poisson}: otherwise a strain exists whose elastic energy is not positive"), nameof(poisson));
+        {
+            string given = string.Create(CultureInfo.InvariantCulture, $"Poisson's ratio of an isotropic material must be above -1 and below 0.5, given {poisson}");
+            throw new ArgumentException(given + ": otherwise a strain exists whose elastic energy is not positive", nameof(poisson));
+        }
         return Orthotropic(new OrthotropicConstants(young, young, young, poisson, poisson, poisson, young / (2 * (1 + poisson)), expansion, expansion, expansion), state);
     }
 
@@ -88,14 +96,14 @@ public sealed class PlaneElasticity
     }
 
     /// <summary>
-    /// The same material with its axes turned about z. With c = cos, s = sin the strain in the material's axes is T·strain, T = [c² s² cs; s² c² -cs; -2cs 2cs c²-s²],
-    /// and the stiffness in the model's axes Tᵀ·D·T.
+    /// The same material with its axes turned about z. With c = cos, s = sin the strain in the material's axes is T·strain, T = [c² s² cs; s² c² -cs; -2cs
+    /// 2cs c²-s²], and the stiffness in the model's axes Tᵀ·D·T.
     /// </summary>
     /// <param name="angle">Angle from the model's x axis to the material's, counter-clockwise [rad].</param>
     public PlaneElasticity Rotated(double angle)
     {
         if (!double.IsFinite(angle))
-            throw new ArgumentException(string.Create(CultureInfo.InvariantCulture, $"the angle must be a finite number, given {angle}"), nameof(angle));
+            throw new ArgumentException("the angle must be a finite number", nameof(angle));
         if (angle == 0)
             return this;
         Span<double> there = stackalloc double[9], back = stackalloc double[9];
@@ -133,8 +141,8 @@ public sealed class PlaneElasticity
     }
 
     /// <summary>
-    /// Elastic energy per volume [MPa = mJ/mm³] of the strain less the thermal strain, all components. Held it is ½·e·D·e + ½·E_z·(alpha_z·dT)², e the in-plane strain
-    /// less <see cref="Expansion"/>·dT: the second part is what szz stores when nothing is held in the plane.
+    /// Elastic energy per volume [MPa = mJ/mm³] of the strain less the thermal strain, all components. Held it is ½·e·D·e + ½·E_z·(alpha_z·dT)², e the
+    /// in-plane strain less <see cref="Expansion"/>·dT: the second part is what szz stores when nothing is held in the plane.
     /// </summary>
     /// <param name="strain">Total in-plane strain: xx, yy, xy (engineering), length 3.</param>
     /// <param name="temperatureChange">Temperature change from the stress-free state [K].</param>
@@ -146,6 +154,15 @@ public sealed class PlaneElasticity
         double[] d = _stiffness;
         double inPlane = xx * (d[0] * xx + d[1] * yy + d[2] * xy) + yy * (d[3] * xx + d[4] * yy + d[5] * xy) + xy * (d[6] * xx + d[7] * yy + d[8] * xy);
         return 0.5 * inPlane + _blockedEnergy * temperatureChange * temperatureChange;
+    }
+
+    /// <inheritdoc/>
+    public PlaneEnergy Update(
+        ReadOnlySpan<double> strain, double temperatureChange, ReadOnlySpan<double> accepted, Span<double> tentative, Span<double> stress, Span<double> tangent)
+    {
+        Stress(strain, temperatureChange, stress);
+        Stiffness.CopyTo(tangent);
+        return new PlaneEnergy(EnergyDensity(strain, temperatureChange), 0);
     }
 
     private static void StrainRotation(double angle, Span<double> rotation)

@@ -1,0 +1,27 @@
+namespace InterfaceFE.Mechanics.Materials;
+
+/// <summary>
+/// A material law at a point of a plane model: a pure function of the accepted state and the strain. Immutable and safe to share between threads; calling it
+/// twice with the same arguments gives the same bytes. Never throws on finite input; non-finite input gives a non-finite answer.
+/// </summary>
+public interface IPlaneLaw
+{
+    /// <summary>Number of doubles of state of a point; a virgin point holds zeros.</summary>
+    int StateSize { get; }
+
+    /// <summary>Answer at a strain, and the state that goes with it.</summary>
+    /// <param name="strain">Total in-plane strain at the end of the stride: xx, yy, xy (engineering), length 3.</param>
+    /// <param name="temperatureChange">Temperature change from the stress-free state [K].</param>
+    /// <param name="accepted">State at the last accepted point, length <see cref="StateSize"/>.</param>
+    /// <param name="tentative">State at the end of the stride, same length, overwritten; must not alias <paramref name="accepted"/>.</param>
+    /// <param name="stress">xx, yy, zz, xy [MPa], length 4, overwritten.</param>
+    /// <param name="tangent">Derivative of the in-plane stress (xx, yy, xy) by the strain [MPa], row-major 3×3, symmetric, overwritten.</param>
+    /// <returns>Energies per volume.</returns>
+    PlaneEnergy Update(
+        ReadOnlySpan<double> strain, double temperatureChange, ReadOnlySpan<double> accepted, Span<double> tentative, Span<double> stress, Span<double> tangent);
+}
+
+/// <summary>Energies of a point per volume [mJ/mm³], or of an element [mJ].</summary>
+/// <param name="Stored">Elastic energy that unloading gives back.</param>
+/// <param name="Dissipated">Energy dissipated since the virgin state; never falls.</param>
+public readonly record struct PlaneEnergy(double Stored, double Dissipated);
