@@ -144,8 +144,9 @@ public sealed class LayerElementTests
         for (int a = 0; a < 3; a++)
         {
             double part = GaussLegendreRule.Integrate(xi => LayerElement.FrameAt(3, Curved, xi).Stretch * (a == 1 ? 1 - xi * xi : 0.5 * xi * (xi + a - 1)), -1, 1, 40);
-            Close.To(3 * 20 * -0.02 * part, force[6 + 2 * a], 1e-6);
-            Close.To(3 * 20 * 0.05 * part, force[7 + 2 * a], 1e-6);
+            // dl/dξ is no polynomial on a curved line: the default rule integrates it to 3e-6 here.
+            Close.To(3 * 20 * -0.02 * part, force[6 + 2 * a], 1e-5);
+            Close.To(3 * 20 * 0.05 * part, force[7 + 2 * a], 1e-5);
         }
     }
 
