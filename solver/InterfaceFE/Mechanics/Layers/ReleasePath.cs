@@ -8,6 +8,9 @@ internal struct ReleasePath
 {
     private const double Gauss = 0.28867513459481288;
 
+    /// <summary>A share s below this is rounding: the point is separated, so that a stride that ends exactly at the final separation is.</summary>
+    private const double NothingLeft = 1e-12;
+
     /// <summary>Integral of t_I dx_I [N/mm].</summary>
     public double PeelWork { get; private set; }
 
@@ -88,14 +91,15 @@ internal struct ReleasePath
         double last = peelB * (wb - wa) / branch.PeelToughness + shearB * (vb - va) / branch.ShearToughness;
         double start = Spent, end = start + 0.5 * (first + last);
         double grows = end > MostSpent ? UpwardRoot(0.5 * (last - first), first, MostSpent - start) : 1;
-        double stops = end >= 2 * branch.Due ? UpwardRoot(0.5 * (last - first), first, 2 * branch.Due - start) : 1;
+        bool separates = end >= 2 * branch.Due * (1 - NothingLeft);
+        double stops = separates ? UpwardRoot(0.5 * (last - first), first, Math.Min(end, 2 * branch.Due) - start) : 1;
         PieceSums sums = new(wa, wb - wa, va, vb - va, start, first, 0.5 * (last - first));
         if (grows > 0)
             Integrate(branch, stride, sums, a, b, 0, grows, false);
         MostSpent = Math.Max(MostSpent, Math.Min(end, 2 * branch.Due));
         if (grows < stops)
             Integrate(branch, stride, sums, a, b, grows, stops, true);
-        Separated = end >= 2 * branch.Due;
+        Separated = separates;
         Spent = Separated ? 2 * branch.Due : end;
         LargestOpening = Math.Max(LargestOpening, wb);
         LargestSliding = Math.Max(LargestSliding, vb);
