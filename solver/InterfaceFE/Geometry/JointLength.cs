@@ -1,0 +1,91 @@
+using InterfaceFE.Decks;
+
+namespace InterfaceFE.Geometry;
+
+/// <summary>One of the two bodies of a joint, as the choice of an element length sees it.</summary>
+/// <param name="Modulus">E' along x [MPa].</param>
+/// <param name="Thickness">Thickness [mm].</param>
+/// <param name="Width">Width [mm].</param>
+public readonly record struct Arm(double Modulus, double Thickness, double Width);
+
+/// <summary>
+/// Element length along a joint from layer and arms. With l_c = E'Γ/σ² and l_s = (l_c h³)^(1/4) in peel, (l_c h)^(1/2) in shear, the process zone is about
+/// c (1 - √r) l_c l_s/(l_c + l_s), c = 0.82 in peel and 1.0 in shear, r = elastic limit over final separation; 1 % error of the whole curve is met at
+/// zone·(0.35 + 2.2 √r) with eight-node elements. Both fits are the project's own measurements on beams in peel and flexure, r up to 0.25 (DEVELOPERS.md).
+/// A bond of width b on arms of width B counts with σ, Γ and k times b/B.
+/// </summary>
+/// <param name="OnePercent">Length for about 1 % error; for four-node elements a third of the formula (a stated, not a measured factor) [mm].</param>
+/// <param name="Zone">Estimated process zone of the mode that decides [mm].</param>
+/// <param name="Default">Length chosen when the deck gives none [mm].</param>
+/// <param name="Reason">What decides the default length, in words.</param>
+/// <param name="Mode">peel or shear: the mode with the smaller length.</param>
+public readonly record struct JointLength(double OnePercent, double Zone, double Default, string Reason, string Mode)
+{
+    /// <summary>Share of the eight-node length that four-node elements get.</summary>
+    public const double FourNodeShare = 1.0 / 3.0;
+
+    /// <summary>Above this share of elastic limit to final separation the fits are not backed by measurement and r is held at it.</summary>
+    public const double LargestShare = 0.5;
+
+    /// <summary>Chooses the length.</summary>
+    /// <param name="peel">Peel curve.</param>
+    /// <param name="shear">Shear curve.</param>
+    /// <param name="upper">Arm above.</param>
+    /// <param name="lower">Arm below.</param>
+    /// <param name="bondWidth">Width of the bond [mm].</param>
+    /// <param name="bonded">Shortest bonded stretch [mm].</param>
+    /// <param name="kind">Kind of element.</param>
+    public static JointLength Choose(CurveNumbers peel, CurveNumbers shear, Arm upper, Arm lower, double bondWidth, double bonded, ElementKind kind)
+    {
+        double thinner = Math.Min(upper.Thickness, lower.Thickness);
+        bool four = kind == ElementKind.FourNode;
+        (double onePercent, double zone, string mode) = (double.PositiveInfinity, 0, "");
+        double decay = double.PositiveInfinity;
+        foreach (Arm arm in (ReadOnlySpan<Arm>)[upper, lower])
+        {
+            double share = bondWidth / arm.Width;
+            Consider(peel, true, arm, share, thinner, ref onePercent, ref zone, ref mode);
+            Consider(shear, false, arm, share, thinner, ref onePercent, ref zone, ref mode);
+            // Beam on an elastic layer: λ⁴ = 6 k (b/B)/(E' h³).
+            double lambda = Math.Pow(6 * peel.Stiffness * share / (arm.Modulus * thinner * thinner * thinner), 0.25);
+            decay = Math.Min(decay, 1 / lambda);
+        }
+        if (four)
+            onePercent *= FourNodeShare;
+        (double Length, string Reason)[] limits =
+        [
+            (onePercent / 2, "half the length for 1 % error"),
+            (four ? thinner / 2 : thinner, four ? "half the thickness of the thinner arm" : "the thickness of the thinner arm"),
+            (four ? decay / 6 : decay / 3, Text.Of($"a {(four ? "sixth" : "third")} of the elastic decay length ahead of the front, {decay:G4} mm")),
+            (four ? bonded / 20 : bonded / 10, Text.Of($"{(four ? "twenty" : "ten")} elements along the shortest bonded stretch, {bonded:G4} mm")),
+        ];
+        (double Length, string Reason) least = limits[0];
+        foreach ((double Length, string Reason) limit in limits)
+            if (limit.Length < least.Length)
+                least = limit;
+        return new JointLength(onePercent, zone, least.Length, least.Reason, mode);
+    }
+
+    /// <summary>Estimated process zone [mm] of a mode.</summary>
+    /// <param name="curve">Curve of the mode, per width of the bond.</param>
+    /// <param name="peel">Peel, or else shear.</param>
+    /// <param name="modulus">E' of the arm [MPa].</param>
+    /// <param name="thickness">Thickness of the arm [mm].</param>
+    /// <param name="widthShare">Width of the bond over that of the arm.</param>
+    public static double ProcessZone(CurveNumbers curve, bool peel, double modulus, double thickness, double widthShare)
+    {
+        double characteristic = modulus * curve.Toughness / (curve.Strength * curve.Strength * widthShare);
+        double slender = peel ? Math.Pow(characteristic * thickness * thickness * thickness, 0.25) : Math.Sqrt(characteristic * thickness);
+        return (peel ? 0.82 : 1.0) * (1 - Math.Sqrt(ShareOf(curve))) * characteristic * slender / (characteristic + slender);
+    }
+
+    private static double ShareOf(CurveNumbers curve) => Math.Min(curve.ElasticLimit / curve.FinalSeparation, LargestShare);
+
+    private static void Consider(CurveNumbers curve, bool peel, Arm arm, double share, double thinner, ref double onePercent, ref double zone, ref string mode)
+    {
+        double candidateZone = ProcessZone(curve, peel, arm.Modulus, thinner, share);
+        double length = candidateZone * (0.35 + 2.2 * Math.Sqrt(ShareOf(curve)));
+        if (length < onePercent)
+            (onePercent, zone, mode) = (length, candidateZone, peel ? "peel" : "shear");
+    }
+}

@@ -1,0 +1,54 @@
+using InterfaceFE.Decks;
+
+namespace InterfaceFE.Geometry;
+
+/// <summary>Division of a strip through its thickness.</summary>
+internal static class ThroughDivision
+{
+    private const int MostTries = 64;
+
+    /// <summary>Shares of the thickness from the lower side, 0 to 1, at the lines between elements.</summary>
+    /// <param name="strip">The strip.</param>
+    /// <param name="kind">Kind of element.</param>
+    /// <param name="bonded">Shortest element length along the strip's joints [mm]; infinity without joints.</param>
+    /// <param name="shares">Shares at which a line must be.</param>
+    /// <exception cref="DeckException">When the given number is too small for the places.</exception>
+    public static double[] Choose(Strip strip, ElementKind kind, double bonded, IEnumerable<double> shares)
+    {
+        List<double> places = [0, 1];
+        foreach (double share in shares)
+            if (places.TrueForAll(p => Math.Abs(p - share) > 1e-6))
+                places.Add(share);
+        places.Sort();
+        ReadOnlySpan<double> sorted = places.ToArray();
+        if (strip.Deck.Elements?.Through is { } given)
+            return Lines(sorted, EvenDivision.Counts(sorted, given) ?? throw new DeckException(strip.Path + ".elements.through",
+                $"{given} elements are too few to have a line at each grip and gauge on the ends: take more, or leave `through` out"));
+        int number = DefaultNumber(strip, kind, bonded);
+        for (int i = 0; i < MostTries; i++)
+            if (EvenDivision.Counts(sorted, number * (i + 1)) is { } counts)
+                return Lines(sorted, counts);
+        throw new DeckException(strip.Path, "places of grips and gauges on an end lie too close to each other for a line at each");
+    }
+
+    /// <summary>
+    /// Two eight-node or four four-node elements; up to twice as many where elements along joints are much shorter than high; more in an adherend that is higher than long.
+    /// Always even, so that the middle of an end is a node of both kinds.
+    /// </summary>
+    private static int DefaultNumber(Strip strip, ElementKind kind, double bonded)
+    {
+        bool eight = kind == ElementKind.EightNode;
+        int least = eight ? 2 : 4;
+        double shape = Math.Clamp(strip.Thickness / (4 * bonded), least, 2 * least);
+        double stocky = Math.Clamp(strip.Thickness / ((eight ? 0.75 : 0.375) * strip.Length), 0, 1000);
+        return 2 * (int)Math.Ceiling(Math.Max(shape, stocky) * (1 - 1e-9) / 2);
+    }
+
+    private static double[] Lines(ReadOnlySpan<double> places, int[] counts)
+    {
+        List<double> lines = [0];
+        for (int i = 0; i < counts.Length; i++)
+            lines.AddRange(EvenDivision.Points(places[i], places[i + 1], counts[i]).AsSpan(1));
+        return [.. lines];
+    }
+}
