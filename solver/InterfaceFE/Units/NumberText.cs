@@ -52,8 +52,18 @@ public static class NumberText
         return error.Length == 0;
     }
 
+    /// <summary>The number with its decimal point moved: value · 10^<paramref name="shift"/>, rounded once. The text must be one that <see cref="TryRead"/> takes.</summary>
+    internal static double ReadShifted(ReadOnlySpan<char> text, int shift)
+    {
+        int mark = text.IndexOfAny('e', 'E');
+        ReadOnlySpan<char> digits = mark < 0 ? text : text[..mark];
+        // The power fits an int: larger ones were refused as too large or too small.
+        long power = shift + (mark < 0 || !int.TryParse(text[(mark + 1)..], NumberStyles.AllowLeadingSign, CultureInfo.InvariantCulture, out int given) ? 0 : given);
+        return double.Parse(string.Create(CultureInfo.InvariantCulture, $"{digits}e{power}"), NumberStyles.Float, CultureInfo.InvariantCulture);
+    }
+
     /// <summary>The shortest text that reads back as the same number.</summary>
-    public static string Write(double value) => value.ToString("R", CultureInfo.InvariantCulture);
+    public static string Write(double value) => value.ToString("R", CultureInfo.InvariantCulture).Replace('E', 'e').Replace("e-0", "e-", StringComparison.Ordinal);
 
     private static string NotANumber(ReadOnlySpan<char> text)
     {

@@ -36,7 +36,7 @@ public static class QuantityText
         {
             Dimension.None => ReadBare(unit, ref value, example),
             Dimension.Temperature => ReadTemperature(unit, ref value, example),
-            _ => ReadWithUnit(unit, dimension, ref value, example),
+            _ => ReadWithUnit(number, unit, dimension, ref value, example),
         };
         if (error.Length == 0 && !double.IsFinite(value))
             error = "is too large a number";
@@ -83,7 +83,7 @@ public static class QuantityText
             : $"is not understood: {error}; wanted is a temperature, for example {example}";
     }
 
-    private static string ReadWithUnit(string unit, Dimension dimension, ref double value, string example)
+    private static string ReadWithUnit(string number, string unit, Dimension dimension, ref double value, string example)
     {
         if (unit.Length == 0)
             return $"needs its unit ({DimensionText.Words(dimension)}), for example {example}";
@@ -94,11 +94,18 @@ public static class QuantityText
             return $"is not understood: {error}; wanted is {DimensionText.Words(dimension)}, for example {example}";
         if (known.Powers != DimensionText.Powers(dimension))
             return $"is {DimensionText.Words(known.Powers)}, but {DimensionText.Words(dimension)} is due, for example {example}";
-        // One rounding for a whole factor: 23 µm is 23/1000, exactly as 0.023 reads.
-        double factor = known.Numerator / known.Denominator;
-        double inverse = known.Denominator / known.Numerator;
-        value = factor < 1 && inverse == Math.Round(inverse) ? value / inverse : value * factor;
+        value = Convert(number, value, known);
         return "";
+    }
+
+    /// <summary>Internal value; rounded once where the unit is a power of ten, so that 1.013 bar is 0.1013 MPa and not its neighbour.</summary>
+    private static double Convert(string number, double value, KnownUnit unit)
+    {
+        double factor = unit.Numerator / unit.Denominator;
+        int power = (int)Math.Round(Math.Log10(factor));
+        double exact = NumberText.ReadShifted("1", Math.Abs(power));
+        bool isPower = power >= 0 ? unit.Numerator == exact * unit.Denominator : unit.Denominator == exact * unit.Numerator;
+        return isPower ? NumberText.ReadShifted(number, power) : value * unit.Numerator / unit.Denominator;
     }
 
     private static string CelsiusOf(double kelvin)

@@ -59,7 +59,7 @@ internal sealed class DeckIncludes
         foreach (MapEntry entry in _context.UniqueEntries(map, ""))
         {
             string key = entry.Key.Text;
-            if (key is not ("materials" or "layers"))
+            if (DeckShape.Of(typeof(Deck)).Find(key) is not { Key.MayBeIncluded: true })
                 _context.FailAt(entry.Key.Place, key, key == "include" ? "an included file cannot include others; name them all in the deck" : "an included file holds only `materials` and `layers`");
             else if (entry.Value is not MapNode added)
                 _context.FailAt(entry.Value.Place, key, $"is {BlockReader.KindOf(entry.Value)}, but entries by name are due");
