@@ -34,11 +34,11 @@ public sealed record AdherendDeck
 public sealed record RectangleDeck
 {
     /// <summary>Lower left corner [mm].</summary>
-    [Key("corner", "Lower left corner [x, y].", Dimension = Dimension.Length, Example = "[0 mm, 0 mm]", LeastCount = 2)]
+    [Key("corner", "Lower left corner [x, y].", Dimension = Dimension.Length, Example = "[0 mm, 0 mm]", LeastCount = 2, MostCount = 2)]
     public required IReadOnlyList<double> Corner { get; init; }
 
     /// <summary>Length along x and height along y [mm].</summary>
-    [Key("size", "Length along x and height along y.", Dimension = Dimension.Length, Example = "[300 mm, 4 mm]", LeastCount = 2, Above = 0)]
+    [Key("size", "Length along x and height along y.", Dimension = Dimension.Length, Example = "[300 mm, 4 mm]", LeastCount = 2, MostCount = 2, Above = 0)]
     public required IReadOnlyList<double> Size { get; init; }
 }
 

@@ -22,11 +22,11 @@ public sealed record Deck
     public required ModelDeck Model { get; init; }
 
     /// <summary>Materials by name.</summary>
-    [Key("materials", "Materials of the adherends, by name.", LeastCount = 1)]
+    [Key("materials", "Materials of the adherends, by name.", LeastCount = 1, MayBeIncluded = true)]
     public required IReadOnlyDictionary<string, MaterialDeck> Materials { get; init; }
 
     /// <summary>Bonding layers by name.</summary>
-    [Key("layers", "Bonding layers (tape, foam, adhesive), by name.")]
+    [Key("layers", "Bonding layers (tape, foam, adhesive), by name.", MayBeIncluded = true)]
     public IReadOnlyDictionary<string, LayerDeck>? Layers { get; init; }
 
     /// <summary>Adherends by name.</summary>

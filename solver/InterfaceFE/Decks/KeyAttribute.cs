@@ -40,6 +40,12 @@ public sealed class KeyAttribute(string name, string meaning) : Attribute
 
     /// <summary>Least number of entries of a list or a map.</summary>
     public int LeastCount { get; init; }
+
+    /// <summary>Largest number of entries of a list or a map.</summary>
+    public int MostCount { get; init; } = int.MaxValue;
+
+    /// <summary>Whether entries of this key may come from an included file.</summary>
+    public bool MayBeIncluded { get; init; }
 }
 
 /// <summary>The word by which a deck calls a value of an enumeration.</summary>

@@ -120,11 +120,11 @@ public sealed record CurveDeck
     public double? Toughness { get; init; }
 
     /// <summary>End of the trapezoid's plateau [mm].</summary>
-    [Key("plateau until", "Separation at the end of the trapezoid's plateau; left out: two thirds of the final separation.", Dimension = Dimension.Length, Example = "3.2 mm", Above = 0)]
+    [Key("plateau until", "Separation at the end of the trapezoid's plateau; left out, with `final separation` left out too: two thirds of the final separation.", Dimension = Dimension.Length, Example = "3.2 mm", Above = 0)]
     public double? PlateauUntil { get; init; }
 
     /// <summary>Separation at which the traction is gone [mm].</summary>
-    [Key("final separation", "Separation at which the traction is gone; needed by `exponential`.", Dimension = Dimension.Length, Example = "5 mm", Above = 0)]
+    [Key("final separation", "Separation at which the traction is gone; needed by `exponential`, and another way than `plateau until` to set the shape of a trapezoid.", Dimension = Dimension.Length, Example = "5 mm", Above = 0)]
     public double? FinalSeparation { get; init; }
 
     /// <summary>Openings of a table [mm].</summary>

@@ -20,7 +20,7 @@ public enum GripHold
 public sealed record GripDeck
 {
     /// <summary>Edge or edges; with several, each is a body of its own and may only be fixed.</summary>
-    [Key("on", "Edge as `EDGE of ADHEREND`, or a list of edges (each then held by itself; such a grip is fixed, not pulled).", Example = "top of hat", LeastCount = 1)]
+    [Key("on", "Edge as `EDGE of ADHEREND`, or a list of edges (each then held by itself; such a grip is fixed, not pulled).", Example = "upper face of hat", LeastCount = 1)]
     public required IReadOnlyList<string> On { get; init; }
 
     /// <summary>Point on the edge: start, middle, end, or a distance; makes the grip a pin.</summary>
@@ -36,7 +36,7 @@ public sealed record GripDeck
     public double? To { get; init; }
 
     /// <summary>Pin of a rigid block [mm].</summary>
-    [Key("pin", "Point [x, y] at which a rigid block is pulled and about which it turns; left out: its middle.", Dimension = Dimension.Length, Example = "[5 mm, 12 mm]", LeastCount = 2)]
+    [Key("pin", "Point [x, y] at which a rigid block is pulled and about which it turns; left out: its middle.", Dimension = Dimension.Length, Example = "[5 mm, 12 mm]", LeastCount = 2, MostCount = 2)]
     public IReadOnlyList<double>? Pin { get; init; }
 
     /// <summary>How the nodes are held together.</summary>

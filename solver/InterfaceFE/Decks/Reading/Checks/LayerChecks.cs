@@ -1,0 +1,66 @@
+using System.Globalization;
+
+namespace InterfaceFE.Decks.Reading.Checks;
+
+/// <summary>A layer: its two curves, how they mix, and whether its numbers are plausible.</summary>
+internal static class LayerChecks
+{
+    /// <summary>Peel stiffness of a layer of this bulk [MPa/mm]: confined E(1-nu)/((1+nu)(1-2nu))/t, unconfined E/t.</summary>
+    public static double PeelStiffness(BulkDeck bulk, double thickness)
+    {
+        double nu = bulk.Poisson;
+        double modulus = bulk.BetweenFaces == Confinement.Confined ? bulk.Young * (1 - nu) / ((1 + nu) * (1 - 2 * nu)) : bulk.Young;
+        return modulus / thickness;
+    }
+
+    /// <summary>Shear stiffness of a layer of this bulk [MPa/mm]: G/t.</summary>
+    public static double ShearStiffness(BulkDeck bulk, double thickness) => bulk.Young / (2 * (1 + bulk.Poisson)) / thickness;
+
+    /// <summary>Checks a layer.</summary>
+    public static void Run(LayerDeck layer, string path, ReadContext context)
+    {
+        CurveFigures peel = layer.Peel is null ? CurveFigures.Unknown : new CurveChecks(layer.Peel, layer, path, true, context).Run();
+        CurveFigures shear = layer.Shear is null ? CurveFigures.Unknown : new CurveChecks(layer.Shear, layer, path, false, context).Run();
+        if (context.IsSound(path + ".mixing"))
+        {
+            if (layer.Mixing == Mixing.IndependentModes)
+                CheckIndependentModes(layer, peel, shear, path, context);
+            else
+                CheckSingleDamage(layer, path, context);
+        }
+        LayerRanges.Run(layer, peel, shear, path, context);
+    }
+
+    private static void CheckIndependentModes(LayerDeck layer, CurveFigures peel, CurveFigures shear, string path, ReadContext context)
+    {
+        if (context.IsGiven(path + ".exponent"))
+            context.Fail(path + ".exponent", "does not apply to independent modes; it belongs to benzeggagh-kenane");
+        CheckRelease(layer, peel, "peel", path, context);
+        CheckRelease(layer, shear, "shear", path, context);
+    }
+
+    // Release branch, item 9: the criterion must still be below 1 where a curve reaches its strength, else the layer would let go before it has carried it.
+    private static void CheckRelease(LayerDeck layer, CurveFigures curve, string mode, string path, ReadContext context)
+    {
+        double criterion = curve.CriterionAtStrength(layer.ReleaseLength);
+        double atOnce = curve.AreaToPeak / curve.Toughness;
+        // A curve that cannot fall at all has been reported as such.
+        if (!(criterion >= 1) || !(atOnce < 1))
+            return;
+        string at = context.IsGiven(path + ".release length") ? path + ".release length" : $"{path}.{mode}";
+        double largest = (1 - atOnce) * curve.Toughness * 2 / (curve.Strength * curve.Final);
+        context.Fail(at, string.Create(CultureInfo.InvariantCulture, $"with a release length of {layer.ReleaseLength} the layer would let go before the {mode} curve reaches its strength (energy criterion {criterion:G4} there, must be below 1); this curve needs a release length below {largest:G3}"));
+    }
+
+    private static void CheckSingleDamage(LayerDeck layer, string path, ReadContext context)
+    {
+        if (!context.IsGiven(path + ".exponent"))
+            context.FailAt(context.Find(path, out _).Key, path + ".exponent", "is missing; benzeggagh-kenane needs it, for example exponent: 2.1");
+        foreach ((CurveDeck? curve, string mode) in ((CurveDeck?, string)[])[(layer.Peel, ".peel"), (layer.Shear, ".shear")])
+            if (curve is not null && context.IsSound(path + mode + ".law") && curve.Law != CurveShape.Bilinear)
+                context.Fail(path + mode + ".law", "must be bilinear with the mixing benzeggagh-kenane");
+        foreach (string key in (string[])["counted by", "release length"])
+            if (context.IsGiven(ReadContext.Join(path, key)))
+                context.Fail(ReadContext.Join(path, key), "does not apply to benzeggagh-kenane; it belongs to independent modes");
+    }
+}
