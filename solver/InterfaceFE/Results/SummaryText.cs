@@ -5,37 +5,47 @@ namespace InterfaceFE.Results;
 /// <summary>The short summary for the terminal: plain lines, labels aligned, numbers to four significant digits with their units.</summary>
 public static class SummaryText
 {
-    private const int LabelWidth = 18;
+    private const int LeastLabelWidth = 14;
+    private const int LargestLabelWidth = 30;
 
     /// <summary>Writes the summary.</summary>
     public static void Write(RunSummary summary, TextWriter to)
     {
         ArgumentNullException.ThrowIfNull(summary);
         ArgumentNullException.ThrowIfNull(to);
+        List<(string Label, string Text)> lines = [];
+        Collect(summary, (label, text) => lines.Add((label, text)));
+        int width = Math.Clamp(lines.Max(line => line.Label.Length), LeastLabelWidth, LargestLabelWidth);
         to.WriteLine(summary.Title);
-        Line(to, "ended", SummaryWords.Of(summary.Status) + (summary.Cause.Length > 0 ? $": {summary.Cause}" : ""));
+        foreach ((string label, string text) in lines)
+            to.WriteLine($"  {label.PadRight(width)}  {text}".TrimEnd());
+    }
+
+    private static void Collect(RunSummary summary, Action<string, string> line)
+    {
+        line("ended", SummaryWords.Of(summary.Status) + (summary.Cause.Length > 0 ? $": {summary.Cause}" : ""));
         SelfCheck check = summary.SelfCheck;
-        Line(to, "self-check", $"{SummaryWords.Of(check.Verdict)} (balance {Number(check.Balance)}, path error {Number(check.PathError)})");
+        line("self-check", $"{SummaryWords.Of(check.Verdict)} (balance {Number(check.Balance)}, path error {Number(check.PathError)})");
         foreach (string reason in check.Reasons)
-            Line(to, "", reason);
+            line("", reason);
         foreach (GripSummary grip in summary.Grips)
-            Line(to, grip.Name, Words(grip));
+            line(grip.Name, Words(grip));
         if (summary.FirstDamage is { } damage)
-            Line(to, "first damage", Words(damage));
+            line("first damage", Words(damage));
         if (summary.FirstYield is { } yield)
-            Line(to, "first yield", Words(yield));
+            line("first yield", Words(yield));
         foreach (JointSummary joint in summary.Joints)
-            Line(to, joint.Name, Words(joint));
+            line(joint.Name, Words(joint));
         foreach (AdherendSummary adherend in summary.Adherends)
-            Line(to, adherend.Name, Words(adherend));
+            line(adherend.Name, Words(adherend));
         foreach (string remark in summary.Remarks)
-            Line(to, "remark", remark);
+            line("remark", remark);
         foreach (string warning in summary.Warnings)
-            Line(to, "warning", warning);
+            line("warning", warning);
         if (summary.Counts.Count > 0)
-            Line(to, "counts", string.Join(", ", summary.Counts.Select(count => string.Create(CultureInfo.InvariantCulture, $"{count.Key} {count.Value}"))));
+            line("counts", string.Join(", ", summary.Counts.Select(count => string.Create(CultureInfo.InvariantCulture, $"{count.Key} {count.Value}"))));
         if (summary.WallSeconds.Count > 0)
-            Line(to, "timings", string.Join(", ", summary.WallSeconds.Select(phase => string.Create(CultureInfo.InvariantCulture, $"{phase.Key} {phase.Value:0.00} s"))));
+            line("timings", string.Join(", ", summary.WallSeconds.Select(phase => string.Create(CultureInfo.InvariantCulture, $"{phase.Key} {phase.Value:0.00} s"))));
     }
 
     /// <summary>A number to four significant digits in the invariant culture; a value that is missing is a dash.</summary>
@@ -74,6 +84,4 @@ public static class SummaryText
 
     private static string Words(EventSummary happened) =>
         string.Create(CultureInfo.InvariantCulture, $"{happened.Where}, point {happened.Point}, stage {happened.Stage} at {100 * happened.Progress:0.#} %");
-
-    private static void Line(TextWriter to, string label, string text) => to.WriteLine($"  {label.PadRight(LabelWidth)} {text}".TrimEnd());
 }

@@ -4,7 +4,8 @@ namespace InterfaceFE.Results;
 
 /// <summary>
 /// Fields of a point as two VTU files: the adherends (quadratic quads or quads) and the layers (quadratic edges or lines on the mid-line between the faces of each
-/// pair; every element has points of its own, so a jump between elements stays one). Coordinates are those before deformation, in mm.
+/// pair; every element has points of its own, so a jump between elements stays one). Coordinates are those before deformation, in mm. Data of the file as a whole tell
+/// point, stage, time, and the index of each adherend or joint as a number under its name: one of the two readers that the files are tried with takes no array of text.
 /// </summary>
 public static class VtuWriter
 {
@@ -41,6 +42,8 @@ public static class VtuWriter
         file.AddPointData("plastic strain", fields.PlasticStrain);
         file.AddPointData("temperature [°C]", temperature);
         file.AddCellData("adherend", adherends);
+        for (int a = 0; a < mesh.Adherends.Count; a++)
+            file.AddFieldData($"adherend {mesh.Adherends[a].Name}", [a]);
         AddWhen(file, fields);
         WholeFile.Write(path, file.Write);
     }
@@ -89,6 +92,8 @@ public static class VtuWriter
         file.AddPointData("damage", [.. damage]);
         file.AddCellData("joint", [.. joints]);
         file.AddCellData("bonded", [.. bonded]);
+        for (int j = 0; j < mesh.Joints.Count; j++)
+            file.AddFieldData($"joint {mesh.Joints[j].Name}", [j]);
         AddWhen(file, fields);
         WholeFile.Write(path, file.Write);
     }
