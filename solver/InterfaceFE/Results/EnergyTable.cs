@@ -1,0 +1,35 @@
+namespace InterfaceFE.Results;
+
+/// <summary>energy.csv: where the work has gone, one row per accepted point, of the whole specimen [mJ].</summary>
+public sealed class EnergyTable : IDisposable
+{
+    private static readonly string[] Header =
+    [
+        "point", "stage", "put in [mJ]", "stored in adherends [mJ]", "stored in layers [mJ]", "spent in layers [mJ]", "spent in yielding [mJ]",
+        "spent in friction [mJ]", "thermal [mJ]", "released in jumps [mJ]", "balance", "path error",
+    ];
+
+    private readonly CsvTable _table;
+
+    /// <summary>Creates the file and writes its header.</summary>
+    /// <param name="path">File; its folder must exist.</param>
+    public EnergyTable(string path) => _table = new CsvTable(path, Header);
+
+    /// <summary>Writes to a writer, which is closed with the table.</summary>
+    internal EnergyTable(TextWriter writer) => _table = new CsvTable(writer, Header);
+
+    /// <summary>Writes a point.</summary>
+    public void Write(EnergyRow row)
+    {
+        ArgumentNullException.ThrowIfNull(row);
+        _table.Add(row.Point).Add(row.Stage)
+            .Add(row.PutIn).Add(row.StoredInAdherends).Add(row.StoredInLayers)
+            .Add(row.SpentInLayers).Add(row.SpentInYielding).Add(row.SpentInFriction)
+            .Add(row.Thermal).Add(row.ReleasedInJumps)
+            .Add(row.Balance).Add(row.PathError)
+            .EndRow();
+    }
+
+    /// <inheritdoc/>
+    public void Dispose() => _table.Dispose();
+}
