@@ -1,0 +1,118 @@
+namespace InterfaceFE.Sparse;
+
+/// <summary>
+/// Dense factor of the free part of the root's Schur complement, for one choice of held unknowns. Rows and columns are scaled by the square roots of the unknowns' scales, so
+/// that translations and rotations can be compared. A pivot that is numerically zero is counted and its part of a solution is taken as zero: solutions stay finite.
+/// </summary>
+internal abstract class DenseRoot
+{
+    private readonly bool[] _isHeld;
+
+    /// <summary>Makes room for up to <paramref name="size"/> unknowns.</summary>
+    protected DenseRoot(int size)
+    {
+        _isHeld = new bool[size];
+        Free = new int[size];
+        Matrix = new double[(long)size * size];
+        Scaling = new double[size];
+        Limit = new double[size];
+        Work = new double[size];
+    }
+
+    /// <summary>Whether the factor belongs to the present numbers.</summary>
+    public bool IsValid { get; private set; }
+
+    /// <summary>Signs of the eigenvalues, or of the pivots where the matrix is not symmetric.</summary>
+    public Inertia Inertia { get; protected set; }
+
+    /// <summary>Number of free unknowns.</summary>
+    protected int Count { get; private set; }
+
+    /// <summary>Root numbers of the free unknowns.</summary>
+    protected int[] Free { get; }
+
+    /// <summary>Row-major Count×Count block, scaled; factored in place.</summary>
+    protected double[] Matrix { get; }
+
+    /// <summary>Factor of each free unknown's row and column.</summary>
+    protected double[] Scaling { get; }
+
+    /// <summary>Magnitude below which a pivot of a free unknown, scaled, is numerically zero.</summary>
+    protected double[] Limit { get; }
+
+    /// <summary>One number per free unknown.</summary>
+    protected double[] Work { get; }
+
+    /// <summary>Whether this factor is that of the given choice, with the present numbers.</summary>
+    public bool Serves(ReadOnlySpan<bool> isHeld) => IsValid && isHeld.SequenceEqual(_isHeld);
+
+    /// <summary>The numbers changed.</summary>
+    public void Invalidate() => IsValid = false;
+
+    /// <summary>Takes the free block and factors it.</summary>
+    public unsafe void Factor(FrontFactor fronts, int firstPlace, ReadOnlySpan<bool> isHeld, int halves)
+    {
+        isHeld.CopyTo(_isHeld);
+        Count = 0;
+        for (int i = 0; i < isHeld.Length; i++)
+            if (!isHeld[i])
+                Free[Count++] = i;
+        for (int i = 0; i < Count; i++)
+        {
+            double scale = fronts.Scale(firstPlace + Free[i]);
+            Scaling[i] = 1 / Math.Sqrt(scale);
+            Limit[i] = Math.Max(PivotJudge.ZeroShare, PivotJudge.NoiseFactor * fronts.Noise(firstPlace + Free[i]) / scale);
+        }
+        double* lower = fronts.Root(0), upper = fronts.Root(halves - 1);
+        nint stride = fronts.RootStride;
+        for (int i = 0; i < Count; i++)
+            for (int j = 0; j <= i; j++)
+            {
+                double scaling = Scaling[i] * Scaling[j];
+                nint at = Free[j] * stride + Free[i];
+                Matrix[j * Count + i] = upper[at] * scaling;
+                Matrix[i * Count + j] = lower[at] * scaling;
+            }
+        Decompose();
+        IsValid = true;
+    }
+
+    /// <summary>Solves for the free unknowns. On entry held places of <paramref name="x"/> have their values and free ones the right side; on return all have the solution.</summary>
+    public unsafe void Solve(FrontFactor fronts, int halves, double* x)
+    {
+        double* lower = fronts.Root(0), upper = fronts.Root(halves - 1);
+        nint stride = fronts.RootStride;
+        for (int i = 0; i < Count; i++)
+        {
+            int row = Free[i];
+            double sum = x[row];
+            for (int column = 0; column < _isHeld.Length; column++)
+                if (_isHeld[column])
+                    sum -= (row >= column ? lower[column * stride + row] : upper[row * stride + column]) * x[column];
+            Work[i] = sum * Scaling[i];
+        }
+        Substitute();
+        for (int i = 0; i < Count; i++)
+            x[Free[i]] = Work[i] * Scaling[i];
+    }
+
+    /// <summary>Factors <see cref="Matrix"/> and sets <see cref="Inertia"/>.</summary>
+    protected abstract void Decompose();
+
+    /// <summary>Replaces the right side in <see cref="Work"/> by the solution, both scaled.</summary>
+    protected abstract void Substitute();
+
+    /// <summary>target -= factor · source, equal lengths.</summary>
+    protected static void Subtract(Span<double> target, ReadOnlySpan<double> source, double factor)
+    {
+        int i = 0, width = System.Numerics.Vector<double>.Count;
+        var factors = new System.Numerics.Vector<double>(factor);
+        for (; i + width <= target.Length; i += width)
+            (new System.Numerics.Vector<double>(target[i..]) - factors * new System.Numerics.Vector<double>(source[i..])).CopyTo(target[i..]);
+        for (; i < target.Length; i++)
+            target[i] -= factor * source[i];
+    }
+
+    /// <summary>Exchanges two numbers of an array.</summary>
+    protected static void Swap<T>(Span<T> values, int a, int b) => (values[a], values[b]) = (values[b], values[a]);
+}

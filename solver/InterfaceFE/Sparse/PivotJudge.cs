@@ -1,0 +1,87 @@
+namespace InterfaceFE.Sparse;
+
+/// <summary>
+/// Decides on each pivot: sound, numerically zero (below round-off of its own forming, or 1e-12 of the scale of its unknown), or small and harmful (its column would grow
+/// by more than 1e7). The last two are lifted, sign kept, which refinement of the solves makes good. Small pivots that do no harm, as a slender part's last ones, stay.
+/// </summary>
+internal sealed class PivotJudge
+{
+    /// <summary>Share of an unknown's scale below which a pivot is numerically zero.</summary>
+    public const double ZeroShare = 1e-12;
+
+    /// <summary>Factor on the running round-off estimate below which a pivot is numerically zero.</summary>
+    public const double NoiseFactor = 64;
+
+    /// <summary>Share of an unknown's scale to which a pivot is lifted; pivots above it are never questioned.</summary>
+    public const double LiftShare = 1e-8;
+
+    /// <summary>Growth above which a small pivot is lifted.</summary>
+    public const double HarmfulGrowth = 1e7;
+
+    /// <summary>Unit round-off.</summary>
+    public const double RoundOff = 1.1102230246251565e-16;
+
+    /// <summary>Positive pivots that are not numerically zero.</summary>
+    public int Positive { get; private set; }
+
+    /// <summary>Negative pivots that are not numerically zero.</summary>
+    public int Negative { get; private set; }
+
+    /// <summary>Numerically zero pivots.</summary>
+    public int Zero { get; private set; }
+
+    /// <summary>Pivots lifted for growth alone.</summary>
+    public int Harmful { get; private set; }
+
+    /// <summary>Place of the first numerically zero pivot; -1 for none.</summary>
+    public int FirstZero { get; private set; }
+
+    /// <summary>Place of the first pivot that is not finite; -1 for none.</summary>
+    public int FirstNotFinite { get; private set; }
+
+    /// <summary>Smallest magnitude of a pivot (before lifting) over the scale of its unknown.</summary>
+    public double SmallestRatio { get; private set; }
+
+    /// <summary>Starts anew.</summary>
+    public void Reset()
+    {
+        Positive = Negative = Zero = Harmful = 0;
+        FirstZero = FirstNotFinite = -1;
+        SmallestRatio = double.PositiveInfinity;
+    }
+
+    /// <summary>Whether a pivot needs a look at its column before it is taken.</summary>
+    public static bool IsSmall(double pivot, double scale) => !(Math.Abs(pivot) >= LiftShare * scale);
+
+    /// <summary>Counts a pivot and returns the value to use.</summary>
+    /// <param name="place">Its place in the elimination order.</param>
+    /// <param name="pivot">As computed.</param>
+    /// <param name="scale">Scale of its unknown, above zero.</param>
+    /// <param name="noise">Round-off that its forming may have left in it.</param>
+    /// <param name="growth">Growth its column would cause; needed for small pivots only.</param>
+    public double Take(int place, double pivot, double scale, double noise, double growth)
+    {
+        if (!double.IsFinite(pivot))
+        {
+            FirstNotFinite = FirstNotFinite < 0 ? place : FirstNotFinite;
+            return 1;
+        }
+        double size = Math.Abs(pivot), zero = Math.Max(ZeroShare * scale, NoiseFactor * noise);
+        SmallestRatio = Math.Min(SmallestRatio, size / scale);
+        double lifted = Math.Max(LiftShare * scale, zero);
+        if (size <= zero)
+        {
+            Zero++;
+            FirstZero = FirstZero < 0 ? place : FirstZero;
+            return pivot < 0 ? -lifted : lifted;
+        }
+        if (pivot > 0)
+            Positive++;
+        else
+            Negative++;
+        if (size >= LiftShare * scale || growth <= HarmfulGrowth)
+            return pivot;
+        Harmful++;
+        return pivot < 0 ? -lifted : lifted;
+    }
+}
