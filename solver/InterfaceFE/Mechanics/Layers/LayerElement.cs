@@ -31,8 +31,9 @@ public enum LayerBranches
 /// <param name="Dissipated">Dissipated energy since the virgin state [mJ].</param>
 /// <param name="DissipatedByFreeOpening">d dissipated / d free opening in the tentative stride [N].</param>
 /// <param name="LargestDamage">Largest damage of a point, 0 to 1.</param>
+/// <param name="LeastDamage">Least damage of a point, 0 to 1.</param>
 /// <param name="Branches">Branches met; the tangent is the virgin one when this is <see cref="LayerBranches.Elastic"/> alone.</param>
-public readonly record struct LayerElementSums(double Stored, double Dissipated, double DissipatedByFreeOpening, double LargestDamage, LayerBranches Branches)
+public readonly record struct LayerElementSums(double Stored, double Dissipated, double DissipatedByFreeOpening, double LargestDamage, double LeastDamage, LayerBranches Branches)
 {
     /// <summary>Whether damage grows at some point.</summary>
     public bool Growing => (Branches & (LayerBranches.Growing | LayerBranches.Releasing)) != 0;
@@ -93,7 +94,7 @@ public static class LayerElement
         jumpGradient.Clear();
         jumpRate.Clear();
         jumpTangent.Clear();
-        double stored = 0, dissipated = 0, dissipatedByFree = 0, damage = 0;
+        double stored = 0, dissipated = 0, dissipatedByFree = 0, damage = 0, leastDamage = 1;
         LayerBranches branches = LayerBranches.None;
         for (int p = 0; p < rule.Count; p++)
         {
@@ -106,6 +107,7 @@ public static class LayerElement
             dissipated += weight * answer.Dissipated;
             dissipatedByFree -= weight * answer.DissipatedByOpening;
             damage = Math.Max(damage, answer.Damage);
+            leastDamage = Math.Min(leastDamage, answer.Damage);
             branches |= (LayerBranches)(1 << (int)answer.Branch) | (separation.Opening < 0 ? LayerBranches.Pressed : 0);
             AddVector(jumpForce, frame, shapes, weight * answer.Peel, weight * answer.Shear);
             AddVector(jumpGradient, frame, shapes, weight * answer.DissipatedByOpening, weight * answer.DissipatedBySliding);
@@ -117,7 +119,7 @@ public static class LayerElement
         SpreadVector(jumpGradient[..(2 * n)], dissipatedGradient);
         SpreadVector(jumpRate[..(2 * n)], loadRate);
         SpreadTangent(jumpTangent, 2 * n, tangent);
-        return new LayerElementSums(stored, dissipated, dissipatedByFree, damage, branches);
+        return new LayerElementSums(stored, dissipated, dissipatedByFree, damage, leastDamage, branches);
     }
 
     /// <summary>Opening and sliding at a station.</summary>
