@@ -92,7 +92,7 @@ internal sealed class DivisionPlanner
                 _groupOf[joint.Lower.Run].Breakpoints.Add(new Breakpoint(bonded.To, Firmness.Joint, 0));
             }
         foreach ((Run run, double q, Firmness firmness) in _places.OnFaces)
-            _groupOf[run].Breakpoints.Add(new Breakpoint(q, firmness, 0));
+            _groupOf[run].Breakpoints.Add(new Breakpoint(q, firmness, PlacesOnEdges.Slack * _strips[run.Strip].Thickness));
         foreach ((Run run, double from, double to, double length) in FinerSpans())
         {
             _groupOf[run].Breakpoints.Add(new Breakpoint(from, Firmness.Finer, length / 4));

@@ -1,31 +1,52 @@
 namespace InterfaceFE.Geometry;
 
 /// <summary>
-/// Division of a stretch by a wanted length that falls towards its ends. The wanted length at distance s from an end is at most (end length) + ln(growth)·s, so that
-/// neighbouring elements differ by at most the growth ratio; the number is the least whole one for which no element is longer than wanted, and all share the slack.
+/// Division of a stretch by a length field: given lengths at both ends, a level between them, and ramps of slope ln(growth). Each element holds a unit of the integral
+/// of 1/field, so neighbours differ by at most the growth ratio, also across the ends where another stretch goes on with the same length. The level is lowered until
+/// the integral is a whole number; it may dip below the lengths at the ends.
 /// </summary>
-internal static class GradedDivision
+/// <param name="Length">Length of the stretch.</param>
+/// <param name="Wanted">Highest level.</param>
+/// <param name="AtStart">Field at the start, at most the highest level.</param>
+/// <param name="AtEnd">Field at the end, at most the highest level.</param>
+/// <param name="Slope">Natural logarithm of the growth ratio.</param>
+internal readonly record struct GradedDivision(double Length, double Wanted, double AtStart, double AtEnd, double Slope)
 {
-    /// <summary>Number of elements that would be needed, as a real number; use before <see cref="Points"/> to see whether it is within reach.</summary>
-    public static double Measure(double length, double wanted, double atStart, double atEnd, double growth)
+    private const int Halvings = 100;
+
+    /// <summary>Least number of elements none of which is longer than wanted, as a whole number held in a real one.</summary>
+    public double LeastCount => Math.Max(1, Math.Ceiling(Measure(Wanted) * (1 - 1e-9)));
+
+    /// <summary>Field in the dip where the ramps from both ends meet; not positive when they never meet above zero.</summary>
+    private double Dip => (AtStart + AtEnd - Slope * Length) / 2;
+
+    /// <summary>Whether a level exists at which the stretch holds exactly a number of elements, at least <see cref="LeastCount"/>.</summary>
+    public bool CanHold(double count) => Dip <= 0 || (Math.Log(AtStart / Dip) + Math.Log(AtEnd / Dip)) / Slope >= count * (1 - 1e-12);
+
+    /// <summary>Largest share, up to 1, by which both end lengths must be multiplied for the stretch to hold a number of elements.</summary>
+    public double ShareToHold(double count)
     {
-        Span<Piece> pieces = stackalloc Piece[3];
-        return Pieces(length, wanted, atStart, atEnd, Math.Log(growth), pieces, out _);
+        (double low, double high) = (0, 1);
+        for (int i = 0; i < Halvings && high - low > 1e-14; i++)
+        {
+            double middle = (low + high) / 2;
+            if ((this with { AtStart = middle * AtStart, AtEnd = middle * AtEnd }).CanHold(count))
+                low = middle;
+            else
+                high = middle;
+        }
+        return low;
     }
 
-    /// <summary>Division points from a to b, both included and exact.</summary>
-    /// <param name="a">Start.</param>
-    /// <param name="b">End, greater than a.</param>
-    /// <param name="wanted">Largest length of an element.</param>
-    /// <param name="atStart">Largest length at the start.</param>
-    /// <param name="atEnd">Largest length at the end.</param>
-    /// <param name="growth">Largest ratio of neighbours, above 1.</param>
-    public static double[] Points(double a, double b, double wanted, double atStart, double atEnd, double growth)
+    /// <summary>Division points from a, both ends included; the end is b exactly.</summary>
+    public double[] Points(double a, double b)
     {
-        Span<Piece> pieces = stackalloc Piece[3];
-        double measure = Pieces(b - a, wanted, atStart, atEnd, Math.Log(growth), pieces, out int pieceCount);
-        // A hair of slack, so that a stretch of ten wanted lengths gets ten elements whatever the round-off.
-        int count = Math.Max(1, (int)Math.Ceiling(measure * (1 - 1e-9)));
+        int count = (int)LeastCount;
+        Span<Ramp> ramps = stackalloc Ramp[3];
+        int rampCount = Ramps(LevelFor(count), ramps);
+        double measure = 0;
+        for (int i = 0; i < rampCount; i++)
+            measure += ramps[i].Measure;
         double[] points = new double[count + 1];
         (points[0], points[count]) = (a, b);
         int at = 0;
@@ -33,43 +54,66 @@ internal static class GradedDivision
         for (int i = 1; i < count; i++)
         {
             double target = measure * i / count;
-            while (at < pieceCount - 1 && target > before + pieces[at].Measure)
-                before += pieces[at++].Measure;
-            points[i] = a + pieces[at].Position(target - before);
+            while (at < rampCount - 1 && target > before + ramps[at].Measure)
+                before += ramps[at++].Measure;
+            points[i] = a + ramps[at].Position(target - before);
         }
         return points;
     }
 
-    private static double Pieces(double length, double wanted, double atStart, double atEnd, double slope, Span<Piece> pieces, out int count)
+    /// <summary>The level at which the measure is a number of elements.</summary>
+    private double LevelFor(int count)
     {
-        atStart = Math.Min(atStart, wanted);
-        atEnd = Math.Min(atEnd, wanted);
-        double rise = (wanted - atStart) / slope;
-        double fall = (wanted - atEnd) / slope;
-        if (rise + fall >= length)
+        double low = Math.Max(Dip, Math.Min(Math.Min(AtStart, AtEnd), Length / count) * 1e-3);
+        double high = Wanted;
+        for (int i = 0; i < Halvings && high - low > 1e-15 * high; i++)
         {
-            // The cones meet below the wanted length, or one of them covers all.
-            rise = Math.Clamp((length + (atEnd - atStart) / slope) / 2, 0, length);
-            fall = length - rise;
+            double middle = (low + high) / 2;
+            if (Measure(middle) > count)
+                low = middle;
+            else
+                high = middle;
         }
-        count = 0;
+        return high;
+    }
+
+    /// <summary>Integral of 1/field with a level.</summary>
+    private double Measure(double level)
+    {
+        Span<Ramp> ramps = stackalloc Ramp[3];
+        int count = Ramps(level, ramps);
         double measure = 0;
-        if (rise > 0)
-            pieces[count++] = new Piece(0, rise, rise < length ? atStart : Math.Min(atStart, atEnd + slope * length), slope);
-        if (length - rise - fall > 0)
-            pieces[count++] = new Piece(rise, length - rise - fall, wanted, 0);
-        if (fall > 0)
-            pieces[count++] = new Piece(length - fall, fall, atEnd + slope * fall, -slope);
         for (int i = 0; i < count; i++)
-            measure += pieces[i].Measure;
+            measure += ramps[i].Measure;
         return measure;
     }
 
-    /// <summary>A piece with a linear wanted length.</summary>
-    private readonly record struct Piece(double Start, double Length, double Wanted, double Slope)
+    private int Ramps(double level, Span<Ramp> ramps)
     {
-        public double Measure => Slope == 0 ? Length / Wanted : Math.Log(1 + Slope * Length / Wanted) / Slope;
+        double first = Math.Abs(level - AtStart) / Slope;
+        double last = Math.Abs(level - AtEnd) / Slope;
+        int sign = level >= Math.Max(AtStart, AtEnd) ? 1 : level <= Math.Min(AtStart, AtEnd) ? -1 : 0;
+        if (first + last >= Length)
+        {
+            // Ramps that rise (or fall) from both ends meet before the level; else one ramp leads from end to end.
+            first = sign != 0 ? Math.Clamp((Length + sign * (AtEnd - AtStart) / Slope) / 2, 0, Length) : Length * first / (first + last);
+            last = Length - first;
+        }
+        int count = 0;
+        if (first > 0)
+            ramps[count++] = new Ramp(0, first, AtStart, Slope * Math.Sign(level - AtStart));
+        if (Length - first - last > 0)
+            ramps[count++] = new Ramp(first, Length - first - last, level, 0);
+        if (last > 0)
+            ramps[count++] = new Ramp(Length - last, last, AtEnd + Slope * Math.Sign(level - AtEnd) * last, -Slope * Math.Sign(level - AtEnd));
+        return count;
+    }
 
-        public double Position(double measure) => Start + (Slope == 0 ? measure * Wanted : Wanted * (Math.Exp(Slope * measure) - 1) / Slope);
+    /// <summary>A piece with a linear field.</summary>
+    private readonly record struct Ramp(double Start, double Length, double Field, double Slope)
+    {
+        public double Measure => Slope == 0 ? Length / Field : Math.Log(1 + Slope * Length / Field) / Slope;
+
+        public double Position(double measure) => Start + (Slope == 0 ? measure * Field : Field * (Math.Exp(Slope * measure) - 1) / Slope);
     }
 }

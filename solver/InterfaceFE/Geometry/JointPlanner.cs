@@ -36,7 +36,7 @@ internal sealed class JointPlanner
                 if (SharesFace(plans[j], plans[i]))
                     problems.Add(new DeckProblem(plans[i].Path, $"it lies on a face that joint \"{plans[j].Name}\" already bonds at the same x: a face can be bonded once"));
         if (problems.Count > 0)
-            throw new DeckException(problems);
+            throw new DeckException([.. problems.Distinct()]);
         return [.. plans];
     }
 
@@ -70,6 +70,9 @@ internal sealed class JointPlanner
         if (joint.ElementLength is { } given && !(given > 0))
             throw new DeckException(path + ".element length", "must be greater than 0 mm");
         double width = joint.Width ?? _deck.Model.Width;
+        foreach (Strip strip in (ReadOnlySpan<Strip>)[upper.Strip, lower.Strip])
+            if (width > strip.Width * (1 + 1e-9))
+                throw new DeckException(path + ".width", Text.Of($"the bond, {width:G6} mm wide, is wider than \"{strip.Name}\", {strip.Width:G6} mm{(joint.Width == null ? "; left out, its width is the model's" : "")}"));
         bool held = _deck.Model.OutOfPlane == OutOfPlane.Held;
         return new JointPlan
         {

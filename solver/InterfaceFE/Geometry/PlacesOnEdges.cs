@@ -5,6 +5,11 @@ namespace InterfaceFE.Geometry;
 /// <summary>Places on edges that grips and gauges name and that must fall on nodes.</summary>
 internal sealed class PlacesOnEdges
 {
+    /// <summary>
+    /// Share of the thickness within which the place of a grip or gauge is moved to another place (a joint's end, say) instead of making a sliver of an element.
+    /// </summary>
+    public const double Slack = 2e-3;
+
     private readonly Dictionary<string, Strip> _byName;
 
     private PlacesOnEdges(Strip[] strips)

@@ -1,6 +1,6 @@
 namespace InterfaceFE.Geometry;
 
-/// <summary>How firmly a division line is wanted at a place: of places closer than the tolerance the firmest is kept.</summary>
+/// <summary>How firmly a division line is wanted at a place: of places that lie too close to each other the firmest is kept.</summary>
 internal enum Firmness
 {
     /// <summary>End of a run.</summary>
@@ -15,11 +15,11 @@ internal enum Firmness
     /// <summary>Point of a gauge.</summary>
     Gauge,
 
-    /// <summary>End of a finer place; dropped next to any other.</summary>
+    /// <summary>End of a finer place.</summary>
     Finer,
 }
 
-/// <summary>A place on the way to becoming a division line.</summary>
+/// <summary>A place on the way to becoming a division line; a soft one is dropped when another place lies within its slack.</summary>
 internal readonly record struct Breakpoint(double Q, Firmness Firmness, double Slack);
 
 /// <summary>Runs that share one division because joints connect them; a run without joints is a group of its own.</summary>
@@ -35,12 +35,13 @@ internal sealed class RunGroup
     /// <summary>Stretches between neighbouring places.</summary>
     public Segment[] Segments { get; private set; } = [];
 
-    /// <summary>Makes places of the breakpoints: those within a tolerance become one.</summary>
+    /// <summary>
+    /// Makes places of the breakpoints: ends of runs and joints within a tolerance become one, and softer ones are dropped where a place lies within their slack.
+    /// </summary>
     public void Settle(double tolerance)
     {
-        List<Breakpoint> sorted = [.. Breakpoints.OrderBy(b => b.Q).ThenBy(b => b.Firmness)];
         List<Breakpoint> firm = [];
-        foreach (Breakpoint point in sorted.Where(b => b.Firmness != Firmness.Finer))
+        foreach (Breakpoint point in Breakpoints.Where(b => b.Firmness <= Firmness.Joint).OrderBy(b => b.Q).ThenBy(b => b.Firmness))
         {
             if (firm.Count == 0 || point.Q - firm[^1].Q > tolerance)
                 firm.Add(point);
@@ -48,7 +49,7 @@ internal sealed class RunGroup
                 firm[^1] = point;
         }
         List<double> places = [.. firm.Select(b => b.Q)];
-        foreach (Breakpoint point in sorted.Where(b => b.Firmness == Firmness.Finer))
+        foreach (Breakpoint point in Breakpoints.Where(b => b.Firmness > Firmness.Joint).OrderBy(b => b.Firmness).ThenBy(b => b.Q))
             if (places.TrueForAll(p => Math.Abs(p - point.Q) > Math.Max(tolerance, point.Slack)))
                 places.Add(point.Q);
         places.Sort();
@@ -110,14 +111,11 @@ internal sealed class Segment(double from, double to)
     /// <summary>Any strip that lies here, for messages.</summary>
     public Strip? Owner { get; set; }
 
-    /// <summary>Largest length at the two ends.</summary>
+    /// <summary>Length wanted at the two ends.</summary>
     public double[] AtEnds { get; } = new double[2];
 
     /// <summary>Division points, both ends included.</summary>
     public double[] Points { get; set; } = [];
-
-    /// <summary>Length of the first (0) or last (1) element.</summary>
-    public double EndElement(int end) => end == 0 ? Points[1] - Points[0] : Points[^1] - Points[^2];
 }
 
 /// <summary>Two ends of segments that meet.</summary>

@@ -17,7 +17,7 @@ internal static class ThroughDivision
     {
         List<double> places = [0, 1];
         foreach (double share in shares)
-            if (places.TrueForAll(p => Math.Abs(p - share) > 1e-6))
+            if (places.TrueForAll(p => Math.Abs(p - share) > PlacesOnEdges.Slack))
                 places.Add(share);
         places.Sort();
         ReadOnlySpan<double> sorted = places.ToArray();

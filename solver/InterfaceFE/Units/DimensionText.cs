@@ -38,6 +38,8 @@ public static class DimensionText
     {
         if (powers == default)
             return "a plain ratio";
+        if (powers == Powers(Dimension.Moment))
+            return "a moment or an energy";
         foreach (Row row in Rows)
             if (row.Powers == powers && row.Dimension is not Dimension.Temperature)
                 return row.Words;

@@ -62,6 +62,13 @@ public static class NumberText
         return double.Parse(string.Create(CultureInfo.InvariantCulture, $"{digits}e{power}"), NumberStyles.Float, CultureInfo.InvariantCulture);
     }
 
+    /// <summary>The number with so many significant digits, for messages.</summary>
+    public static string Rounded(double value, int digits)
+    {
+        string format = "E" + (digits - 1).ToString(CultureInfo.InvariantCulture);
+        return Write(double.IsFinite(value) ? double.Parse(value.ToString(format, CultureInfo.InvariantCulture), CultureInfo.InvariantCulture) : value);
+    }
+
     /// <summary>The shortest text that reads back as the same number.</summary>
     public static string Write(double value) => value.ToString("R", CultureInfo.InvariantCulture).Replace('E', 'e').Replace("e-0", "e-", StringComparison.Ordinal);
 

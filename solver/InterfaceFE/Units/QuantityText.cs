@@ -1,5 +1,3 @@
-using System.Globalization;
-
 namespace InterfaceFE.Units;
 
 /// <summary>
@@ -75,7 +73,9 @@ public static class QuantityText
         if (unit.Length == 0)
             return $"needs its unit, for example {example}";
         if (unit == "K")
-            return $"is in K, which is kept for differences; write the temperature in °C: {Number(value - ZeroCelsius)} °C";
+            return value < 0
+                ? $"is in K, which is kept for differences; write the temperature in °C, for example {example}"
+                : $"is in K, which is kept for differences; write the temperature in °C: {NumberText.Rounded(value - ZeroCelsius, 6)} °C";
         if (unit is "C" or "degC" or "deg C" or "oC" or "°" or "°c" or "ºC" or "° C")
             return $"needs the unit °C, for example {example}";
         return UnitExpression.TryRead(unit, out KnownUnit known, out string error)
@@ -119,6 +119,4 @@ public static class QuantityText
         }
         return NumberText.Write(celsius);
     }
-
-    private static string Number(double value) => value.ToString("G6", CultureInfo.InvariantCulture);
 }

@@ -23,7 +23,7 @@ internal ref struct UnitExpression
         UnitExpression reader = new(text);
         unit = reader.Product(0);
         if (reader._error is null && reader._at < text.Length)
-            reader.Fail($"the unit \"{text}\" is not understood from \"{text[reader._at..]}\" on");
+            reader.Fail(char.IsAsciiDigit(text[reader._at]) ? $"a power in a unit is written with ^, as in m^{text[reader._at]}" : $"the unit \"{text}\" is not understood from \"{text[reader._at..]}\" on");
         error = reader._error ?? "";
         return reader._error is null;
     }

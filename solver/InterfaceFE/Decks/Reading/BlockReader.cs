@@ -53,7 +53,11 @@ internal sealed class BlockReader(ReadContext context)
     {
         if (node is TextNode { IsEmpty: true })
         {
-            context.Fail(path, "nothing is written here; give a value" + ForExample(key) + " or leave the key out");
+            bool mayBeLeftOut = owner.Find(key.Name) is { IsRequired: false } own && own.Value == shape;
+            if (node is TextNode { IsRefused: true })
+                context.MarkBad(path);
+            else
+                context.Fail(path, "nothing is written here; give a value" + ForExample(key) + (mayBeLeftOut ? ", or leave the key out" : ""));
             return null;
         }
         return shape.Kind switch
@@ -99,14 +103,16 @@ internal sealed class BlockReader(ReadContext context)
         HashSet<object> seen = [];
         for (int i = 0; i < items.Count; i++)
         {
-            string at = ReadContext.Join(path, i + 1);
-            context.Locate(at, items[i].Place, items[i]);
+            string at = node is TextNode ? path : ReadContext.Join(path, i + 1);
+            if (node is TextNode)
+                context.MarkSingle(path);
+            else
+                context.Locate(at, items[i].Place, items[i]);
             object? value = Read(shape.Entry, key, items[i], at, owner);
             if (value is not null && shape.MayBeSingle && !seen.Add(value))
                 context.Fail(at, "stands in this list twice");
-            value ??= ValueReader.Unreadable(shape.Entry, shape.Entry.Type);
-            if (value is not null)
-                list.Add(value);
+            // An entry that could not be read keeps its place, so that those behind it keep their number.
+            list.Add(value ?? ValueReader.Unreadable(shape.Entry, shape.Entry.Type));
         }
         return list;
     }
@@ -159,6 +165,11 @@ internal sealed class BlockReader(ReadContext context)
         if (near is not null)
         {
             context.FailAt(entry.Key.Place, at, $"unknown key; nearest key {near}");
+            return;
+        }
+        if (name.All(char.IsAsciiDigit))
+        {
+            context.FailAt(entry.Key.Place, at, "is no key; the decimal sign is a point, and a comma starts the next key");
             return;
         }
         List<string> elsewhere = [.. DeckShape.All().Where(s => s.Find(name) is not null).Select(BlockName).Take(4)];

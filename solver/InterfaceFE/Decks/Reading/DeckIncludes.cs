@@ -88,7 +88,7 @@ internal sealed class DeckIncludes
             return null;
         }
         string? near = NearestText.Find(name, _folders.Where(Directory.Exists).SelectMany(f => Directory.EnumerateFiles(f, "*.y*ml").Select(p => Path.GetFileName(p)!)).Take(1000).Order(StringComparer.Ordinal));
-        _context.Fail(path, $"there is no such file in {string.Join(", ", _folders.Select(f => f.Length == 0 ? "the deck's folder" : f))}" + (near is null ? "" : $"; nearest file {near}"));
+        _context.Fail(path, $"there is no such file in the deck's folder{(_folders.Count == 1 ? "" : " or in those above it up to `inputs`")}" + (near is null ? "" : $"; nearest file {near}"));
         return null;
     }
 

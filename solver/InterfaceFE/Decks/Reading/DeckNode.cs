@@ -20,6 +20,9 @@ internal abstract record DeckNode(TextPlace Place);
 /// <param name="Place">Where it starts.</param>
 internal sealed record TextNode(string Text, bool IsPlain, TextPlace Place) : DeckNode(Place)
 {
+    /// <summary>Whether what is written was refused already; the text is then empty.</summary>
+    public bool IsRefused { get; init; }
+
     /// <summary>Whether nothing is written: no text, or one of the words that mean "nothing" without quotes.</summary>
     public bool IsEmpty => string.IsNullOrWhiteSpace(Text) || (IsPlain && Text is "~" or "null" or "Null" or "NULL");
 }

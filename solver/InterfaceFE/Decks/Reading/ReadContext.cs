@@ -14,6 +14,7 @@ internal sealed class ReadContext
 {
     private const int LongestWritten = 60;
     private readonly Dictionary<string, Location> _locations = new(StringComparer.Ordinal);
+    private readonly HashSet<string> _single = new(StringComparer.Ordinal);
     private readonly HashSet<string> _bad = new(StringComparer.Ordinal);
 
     /// <summary>Starts with nothing found.</summary>
@@ -35,11 +36,17 @@ internal sealed class ReadContext
     /// <summary>Notes where a path stands.</summary>
     public void Locate(string path, TextPlace key, DeckNode value) => _locations[path] = new Location(key, value.Place, Written(value));
 
+    /// <summary>Notes that the list at the path is written as a single value, so that its entry 1 is the list itself.</summary>
+    public void MarkSingle(string path) => _single.Add(path);
+
+    /// <summary>Notes that the value at the path cannot be used, when that has been reported elsewhere.</summary>
+    public void MarkBad(string path) => _bad.Add(Canonical(path));
+
     /// <summary>Whether something is written at the path.</summary>
-    public bool IsGiven(string path) => _locations.ContainsKey(path);
+    public bool IsGiven(string path) => _locations.ContainsKey(Canonical(path));
 
     /// <summary>Whether something is written at the path and read without a problem of its own.</summary>
-    public bool IsSound(string path) => IsGiven(path) && !_bad.Contains(path);
+    public bool IsSound(string path) => IsGiven(path) && !_bad.Contains(Canonical(path));
 
     /// <summary>The place of a path, or of the nearest block above it.</summary>
     /// <param name="path">Key path.</param>
@@ -47,7 +54,7 @@ internal sealed class ReadContext
     public Location Find(string path, out bool isExact)
     {
         isExact = true;
-        for (string at = path; ; at = at[..Math.Max(0, at.LastIndexOf('.'))])
+        for (string at = Canonical(path); ; at = at[..Math.Max(0, at.LastIndexOf('.'))])
         {
             if (_locations.TryGetValue(at, out Location location))
                 return location;
@@ -60,6 +67,7 @@ internal sealed class ReadContext
     /// <summary>Adds an error about the value at a path. A block is pointed at by its key.</summary>
     public void Fail(string path, string message)
     {
+        path = Canonical(path);
         _bad.Add(path);
         Location location = Find(path, out bool isExact);
         Problems.Add(isExact && location.Written is not null ? location.Value : location.Key, path, isExact ? location.Written : null, message);
@@ -75,6 +83,7 @@ internal sealed class ReadContext
     /// <summary>Adds a warning about the value at a path.</summary>
     public void Warn(string path, string message)
     {
+        path = Canonical(path);
         Location location = Find(path, out bool isExact);
         Warnings.Add(isExact && location.Written is not null ? location.Value : location.Key, path, isExact ? location.Written : null, message);
     }
@@ -108,6 +117,8 @@ internal sealed class ReadContext
 
     /// <summary>Joins the number of a list entry, from 1, to the path of its list.</summary>
     public static string Join(string path, int number) => string.Create(CultureInfo.InvariantCulture, $"{path}.{number}");
+
+    private string Canonical(string path) => path.EndsWith(".1", StringComparison.Ordinal) && _single.Contains(path[..^2]) ? path[..^2] : path;
 
     /// <summary>A value in one line: text, a list of texts, or null for anything larger.</summary>
     private static string? Written(DeckNode node)

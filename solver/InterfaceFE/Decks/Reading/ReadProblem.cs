@@ -19,7 +19,7 @@ public sealed record ReadProblem(TextPlace Place, string Path, string? Written, 
         line.Append(Path.Length == 0 ? ":" : Place.Line == 0 ? ": " : " ").Append(Path);
         if (Path.Length > 0)
             line.Append(':');
-        if (Written is not null)
+        if (!string.IsNullOrWhiteSpace(Written))
             line.Append(CultureInfo.InvariantCulture, $" \"{Shown(Written)}\"");
         return line.Append(' ').Append(Message).ToString();
     }

@@ -129,7 +129,7 @@ internal sealed class ValueReader(ReadContext context)
         if (owner.NotBuiltYet.Any(n => n.Key == key.Name && n.Value == text))
             return Refuse(path, $"is not built yet; this version knows {WordsInWords(type)}");
         string? near = NearestText.Find(text, words.Select(w => w.Text));
-        return Refuse(path, $"is not a word known here; {(near is null ? "" : $"nearest word \"{near}\"; ")}{(words.Count == 1 ? "the only one is" : "allowed are")} {WordsInWords(type)}");
+        return Refuse(path, $"is not a word known here; {(near is null || words.Count == 1 ? "" : $"nearest word \"{near}\"; ")}{(words.Count == 1 ? "the only one is" : "allowed are")} {WordsInWords(type)}");
     }
 
     private object? ReadEdgePoint(KeyAttribute key, TextNode node, string path)
@@ -172,6 +172,7 @@ internal sealed class ValueReader(ReadContext context)
         ValueKind.WholeNumber => "a whole number",
         ValueKind.Word => "a word",
         ValueKind.Text => "a single text",
+        ValueKind.EdgePoint => "a point of an edge",
         _ => "a single value",
     };
 
@@ -189,7 +190,7 @@ internal sealed class ValueReader(ReadContext context)
     private static string Bound(double bound, Dimension dimension)
     {
         if (dimension != Dimension.Temperature)
-            return QuantityText.Write(bound, dimension);
+            return bound == 0 ? "0" : QuantityText.Write(bound, dimension);
         return QuantityText.Write(bound, dimension) + (bound == 0 ? " (absolute zero)" : "");
     }
 }

@@ -72,7 +72,7 @@ internal sealed class YamlText
         if (started is AnchorAlias alias)
         {
             _problems.Add(place, "", "*" + alias.Value, "is a reference to another place; write the value here, or keep materials and layers in a file of their own and `include` it");
-            return new TextNode("", false, place);
+            return new TextNode("", false, place) { IsRefused = true };
         }
         if (started is NodeEvent node)
             RefuseHiddenMeaning(node, place);
@@ -81,7 +81,8 @@ internal sealed class YamlText
             Scalar scalar => new TextNode(scalar.Value, scalar.Style == ScalarStyle.Plain, place),
             SequenceStart sequence => ReadList(sequence.Style == SequenceStyle.Flow, place, depth),
             MappingStart mapping => ReadMap(mapping.Style == MappingStyle.Flow, place, depth),
-            _ => null,
+            // After a colon without a key the library leaves out the node.
+            _ => throw new InvalidOperationException("The text has an unexpected order."),
         };
     }
 

@@ -196,9 +196,9 @@ internal sealed class CurveChecks(CurveDeck curve, LayerDeck layer, string layer
 
     private void FailShape(string message) => context.Fail(_path + ".toughness", message);
 
-    private static string Length(double value) => string.Create(CultureInfo.InvariantCulture, $"{value:G4} mm");
+    private static string Length(double value) => string.Create(CultureInfo.InvariantCulture, $"{NumberText.Rounded(value, 4)} mm");
 
-    private static string Energy(double value) => string.Create(CultureInfo.InvariantCulture, $"{value:G4} kJ/m^2");
+    private static string Energy(double value) => string.Create(CultureInfo.InvariantCulture, $"{NumberText.Rounded(value, 4)} kJ/m^2");
 
-    private static string Stiffness(double value) => string.Create(CultureInfo.InvariantCulture, $"{value:G4} {DimensionText.Unit(Dimension.LayerStiffness)}");
+    private static string Stiffness(double value) => string.Create(CultureInfo.InvariantCulture, $"{NumberText.Rounded(value, 4)} {DimensionText.Unit(Dimension.LayerStiffness)}");
 }

@@ -21,7 +21,9 @@ internal static class DeckChecks
             GripChecks.Run(deck, grip, $"grips.{name}", context);
         SequenceChecks.Run(deck, context);
         KeepChecks.Run(deck, context);
-        UnusedChecks.Run(deck, context);
+        // In a deck with errors a name may seem unused only because of them.
+        if (context.Problems.IsEmpty)
+            UnusedChecks.Run(deck, context);
         if (deck.March is { } march && march.FirstStride > march.LargestStride)
             context.Fail(context.IsGiven("march.first stride") ? "march.first stride" : "march.largest stride",
                 string.Create(CultureInfo.InvariantCulture, $"the first stride ({march.FirstStride}) must not exceed the largest stride ({march.LargestStride})"));

@@ -1,4 +1,5 @@
 using System.Globalization;
+using InterfaceFE.Units;
 
 namespace InterfaceFE.Decks.Reading.Checks;
 
@@ -49,7 +50,7 @@ internal static class LayerChecks
             return;
         string at = context.IsGiven(path + ".release length") ? path + ".release length" : $"{path}.{mode}";
         double largest = (1 - atOnce) * curve.Toughness * 2 / (curve.Strength * curve.Final);
-        context.Fail(at, string.Create(CultureInfo.InvariantCulture, $"with a release length of {layer.ReleaseLength} the layer would let go before the {mode} curve reaches its strength (energy criterion {criterion:G4} there, must be below 1); this curve needs a release length below {largest:G3}"));
+        context.Fail(at, string.Create(CultureInfo.InvariantCulture, $"with a release length of {layer.ReleaseLength} the layer would let go before the {mode} curve reaches its strength (energy criterion {NumberText.Rounded(criterion, 4)} there, must be below 1); this curve needs a release length below {NumberText.Rounded(largest, 3)}"));
     }
 
     private static void CheckSingleDamage(LayerDeck layer, string path, ReadContext context)

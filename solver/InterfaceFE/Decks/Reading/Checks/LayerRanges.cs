@@ -1,4 +1,5 @@
 using System.Globalization;
+using InterfaceFE.Units;
 
 namespace InterfaceFE.Decks.Reading.Checks;
 
@@ -21,7 +22,7 @@ internal static class LayerRanges
         Band(shear.Strength, 0.05, 100, "MPa", "strength in shear", Strength(path + ".shear", context), context);
         double ratio = shear.Toughness / peel.Toughness;
         if (ratio is < 0.5 or > 20)
-            context.Warn(Toughness(path + ".shear", context), string.Create(CultureInfo.InvariantCulture, $"the toughness in shear is {ratio:G3} times that in peel; common are 0.5 to 20"));
+            context.Warn(Toughness(path + ".shear", context), string.Create(CultureInfo.InvariantCulture, $"the toughness in shear is {NumberText.Rounded(ratio, 3)} times that in peel; common are 0.5 to 20"));
         Fall(peel, path + ".peel", context);
         Fall(shear, path + ".shear", context);
         if (layer.Bulk is { } bulk)
@@ -34,7 +35,7 @@ internal static class LayerRanges
         {
             double nu = bulk.Poisson;
             double factor = (1 - nu) / ((1 + nu) * (1 - 2 * nu));
-            context.Warn(path + ".bulk.poisson", string.Create(CultureInfo.InvariantCulture, $"above {SensitivePoisson} the confined stiffness hangs on the last digit of it (now {factor:G3} times young); a measured stiffness is better"));
+            context.Warn(path + ".bulk.poisson", string.Create(CultureInfo.InvariantCulture, $"above {SensitivePoisson} the confined stiffness hangs on the last digit of it (now {NumberText.Rounded(factor, 3)} times young); a measured stiffness is better"));
         }
         Compare(peel.Stiffness, LayerChecks.PeelStiffness(bulk, layer.Thickness), "peel", path, context);
         Compare(shear.Stiffness, LayerChecks.ShearStiffness(bulk, layer.Thickness), "shear", path, context);
@@ -45,19 +46,19 @@ internal static class LayerRanges
         double ratio = given / fromBulk;
         string at = $"{path}.{mode}.stiffness";
         if (ratio is > StiffnessFactor or < 1 / StiffnessFactor)
-            context.Warn(context.IsGiven(at) ? at : $"{path}.{mode}", string.Create(CultureInfo.InvariantCulture, $"the stiffness {given:G4} MPa/mm is {ratio:G3} times what `bulk` and the thickness give ({fromBulk:G4} MPa/mm)"));
+            context.Warn(context.IsGiven(at) ? at : $"{path}.{mode}", string.Create(CultureInfo.InvariantCulture, $"the stiffness {NumberText.Rounded(given, 4)} MPa/mm is {NumberText.Rounded(ratio, 3)} times what `bulk` and the thickness give ({NumberText.Rounded(fromBulk, 4)} MPa/mm)"));
     }
 
     private static void Fall(CurveFigures curve, string path, ReadContext context)
     {
         if (curve.Final > curve.ElasticLimit && curve.Final < 2 * curve.ElasticLimit)
-            context.Warn(Toughness(path, context), string.Create(CultureInfo.InvariantCulture, $"the curve falls very steeply: its final separation {curve.Final:G4} mm is less than twice its elastic limit {curve.ElasticLimit:G4} mm; the run may need many points"));
+            context.Warn(Toughness(path, context), string.Create(CultureInfo.InvariantCulture, $"the curve falls very steeply: its final separation {NumberText.Rounded(curve.Final, 4)} mm is less than twice its elastic limit {NumberText.Rounded(curve.ElasticLimit, 4)} mm; the run may need many points"));
     }
 
     private static void Band(double value, double least, double most, string unit, string what, string path, ReadContext context)
     {
         if (value < least || value > most)
-            context.Warn(path, string.Create(CultureInfo.InvariantCulture, $"a {what} of {value:G4} {unit} is unusual; common are {least} to {most} {unit}"));
+            context.Warn(path, string.Create(CultureInfo.InvariantCulture, $"a {what} of {NumberText.Rounded(value, 4)} {unit} is unusual; common are {least} to {most} {unit}"));
     }
 
     private static string Toughness(string path, ReadContext context) => context.IsGiven(path + ".toughness") ? path + ".toughness" : path;

@@ -1,4 +1,5 @@
 using System.Globalization;
+using InterfaceFE.Units;
 
 namespace InterfaceFE.Decks.Reading.Checks;
 
@@ -47,7 +48,7 @@ internal static class MaterialChecks
         double r = ratio.Zy * Math.Sqrt(young.Y / young.Z);
         double determinant = 1 - p * p - q * q - r * r - 2 * p * q * r;
         if (pairs && determinant <= 0)
-            context.Fail(path, string.Create(CultureInfo.InvariantCulture, $"with these moduli the three ratios together would give a body that yields energy when loaded (determinant of the scaled compliance {determinant:G3}, must be greater than 0); smaller ratios are needed"));
+            context.Fail(path, string.Create(CultureInfo.InvariantCulture, $"with these moduli the three ratios together would give a body that yields energy when loaded (determinant of the scaled compliance {NumberText.Rounded(determinant, 3)}, must be greater than 0); smaller ratios are needed"));
     }
 
     private static bool PairHolds(double ratio, double first, double second, string pair, string i, string j, string path, ReadContext context)
@@ -56,7 +57,7 @@ internal static class MaterialChecks
         if (!(Math.Abs(ratio) >= bound))
             return true;
         string at = context.IsGiven(ReadContext.Join(path, pair)) ? ReadContext.Join(path, pair) : path;
-        context.Fail(at, string.Create(CultureInfo.InvariantCulture, $"must be less than sqrt(young {i} / young {j}) = {bound:G4} for the pair {pair}"));
+        context.Fail(at, string.Create(CultureInfo.InvariantCulture, $"must be less than sqrt(young {i} / young {j}) = {NumberText.Rounded(bound, 4)} for the pair {pair}"));
         return false;
     }
 }
