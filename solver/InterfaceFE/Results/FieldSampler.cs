@@ -39,6 +39,9 @@ public sealed class FieldSampler
     /// <summary>Equivalent stress at each node [MPa].</summary>
     public double[] Equivalent { get; }
 
+    /// <summary>Largest rotation of the material at the latest sample, magnitude [rad].</summary>
+    public double LargestRotation { get; private set; }
+
     /// <summary>Whether a node belongs to an element that touches a grip, where stresses are those of the grip's idealisation.</summary>
     public IReadOnlyList<bool> AtGrip => _atGrip;
 
@@ -49,7 +52,8 @@ public sealed class FieldSampler
             (DisplacementX[node], DisplacementY[node]) = _model.Unknowns.Displacement(node, equilibrium.AcceptedDisplacement);
         foreach (double[] component in _stress)
             Array.Clear(component);
-        Span<double> native = stackalloc double[16], gauss = stackalloc double[16], nodal = stackalloc double[32];
+        LargestRotation = 0;
+        Span<double> native = stackalloc double[16], gauss = stackalloc double[16], nodal = stackalloc double[32], gradients = stackalloc double[16];
         foreach (SolidBlock solid in _model.Solids)
         {
             int n = solid.NodesPerElement;
@@ -58,6 +62,9 @@ public sealed class FieldSampler
                 ReadOnlySpan<int> nodes = solid.Nodes(e);
                 LayerSample.Gather(nodes, DisplacementX, DisplacementY, native);
                 solid.Stresses(e, native[..(2 * n)], equilibrium.AcceptedTemperature, gauss);
+                solid.Gradients(e, native[..(2 * n)], gradients);
+                for (int p = 0; p < 4; p++)
+                    LargestRotation = Math.Max(LargestRotation, 0.5 * Math.Abs(gradients[4 * p + 2] - gradients[4 * p + 1]));
                 solid.ExtrapolateToNodes(4, gauss, nodal[..(4 * n)]);
                 for (int i = 0; i < n; i++)
                     for (int c = 0; c < 4; c++)

@@ -37,12 +37,16 @@ public sealed class RunMaxima
     /// <summary>First damage; null while none.</summary>
     public EventSummary? FirstDamage { get; private set; }
 
+    /// <summary>Largest rotation of the material [rad].</summary>
+    public double LargestRotation { get; private set; }
+
     /// <summary>Points with an equilibrium that is not stable.</summary>
     public int UnstablePoints { get; private set; }
 
     /// <summary>Takes an accepted point in.</summary>
-    public void Take(MarchPoint point, LayerSample[] samples, BondFront[][] fronts, double[] equivalent)
+    public void Take(MarchPoint point, LayerSample[] samples, BondFront[][] fronts, double[] equivalent, double rotation)
     {
+        LargestRotation = Math.Max(LargestRotation, rotation);
         if (!point.Stable)
             UnstablePoints++;
         for (int j = 0; j < samples.Length; j++)

@@ -88,7 +88,7 @@ public sealed class RunRecorder : IMarchObserver
             for (int f = 0; f < _fronts[joint].Length; f++)
                 fronts.Add(Front(point, joint, f, readings));
         EnergyRow energy = Energy(point);
-        _maxima.Take(point, _samples, _fronts, _fields.Equivalent);
+        _maxima.Take(point, _samples, _fronts, _fields.Equivalent, _fields.LargestRotation);
         _history.Points.Add(row);
         _history.Fronts.AddRange(fronts);
         _history.Energies.Add(energy);

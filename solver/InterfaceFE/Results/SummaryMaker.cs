@@ -1,0 +1,102 @@
+using InterfaceFE.Geometry;
+using InterfaceFE.Mechanics.Layers;
+using InterfaceFE.Model;
+
+namespace InterfaceFE.Results;
+
+/// <summary>Makes the summary of a run from its history: peaks, maxima, self-check.</summary>
+public static class SummaryMaker
+{
+    private const double GoodBalance = 1e-9, PoorBalance = 1e-6;
+    private const double GoodPathError = 1e-3, PoorPathError = 1e-2;
+    private const double GoodJ = 0.02, PoorJ = 0.1;
+    private const double GoodRotation = 5, PoorRotation = 15;
+
+    /// <summary>Fills grips, joints, adherends, events, remarks and self-check of a summary.</summary>
+    public static void Fill(RunSummary summary, RunHistory history, RunRecorder recorder, SpecimenModel model)
+    {
+        for (int g = 0; g < history.Grips.Count; g++)
+            summary.Grips.Add(Grip(history, g));
+        summary.Joints.AddRange(recorder.Maxima.Joints());
+        summary.Adherends.AddRange(recorder.Maxima.Adherends());
+        summary.FirstDamage = recorder.Maxima.FirstDamage;
+        summary.Remarks.AddRange(recorder.Remarks());
+        summary.Remarks.Add("stresses of adherends are means at nodes; elements that touch a grip are left out");
+        Judge(summary.SelfCheck, history, recorder.Maxima, model);
+    }
+
+    private static GripSummary Grip(RunHistory history, int g)
+    {
+        GripInfo info = history.Grips[g];
+        List<PointRow> points = history.Points;
+        if (!info.Moved || points.Count == 0)
+            return new GripSummary { Name = info.Name };
+        GripReading last = points[^1].Grips[g];
+        double[] displacement = [.. points.Select(p => p.Grips[g].Displacement)];
+        double[] rotation = [.. points.Select(p => p.Grips[g].Rotation ?? 0)];
+        Peak? force = info.DirectionX != 0 || info.DirectionY != 0 ? Peak.Of(displacement, [.. points.Select(p => p.Grips[g].Force)]) : null;
+        Peak? moment = info.Turned ? Peak.Of(rotation, [.. points.Select(p => p.Grips[g].Moment ?? 0)]) : null;
+        return new GripSummary
+        {
+            Name = info.Name,
+            PeakForce = force?.Value,
+            DisplacementAtPeak = force?.At,
+            PeakPoint = points[force?.Index ?? moment?.Index ?? 0].Point,
+            PeakMoment = moment?.Value,
+            RotationAtPeak = moment?.At,
+            FinalForce = force is null ? null : last.Force,
+            FinalDisplacement = force is null ? null : last.Displacement,
+            FinalRotation = last.Rotation,
+            FinalMoment = info.Turned ? last.Moment : null,
+        };
+    }
+
+    private static void Judge(SelfCheck check, RunHistory history, RunMaxima maxima, SpecimenModel model)
+    {
+        check.Balance = history.Energies.Max(e => e.Balance);
+        check.PathError = history.Energies.Max(e => e.PathError);
+        check.JDisagreement = Disagreement(history, model);
+        check.ElementsPerProcessZone = maxima.Joints().Select(j => (double?)j.ElementsPerProcessZone).Min();
+        check.UnstablePoints = maxima.UnstablePoints;
+        check.LargestRotationDegrees = maxima.LargestRotation * 180 / Math.PI;
+        var verdict = Verdict.NumbersHold;
+        Grade(check.Balance, GoodBalance, PoorBalance, "forces are not in balance: balance");
+        Grade(check.PathError, GoodPathError, PoorPathError, "strides are long for the path: path error");
+        Grade(check.LargestRotationDegrees, GoodRotation, PoorRotation, "rotations are large for `rotation: small`: largest rotation in degrees");
+        if (check.JDisagreement is { } j)
+            Grade(j, GoodJ, PoorJ, "energy release rates by independent formulas disagree: relative difference");
+        foreach (MeshedJoint joint in model.Mesh.Joints)
+        {
+            double longest = 0;
+            for (int e = 0; e < joint.ElementCount; e++)
+                if (joint.Bonded[e])
+                    longest = Math.Max(longest, joint.Position[e + 1] - joint.Position[e]);
+            Grade(longest / joint.OnePercentLength, 1 + 1e-9, 2, $"elements along joint '{joint.Name}' are long: length over the one for 1 % error");
+        }
+        check.Verdict = verdict;
+
+        void Grade(double value, double good, double poor, string words)
+        {
+            if (value <= good)
+                return;
+            Verdict own = value <= poor ? Verdict.HoldWithCare : Verdict.DoNotHold;
+            verdict = own > verdict ? own : verdict;
+            check.Reasons.Add(string.Create(System.Globalization.CultureInfo.InvariantCulture, $"{words} {value:G3} (should be at most {good:G3})"));
+        }
+    }
+
+    private static double? Disagreement(RunHistory history, SpecimenModel model)
+    {
+        double? worst = null;
+        foreach (FrontRow row in history.Fronts)
+        {
+            ILayerLaw law = model.Layers.First(l => l.Name == row.Joint).Law;
+            double floor = 0.02 * Math.Min(law.PeelToughness, law.ShearToughness);
+            double[] values = [.. new[] { row.JPath, row.JRotation, row.JUnderLaw }.Where(v => v is not null).Select(v => v!.Value)];
+            if (values.Length < 2 || values.Max() < floor)
+                continue;
+            worst = Math.Max(worst ?? 0, (values.Max() - values.Min()) / values.Max());
+        }
+        return worst;
+    }
+}
