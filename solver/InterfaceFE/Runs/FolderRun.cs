@@ -29,6 +29,8 @@ public sealed class FolderRun
     /// <summary>Removes the files of an earlier run from a folder; other files stay.</summary>
     public static void Clear(string folder)
     {
+        if (!Directory.Exists(folder))
+            return;
         foreach (string name in (ReadOnlySpan<string>)["summary.json", "grips.csv", "front.csv", "energy.csv", "convergence.csv", "fields.pvd", "deck.yaml", "run.log"])
             File.Delete(Path.Combine(folder, name));
         foreach (string name in (ReadOnlySpan<string>)["fields", "figures"])
