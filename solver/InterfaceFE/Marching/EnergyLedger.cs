@@ -4,7 +4,7 @@ namespace InterfaceFE.Marching;
 /// <param name="PutIn">Work of grips and loads since the start, by the trapezoidal rule.</param>
 /// <param name="Thermal">Energy put in by change of temperature, by the trapezoidal rule.</param>
 /// <param name="State">Energies of the model.</param>
-/// <param name="Balance">Virtual work of external and internal forces over all strides, difference over the largest sum of magnitudes.</param>
+/// <param name="Balance">Virtual work of external and internal forces over all strides: difference over the sum of magnitudes of the terms or of the energies turned over, whichever is larger.</param>
 /// <param name="PathError">Energy put in against the elements' own energies, over the sum of magnitudes.</param>
 public readonly record struct EnergyAccount(double PutIn, double Thermal, EnergyState State, double Balance, double PathError);
 
@@ -69,7 +69,8 @@ public sealed class EnergyLedger
     /// <summary>The account as it stands.</summary>
     public EnergyAccount Account()
     {
-        double balance = _magnitude > 0 ? Math.Abs(_putIn - _internalWork) / _magnitude : 0;
+        double scale = Math.Max(_magnitude, _turnover);
+        double balance = scale > 0 ? Math.Abs(_putIn - _internalWork) / scale : 0;
         double pathError = _turnover > 0 ? Math.Abs(_putIn + _thermal - _energy.Total) / _turnover : 0;
         return new EnergyAccount(_putIn, _thermal, _energy, balance, pathError);
     }

@@ -173,7 +173,7 @@ internal sealed class StageMarch
         double start = _equilibrium.AcceptedProgress, target = start + stride;
         if (target > 1 - 0.2 * stride)
             target = 1;
-        if (_hasWay && retry == 0 && _wayProgress > 0)
+        if (_hasWay && Extrapolates(retry) && _wayProgress > 0)
             _equilibrium.Guess(_way, _wayProgress, Math.Min((target - start) / _wayProgress, 2));
         else
             _equilibrium.RollBack();
@@ -185,7 +185,7 @@ internal sealed class StageMarch
     {
         IControl control = MakePathControl(retry);
         double measure = control is LayerWorkControl ? _wayWork : _wayArc;
-        if (_hasWay && retry == 0 && measure > 0 && _pathStride <= 2.5 * measure)
+        if (_hasWay && Extrapolates(retry) && measure > 0 && _pathStride <= 2.5 * measure)
             _equilibrium.Guess(_way, _wayProgress, _pathStride / measure);
         else
             _equilibrium.RollBack();
@@ -271,6 +271,11 @@ internal sealed class StageMarch
         if (_unstable > 0 && HasPathControl && PathCanTakeOver())
             TakePath("the equilibrium is unstable under the stage's own control");
     }
+
+    /// <summary>
+    /// The first guess carries the last way on, so that points that were unloading keep unloading; every third retry starts from the accepted point instead, with its tangent.
+    /// </summary>
+    private static bool Extrapolates(int retry) => retry % 3 != 2;
 
     private static double Factor(Attempt attempt)
     {
