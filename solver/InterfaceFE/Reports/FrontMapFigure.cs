@@ -21,7 +21,11 @@ internal static class FrontMapFigure
         bounds[^1] = rows[^1].Point + 0.5;
         Panel panel = new()
         {
-            XTitle = $"Position along {mesh.Name} (mm)", YTitle = "Point", Height = 440, WholeNumbersY = true, Grid = false,
+            XTitle = $"Position along {mesh.Name} (mm)",
+            YTitle = "Point",
+            Height = 440,
+            WholeNumbersY = true,
+            Grid = false,
             Limits = new Limits(mesh.Position[0], mesh.Position[^1], bounds[^1], bounds[0]),
             Map = new DamageMap(mesh.Position, bounds, [.. rows.Select(row => row.Damage)]),
             StageLines = Stages(history, bounds[0], bounds[^1]),
