@@ -30,7 +30,9 @@ internal static class FrontMapFigure
             Map = new DamageMap(mesh.Position, bounds, [.. rows.Select(row => row.Damage)]),
             StageLines = Stages(history, bounds[0], bounds[^1]),
         };
-        List<Key> keys = [new Key(KeyKind.Separated, "separated: white with a dark edge")];
+        List<Key> keys = [];
+        if (rows.Any(row => row.Damage.Any(damage => damage >= 1)))
+            keys.Add(new Key(KeyKind.Separated, "separated: white with a dark edge"));
         if (mesh.Bonded.Contains(false))
             keys.Add(new Key(KeyKind.Area, "never bonded", Style.NeverBonded));
         return new Figure

@@ -535,23 +535,43 @@ internal static class Plotting
             lower[i] = At(stretch.Lower.X[i], stretch.Lower.Y[i], pack);
             upper[i] = At(stretch.Upper.X[i], stretch.Upper.Y[i], pack);
         }
-        area.AddPoly([.. lower, .. upper.Reverse()]);
+        int from = -1;
         for (int i = 1; i < n; i++)
         {
-            bool narrow = SKPoint.Distance(lower[i - 1], upper[i - 1]) < Narrow || SKPoint.Distance(lower[i], upper[i]) < Narrow;
-            if (narrow)
+            bool wide = Gap(lower, upper, i - 1) >= Narrow && Gap(lower, upper, i) >= Narrow;
+            if (wide)
+            {
+                from = from < 0 ? i - 1 : from;
+                Segment(faces, lower[i - 1].X, lower[i - 1].Y, lower[i].X, lower[i].Y);
+                Segment(faces, upper[i - 1].X, upper[i - 1].Y, upper[i].X, upper[i].Y);
+            }
+            else
             {
                 Continue(middle, Between(lower[i - 1], upper[i - 1]), Between(lower[i], upper[i]));
-                continue;
             }
-            Segment(faces, lower[i - 1].X, lower[i - 1].Y, lower[i].X, lower[i].Y);
-            Segment(faces, upper[i - 1].X, upper[i - 1].Y, upper[i].X, upper[i].Y);
+            if (from >= 0 && (!wide || i == n - 1))
+            {
+                int end = wide ? i + 1 : i;
+                area.AddPoly([.. lower[from..end], .. upper[from..end].Reverse()]);
+                from = -1;
+            }
         }
         using (SKPaint fill = Paint(ColourOf(stretch.State)))
             canvas.DrawPath(area, fill);
         StrokeLayer(canvas, middle, stretch.State);
         using SKPaint edge = Paint(Style.Ink, stroke: stretch.State == LayerState.Separated ? 1.4f : 0.8f);
         canvas.DrawPath(faces, edge);
+    }
+
+    /// <summary>
+    /// Distance of the faces at a station in pixels, negative where they have passed each other (contact shown larger than it is). A joint runs with the upper face
+    /// to the left of its direction; y of a canvas points down.
+    /// </summary>
+    private static float Gap(SKPoint[] lower, SKPoint[] upper, int i)
+    {
+        SKPoint along = lower[Math.Min(i + 1, lower.Length - 1)] - lower[Math.Max(i - 1, 0)], across = upper[i] - lower[i];
+        float length = along.Length;
+        return length > 0 ? (along.Y * across.X - along.X * across.Y) / length : 0;
     }
 
     private static SKPoint Between(SKPoint a, SKPoint b) => new(0.5f * (a.X + b.X), 0.5f * (a.Y + b.Y));

@@ -7,8 +7,10 @@ public class ColourMapTests
 {
     // Values of Scientific colour maps 7.0.1 (Crameri 2021) at places that are no control colours; 3 of 255 is the stated closeness.
     [Theory]
-    [InlineData(1, 0x02, 0x1B, 0x59)]
-    [InlineData(13, 0x0B, 0x2D, 0x5C)]
+    [InlineData(1, 2, 27, 89)]
+    [InlineData(13, 11, 45, 93)]
+    [InlineData(100, 83, 117, 73)]
+    [InlineData(201, 249, 163, 130)]
     public void Batlow_comes_close_to_its_published_colours(int index, int red, int green, int blue)
     {
         uint colour = ColourMap.Batlow.At(index / 255.0);
@@ -27,6 +29,17 @@ public class ColourMapTests
             Assert.True(lightness > before, $"at {i} of 32");
             before = lightness;
         }
+    }
+
+    [Theory]
+    [InlineData(-0.6, 17, 100, 150)]
+    [InlineData(0.403922, 204, 135, 95)]
+    public void Vik_comes_close_to_its_published_colours(double place, int red, int green, int blue)
+    {
+        uint colour = ColourMap.Vik.At(0.5 * (1 + place));
+        Close.To(red, (colour >> 16) & 0xFF, 0, 3);
+        Close.To(green, (colour >> 8) & 0xFF, 0, 3);
+        Close.To(blue, colour & 0xFF, 0, 3);
     }
 
     [Fact]
