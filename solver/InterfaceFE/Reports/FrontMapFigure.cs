@@ -21,12 +21,18 @@ internal static class FrontMapFigure
         bounds[^1] = rows[^1].Point + 0.5;
         Panel panel = new()
         {
-            XTitle = $"Position along {mesh.Name} (mm)", YTitle = "Point", Height = 440, WholeNumbersY = true, Grid = false,
+            XTitle = $"Position along {mesh.Name} (mm)",
+            YTitle = "Point",
+            Height = 440,
+            WholeNumbersY = true,
+            Grid = false,
             Limits = new Limits(mesh.Position[0], mesh.Position[^1], bounds[^1], bounds[0]),
             Map = new DamageMap(mesh.Position, bounds, [.. rows.Select(row => row.Damage)]),
             StageLines = Stages(history, bounds[0], bounds[^1]),
         };
-        List<Key> keys = [new Key(KeyKind.Separated, "separated: white with a dark edge")];
+        List<Key> keys = [];
+        if (rows.Any(row => row.Damage.Any(damage => damage >= 1)))
+            keys.Add(new Key(KeyKind.Separated, "separated: white with a dark edge"));
         if (mesh.Bonded.Contains(false))
             keys.Add(new Key(KeyKind.Area, "never bonded", Style.NeverBonded));
         return new Figure

@@ -98,6 +98,6 @@ internal static class LoadFigure
                 return [];
             (atX, atY) = (x[best], y[best]);
         }
-        return [new Note(atX.Value, atY.Value, $"peak {SummaryText.Number(atY)} {unit} at {SummaryText.Number(atX)} {(grip.Turned ? "°" : "mm")}", 0)];
+        return [new Note(atX.Value, atY.Value, $"peak {SummaryText.Number(atY)} {unit} at {SummaryText.Number(atX)}{(grip.Turned ? "°" : " mm")}", 0)];
     }
 }

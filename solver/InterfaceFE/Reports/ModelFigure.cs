@@ -159,7 +159,12 @@ internal static class ModelFigure
         double midX = 0.5 * (left + right), midY = 0.5 * (bottom + top);
         return new Panel
         {
-            XTitle = "x (mm)", YTitle = "y (mm)", Height = height + Plotting.AxesHeight, Grid = false, Picture = picture, Caption = caption,
+            XTitle = "x (mm)",
+            YTitle = "y (mm)",
+            Height = height + Plotting.AxesHeight,
+            Grid = false,
+            Picture = picture,
+            Caption = caption,
             Limits = new Limits(midX - 0.5 * wide * perPixel, midX + 0.5 * wide * perPixel, midY - 0.5 * height * perPixel, midY + 0.5 * height * perPixel),
         };
     }

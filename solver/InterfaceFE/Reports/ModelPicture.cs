@@ -41,8 +41,13 @@ internal sealed class ModelPicture
             ForEachElement(adherend, nodes => Triangles(nodes, cuts, values, least, largest, x, y, place));
         return new Picture
         {
-            TriangleX = [.. x], TriangleY = [.. y], TrianglePlace = [.. place], Map = map,
-            Hatched = Yielded(fields), Outlines = Outlines(), Layers = Layers(fields),
+            TriangleX = [.. x],
+            TriangleY = [.. y],
+            TrianglePlace = [.. place],
+            Map = map,
+            Hatched = Yielded(fields),
+            Outlines = Outlines(),
+            Layers = Layers(fields),
         };
     }
 
@@ -60,8 +65,13 @@ internal sealed class ModelPicture
         }
         return new Picture
         {
-            TriangleX = [.. x], TriangleY = [.. y], TrianglePlace = [.. place], Map = ColourMap.Batlow, TriangleColour = [.. colours],
-            Outlines = Outlines(), Layers = Layers(null),
+            TriangleX = [.. x],
+            TriangleY = [.. y],
+            TrianglePlace = [.. place],
+            Map = ColourMap.Batlow,
+            TriangleColour = [.. colours],
+            Outlines = Outlines(),
+            Layers = Layers(null),
         };
     }
 

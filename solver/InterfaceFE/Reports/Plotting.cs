@@ -1,5 +1,6 @@
 using System.Globalization;
 using System.Reflection;
+using System.Runtime.InteropServices;
 using System.Text;
 using InterfaceFE.Results;
 using ScottPlot;
@@ -43,8 +44,8 @@ internal static class Plotting
     /// <summary>Height of a panel around its data area in the figure's pixels.</summary>
     public static double AxesHeight => AxisBottom + AxisTop;
 
-    /// <summary>Name of the face that text of a family and weight is set in.</summary>
-    internal static string FaceOf(string family, bool bold) => Fonts.GetTypeface(family, bold, italic: false).FamilyName + (ReferenceEquals(Fonts.GetTypeface(family, bold, false), bold ? Bold : Regular) ? " embedded" : "");
+    /// <summary>Whether text of a family and weight is set in the embedded face of that weight.</summary>
+    internal static bool IsEmbedded(string family, bool bold) => ReferenceEquals(Fonts.GetTypeface(family, bold, italic: false), bold ? Bold : Regular);
 
     /// <summary>Writes a figure as PNG and SVG.</summary>
     /// <param name="figure">The figure.</param>
@@ -154,8 +155,9 @@ internal static class Plotting
             return 0;
         using SKFont font = new(Regular, 12);
         float x = Margin, y = top + 12;
-        foreach ((string name, Action<SKCanvas, float, float> sample) in entries)
+        foreach ((string full, Action<SKCanvas, float, float> sample) in entries)
         {
+            string name = Fitted(full, font, Width - 2 * Margin - 62);
             float wide = 40 + font.MeasureText(name) + 22;
             if (x > Margin && x + wide > Width - Margin)
             {
@@ -259,7 +261,10 @@ internal static class Plotting
         if (panel.Notes.Count > 0 || panel.StageLines.Count > 0)
             plot.Add.Plottable(new Layer(pack => Annotate(pack.Canvas, panel, pack)));
         SetLimits(plot, panel);
+        plot.Axes.Left.TickLabelStyle.OffsetY = 3;
         plot.Layout.Fixed(new PixelPadding(AxisLeft, AxisRight, AxisBottom, AxisTop));
+        // A plot clears the whole canvas first, and with it the header and the panels above.
+        plot.RenderManager.ClearCanvasBeforeEachRender = false;
         plot.Render(canvas, place);
     }
 
@@ -271,9 +276,10 @@ internal static class Plotting
         plot.Grid.MajorLineColor = ScottColour(Style.PaleLine);
         plot.Grid.MajorLineWidth = 1;
         plot.Grid.IsVisible = panel.Grid;
+        using SKFont font = new(Regular, 13);
         foreach ((IAxis axis, string title, bool whole) in new[] { ((IAxis)plot.Axes.Bottom, panel.XTitle, false), (plot.Axes.Left, panel.YTitle, panel.WholeNumbersY) })
         {
-            axis.Label.Text = title;
+            axis.Label.Text = Fitted(title, font, axis is IYAxis ? (float)panel.Height - 8 : Width - 2 * Margin - AxisLeft);
             axis.Label.FontSize = 13;
             axis.Label.Bold = false;
             axis.Label.ForeColor = ScottColour(Style.Ink);
@@ -284,7 +290,7 @@ internal static class Plotting
             axis.FrameLineStyle.Color = axis.MajorTickStyle.Color = axis.MinorTickStyle.Color = ScottColour(Style.Grey);
             axis.FrameLineStyle.Width = 1;
             axis.MinorTickStyle.Length = 0;
-            axis.TickGenerator = new NumericAutomatic { LabelFormatter = Number, IntegerTicksOnly = whole };
+            axis.TickGenerator = new NumericAutomatic { LabelFormatter = Number, IntegerTicksOnly = whole, TickDensity = 0.7 };
         }
     }
 
@@ -348,7 +354,7 @@ internal static class Plotting
         }
         if (curve.Marking == Marking.None || all.Count == 0)
             return;
-        Coordinates[] marked = Thinned(all, curve.Marking == Marking.Hollow ? 60 : 12);
+        Coordinates[] marked = curve.Marking == Marking.Hollow ? Thinned(all, 60, 0) : Thinned(all, 12, curve.Style % 4 * 0.25);
         plot.Add.Plottable(new Layer(pack =>
         {
             foreach (Coordinates place in marked)
@@ -363,10 +369,18 @@ internal static class Plotting
     private static void Marker(SKCanvas canvas, Curve curve, float x, float y)
     {
         const float R = 4.2f;
+        using SKPaint fill = Paint(curve.Marking == Marking.Hollow ? 0xFFFFFF : Style.Colour(curve.Style));
+        using SKPaint edge = Paint(Style.Colour(curve.Style), stroke: 1.6f);
+        if (Style.Form(curve.Style) == 0)
+        {
+            // As a circle and not as a path: a path of arcs takes a hundred times the room in SVG.
+            canvas.DrawCircle(x, y, R, fill);
+            canvas.DrawCircle(x, y, R, edge);
+            return;
+        }
         using SKPath shape = new();
         switch (Style.Form(curve.Style))
         {
-            case 0: shape.AddCircle(x, y, R); break;
             case 1: shape.AddRect(new SKRect(x - R + 0.4f, y - R + 0.4f, x + R - 0.4f, y + R - 0.4f)); break;
             case 2: shape.AddPoly([new SKPoint(x, y - R - 0.6f), new SKPoint(x + R + 0.4f, y + R - 0.8f), new SKPoint(x - R - 0.4f, y + R - 0.8f)]); break;
             case 3: shape.AddPoly([new SKPoint(x, y - R - 1), new SKPoint(x + R + 1, y), new SKPoint(x, y + R + 1), new SKPoint(x - R - 1, y)]); break;
@@ -375,9 +389,7 @@ internal static class Plotting
                 Segment(shape, x - R, y + R, x + R, y - R);
                 break;
         }
-        using (SKPaint fill = Paint(curve.Marking == Marking.Hollow ? 0xFFFFFF : Style.Colour(curve.Style)))
-            canvas.DrawPath(shape, fill);
-        using SKPaint edge = Paint(Style.Colour(curve.Style), stroke: 1.6f);
+        canvas.DrawPath(shape, fill);
         canvas.DrawPath(shape, edge);
     }
 
@@ -402,13 +414,14 @@ internal static class Plotting
             yield return [.. piece];
     }
 
-    private static Coordinates[] Thinned(List<Coordinates> all, int limit)
+    /// <summary>So many points spread along a curve, moved on by a share of their distance so that the markers of close curves do not hide each other.</summary>
+    private static Coordinates[] Thinned(List<Coordinates> all, int limit, double shift)
     {
         if (all.Count <= limit)
             return [.. all];
         Coordinates[] some = new Coordinates[limit];
         for (int i = 0; i < limit; i++)
-            some[i] = all[(int)((long)i * (all.Count - 1) / (limit - 1))];
+            some[i] = all[Math.Min(all.Count - 1, (int)((i + shift) * (all.Count - 1) / (limit - 1)))];
         return some;
     }
 
@@ -465,32 +478,27 @@ internal static class Plotting
     /// </summary>
     private static void Fill(SKCanvas canvas, Picture picture, RenderPack pack, SKRect data)
     {
-        const float Dots = 3;
+        const float Dots = PixelsPerUnit;
         SKImageInfo size = new((int)Math.Ceiling(data.Width * Dots), (int)Math.Ceiling(data.Height * Dots), SKColorType.Rgba8888, SKAlphaType.Premul);
         using SKSurface surface = SKSurface.Create(size);
         surface.Canvas.Clear(SKColors.Transparent);
         surface.Canvas.Scale(Dots);
         surface.Canvas.Translate(-data.Left, -data.Top);
         using SKPaint paint = new() { IsAntialias = false };
-        if (picture.TriangleColour is null)
-            paint.Shader = SKShader.CreateLinearGradient(new SKPoint(0, 0), new SKPoint(256, 0), [.. picture.Map.Colours.ToArray().Select(c => Colour(c))], SKShaderTileMode.Clamp);
         int triangles = picture.TriangleX.Length / 3;
         for (int first = 0; first < triangles; first += TrianglesAtOnce)
         {
             int count = 3 * Math.Min(TrianglesAtOnce, triangles - first);
             SKPoint[] corners = new SKPoint[count];
-            SKPoint[] places = new SKPoint[count];
-            SKColor[]? colours = picture.TriangleColour is null ? null : new SKColor[count];
+            SKColor[] colours = new SKColor[count];
             for (int i = 0; i < count; i++)
             {
                 int k = 3 * first + i;
                 corners[i] = At(picture.TriangleX[k], picture.TriangleY[k], pack);
-                places[i] = new SKPoint(256 * Math.Clamp(picture.TrianglePlace[k], 0.0005f, 0.9995f), 0);
-                if (colours is not null)
-                    colours[i] = Colour(picture.TriangleColour![k / 3]);
+                colours[i] = Colour(picture.TriangleColour is { } own ? own[k / 3] : picture.Map.At(picture.TrianglePlace[k]));
             }
-            using SKVertices vertices = SKVertices.CreateCopy(SKVertexMode.Triangles, corners, colours is null ? places : null, colours);
-            surface.Canvas.DrawVertices(vertices, colours is null ? SKBlendMode.Src : SKBlendMode.Dst, paint);
+            using SKVertices vertices = SKVertices.CreateCopy(SKVertexMode.Triangles, corners, colours);
+            surface.Canvas.DrawVertices(vertices, SKBlendMode.Dst, paint);
         }
         using SKImage image = surface.Snapshot();
         canvas.DrawImage(image, data, new SKSamplingOptions(SKFilterMode.Linear, SKMipmapMode.Linear));
@@ -512,39 +520,82 @@ internal static class Plotting
         canvas.Restore();
     }
 
+    /// <summary>
+    /// Fills the gap between the faces in the colour of the layer's state. Where the faces are closer than a few dots, a line of even width on the middle stands for
+    /// the layer instead, so that it is seen in a slender model.
+    /// </summary>
     private static void DrawLayer(SKCanvas canvas, LayerStretch stretch, RenderPack pack)
     {
+        const float Narrow = 4;
+        int n = stretch.Lower.X.Length;
         using SKPath area = new(), middle = new(), faces = new();
-        Trace(faces, stretch.Lower, pack, close: false);
-        Trace(faces, stretch.Upper, pack, close: false);
-        Polyline around = new([.. stretch.Lower.X, .. stretch.Upper.X.Reverse()], [.. stretch.Lower.Y, .. stretch.Upper.Y.Reverse()]);
-        Trace(area, around, pack, close: true);
-        Polyline between = new([.. stretch.Lower.X.Zip(stretch.Upper.X, (a, b) => 0.5 * (a + b))], [.. stretch.Lower.Y.Zip(stretch.Upper.Y, (a, b) => 0.5 * (a + b))]);
-        Trace(middle, between, pack, close: false);
-        if (stretch.State == LayerState.Separated)
+        SKPoint[] lower = new SKPoint[n], upper = new SKPoint[n];
+        for (int i = 0; i < n; i++)
         {
-            // Where the gap is narrower than a few pixels the middle line stands for it; the white area is drawn over that line where the gap is wide.
-            StrokeLayer(canvas, middle, stretch.State);
-            using SKPaint white = Paint(0xFFFFFF);
-            canvas.DrawPath(area, white);
-            using SKPaint edge = Paint(Style.Ink, stroke: 1.4f);
-            canvas.DrawPath(faces, edge);
-            using SKPaint core = Paint(0xFFFFFF, stroke: 2.2f);
-            canvas.DrawPath(middle, core);
+            lower[i] = At(stretch.Lower.X[i], stretch.Lower.Y[i], pack);
+            upper[i] = At(stretch.Upper.X[i], stretch.Upper.Y[i], pack);
         }
-        else
+        int from = -1;
+        for (int i = 1; i < n; i++)
         {
-            using SKPaint fill = Paint(stretch.State == LayerState.Intact ? Style.IntactLayer : Style.SofteningLayer);
+            bool wide = Gap(lower, upper, i - 1) >= Narrow && Gap(lower, upper, i) >= Narrow;
+            if (wide)
+            {
+                from = from < 0 ? i - 1 : from;
+                Segment(faces, lower[i - 1].X, lower[i - 1].Y, lower[i].X, lower[i].Y);
+                Segment(faces, upper[i - 1].X, upper[i - 1].Y, upper[i].X, upper[i].Y);
+            }
+            else
+            {
+                Continue(middle, Between(lower[i - 1], upper[i - 1]), Between(lower[i], upper[i]));
+            }
+            if (from >= 0 && (!wide || i == n - 1))
+            {
+                int end = wide ? i + 1 : i;
+                area.AddPoly([.. lower[from..end], .. upper[from..end].Reverse()]);
+                from = -1;
+            }
+        }
+        using (SKPaint fill = Paint(ColourOf(stretch.State)))
             canvas.DrawPath(area, fill);
-            StrokeLayer(canvas, middle, stretch.State);
-        }
+        StrokeLayer(canvas, middle, stretch.State);
+        using SKPaint edge = Paint(Style.Ink, stroke: stretch.State == LayerState.Separated ? 1.4f : 0.8f);
+        canvas.DrawPath(faces, edge);
+    }
+
+    /// <summary>
+    /// Distance of the faces at a station in pixels, negative where they have passed each other (contact shown larger than it is). A joint runs with the upper face
+    /// to the left of its direction; y of a canvas points down.
+    /// </summary>
+    private static float Gap(SKPoint[] lower, SKPoint[] upper, int i)
+    {
+        SKPoint along = lower[Math.Min(i + 1, lower.Length - 1)] - lower[Math.Max(i - 1, 0)], across = upper[i] - lower[i];
+        float length = along.Length;
+        return length > 0 ? (along.Y * across.X - along.X * across.Y) / length : 0;
+    }
+
+    private static SKPoint Between(SKPoint a, SKPoint b) => new(0.5f * (a.X + b.X), 0.5f * (a.Y + b.Y));
+
+    private static uint ColourOf(LayerState state) => state switch
+    {
+        LayerState.Intact => Style.IntactLayer,
+        LayerState.Softening => Style.SofteningLayer,
+        _ => 0xFFFFFF,
+    };
+
+    /// <summary>Adds a piece to a path, joined to the last one if that ended here.</summary>
+    private static void Continue(SKPath path, SKPoint from, SKPoint to)
+    {
+        if (path.IsEmpty || path.LastPoint != from)
+            path.MoveTo(from);
+        path.LineTo(to);
     }
 
     private static void StrokeLayer(SKCanvas canvas, SKPath path, LayerState state)
     {
         using SKPaint edge = Paint(Style.Ink, stroke: 4.8f);
         canvas.DrawPath(path, edge);
-        using SKPaint core = Paint(state switch { LayerState.Intact => Style.IntactLayer, LayerState.Softening => Style.SofteningLayer, _ => 0xFFFFFF }, stroke: state == LayerState.Separated ? 2.2f : 3.4f);
+        using SKPaint core = Paint(ColourOf(state), stroke: state == LayerState.Separated ? 2.2f : 3.4f);
         canvas.DrawPath(path, core);
     }
 
@@ -555,11 +606,12 @@ internal static class Plotting
         float[] y = [.. map.Rows.Select(row => pack.Plot.Axes.Left.GetPixel(row, pack.DataRect))];
         SKRect whole = new(x[0], Math.Min(y[0], y[^1]), x[^1], Math.Max(y[0], y[^1]));
         int wide = Math.Max(1, (int)(whole.Width * PixelsPerUnit)), high = Math.Max(1, (int)(whole.Height * PixelsPerUnit));
-        using SKBitmap bitmap = new(wide, high);
+        using SKBitmap bitmap = new(new SKImageInfo(wide, high, SKColorType.Bgra8888, SKAlphaType.Opaque));
+        Span<uint> dots = MemoryMarshal.Cast<byte, uint>(bitmap.GetPixelSpan());
         int[] columnOf = Places(map.Positions, wide), rowOf = Places(map.Rows, high);
         for (int j = 0; j < high; j++)
             for (int i = 0; i < wide; i++)
-                bitmap.SetPixel(i, j, Colour(ShadeOf(map.Damage[rowOf[j]][columnOf[i]])));
+                dots[j * wide + i] = 0xFF000000 | ShadeOf(map.Damage[rowOf[j]][columnOf[i]]);
         using SKImage image = SKImage.FromBitmap(bitmap);
         canvas.DrawImage(image, whole, new SKSamplingOptions(SKFilterMode.Nearest));
 
@@ -644,6 +696,15 @@ internal static class Plotting
         Write(canvas, text, left, bottom, 12, Style.Ink, bold: false);
     }
 
+    /// <summary>The text, or as much of it as fits with an ellipsis.</summary>
+    private static string Fitted(string text, SKFont font, float wide)
+    {
+        string fitted = text;
+        for (int length = text.Length - 1; length > 0 && font.MeasureText(fitted) > wide; length--)
+            fitted = text[..length].TrimEnd() + "…";
+        return fitted;
+    }
+
     private static List<string> Broken(string text, float size, bool bold)
     {
         using SKFont font = new(bold ? Bold : Regular, size);
@@ -663,7 +724,7 @@ internal static class Plotting
             }
         }
         lines.Add(line);
-        return lines;
+        return lines.ConvertAll(one => Fitted(one, font, Width - 2 * Margin));
     }
 
     private static string Number(double value)

@@ -46,8 +46,17 @@ internal sealed class InventedMesh(bool quadratic)
         _tops.Add([.. Enumerable.Range(0, columns + 1).Select(i => node[i][rows])]);
         _adherends.Add(new MeshedAdherend
         {
-            Name = name, Material = "invented", Width = 20, Thickness = thickness, Connectivity = [.. connectivity], FirstNode = first, NodeCount = _x.Count - first,
-            ElementsAlong = along, ElementsThrough = through, Edges = NoEdges, StraightAlongX = line.All(p => p.Y == line[0].Y),
+            Name = name,
+            Material = "invented",
+            Width = 20,
+            Thickness = thickness,
+            Connectivity = [.. connectivity],
+            FirstNode = first,
+            NodeCount = _x.Count - first,
+            ElementsAlong = along,
+            ElementsThrough = through,
+            Edges = NoEdges,
+            StraightAlongX = line.All(p => p.Y == line[0].Y),
         });
         return this;
     }
@@ -71,8 +80,17 @@ internal sealed class InventedMesh(bool quadratic)
         }
         _joints.Add(new MeshedJoint
         {
-            Name = name, Layer = "tape", Width = 20, UpperAdherend = upper, LowerAdherend = lower, LowerNodes = [.. below], UpperNodes = [.. above],
-            Bonded = isBonded, Position = position, OnePercentLength = 0.8, ProcessZoneEstimate = 8,
+            Name = name,
+            Layer = "tape",
+            Width = 20,
+            UpperAdherend = upper,
+            LowerAdherend = lower,
+            LowerNodes = [.. below],
+            UpperNodes = [.. above],
+            Bonded = isBonded,
+            Position = position,
+            OnePercentLength = 0.8,
+            ProcessZoneEstimate = 8,
         });
         return this;
     }

@@ -42,13 +42,26 @@ internal static class InventedRun
         RunSummary summary = new() { Status = RunStatus.Finished, Cause = "", Title = history.Title, KernelWidth = 256, Version = "0.1.0", DeckHash = new string('a', 64) };
         summary.Grips.Add(new GripSummary
         {
-            Name = "upper block", PeakForce = peak.Grips[0].Force, DisplacementAtPeak = peak.Grips[0].Displacement, PeakPoint = peak.Point,
-            FinalForce = history.Points[^1].Grips[0].Force, FinalDisplacement = history.Points[^1].Grips[0].Displacement,
+            Name = "upper block",
+            PeakForce = peak.Grips[0].Force,
+            DisplacementAtPeak = peak.Grips[0].Displacement,
+            PeakPoint = peak.Point,
+            FinalForce = history.Points[^1].Grips[0].Force,
+            FinalDisplacement = history.Points[^1].Grips[0].Displacement,
         });
         summary.Joints.Add(new JointSummary
         {
-            Name = "bond", LargestOpening = 7.25, LargestSliding = 0.1, LargestPeelStrain = 6.6, LargestShearStrain = 0.09, LargestDamage = 1, LargestPeel = 0.5,
-            LargestShear = 0.125, SeparatedLength = 40, ElementLength = 1, ElementsPerProcessZone = 9,
+            Name = "bond",
+            LargestOpening = 7.25,
+            LargestSliding = 0.1,
+            LargestPeelStrain = 6.6,
+            LargestShearStrain = 0.09,
+            LargestDamage = 1,
+            LargestPeel = 0.5,
+            LargestShear = 0.125,
+            SeparatedLength = 40,
+            ElementLength = 1,
+            ElementsPerProcessZone = 9,
         });
         summary.Adherends.Add(new AdherendSummary { Name = "upper arm", LargestEquivalentStress = 180.5, X = 41, Y = 8, Point = peak.Point, LargestPlasticStrain = 0.0015 });
         summary.FirstDamage = new EventSummary("bond at 30 mm", 8, 2, 0.1);
@@ -103,7 +116,12 @@ internal static class InventedRun
         double moment = 0.4 * force;
         history.Points.Add(new PointRow
         {
-            Point = i, Stage = i == 0 ? 0 : pulling ? 2 : 1, Progress = progress, Time = 3600.0 * i, Temperature = temperature, LoadFactor = progress,
+            Point = i,
+            Stage = i == 0 ? 0 : pulling ? 2 : 1,
+            Progress = progress,
+            Time = 3600.0 * i,
+            Temperature = temperature,
+            LoadFactor = progress,
             Stable = !(travel > 2.8 && travel < 4.6),
             Grips = [new GripReading(travel, force, null, null, 0.01 * force, force), new GripReading(0, 0, 0, -moment, -0.01 * force, -force)],
             Gauges = [0.9 * travel, 1e-4 * travel],
@@ -113,18 +131,53 @@ internal static class InventedRun
         double j = Math.Min(1.6, 0.4 * travel * travel / 4);
         history.Fronts.Add(new FrontRow
         {
-            Joint = "bond", Front = 1, Point = i, CrackTip = tip, ProcessZoneStart = zone > 0 ? tip + zone : null, ProcessZone = zone > 0 ? zone : null, Opening = opening, Sliding = 0,
-            JPath = 1.01 * j, JRotation = null, JUnderLaw = j, ModeMixDegrees = zone > 0 ? 3.5 : null, LargestPeel = 0.5, LargestShear = 0.1,
+            Joint = "bond",
+            Front = 1,
+            Point = i,
+            CrackTip = tip,
+            ProcessZoneStart = zone > 0 ? tip + zone : null,
+            ProcessZone = zone > 0 ? zone : null,
+            Opening = opening,
+            Sliding = 0,
+            JPath = 1.01 * j,
+            JRotation = null,
+            JUnderLaw = j,
+            ModeMixDegrees = zone > 0 ? 3.5 : null,
+            LargestPeel = 0.5,
+            LargestShear = 0.1,
         });
         history.Energies.Add(new EnergyRow
         {
-            Point = i, Stage = i == 0 ? 0 : pulling ? 2 : 1, PutIn = 10.0 * i, StoredInAdherends = 6.0 * i, StoredInLayers = i, SpentInLayers = 3.0 * i, SpentInYielding = 0, SpentInFriction = 0,
-            Thermal = 0, ReleasedInJumps = 0, Balance = 1e-12, PathError = 1e-4,
+            Point = i,
+            Stage = i == 0 ? 0 : pulling ? 2 : 1,
+            PutIn = 10.0 * i,
+            StoredInAdherends = 6.0 * i,
+            StoredInLayers = i,
+            SpentInLayers = 3.0 * i,
+            SpentInYielding = 0,
+            SpentInFriction = 0,
+            Thermal = 0,
+            ReleasedInJumps = 0,
+            Balance = 1e-12,
+            PathError = 1e-4,
         });
         history.Iterations.Add(new IterationRow
         {
-            Stage = pulling ? 2 : 1, Point = i, Retries = 0, Iteration = 3, Control = "travel", Stride = 0.02, Progress = progress, LoadFactor = progress, Root = 0, OutOfBalance = 1e-9,
-            Relative = 1e-11, Correction = 1e-8, UnstableDirections = 0, ChangedElements = 12, Reason = "converged",
+            Stage = pulling ? 2 : 1,
+            Point = i,
+            Retries = 0,
+            Iteration = 3,
+            Control = "travel",
+            Stride = 0.02,
+            Progress = progress,
+            LoadFactor = progress,
+            Root = 0,
+            OutOfBalance = 1e-9,
+            Relative = 1e-11,
+            Correction = 1e-8,
+            UnstableDirections = 0,
+            ChangedElements = 12,
+            Reason = "converged",
         });
         FieldSnapshot fields = Fields(mesh, i, pulling ? 2 : 1, 3600.0 * i, temperature, (x, upper) => (0, (upper ? 0.5 : -0.5) * travel * Bent(x, tip)), tip);
         AddDamage(history, mesh, fields, i);
@@ -137,7 +190,13 @@ internal static class InventedRun
         double progress = i / 20.0, travel = 8 * progress, tip = 10 + 40 * Math.Max(0, progress - 0.4);
         history.Points.Add(new PointRow
         {
-            Point = i, Stage = i == 0 ? 0 : 1, Progress = progress, Time = 240 * progress, Temperature = 233.15, LoadFactor = progress, Stable = true,
+            Point = i,
+            Stage = i == 0 ? 0 : 1,
+            Progress = progress,
+            Time = 240 * progress,
+            Temperature = 233.15,
+            LoadFactor = progress,
+            Stable = true,
             Grips =
             [
                 new GripReading(travel, 300 * travel / (1 + 0.05 * travel * travel), null, null, 0, 300 * travel),
@@ -150,8 +209,20 @@ internal static class InventedRun
         {
             history.Fronts.Add(new FrontRow
             {
-                Joint = "left strip", Front = front, Point = i, CrackTip = front == 1 ? tip : 60 - 0.2 * tip, ProcessZoneStart = front == 1 ? tip + 5 : 60 - 0.2 * tip - 4, ProcessZone = 5,
-                Opening = null, Sliding = null, JPath = null, JRotation = null, JUnderLaw = null, ModeMixDegrees = null, LargestPeel = 0.4, LargestShear = 0.3,
+                Joint = "left strip",
+                Front = front,
+                Point = i,
+                CrackTip = front == 1 ? tip : 60 - 0.2 * tip,
+                ProcessZoneStart = front == 1 ? tip + 5 : 60 - 0.2 * tip - 4,
+                ProcessZone = 5,
+                Opening = null,
+                Sliding = null,
+                JPath = null,
+                JRotation = null,
+                JUnderLaw = null,
+                ModeMixDegrees = null,
+                LargestPeel = 0.4,
+                LargestShear = 0.3,
             });
         }
         double Lift(double x) => Math.Exp(-Math.Pow((x - 150) / 70, 2));
@@ -187,13 +258,25 @@ internal static class InventedRun
             layers.Add(Layer(mesh, j, uy));
         return new FieldSnapshot
         {
-            Point = point, Stage = stage, Time = time, Temperature = temperature, DisplacementX = ux, DisplacementY = uy, StressXx = xx, StressYy = yy, StressZz = new double[n], StressXy = xy,
-            EquivalentStress = equivalent, PlasticStrain = plastic, Layers = layers,
+            Point = point,
+            Stage = stage,
+            Time = time,
+            Temperature = temperature,
+            DisplacementX = ux,
+            DisplacementY = uy,
+            StressXx = xx,
+            StressYy = yy,
+            StressZz = new double[n],
+            StressXy = xy,
+            EquivalentStress = equivalent,
+            PlasticStrain = plastic,
+            Layers = layers,
         };
     }
 
     private static LayerField Layer(Mesh mesh, int index, double[] uy)
     {
+        double final = mesh.Joints.Count > 1 ? 1.6 : 0.9;
         MeshedJoint joint = mesh.Joints[index];
         int per = mesh.NodesPerFace, n = joint.LowerNodes.Length;
         double[] position = new double[n], opening = new double[n], peel = new double[n], shear = new double[n], damage = new double[n];
@@ -203,7 +286,7 @@ internal static class InventedRun
             position[k] = joint.Position[element] + (joint.Position[element + 1] - joint.Position[element]) * (k % per) / (per - 1);
             opening[k] = uy[joint.UpperNodes[k]] - uy[joint.LowerNodes[k]] + 0.3 * Math.Exp(-Math.Abs(position[k] - 60) / 30) * 0.3;
             bool bonded = joint.Bonded[element];
-            damage[k] = bonded ? Math.Clamp((opening[k] - 0.12) / 0.9, 0, 1) : 1;
+            damage[k] = bonded ? Math.Clamp((opening[k] - 0.12) / final, 0, 1) : 1;
             peel[k] = bonded ? Math.Min(opening[k] / 0.12, 1) * 0.5 * (1 - damage[k]) - 0.05 * Math.Exp(-Math.Abs(position[k] - 80) / 10) : 0;
             shear[k] = bonded ? 0.2 * peel[k] : 0;
         }

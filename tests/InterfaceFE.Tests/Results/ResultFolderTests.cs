@@ -39,7 +39,13 @@ public class ResultFolderTests
         {
             table.Write(new PointRow
             {
-                Point = 7, Stage = 2, Progress = 0.25, Time = 90, Temperature = 233.15, LoadFactor = 0.25, Stable = false,
+                Point = 7,
+                Stage = 2,
+                Progress = 0.25,
+                Time = 90,
+                Temperature = 233.15,
+                LoadFactor = 0.25,
+                Stable = false,
                 Grips = [new GripReading(1.5, -20, null, null, 3, 4), new GripReading(9, 9, 0.1, 5, -3, 20)],
                 Gauges = [0.5, 1e-7],
             });
@@ -55,8 +61,20 @@ public class ResultFolderTests
         {
             table.Write(new FrontRow
             {
-                Joint = "left, \"cold\"", Front = 2, Point = 3, CrackTip = 30, ProcessZoneStart = null, ProcessZone = null, Opening = 0, Sliding = null, JPath = null,
-                JRotation = null, JUnderLaw = 0.5, ModeMixDegrees = null, LargestPeel = null, LargestShear = 0.1,
+                Joint = "left, \"cold\"",
+                Front = 2,
+                Point = 3,
+                CrackTip = 30,
+                ProcessZoneStart = null,
+                ProcessZone = null,
+                Opening = 0,
+                Sliding = null,
+                JPath = null,
+                JRotation = null,
+                JUnderLaw = 0.5,
+                ModeMixDegrees = null,
+                LargestPeel = null,
+                LargestShear = 0.1,
             });
         }
         Assert.Equal("\"left, \"\"cold\"\"\",2,3,30,,,0,,,,0.5,,,0.1", text.ToString().Split("\r\n")[1]);

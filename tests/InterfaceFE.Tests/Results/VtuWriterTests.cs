@@ -140,8 +140,19 @@ public class VtuWriterTests
         double[] Zeros() => new double[mesh.NodeCount];
         return new FieldSnapshot
         {
-            Point = point, Stage = 0, Time = 0, Temperature = 293.15, DisplacementX = Zeros(), DisplacementY = Zeros(), StressXx = Zeros(), StressYy = Zeros(),
-            StressZz = Zeros(), StressXy = Zeros(), EquivalentStress = Zeros(), PlasticStrain = Zeros(), Layers = [],
+            Point = point,
+            Stage = 0,
+            Time = 0,
+            Temperature = 293.15,
+            DisplacementX = Zeros(),
+            DisplacementY = Zeros(),
+            StressXx = Zeros(),
+            StressYy = Zeros(),
+            StressZz = Zeros(),
+            StressXy = Zeros(),
+            EquivalentStress = Zeros(),
+            PlasticStrain = Zeros(),
+            Layers = [],
         };
     }
 }

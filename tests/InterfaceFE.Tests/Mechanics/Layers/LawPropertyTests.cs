@@ -33,7 +33,7 @@ public sealed class LawPropertyTests
                 }
                 return true;
             },
-            iter: 3000);
+            iter: 1500);
     }
 
     [Theory]
@@ -41,22 +41,27 @@ public sealed class LawPropertyTests
     public void Loops_from_and_to_zero_separation_never_gain_energy(int index)
     {
         ILayerLaw law = Laws.All.ElementAt(index);
-        double size = Math.Max(law.PeelToughness, law.ShearToughness), worst = 0;
-        Gen.Select(Paths, Reach).Sample(
-            (path, reach) =>
-            {
-                LawWalk walk = new(law);
-                double work = 0;
-                foreach ((double w, double v) in path)
-                    work += walk.WorkTo(reach * w * law.FinalOpening, reach * v * law.FinalSliding, 200);
-                work += walk.WorkTo(0, 0, 200);
-                worst = Math.Min(worst, work / size);
-                // The trapezoids' own error.
-                return work >= -2e-4 * size;
-            },
-            iter: 400,
-            threads: 1);
-        TestContext.Current.TestOutputHelper?.WriteLine(string.Create(CultureInfo.InvariantCulture, $"{law.GetType().Name}: least work of a loop {worst:e2} toughnesses"));
+        double fine = LeastLoop(law, (walk, w, v) => walk.AcceptedWorkTo(w, v, 400)), single = LeastLoop(law, (walk, w, v) => walk.WorkTo(w, v, 400));
+        TestContext.Current.TestOutputHelper?.WriteLine(string.Create(CultureInfo.InvariantCulture, $"{law.GetType().Name} {index}: least work of a loop {fine:e2} in fine strides, {single:e2} in single strides, in toughnesses"));
+        // The trapezoids' own error. A single stride of the one-variable law takes the damage of its end alone: where the surfaces of equal damage are not convex
+        // (exponent below 1) the way between may have met more, and the loop may seem to gain that little.
+        Assert.InRange(fine, -1e-4, 0.1);
+        Assert.InRange(single, index == 6 ? -1e-2 : -1e-4, 0.1);
+    }
+
+    private static double LeastLoop(ILayerLaw law, Func<LawWalk, double, double, double> workTo)
+    {
+        double size = Math.Max(law.PeelToughness, law.ShearToughness), least = 0.1;
+        Random random = new(31);
+        for (int trial = 0; trial < 120; trial++)
+        {
+            LawWalk walk = new(law);
+            double work = 0, reach = 0.05 + 0.95 * random.NextDouble();
+            for (int leg = random.Next(2, 8); leg > 0; leg--)
+                work += workTo(walk, law.FinalOpening * reach * (1.25 * random.NextDouble() - 0.15), law.FinalSliding * reach * 1.1 * (2 * random.NextDouble() - 1));
+            least = Math.Min(least, (work + workTo(walk, 0, 0)) / size);
+        }
+        return least;
     }
 
     [Fact]
@@ -71,15 +76,15 @@ public sealed class LawPropertyTests
                     LawWalk walk = new LawWalk(law).To(w0 * law.FinalOpening, v0 * law.FinalSliding);
                     double stored = walk.Answer.Stored, dissipated = walk.Answer.Dissipated, work = 0;
                     foreach ((double w, double v) in path)
-                        work += walk.WorkTo(w * law.FinalOpening, v * law.FinalSliding, 200);
-                    work += walk.WorkTo(w0 * law.FinalOpening, v0 * law.FinalSliding, 200);
+                        work += walk.AcceptedWorkTo(w * law.FinalOpening, v * law.FinalSliding, 200);
+                    work += walk.AcceptedWorkTo(w0 * law.FinalOpening, v0 * law.FinalSliding, 200);
                     worst = Math.Min(worst, work / law.PeelToughness);
                     most = Math.Max(most, Math.Abs(work + stored + dissipated - walk.Answer.Stored - walk.Answer.Dissipated) / law.PeelToughness);
                     return work + stored >= -2e-3 * law.PeelToughness;
                 },
-                iter: 300,
+                iter: 150,
                 threads: 1);
-            TestContext.Current.TestOutputHelper?.WriteLine(string.Create(CultureInfo.InvariantCulture, $"{law.GetType().Name}: least work of a loop from a loaded point {worst:e2}, largest difference of work and books {most:e2} peel toughnesses"));
+            TestContext.Current.TestOutputHelper?.WriteLine(string.Create(CultureInfo.InvariantCulture, $"{law.GetType().Name}: loop from a loaded point: least work {worst:e2}, largest difference of work and books {most:e2} peel toughnesses"));
         }
     }
 
@@ -114,9 +119,10 @@ public sealed class LawPropertyTests
     {
         foreach (BenzeggaghKenaneLaw law in Laws.OneDamage)
         {
-            double coarse = Error(law, 40), fine = Error(law, 640), order = Math.Log2(coarse / fine) / 4;
-            TestContext.Current.TestOutputHelper?.WriteLine(string.Create(CultureInfo.InvariantCulture, $"errors {coarse:e2} to {fine:e2}, order {order:f2}"));
-            Assert.InRange(order, 1.7, 2.6);
+            double coarse = Error(law, 4), fine = Error(law, 32), order = Math.Log2(coarse / fine) / 3;
+            TestContext.Current.TestOutputHelper?.WriteLine(string.Create(CultureInfo.InvariantCulture, $"books of one damage variable: errors {coarse:e2} to {fine:e2}, order {order:f2}"));
+            // A node that happens to lie at the onset can only help.
+            Assert.InRange(order, 1.7, 3.2);
         }
 
         // Strides that begin to grow midway add a scatter of second order.
@@ -130,7 +136,7 @@ public sealed class LawPropertyTests
                 for (int i = 1; i <= strides; i++)
                 {
                     double p = 0.8 * i / strides, turn = 0.2 + 0.06 * k;
-                    work += walk.WorkTo(law.FinalOpening * p * Math.Cos(turn * p), law.FinalSliding * p * Math.Sin(turn * p), 12800 / strides);
+                    work += walk.WorkTo(law.FinalOpening * p * Math.Cos(turn * p), law.FinalSliding * p * Math.Sin(turn * p), 6400 / strides);
                 }
                 sum += Math.Abs(work - walk.Answer.Stored - walk.Answer.Dissipated) / 20;
             }

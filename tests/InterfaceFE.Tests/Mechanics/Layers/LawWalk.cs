@@ -46,6 +46,20 @@ internal sealed class LawWalk(ILayerLaw law)
             Close.To(expected, actual, tolerance, tolerance * scale, string.Create(CultureInfo.InvariantCulture, $"{what} {name} on {here.Branch} at ({opening:R}, {sliding:R}):"));
     }
 
+    /// <summary>Work of the tractions on the straight way to a separation in many strides, each accepted, by the trapezoidal rule.</summary>
+    public double AcceptedWorkTo(double opening, double sliding, int strides)
+    {
+        Separation from = Separation;
+        double work = 0;
+        for (int i = 1; i <= strides; i++)
+        {
+            (LayerResponse last, Separation at) = (Answer, Separation);
+            To(from.Opening + (opening - from.Opening) * i / strides, from.Sliding + (sliding - from.Sliding) * i / strides);
+            work += 0.5 * ((last.Peel + Answer.Peel) * (Separation.Opening - at.Opening) + (last.Shear + Answer.Shear) * (Separation.Sliding - at.Sliding));
+        }
+        return work;
+    }
+
     /// <summary>Work of the tractions on the straight way to a separation, by the trapezoidal rule over many equal parts of the same stride; accepts the end.</summary>
     public double WorkTo(double opening, double sliding, int parts)
     {

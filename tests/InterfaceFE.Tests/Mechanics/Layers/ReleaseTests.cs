@@ -68,7 +68,7 @@ public sealed class ReleaseTests
         foreach (double share in new[] { 0.1, 0.05, 0.02 })
         {
             IndependentModesLaw law = new(Laws.Decaying, Laws.ShearLine, 10, share, counting);
-            double[] errors = [.. new[] { 500, 1000, 2000, 4000, 8000 }.Select(strides => MeanError(law, strides))];
+            double[] errors = [.. new[] { 250, 500, 1000, 2000, 4000 }.Select(strides => MeanError(law, strides))];
             double order = Math.Log2(errors[0] / errors[^1]) / 4;
             TestContext.Current.TestOutputHelper?.WriteLine(string.Create(CultureInfo.InvariantCulture, $"rho {share}: mean errors {errors[0]:e2} to {errors[^1]:e2}, order {order:f2}"));
             // Kinks inside strides scatter single errors; the mean over forty random paths shows the order.
@@ -140,7 +140,7 @@ public sealed class ReleaseTests
                 for (int i = 1; i <= 12; i++)
                 {
                     (double w, double v) = Wander(law, kind, 1.3 * i / 12);
-                    work += walk.WorkTo(w, v, 4000);
+                    work += walk.WorkTo(w, v, 1500);
                     Close.To(work, walk.Answer.Stored + walk.Answer.Dissipated, 2e-6, 2e-6, $"kind {kind} stride {i} {walk.Answer.Branch}");
                 }
             }
