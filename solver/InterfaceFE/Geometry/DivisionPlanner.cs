@@ -45,6 +45,13 @@ internal sealed class DivisionPlanner
         return _strips.SelectMany(s => s.Runs).ToDictionary(r => r, r => _groupOf[r].PointsOf(r));
     }
 
+    /// <summary>The division lines at which a joint starts and ends: its own ends, or places within the tolerance of them.</summary>
+    public Span EndsOf(JointPlan joint)
+    {
+        RunGroup group = _groupOf[joint.Lower.Run];
+        return new Span(group.Places[group.PlaceNear(joint.Start)], group.Places[group.PlaceNear(joint.End)]);
+    }
+
     /// <summary>Longest element of a joint's bonded stretches [mm].</summary>
     public double LongestBonded(JointPlan joint)
     {
