@@ -119,6 +119,9 @@ internal sealed class Segment(double from, double to)
     /// <summary>Number of even elements when a deck gives it; 0: free.</summary>
     public int Count { get; set; }
 
+    /// <summary>Whether a joint is bonded here.</summary>
+    public bool IsBond { get; set; }
+
     /// <summary>Strip that gave the number.</summary>
     public Strip? CountBy { get; set; }
 
