@@ -81,5 +81,5 @@ public readonly record struct CurveNumbers(double Strength, double Toughness, do
     }
 
     private static DeckException Missing(string path, string key, CurveDeck curve) =>
-        new(path, $"`{key}` is missing; a {curve.Law.ToString().ToLowerInvariant()} curve needs it");
+        new(path, $"`{key}` is missing; the law `{curve.Law.ToString().ToLowerInvariant()}` needs it");
 }

@@ -45,6 +45,13 @@ internal sealed class DivisionPlanner
         return _strips.SelectMany(s => s.Runs).ToDictionary(r => r, r => _groupOf[r].PointsOf(r));
     }
 
+    /// <summary>The division lines at which a joint starts and ends: its own ends, or places within the tolerance of them.</summary>
+    public Span EndsOf(JointPlan joint)
+    {
+        RunGroup group = _groupOf[joint.Lower.Run];
+        return new Span(group.Places[group.PlaceNear(joint.Start)], group.Places[group.PlaceNear(joint.End)]);
+    }
+
     /// <summary>Longest element of a joint's bonded stretches [mm].</summary>
     public double LongestBonded(JointPlan joint)
     {
@@ -124,7 +131,7 @@ internal sealed class DivisionPlanner
         foreach (Run run in group.Runs)
         {
             Strip strip = _strips[run.Strip];
-            double wanted = LargestAlong(strip, _deck.Model.Elements);
+            double wanted = LargestAlong(strip);
             if (run.IsBend)
                 wanted = Math.Min(wanted, run.Radius * Math.PI / 2 / (_deck.Model.Elements == ElementKind.EightNode ? 8 : 16));
             (int first, int past) = group.Covered(run.Start, run.End);
@@ -138,11 +145,17 @@ internal sealed class DivisionPlanner
         }
     }
 
-    /// <summary>Largest element length of a strip away from joints [mm].</summary>
-    internal static double LargestAlong(Strip strip, ElementKind kind)
+    /// <summary>Largest element length of a strip away from joints [mm]: of the order of the thickness, or as long as the deck asks for along its joints.</summary>
+    private double LargestAlong(Strip strip)
     {
-        bool eight = kind == ElementKind.EightNode;
-        return strip.Deck.Elements?.Length ?? Math.Min((eight ? 1.5 : 0.75) * strip.Thickness, strip.Length / (eight ? 2 : 4));
+        if (strip.Deck.Elements?.Length is { } given)
+            return given;
+        bool eight = _deck.Model.Elements == ElementKind.EightNode;
+        double largest = (eight ? 1.5 : 0.75) * strip.Thickness;
+        foreach (JointPlan joint in _joints)
+            if (joint.Upper.Strip == strip || joint.Lower.Strip == strip)
+                largest = Math.Max(largest, joint.Deck.ElementLength ?? 0);
+        return Math.Min(largest, strip.Length / (eight ? 2 : 4));
     }
 
     private IEnumerable<Segment> SegmentsOf(JointPlan joint, IEnumerable<Span> spans)
@@ -162,8 +175,9 @@ internal sealed class DivisionPlanner
         foreach (Segment segment in _joints.Where(j => j.Deck.ElementLength != null).SelectMany(j => SegmentsOf(j, j.Bonded)))
             segment.Wanted = double.PositiveInfinity;
         foreach (JointPlan joint in _joints)
-            foreach (Segment segment in SegmentsOf(joint, joint.Bonded))
-                segment.Wanted = Math.Min(segment.Wanted, joint.Wanted);
+            foreach (Span bonded in joint.Bonded)
+                foreach (Segment segment in SegmentsOf(joint, [bonded]))
+                    (segment.IsBond, segment.Wanted) = (true, Math.Min(segment.Wanted, joint.WantedOn(bonded, _deck.Model.Elements)));
     }
 
     private void SetFiner()

@@ -23,19 +23,32 @@ internal readonly record struct GradedDivision(double Length, double Wanted, dou
     /// <summary>Whether a level exists at which the stretch holds exactly a number of elements, at least <see cref="LeastCount"/>.</summary>
     public bool CanHold(double count) => Dip <= 0 || (Math.Log(AtStart / Dip) + Math.Log(AtEnd / Dip)) / Slope >= count * (1 - 1e-12);
 
-    /// <summary>Largest share, up to 1, by which both end lengths must be multiplied for the stretch to hold a number of elements.</summary>
-    public double ShareToHold(double count)
+    /// <summary>
+    /// Largest lengths at the ends, not above those given, with which the stretch holds a number of elements. The longer end gives way first: at the shorter one
+    /// an even division may go on, a bond for example.
+    /// </summary>
+    public (double AtStart, double AtEnd) EndsToHold(double count)
     {
-        (double low, double high) = (0, 1);
-        for (int i = 0; i < Halvings && high - low > 1e-14; i++)
+        double least = Math.Min(AtStart, AtEnd);
+        GradedDivision even = Capped(least);
+        return even.CanHold(count) ? Highest(least, Math.Max(AtStart, AtEnd), count) : Highest(0, least, count);
+    }
+
+    private GradedDivision Capped(double cap) => this with { AtStart = Math.Min(AtStart, cap), AtEnd = Math.Min(AtEnd, cap) };
+
+    /// <summary>Ends under the highest cap that lets the stretch hold a number of elements; the low cap does, the high one does not.</summary>
+    private (double AtStart, double AtEnd) Highest(double low, double high, double count)
+    {
+        for (int i = 0; i < Halvings && high - low > 1e-14 * high; i++)
         {
             double middle = (low + high) / 2;
-            if ((this with { AtStart = middle * AtStart, AtEnd = middle * AtEnd }).CanHold(count))
+            if (Capped(middle).CanHold(count))
                 low = middle;
             else
                 high = middle;
         }
-        return low;
+        GradedDivision found = Capped(low);
+        return (found.AtStart, found.AtEnd);
     }
 
     /// <summary>Division points from a, both ends included; the end is b exactly.</summary>

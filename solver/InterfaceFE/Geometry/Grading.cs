@@ -15,8 +15,7 @@ internal static class Grading
     /// <exception cref="DeckException">When far too many elements would be needed.</exception>
     public static bool Divide(IReadOnlyList<Segment> segments, IReadOnlyList<Meeting> meetings)
     {
-        foreach (Segment segment in segments)
-            segment.AtEnds[0] = segment.AtEnds[1] = segment.Length / (segment.Count > 0 ? segment.Count : Math.Max(1, Math.Ceiling(segment.Length / segment.Wanted * (1 - 1e-9))));
+        StartEven(segments, meetings);
         bool settled = false;
         for (int round = 0; !settled && round < MostRounds; round++)
         {
@@ -28,6 +27,21 @@ internal static class Grading
         foreach (Segment segment in segments)
             segment.Points = segment.Count > 0 ? EvenDivision.Points(segment.From, segment.To, segment.Count) : FieldOf(segment).Points(segment.From, segment.To);
         return settled;
+    }
+
+    /// <summary>Starts from even segments; where a bond meets another segment, that one takes the bond's length if it may, so that the bond stays even.</summary>
+    private static void StartEven(IReadOnlyList<Segment> segments, IReadOnlyList<Meeting> meetings)
+    {
+        foreach (Segment segment in segments)
+            segment.AtEnds[0] = segment.AtEnds[1] = segment.Length / (segment.Count > 0 ? segment.Count : Math.Max(1, Math.Ceiling(segment.Length / segment.Wanted * (1 - 1e-9))));
+        foreach (Meeting m in meetings)
+        {
+            if (m.A.IsBond == m.B.IsBond)
+                continue;
+            (Segment bond, Segment other, int end) = m.A.IsBond ? (m.A, m.B, m.EndB) : (m.B, m.A, m.EndA);
+            if (other.Count == 0)
+                other.AtEnds[end] = Math.Min(other.Wanted, Math.Max(other.AtEnds[end], bond.AtEnds[0]));
+        }
     }
 
     /// <summary>Makes lengths equal where segments meet, and keeps the slope ln(growth) within each: the largest lengths that do.</summary>
@@ -69,9 +83,7 @@ internal static class Grading
             throw new DeckException(segment.Owner!.Path, Text.Of($"{count:G4} elements would be needed along {segment.Length:G6} mm; a mesh holds {MostNodes} nodes at most: make lengths of elements longer"));
         if (field.CanHold(count))
             return false;
-        double share = field.ShareToHold(count);
-        segment.AtEnds[0] *= share;
-        segment.AtEnds[1] *= share;
+        (segment.AtEnds[0], segment.AtEnds[1]) = field.EndsToHold(count);
         return true;
     }
 

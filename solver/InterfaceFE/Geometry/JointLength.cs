@@ -33,7 +33,7 @@ public readonly record struct JointLength(double OnePercent, double Zone, double
     /// <param name="upper">Arm above.</param>
     /// <param name="lower">Arm below.</param>
     /// <param name="bondWidth">Width of the bond [mm].</param>
-    /// <param name="bonded">Shortest bonded stretch [mm].</param>
+    /// <param name="bonded">Longest bonded stretch [mm].</param>
     /// <param name="kind">Kind of element.</param>
     public static JointLength Choose(CurveNumbers peel, CurveNumbers shear, Arm upper, Arm lower, double bondWidth, double bonded, ElementKind kind)
     {
@@ -57,7 +57,7 @@ public readonly record struct JointLength(double OnePercent, double Zone, double
             (onePercent / 2, "half the length for 1 % error"),
             (four ? thinner / 2 : thinner, four ? "half the thickness of the thinner arm" : "the thickness of the thinner arm"),
             (four ? decay / 6 : decay / 3, Text.Of($"a {(four ? "sixth" : "third")} of the elastic decay length ahead of the front, {decay:G4} mm")),
-            (four ? bonded / 20 : bonded / 10, Text.Of($"{(four ? "twenty" : "ten")} elements along the shortest bonded stretch, {bonded:G4} mm")),
+            (LargestOn(bonded, kind), Text.Of($"{(four ? "twenty" : "ten")} elements along the bonded stretch of {bonded:G4} mm")),
         ];
         (double Length, string Reason) least = limits[0];
         foreach ((double Length, string Reason) limit in limits)
@@ -65,6 +65,9 @@ public readonly record struct JointLength(double OnePercent, double Zone, double
                 least = limit;
         return new JointLength(onePercent, zone, least.Length, least.Reason, mode);
     }
+
+    /// <summary>Largest length [mm] on a bonded stretch [mm]: at least ten eight-node or twenty four-node elements along it.</summary>
+    public static double LargestOn(double bonded, ElementKind kind) => bonded / (kind == ElementKind.FourNode ? 20 : 10);
 
     /// <summary>Estimated process zone [mm] of a mode.</summary>
     /// <param name="curve">Curve of the mode, per width of the bond.</param>

@@ -49,8 +49,11 @@ internal sealed class JointPlan
 
     public string Path => "joints." + Name;
 
-    /// <summary>Element length wanted along bonded stretches [mm].</summary>
+    /// <summary>Element length wanted along the longest bonded stretch [mm].</summary>
     public double Wanted => Deck.ElementLength ?? Length.Default;
+
+    /// <summary>Element length wanted along a bonded stretch [mm].</summary>
+    public double WantedOn(Span bonded, ElementKind kind) => Deck.ElementLength ?? Math.Min(Length.Default, JointLength.LargestOn(bonded.To - bonded.From, kind));
 
     public bool IsBonded(double x) => !Unbonded.Any(u => u.From < x && x < u.To);
 }

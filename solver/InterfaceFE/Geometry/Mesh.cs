@@ -61,7 +61,7 @@ public sealed class MeshedAdherend
     /// <summary>Edges by name (top, bottom, left end, right end; or upper face, lower face, and stretches).</summary>
     public required IReadOnlyDictionary<string, MeshedEdge> Edges { get; init; }
 
-    /// <summary>Whether the adherend is straight and parallel to x, so that path integrals along it have their plain form.</summary>
+    /// <summary>Whether the adherend is straight and drawn towards +x, so that path integrals along it have their plain form.</summary>
     public required bool StraightAlongX { get; init; }
 }
 

@@ -21,7 +21,7 @@ public static class Mesher
         DivisionPlanner planner = new(deck, strips, joints, places, notes, warnings);
         Dictionary<Run, double[]> along = planner.Divide();
         StripGrid[] grids = LayOut(deck, strips, joints, places, along, quadratic);
-        Mesh mesh = Assemble(grids, joints, quadratic);
+        Mesh mesh = Assemble(grids, joints, planner, quadratic);
         for (int i = 0; i < strips.Length; i++)
             ElementCheck.Check(strips[i], mesh.Adherends[i].Connectivity, mesh.NodesPerSolid, mesh.X, mesh.Y);
         foreach (StripGrid grid in grids)
@@ -52,7 +52,7 @@ public static class Mesher
         return grids;
     }
 
-    private static Mesh Assemble(StripGrid[] grids, JointPlan[] joints, bool quadratic)
+    private static Mesh Assemble(StripGrid[] grids, JointPlan[] joints, DivisionPlanner planner, bool quadratic)
     {
         int count = grids.Sum(g => g.NodeCount);
         double[] x = new double[count];
@@ -78,14 +78,14 @@ public static class Mesher
             });
             first += grid.NodeCount;
         }
-        List<MeshedJoint> meshed = [.. joints.Select(j => Pair(j, grids, quadratic, x, y))];
+        List<MeshedJoint> meshed = [.. joints.Select(j => Pair(j, planner.EndsOf(j), grids, quadratic, x, y))];
         return new Mesh { X = x, Y = y, NodesPerSolid = quadratic ? 8 : 4, Adherends = adherends, Joints = meshed };
     }
 
-    private static MeshedJoint Pair(JointPlan joint, StripGrid[] grids, bool quadratic, double[] x, double[] y)
+    private static MeshedJoint Pair(JointPlan joint, Span ends, StripGrid[] grids, bool quadratic, double[] x, double[] y)
     {
-        (int[] lower, double[] at) = grids[joint.Lower.Strip.Index].FaceBetween(joint.Lower, joint.Start, joint.End, joint.Tolerance);
-        (int[] upper, double[] atUpper) = grids[joint.Upper.Strip.Index].FaceBetween(joint.Upper, joint.Start, joint.End, joint.Tolerance);
+        (int[] lower, double[] at) = grids[joint.Lower.Strip.Index].FaceBetween(joint.Lower, ends);
+        (int[] upper, double[] atUpper) = grids[joint.Upper.Strip.Index].FaceBetween(joint.Upper, ends);
         if (!at.AsSpan().SequenceEqual(atUpper) || at.Length < 2)
             throw new InvalidOperationException($"The faces of joint {joint.Name} were divided unequally: {at.Length} and {atUpper.Length} lines.");
         // Faces may lie a millionth of a thickness apart: the upper one is laid on the lower one.

@@ -49,14 +49,28 @@ internal sealed class RunGroup
                 firm[^1] = point;
         }
         List<double> places = [.. firm.Select(b => b.Q)];
-        foreach (Breakpoint point in Breakpoints.Where(b => b.Firmness > Firmness.Joint).OrderBy(b => b.Firmness).ThenBy(b => b.Q))
-            if (places.TrueForAll(p => Math.Abs(p - point.Q) > Math.Max(tolerance, point.Slack)))
-                places.Add(point.Q);
+        foreach (IGrouping<Firmness, Breakpoint> soft in Breakpoints.Where(b => b.Firmness > Firmness.Joint).GroupBy(b => b.Firmness).OrderBy(g => g.Key))
+            AddSoft(places, [.. soft.OrderBy(b => b.Q)], tolerance);
         places.Sort();
         Places = [.. places];
         Segments = new Segment[places.Count - 1];
         for (int i = 0; i < Segments.Length; i++)
             Segments[i] = new Segment(places[i], places[i + 1]);
+    }
+
+    /// <summary>Adds soft places that no place is near; of those near to each other their middle, whatever the side they are looked at from.</summary>
+    private static void AddSoft(List<double> places, List<Breakpoint> soft, double tolerance)
+    {
+        double SlackOf(Breakpoint point) => Math.Max(tolerance, point.Slack);
+        soft.RemoveAll(s => places.Exists(p => Math.Abs(p - s.Q) <= SlackOf(s)));
+        for (int i = 0; i < soft.Count;)
+        {
+            int last = i;
+            while (last + 1 < soft.Count && soft[last + 1].Q - soft[i].Q <= Math.Min(SlackOf(soft[i]), SlackOf(soft[last + 1])))
+                last++;
+            places.Add(last == i ? soft[i].Q : (soft[i].Q + soft[last].Q) / 2);
+            i = last + 1;
+        }
     }
 
     /// <summary>Index of the place nearest to q.</summary>
@@ -104,6 +118,9 @@ internal sealed class Segment(double from, double to)
 
     /// <summary>Number of even elements when a deck gives it; 0: free.</summary>
     public int Count { get; set; }
+
+    /// <summary>Whether a joint is bonded here.</summary>
+    public bool IsBond { get; set; }
 
     /// <summary>Strip that gave the number.</summary>
     public Strip? CountBy { get; set; }

@@ -126,8 +126,8 @@ internal sealed class StripGrid
         return edges;
     }
 
-    /// <summary>Nodes of a face of a run between two values of x, from lower to higher x, with the corner positions along it.</summary>
-    public (int[] Nodes, double[] X) FaceBetween(JointFace face, double x0, double x1, double tolerance)
+    /// <summary>Nodes of a joint's face between two division lines, from lower to higher x, with the x of the lines between elements.</summary>
+    public (int[] Nodes, double[] X) FaceBetween(JointFace face, Span ends)
     {
         (int first, double[] points) = _columnsOf[face.Run];
         int line = face.Side == Side.Upper ? ElementsThrough : 0;
@@ -137,7 +137,7 @@ internal sealed class StripGrid
         for (int i = step > 0 ? 0 : points.Length - 1; i >= 0 && i < points.Length; i += step)
         {
             double x = points[i];
-            if (x < x0 - tolerance || x > x1 + tolerance)
+            if (x < ends.From || x > ends.To)
                 continue;
             if (_quadratic && positions.Count > 0)
                 nodes.Add(MiddleNode(first + (step > 0 ? i - 1 : i), line));

@@ -46,9 +46,21 @@ public class DivisionTests
     {
         GradedDivision division = new(1.2, 1, 1, 1, Math.Log(1.2));
         Assert.False(division.CanHold(2));
-        double share = division.ShareToHold(2);
-        Assert.True((division with { AtStart = share, AtEnd = share }).CanHold(2));
-        Assert.False((division with { AtStart = 1.001 * share, AtEnd = 1.001 * share }).CanHold(2));
+        (double start, double end) = division.EndsToHold(2);
+        Close.To(start, end);
+        Assert.True((division with { AtStart = start, AtEnd = end }).CanHold(2));
+        Assert.False((division with { AtStart = 1.001 * start, AtEnd = 1.001 * end }).CanHold(2));
+    }
+
+    [Fact]
+    public void The_longer_end_gives_way_first()
+    {
+        GradedDivision division = new(30, 15, 9, 15, Math.Log(1.3));
+        Assert.False(division.CanHold(3));
+        (double start, double end) = division.EndsToHold(3);
+        Assert.Equal(9, start);
+        Assert.InRange(end, 9, 15 - 1e-3);
+        Assert.True((division with { AtEnd = end }).CanHold(3));
     }
 
     [Fact]

@@ -110,6 +110,47 @@ public class JointLengthTests
     }
 
     [Fact]
+    public void A_short_bonded_stretch_does_not_refine_the_others()
+    {
+        Deck deck = Peel(400, 10, 60, Tape);
+        JointDeck bond = deck.Joints!["bond"] with { Unbonded = [new StretchDeck { From = 65, To = 100 }] };
+        MeshedJoint joint = MeshFacts.Check(deck with { Joints = new Dictionary<string, JointDeck> { ["bond"] = bond } }).Mesh.Joints[0];
+        int first = Array.IndexOf(joint.Bonded, true);
+        Close.To(0.5, joint.Position[first + 1] - joint.Position[first], 1e-9);
+        Assert.InRange(joint.Position[^1] - joint.Position[^2], 9, 10);
+    }
+
+    [Theory]
+    [InlineData(0.7)]
+    [InlineData(5)]
+    [InlineData(17)]
+    [InlineData(20)]
+    [InlineData(34)]
+    public void A_bond_is_divided_evenly_whatever_its_length_of_element(double length)
+    {
+        Deck deck = Peel(400, 10, 60, Tape);
+        JointDeck bond = deck.Joints!["bond"] with { ElementLength = length };
+        MeshedJoint joint = MeshFacts.Check(deck with { Joints = new Dictionary<string, JointDeck> { ["bond"] = bond } }).Mesh.Joints[0];
+        int number = (int)Math.Ceiling(340 / length - 1e-9);
+        Assert.Equal(number, joint.Bonded.Count(b => b));
+        for (int e = Array.IndexOf(joint.Bonded, true); e < joint.ElementCount; e++)
+            Close.To(340.0 / number, joint.Position[e + 1] - joint.Position[e], 1e-6);
+    }
+
+    [Theory]
+    [InlineData(120)]
+    [InlineData(160)]
+    [InlineData(200)]
+    [InlineData(233)]
+    public void A_default_bond_is_divided_evenly_next_to_a_short_starter_crack(double length)
+    {
+        MeshedJoint joint = MeshFacts.Check(Peel(length, 10, 30, Tape)).Mesh.Joints[0];
+        int first = Array.IndexOf(joint.Bonded, true);
+        for (int e = first; e < joint.ElementCount; e++)
+            Close.To((length - 30) / (joint.ElementCount - first), joint.Position[e + 1] - joint.Position[e], 1e-6);
+    }
+
+    [Fact]
     public void A_bond_wider_than_its_adherend_is_refused()
     {
         Deck deck = Deck(

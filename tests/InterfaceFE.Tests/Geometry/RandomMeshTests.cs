@@ -14,6 +14,57 @@ public class RandomMeshTests
     [Fact]
     public void Random_sheets_keep_area_and_growth() => Gen.Int[0, int.MaxValue].Sample(CheckSheet, iter: 150, threads: 1);
 
+    [Fact]
+    public void Nonsense_is_refused_or_meshed_and_never_ends_otherwise() => Gen.Int[0, int.MaxValue].Sample(CheckNonsense, iter: 400, threads: 1);
+
+    private static void CheckNonsense(int seed)
+    {
+        Random random = new(seed);
+        double[] odd = [0, -1, double.NaN, double.PositiveInfinity, 1e300, 1e-300, 1e12, 1e-12, 1e-6, 3, 7, 40, 100];
+        double Value(double usual) => random.Next(12) == 0 ? odd[random.Next(odd.Length)] : usual;
+        int? Number() => random.Next(4) == 0 ? random.Next(1, 200) : null;
+        ElementsDeck? Elements() => random.Next(3) != 0 ? null : new ElementsDeck
+        {
+            Along = Number(),
+            Through = Number(),
+            Length = random.Next(6) == 0 ? Value(2) : null,
+            Growth = Value(1.2),
+            Finer = random.Next(4) == 0 ? [new FinerDeck { From = Value(10), To = Value(20), Length = Value(0.5) }] : null,
+        };
+        double height = Value(3);
+        double foot = height + 1;
+        Dictionary<string, AdherendDeck> adherends = new()
+        {
+            ["a"] = Rectangle(Value(0), 0, Value(100), height, Elements()),
+            ["b"] = random.Next(2) == 0
+                ? Rectangle(Value(0), height, Value(100), Value(2), Elements())
+                : Sheet(Value(2), random.Next(8) == 0 ? null : Value(4), [[Value(10), foot], [Value(60), foot], [Value(70), foot + Value(30)], [Value(90), foot + Value(30)]], new() { ["foot"] = random.Next(1, 5) }, Elements()),
+        };
+        string upper = adherends["b"].Rectangle != null ? "bottom of b" : random.Next(9) == 0 ? "upper face of b" : "foot of b";
+        Dictionary<string, JointDeck> joints = new()
+        {
+            ["j"] = Joint(upper, random.Next(9) == 0 ? "bottom of a" : "top of a", random.Next(9) == 0 ? "none" : "layer",
+                random.Next(2) == 0 ? new StarterCrackDeck { From = JointEnd.Start, Length = Value(20) } : null,
+                random.Next(2) == 0 ? [new StretchDeck { From = Value(25), To = Value(30) }] : null,
+                random.Next(3) == 0 ? Value(1) : null),
+        };
+        LayerDeck layer = Layer((CurveShape)random.Next(4), Value(10), Value(5), Value(2), 1);
+        Dictionary<string, GripDeck> grips = new()
+        {
+            ["g"] = new GripDeck { On = [random.Next(9) == 0 ? "nowhere" : "left end of a"], At = random.Next(2) == 0 ? new EdgePoint(double.NaN, Value(1)) : null },
+            ["h"] = new GripDeck { On = [upper], From = Value(3), To = Value(6) },
+        };
+        try
+        {
+            MeshFacts.Check(Deck(adherends, joints, layer, (ElementKind)random.Next(2), grips));
+        }
+        catch (DeckException refused)
+        {
+            Assert.NotEmpty(refused.Problems);
+            Assert.All(refused.Problems, p => Assert.True(p.Path.Length > 0 && p.Message.Length > 10));
+        }
+    }
+
     private static void CheckStack(int seed)
     {
         Random random = new(seed);
@@ -59,6 +110,7 @@ public class RandomMeshTests
         LayerDeck layer = Layer(CurveShape.Trapezoid, Between(1, 10) / scale, Between(0.2, 2), Between(1, 4) * scale, scale);
         Deck deck = Deck(adherends, joints, layer, (ElementKind)random.Next(2), grips);
         MeshingResult result = MeshFacts.Check(deck);
+        CheckMirrorImage(result.Mesh, Mirrored(deck));
         Assert.DoesNotContain(result.Warnings, w => w.Contains("growth", StringComparison.Ordinal));
         Mesh mesh = result.Mesh;
         foreach (MeshedAdherend adherend in mesh.Adherends)
@@ -79,6 +131,53 @@ public class RandomMeshTests
                 Assert.True(at > 0);
                 Assert.NotEqual(joint.Bonded[at - 1], joint.Bonded[at]);
             }
+        }
+    }
+
+    /// <summary>The deck of rectangles with x turned to -x.</summary>
+    private static Deck Mirrored(Deck deck)
+    {
+        Dictionary<string, AdherendDeck> adherends = [];
+        foreach ((string name, AdherendDeck body) in deck.Adherends)
+        {
+            double length = body.Rectangle!.Size[0];
+            FinerDeck[]? finer = body.Elements!.Finer?.Select(f => f with { From = length - f.To, To = length - f.From }).ToArray();
+            adherends[name] = body with
+            {
+                Rectangle = body.Rectangle with { Corner = [-body.Rectangle.Corner[0] - length, body.Rectangle.Corner[1]] },
+                Elements = body.Elements with { Finer = finer },
+            };
+        }
+        double LengthOf(string edge) => deck.Adherends[EdgeName.Parse(edge, "").Adherend].Rectangle!.Size[0];
+        double Overlap(JointDeck joint)
+        {
+            RectangleDeck a = deck.Adherends[EdgeName.Parse(joint.Upper, "").Adherend].Rectangle!;
+            RectangleDeck b = deck.Adherends[EdgeName.Parse(joint.Lower, "").Adherend].Rectangle!;
+            return Math.Min(a.Corner[0] + a.Size[0], b.Corner[0] + b.Size[0]) - Math.Max(a.Corner[0], b.Corner[0]);
+        }
+        return deck with
+        {
+            Adherends = adherends,
+            Joints = deck.Joints!.ToDictionary(j => j.Key, j => j.Value with
+            {
+                StarterCrack = j.Value.StarterCrack == null ? null : j.Value.StarterCrack with { From = 1 - j.Value.StarterCrack.From },
+                Unbonded = j.Value.Unbonded?.Select(u => new StretchDeck { From = Overlap(j.Value) - u.To, To = Overlap(j.Value) - u.From }).ToArray(),
+            }),
+            Grips = deck.Grips.ToDictionary(g => g.Key, g => g.Value with { At = new EdgePoint(double.NaN, LengthOf(g.Value.On[0]) - g.Value.At!.Value.Distance) }),
+        };
+    }
+
+    private static void CheckMirrorImage(Mesh mesh, Deck mirrored)
+    {
+        Mesh image = Mesher.Build(mirrored).Mesh;
+        Assert.Equal(mesh.NodeCount, image.NodeCount);
+        for (int i = 0; i < mesh.Adherends.Count; i++)
+        {
+            MeshedEdge top = mesh.Adherends[i].Edges["top"];
+            MeshedEdge imageTop = image.Adherends[i].Edges["top"];
+            Assert.Equal(top.Nodes.Length, imageTop.Nodes.Length);
+            for (int j = 0; j < top.Nodes.Length; j++)
+                Close.To(top.Length - top.Arc[j], imageTop.Arc[^(j + 1)], 0, 1e-9 * top.Length);
         }
     }
 

@@ -81,7 +81,6 @@ internal sealed class YamlText
             Scalar scalar => new TextNode(scalar.Value, scalar.Style == ScalarStyle.Plain, place),
             SequenceStart sequence => ReadList(sequence.Style == SequenceStyle.Flow, place, depth),
             MappingStart mapping => ReadMap(mapping.Style == MappingStyle.Flow, place, depth),
-            // After a colon without a key the library leaves out the node.
             _ => throw new InvalidOperationException("The text has an unexpected order."),
         };
     }
@@ -111,11 +110,20 @@ internal sealed class YamlText
         for (ParsingEvent current = Next(); current is not MappingEnd; current = Next())
         {
             DeckNode? key = ReadNode(current, depth + 1);
-            DeckNode? value = key is null ? null : ReadNode(Next(), depth + 1);
-            if (value is null)
+            if (key is null)
+                return null;
+            if (key is TextNode { IsPlain: true, Text: "" })
+            {
+                // The library gives such a key the place of its block, or takes what follows for it: the value tells the place, and the rest cannot be trusted.
+                TextPlace value = PlaceOf(Next().Start);
+                _problems.Add(key.Place == place ? value : key.Place, "", null, "a key is missing before the colon; the rest of the file is read once it is there");
+                return null;
+            }
+            DeckNode? held = ReadNode(Next(), depth + 1);
+            if (held is null)
                 return null;
             if (key is TextNode text)
-                map.Entries.Add(new MapEntry(text, value));
+                map.Entries.Add(new MapEntry(text, held));
             else
                 _problems.Add(key!.Place, "", null, "a key is a single text, not a list or a map");
         }
@@ -136,7 +144,9 @@ internal sealed class YamlText
     {
         if (!_parser.MoveNext() || _parser.Current is null)
             throw new InvalidOperationException("The text ended early.");
-        _last = PlaceOf(_parser.Current.Start);
+        // Ends of lists and blocks may lie far behind the place that is wrong.
+        if (_parser.Current is NodeEvent)
+            _last = PlaceOf(_parser.Current.Start);
         return _parser.Current;
     }
 
