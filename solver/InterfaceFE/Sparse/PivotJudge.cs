@@ -1,18 +1,21 @@
 namespace InterfaceFE.Sparse;
 
 /// <summary>
-/// Decides on each pivot: sound, numerically zero (below round-off of its own forming, or 1e-12 of the scale of its unknown), or small and harmful (its column would grow
-/// by more than 1e7). The last two are lifted, sign kept, which refinement of the solves makes good. Small pivots that do no harm, as a slender part's last ones, stay.
+/// Decides on each pivot: sound, numerically zero (no larger than the round-off of its own forming), or small and harmful (its column would grow by more than 1e7). The
+/// last two are lifted, sign kept, which refinement of the solves makes good. Small pivots that do no harm, as a slender part's last ones, stay.
 /// </summary>
 internal sealed class PivotJudge
 {
     /// <summary>Share of an unknown's scale below which a pivot is numerically zero.</summary>
-    public const double ZeroShare = 1e-12;
+    public const double ZeroShare = 1e-15;
 
-    /// <summary>Factor on the running round-off estimate below which a pivot is numerically zero.</summary>
+    /// <summary>Factor on the round-off estimate below which a pivot is numerically zero.</summary>
     public const double NoiseFactor = 64;
 
-    /// <summary>Share of an unknown's scale to which a pivot is lifted; pivots above it are never questioned.</summary>
+    /// <summary>Share of an unknown's scale below which a pivot is looked at closely.</summary>
+    public const double SmallShare = 1e-7;
+
+    /// <summary>Share of an unknown's scale to which a pivot is lifted.</summary>
     public const double LiftShare = 1e-8;
 
     /// <summary>Growth above which a small pivot is lifted.</summary>
@@ -51,13 +54,13 @@ internal sealed class PivotJudge
     }
 
     /// <summary>Whether a pivot needs a look at its column before it is taken.</summary>
-    public static bool IsSmall(double pivot, double scale) => !(Math.Abs(pivot) >= LiftShare * scale);
+    public static bool IsSmall(double pivot, double scale) => !(Math.Abs(pivot) >= SmallShare * scale);
 
     /// <summary>Counts a pivot and returns the value to use.</summary>
     /// <param name="place">Its place in the elimination order.</param>
     /// <param name="pivot">As computed.</param>
     /// <param name="scale">Scale of its unknown, above zero.</param>
-    /// <param name="noise">Round-off that its forming may have left in it.</param>
+    /// <param name="noise">Round-off that its forming may have left in it; needed for small pivots only.</param>
     /// <param name="growth">Growth its column would cause; needed for small pivots only.</param>
     public double Take(int place, double pivot, double scale, double noise, double growth)
     {
