@@ -108,7 +108,7 @@ internal abstract class DenseRoot
     /// </summary>
     protected bool IsZero(double pivot, int k)
     {
-        if (Math.Abs(pivot) >= PivotJudge.SmallShare)
+        if (Math.Abs(pivot) >= PivotJudge.SmallRootShare)
             return false;
         Array.Clear(_left);
         Array.Clear(_right);

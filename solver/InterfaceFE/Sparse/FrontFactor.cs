@@ -23,9 +23,9 @@ internal sealed unsafe class FrontFactor
     private readonly AlignedBuffer _local;
     private readonly AlignedBuffer _sizes;
     private readonly double[] _scale;
+    private readonly double[] _softScale;
     private readonly double[] _size;
     private readonly ProbeVectors _probes;
-    private double _largestScale;
 
     /// <summary>Makes room for the factor.</summary>
     public FrontFactor(SparsePlan plan, SlotValues values, bool isSymmetric)
@@ -53,6 +53,7 @@ internal sealed unsafe class FrontFactor
         _local = new AlignedBuffer(longest);
         _sizes = new AlignedBuffer(longest);
         _scale = new double[plan.UnknownCount];
+        _softScale = new double[plan.UnknownCount];
         _size = new double[plan.UnknownCount];
         _probes = new ProbeVectors(plan.UnknownCount);
     }
@@ -70,20 +71,15 @@ internal sealed unsafe class FrontFactor
     public double* Root(int half) => _panels[half].Start + _plan.PanelStart[_plan.FrontCount];
 
     /// <summary>Scale of an unknown by place; never zero.</summary>
-    public double Scale(int place) => _scale[place] > 0 ? _scale[place] : _largestScale > 0 ? _largestScale : 1;
+    public double Scale(int place) => _scale[place];
 
     /// <summary>Factors with the slots' present numbers. Stops early at the first pivot that is not finite.</summary>
     public void Run()
     {
         Judge.Reset();
         Growth = 0;
-        _values.SumScales(_scale);
-        _largestScale = 0;
-        for (int i = 0; i < _scale.Length; i++)
-        {
-            _largestScale = Math.Max(_largestScale, _scale[i]);
-            _size[i] = _scale[i];
-        }
+        _values.SumScales(_scale, _softScale);
+        _scale.CopyTo(_size, 0);
         for (int front = 0; front < _plan.FrontCount && Judge.FirstNotFinite < 0; front++)
         {
             Assemble(front);
@@ -237,14 +233,14 @@ internal sealed unsafe class FrontFactor
         for (int k = 0; k < width; k++)
         {
             int place = first + k;
-            double computed = p[k * stride + k], scale = Scale(place);
+            double computed = p[k * stride + k], scale = _scale[place], soft = _softScale[place];
             double growth = 0, noise = 0;
-            if (PivotJudge.IsSmall(computed, scale))
+            if (PivotJudge.IsSmall(computed, soft))
             {
                 growth = ColumnGrowth(front, p, q, stride, k0, k, width, computed);
                 noise = PivotNoise(front, k0 + k, size - k0);
             }
-            double pivot = Judge.Take(place, computed, scale, noise, growth), inverse = 1 / pivot;
+            double pivot = Judge.Take(place, computed, scale, soft, noise, growth), inverse = 1 / pivot;
             _diagonal.Start[place] = pivot;
             _inverse.Start[place] = inverse;
             Growth = Math.Max(Growth, size[k] / scale);
@@ -397,12 +393,12 @@ internal sealed unsafe class FrontFactor
         int interior = _plan.InteriorUnknownCount;
         left.CopyTo(new Span<double>(_probes.Start(0) + interior, left.Length));
         right.CopyTo(new Span<double>(_probes.Start(1) + interior, right.Length));
-        for (int half = 0; half < 2; half++)
+        for (int half = 0; half < _halves; half++)
             for (int front = _plan.FrontCount - 1; front >= 0; front--)
-                BackwardFront(front, Math.Min(half, _halves - 1), _probes.Start(half));
+                BackwardFront(front, half, _probes.Start(half));
         double sum = 0;
         for (int i = 0; i < _plan.UnknownCount; i++)
-            sum += Square(_probes.Start(0)[i] * _probes.Start(1)[i] * _size[i]);
+            sum += Square(_probes.Start(0)[i] * _probes.Start(_halves - 1)[i] * _size[i]);
         _probes.Clear(0, _plan.UnknownCount);
         return PivotJudge.RoundOff * Math.Sqrt(sum);
     }

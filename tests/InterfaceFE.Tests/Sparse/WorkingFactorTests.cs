@@ -9,7 +9,7 @@ public class WorkingFactorTests
     [InlineData(7, 2, false, 1)]
     [InlineData(30, 3, false, 1e3)]
     [InlineData(6, 2, true, 10)]
-    [InlineData(14, 3, true, 1e2)]
+    [InlineData(9, 3, true, 1e2)]
     public void Layered_strips_solve_as_the_dense_matrix(int columns, int rows, bool quadratic, double penalty)
     {
         var random = new Random(columns);
@@ -55,11 +55,11 @@ public class WorkingFactorTests
     public void Softening_layers_give_the_signs_of_the_dense_eigenvalues(int seed, double penalty)
     {
         var random = new Random(seed);
-        var strip = new StripModel(24, 2, seed % 2 == 0, penalty);
+        var strip = new StripModel(seed % 2 == 0 ? 9 : 18, 2, seed % 2 == 0, penalty);
         SparseModel model = strip.Model;
         MultifrontalFactor factor = Checks.Factored(model);
         int[] root = model.RootUnknowns();
-        for (int change = 0; change < 6; change++)
+        for (int change = 0; change < 4; change++)
         {
             foreach (int slot in strip.LayerSlots.Skip(1))
                 if (random.NextDouble() < 0.6)
@@ -142,14 +142,14 @@ public class WorkingFactorTests
         {
             var random = new Random(seed);
             SparseModel model = RandomModel(random, symmetric: true);
-            if (Math.Abs(model.Dense().ConditionNumber()) > 1e8)
+            if (model.Unknowns == 0 || model.Dense().ConditionNumber() > 1e8)
                 continue;
             MultifrontalFactor factor = Checks.Factored(model, options: new PlanOptions(LeafVertices: 1 + seed % 5));
             int[] root = model.RootUnknowns();
             Checks.SolvesAsDense(model, factor, [], random, 1e-6);
             Checks.HasDenseInertia(model, factor, []);
             int[] held = root.Where(_ => random.Next(2) == 0).ToArray();
-            if (held.Length == model.Unknowns || Free(model, held) < 1e8)
+            if (held.Length < model.Unknowns && Free(model, held) < 1e8)
             {
                 Checks.SolvesAsDense(model, factor, held, random, 1e-6);
                 Checks.HasDenseInertia(model, factor, held);
