@@ -9,7 +9,7 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     private const int CachedRoots = 4;
 
     // Growth from which solves are refined. Definite matrices stay at 2, whatever the contrast of stiffness.
-    private const double RefinedGrowth = 1e4;
+    private const double RefinedGrowth = 1e2;
 
     private readonly bool _isSymmetric;
     private readonly SlotValues _values;
