@@ -7,6 +7,9 @@ namespace InterfaceFE.Sparse;
 internal abstract class DenseRoot
 {
     private readonly bool[] _isHeld;
+    private readonly double[] _left;
+    private readonly double[] _right;
+    private FrontFactor? _fronts;
 
     /// <summary>Makes room for up to <paramref name="size"/> unknowns.</summary>
     protected DenseRoot(int size)
@@ -15,7 +18,8 @@ internal abstract class DenseRoot
         Free = new int[size];
         Matrix = new double[(long)size * size];
         Scaling = new double[size];
-        Limit = new double[size];
+        _left = new double[size];
+        _right = new double[size];
         Work = new double[size];
     }
 
@@ -37,9 +41,6 @@ internal abstract class DenseRoot
     /// <summary>Factor of each free unknown's row and column.</summary>
     protected double[] Scaling { get; }
 
-    /// <summary>Magnitude below which a pivot of a free unknown, scaled, is numerically zero.</summary>
-    protected double[] Limit { get; }
-
     /// <summary>One number per free unknown.</summary>
     protected double[] Work { get; }
 
@@ -53,15 +54,14 @@ internal abstract class DenseRoot
     public unsafe void Factor(FrontFactor fronts, int firstPlace, ReadOnlySpan<bool> isHeld, int halves)
     {
         isHeld.CopyTo(_isHeld);
+        _fronts = fronts;
         Count = 0;
         for (int i = 0; i < isHeld.Length; i++)
             if (!isHeld[i])
                 Free[Count++] = i;
         for (int i = 0; i < Count; i++)
         {
-            double scale = fronts.Scale(firstPlace + Free[i]);
-            Scaling[i] = 1 / Math.Sqrt(scale);
-            Limit[i] = Math.Max(PivotJudge.ZeroShare, PivotJudge.NoiseFactor * fronts.Noise(firstPlace + Free[i]) / scale);
+            Scaling[i] = 1 / Math.Sqrt(fronts.Scale(firstPlace + Free[i]));
         }
         double* lower = fronts.Root(0), upper = fronts.Root(halves - 1);
         nint stride = fronts.RootStride;
@@ -101,6 +101,28 @@ internal abstract class DenseRoot
 
     /// <summary>Replaces the right side in <see cref="Work"/> by the solution, both scaled.</summary>
     protected abstract void Substitute();
+
+    /// <summary>
+    /// Whether a scaled pivot (for several candidates the largest) is numerically zero. The vectors whose energy it is, scaled, are asked for only when it is small: left and
+    /// right ones by free unknown.
+    /// </summary>
+    protected bool IsZero(double pivot, int k)
+    {
+        if (Math.Abs(pivot) >= PivotJudge.SmallRootShare)
+            return false;
+        Array.Clear(_left);
+        Array.Clear(_right);
+        Probe(k, Work, left: true);
+        for (int i = 0; i < Count; i++)
+            _left[Free[i]] = Work[i] * Scaling[i];
+        Probe(k, Work, left: false);
+        for (int i = 0; i < Count; i++)
+            _right[Free[i]] = Work[i] * Scaling[i];
+        return Math.Abs(pivot) <= Math.Max(PivotJudge.ZeroShare, PivotJudge.NoiseFactor * _fronts!.RootNoise(_left, _right));
+    }
+
+    /// <summary>Sets the vector by free unknown that pivot k belongs to: 1 at its place, 0 at later ones, in balance at earlier ones.</summary>
+    protected abstract void Probe(int k, Span<double> vector, bool left);
 
     /// <summary>target -= factor · source, equal lengths.</summary>
     protected static void Subtract(Span<double> target, ReadOnlySpan<double> source, double factor)

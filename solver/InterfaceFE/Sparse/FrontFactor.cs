@@ -21,9 +21,11 @@ internal sealed unsafe class FrontFactor
     private readonly AlignedBuffer _packed;
     private readonly AlignedBuffer _tail;
     private readonly AlignedBuffer _local;
+    private readonly AlignedBuffer _sizes;
     private readonly double[] _scale;
-    private readonly double[] _noise;
-    private double _largestScale;
+    private readonly double[] _softScale;
+    private readonly double[] _size;
+    private readonly ProbeVectors _probes;
 
     /// <summary>Makes room for the factor.</summary>
     public FrontFactor(SparsePlan plan, SlotValues values, bool isSymmetric)
@@ -48,15 +50,18 @@ internal sealed unsafe class FrontFactor
         _inverse = new AlignedBuffer(plan.UnknownCount + Block);
         _packed = new AlignedBuffer((long)Block * widest);
         _tail = new AlignedBuffer((long)Block * longest);
-        _local = new AlignedBuffer(longest + 2 * Block);
+        _local = new AlignedBuffer(longest);
+        _sizes = new AlignedBuffer(longest);
         _scale = new double[plan.UnknownCount];
-        _noise = new double[plan.UnknownCount];
+        _softScale = new double[plan.UnknownCount];
+        _size = new double[plan.UnknownCount];
+        _probes = new ProbeVectors(plan.UnknownCount);
     }
 
     /// <summary>Verdicts on the pivots of the last run.</summary>
     public PivotJudge Judge { get; } = new();
 
-    /// <summary>Largest ratio of the round-off estimate of a pivot to unit round-off of its unknown's scale.</summary>
+    /// <summary>Largest sum of magnitudes that went into a pivot, over the scale of its unknown; about 2 for a definite matrix.</summary>
     public double Growth { get; private set; }
 
     /// <summary>Column length of the root block.</summary>
@@ -66,23 +71,15 @@ internal sealed unsafe class FrontFactor
     public double* Root(int half) => _panels[half].Start + _plan.PanelStart[_plan.FrontCount];
 
     /// <summary>Scale of an unknown by place; never zero.</summary>
-    public double Scale(int place) => _scale[place] > 0 ? _scale[place] : _largestScale > 0 ? _largestScale : 1;
-
-    /// <summary>Round-off estimate by place, in the units of the matrix; for root unknowns, of their diagonal in the Schur complement.</summary>
-    public double Noise(int place) => _noise[place];
+    public double Scale(int place) => _scale[place];
 
     /// <summary>Factors with the slots' present numbers. Stops early at the first pivot that is not finite.</summary>
     public void Run()
     {
         Judge.Reset();
         Growth = 0;
-        _values.SumScales(_scale);
-        _largestScale = 0;
-        for (int i = 0; i < _scale.Length; i++)
-        {
-            _largestScale = Math.Max(_largestScale, _scale[i]);
-            _noise[i] = PivotJudge.RoundOff * _scale[i];
-        }
+        _values.SumScales(_scale, _softScale);
+        _scale.CopyTo(_size, 0);
         for (int front = 0; front < _plan.FrontCount && Judge.FirstNotFinite < 0; front++)
         {
             Assemble(front);
@@ -158,8 +155,8 @@ internal sealed unsafe class FrontFactor
     private void Eliminate(int front)
     {
         int columns = _plan.Columns(front), padded = _plan.PaddedColumns(front), rows = _plan.PaddedRows(front), stride = padded + rows, first = _plan.First[front];
-        double* noise = _local.Start, inverse = _inverse.Start + first, diagonal = _diagonal.Start + first;
-        LoadNoise(front, noise, padded, rows);
+        double* size = _sizes.Start, inverse = _inverse.Start + first, diagonal = _diagonal.Start + first;
+        LoadSizes(front, size, padded, rows);
         double* weight = stackalloc double[Block];
         for (int k = 0; k < columns; k += Block)
         {
@@ -167,14 +164,14 @@ internal sealed unsafe class FrontFactor
             for (int half = 0; half < _halves && k > 0; half++)
                 UpdateColumns(Panel(half, front), Panel(_halves - 1 - half, front), stride, k, width, diagonal);
             double* p = Panel(0, front) + (nint)k * stride + k, q = Panel(_halves - 1, front) + (nint)k * stride + k;
-            EliminateBlock(front, p, q, stride, k, width, noise + k, weight);
+            EliminateBlock(front, p, q, stride, k, width, size + k, weight);
             if (Judge.FirstNotFinite >= 0)
                 return;
             nint below = stride - k - Block;
             DenseKernels.SolveTriangle(p + Block, stride, below, q, stride, inverse + k, width);
             if (_halves == 2)
                 DenseKernels.SolveTriangle(q + Block, stride, below, p, stride, inverse + k, width);
-            DenseKernels.AddAbsoluteProducts(noise + k + Block, p + Block, q + Block, stride, weight, width, below);
+            DenseKernels.AddAbsoluteProducts(size + k + Block, p + Block, q + Block, stride, weight, width, below);
         }
         for (int half = 0; half < _halves; half++)
         {
@@ -185,23 +182,23 @@ internal sealed unsafe class FrontFactor
                 DenseKernels.SubtractProduct(mine + j, stride, _packed.Start, columns, block + (nint)j * rows + j, rows, rows - j);
             }
         }
-        StoreNoise(front, noise, padded);
+        StoreSizes(front, size, padded);
     }
 
-    private void LoadNoise(int front, double* noise, int padded, int rows)
+    private void LoadSizes(int front, double* size, int padded, int rows)
     {
         int columns = _plan.Columns(front), first = _plan.First[front];
         for (int j = 0; j < columns; j++)
-            noise[j] = _noise[first + j];
+            size[j] = _size[first + j];
         for (int i = columns; i < padded + rows; i++)
-            noise[i] = 0;
+            size[i] = 0;
     }
 
-    private void StoreNoise(int front, double* noise, int padded)
+    private void StoreSizes(int front, double* size, int padded)
     {
         int start = _plan.RowStart[front], count = _plan.RowCount(front);
         for (int i = 0; i < count; i++)
-            _noise[_plan.Rows[start + i]] += noise[padded + i];
+            _size[_plan.Rows[start + i]] += size[padded + i];
     }
 
     /// <summary>Brings the columns k to k + width of one half up to date with the columns before them.</summary>
@@ -230,20 +227,24 @@ internal sealed unsafe class FrontFactor
     }
 
     /// <summary>Takes the pivots of a diagonal block one after the other and updates the rest of the block.</summary>
-    private void EliminateBlock(int front, double* p, double* q, nint stride, int k0, int width, double* noise, double* weight)
+    private void EliminateBlock(int front, double* p, double* q, nint stride, int k0, int width, double* size, double* weight)
     {
         int first = _plan.First[front] + k0;
         for (int k = 0; k < width; k++)
         {
             int place = first + k;
-            double computed = p[k * stride + k], scale = Scale(place);
-            double growth = PivotJudge.IsSmall(computed, scale) ? ColumnGrowth(front, p, q, stride, k0, k, width, computed) : 0;
-            double pivot = Judge.Take(place, computed, scale, noise[k], growth), inverse = 1 / pivot;
+            double computed = p[k * stride + k], scale = _scale[place], soft = _softScale[place];
+            double growth = 0, noise = 0;
+            if (PivotJudge.IsSmall(computed, soft))
+            {
+                growth = ColumnGrowth(front, p, q, stride, k0, k, width, computed);
+                noise = PivotNoise(front, k0 + k, size - k0);
+            }
+            double pivot = Judge.Take(place, computed, scale, soft, noise, growth), inverse = 1 / pivot;
             _diagonal.Start[place] = pivot;
             _inverse.Start[place] = inverse;
-            Growth = Math.Max(Growth, noise[k] / (PivotJudge.RoundOff * scale));
-            // What is left in a lifted pivot is a choice, not round-off.
-            weight[k] = (pivot == computed ? noise[k] : 0) + PivotJudge.RoundOff * Math.Abs(pivot);
+            Growth = Math.Max(Growth, size[k] / scale);
+            weight[k] = Math.Abs(pivot);
             for (int j = k + 1; j < width; j++)
             {
                 double above = q[k * stride + j] * inverse;
@@ -260,7 +261,7 @@ internal sealed unsafe class FrontFactor
                 p[k * stride + i] *= inverse;
                 if (_halves == 2)
                     q[k * stride + i] *= inverse;
-                noise[i] += Math.Abs(p[k * stride + i] * q[k * stride + i]) * weight[k];
+                size[i] += Math.Abs(p[k * stride + i] * q[k * stride + i]) * weight[k];
             }
         }
     }
@@ -328,29 +329,94 @@ internal sealed unsafe class FrontFactor
     /// <summary>Division by the pivots and backward substitution through all fronts; root places must have their solution.</summary>
     public void Backward(double* x)
     {
-        double* local = _local.Start;
+        double* inverse = _inverse.Start;
+        for (int i = 0; i < _plan.InteriorUnknownCount; i++)
+            x[i] *= inverse[i];
         for (int front = _plan.FrontCount - 1; front >= 0; front--)
+            BackwardFront(front, _halves - 1, x);
+    }
+
+    private void BackwardFront(int front, int half, double* x)
+    {
+        double* local = _local.Start;
+        int columns = _plan.Columns(front), padded = _plan.PaddedColumns(front), stride = padded + _plan.PaddedRows(front), start = _plan.RowStart[front], rows = _plan.RowCount(front);
+        double* panel = Panel(half, front), own = x + _plan.First[front];
+        for (int j = 0; j < padded; j++)
+            local[j] = j < columns ? own[j] : 0;
+        fixed (int* row = _plan.Rows)
+            for (int i = 0; i < rows; i++)
+                local[padded + i] = x[row[start + i]];
+        for (int i = padded + rows; i < stride; i++)
+            local[i] = 0;
+        for (int k = (columns - 1) / Block * Block; k >= 0; k -= Block)
         {
-            int columns = _plan.Columns(front), padded = _plan.PaddedColumns(front), stride = padded + _plan.PaddedRows(front), start = _plan.RowStart[front], rows = _plan.RowCount(front);
-            double* panel = Panel(_halves - 1, front), own = x + _plan.First[front], inverse = _inverse.Start + _plan.First[front];
-            for (int j = 0; j < padded; j++)
-                local[j] = j < columns ? own[j] * inverse[j] : 0;
-            fixed (int* row = _plan.Rows)
-                for (int i = 0; i < rows; i++)
-                    local[padded + i] = x[row[start + i]];
-            for (int i = padded + rows; i < stride; i++)
-                local[i] = 0;
-            for (int k = (columns - 1) / Block * Block; k >= 0; k -= Block)
-            {
-                int width = Math.Min(Block, columns - k);
-                double* block = panel + (nint)k * stride + k, y = local + k;
-                DenseKernels.SubtractDots(y, block + Block, stride, y + Block, width, stride - k - Block);
-                for (int c = width - 1; c >= 0; c--)
-                    for (int i = c + 1; i < width; i++)
-                        y[c] -= block[(nint)c * stride + i] * y[i];
-            }
-            for (int j = 0; j < columns; j++)
-                own[j] = local[j];
+            int width = Math.Min(Block, columns - k);
+            double* block = panel + (nint)k * stride + k, y = local + k;
+            DenseKernels.SubtractDots(y, block + Block, stride, y + Block, width, stride - k - Block);
+            for (int c = width - 1; c >= 0; c--)
+                for (int i = c + 1; i < width; i++)
+                    y[c] -= block[(nint)c * stride + i] * y[i];
+        }
+        for (int j = 0; j < columns; j++)
+            own[j] = local[j];
+    }
+
+    /// <summary>
+    /// Round-off that a pivot may carry. With v the vector that the pivot is the energy of (1 at its unknown, 0 at later ones, in balance at earlier ones), an error e in the
+    /// diagonal of unknown i shows as e v²; each diagonal's own error is a unit round-off of the magnitudes that went into it, and errors of many unknowns add as squares.
+    /// First-order analysis of the factor's backward error, derived here.
+    /// </summary>
+    private double PivotNoise(int front, int column, double* size)
+    {
+        int first = _plan.First[front], from = _plan.FirstDescendant[front], start = _plan.First[from], end = first + column + 1;
+        for (int half = 0; half < _halves; half++)
+        {
+            double* v = _probes.Start(half), panel = Panel(half, front);
+            nint stride = _plan.PaddedColumns(front) + _plan.PaddedRows(front);
+            v[first + column] = 1;
+            for (int c = column - 1; c >= 0; c--)
+                for (int i = c + 1; i <= column; i++)
+                    v[first + c] -= panel[c * stride + i] * v[first + i];
+            for (int descendant = front - 1; descendant >= from; descendant--)
+                BackwardFront(descendant, half, v);
+        }
+        double sum = 0;
+        for (int i = start; i < end; i++)
+            sum += Square(_probes.Start(0)[i] * _probes.Start(_halves - 1)[i] * (i < first ? _size[i] : size[i - first]));
+        _probes.Clear(start, end);
+        return PivotJudge.RoundOff * Math.Sqrt(sum);
+    }
+
+    /// <summary>The same for a pivot of the root block: <paramref name="left"/> and <paramref name="right"/> give its vectors at the root unknowns.</summary>
+    public double RootNoise(ReadOnlySpan<double> left, ReadOnlySpan<double> right)
+    {
+        int interior = _plan.InteriorUnknownCount;
+        left.CopyTo(new Span<double>(_probes.Start(0) + interior, left.Length));
+        right.CopyTo(new Span<double>(_probes.Start(1) + interior, right.Length));
+        for (int half = 0; half < _halves; half++)
+            for (int front = _plan.FrontCount - 1; front >= 0; front--)
+                BackwardFront(front, half, _probes.Start(half));
+        double sum = 0;
+        for (int i = 0; i < _plan.UnknownCount; i++)
+            sum += Square(_probes.Start(0)[i] * _probes.Start(_halves - 1)[i] * _size[i]);
+        _probes.Clear(0, _plan.UnknownCount);
+        return PivotJudge.RoundOff * Math.Sqrt(sum);
+    }
+
+    private static double Square(double value) => value * value;
+
+    /// <summary>Two vectors that are zero between uses, by place.</summary>
+    private sealed class ProbeVectors(int count)
+    {
+        private readonly AlignedBuffer _left = new(count);
+        private readonly AlignedBuffer _right = new(count);
+
+        public double* Start(int half) => half == 0 ? _left.Start : _right.Start;
+
+        public void Clear(int start, int end)
+        {
+            new Span<double>(_left.Start + start, end - start).Clear();
+            new Span<double>(_right.Start + start, end - start).Clear();
         }
     }
 }

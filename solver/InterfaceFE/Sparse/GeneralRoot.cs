@@ -32,7 +32,7 @@ internal sealed class GeneralRoot : DenseRoot
                     Swap<double>(Matrix, k * n + j, best * n + j);
             }
             double pivot = Matrix[k * n + k];
-            _isZero[k] = Math.Abs(pivot) <= Limit[k];
+            _isZero[k] = IsZero(pivot, k);
             if (_isZero[k])
                 zero++;
             else if (pivot > 0)
@@ -52,6 +52,28 @@ internal sealed class GeneralRoot : DenseRoot
         else if (isOdd && positive > 0)
             (positive, negative) = (positive - 1, negative + 1);
         Inertia = new Inertia(positive, negative, zero);
+    }
+
+    /// <inheritdoc/>
+    protected override void Probe(int k, Span<double> vector, bool left)
+    {
+        int n = Count;
+        vector[..n].Clear();
+        vector[k] = 1;
+        if (!left)
+        {
+            for (int j = k - 1; j >= 0; j--)
+            {
+                for (int i = j + 1; i <= k; i++)
+                    vector[j] -= Matrix[j * n + i] * vector[i];
+                vector[j] = _isZero[j] ? 0 : vector[j] / Matrix[j * n + j];
+            }
+            return;
+        }
+        for (int i = k; i > 0; i--)
+            Subtract(vector[..i], Matrix.AsSpan(i * n, i), vector[i]);
+        for (int i = k; i >= 0; i--)
+            Swap(vector, i, _exchanged[i]);
     }
 
     /// <inheritdoc/>

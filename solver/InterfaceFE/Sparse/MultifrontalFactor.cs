@@ -8,8 +8,8 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
 {
     private const int CachedRoots = 4;
 
-    // Growth from which solves are refined. Contrasts of stiffness alone (a stiff layer between soft bodies) reach 1e7 and leave a backward error of some round-offs.
-    private const double RefinedGrowth = 1e8;
+    // Growth from which solves are refined. Definite matrices stay at 2, whatever the contrast of stiffness.
+    private const double RefinedGrowth = 1e2;
 
     private readonly bool _isSymmetric;
     private readonly SlotValues _values;
@@ -51,7 +51,7 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     /// <summary>Pivots of the last factorisation that were lifted, numerically zero ones included.</summary>
     public int LiftedPivots => _fronts.Judge.Zero + _fronts.Judge.Harmful;
 
-    /// <summary>Largest growth of round-off in the last factorisation, relative to the scale of the unknown; contrast of stiffness counts as growth.</summary>
+    /// <summary>Largest sum of magnitudes that went into a pivot of the last factorisation, over the scale of its unknown; about 2 for a definite matrix.</summary>
     public double Growth => _fronts.Growth;
 
     private int Halves => _isSymmetric ? 1 : 2;

@@ -12,6 +12,7 @@ internal sealed unsafe class SlotValues
     private readonly SlotMap _map;
     private readonly AlignedBuffer[] _triangles;
     private readonly double[] _scale;
+    private readonly bool[] _isLayer;
     private readonly int[] _faultyUnknown;
     private readonly double[] _gathered;
     private readonly double[] _summed;
@@ -27,6 +28,9 @@ internal sealed unsafe class SlotValues
         for (int half = 0; half < _triangles.Length; half++)
             _triangles[half] = new AlignedBuffer(_map.ValueCount);
         _scale = new double[plan.Pattern.SlotUnknowns.Length];
+        _isLayer = new bool[plan.Pattern.SlotCount];
+        for (int slot = 0; slot < _isLayer.Length; slot++)
+            _isLayer[slot] = IsLayer(plan.Pattern, slot);
         _faultyUnknown = new int[plan.Pattern.SlotCount];
         Array.Fill(_faultyUnknown, -1);
         _gathered = new double[_map.LargestSlot];
@@ -80,14 +84,33 @@ internal sealed unsafe class SlotValues
     }
 
     /// <summary>
-    /// Scale of each unknown, by place: the sum of its diagonal's magnitudes in all slots, so that softening does not lower it; a share of the row's largest entry stands in
-    /// where the diagonal is next to nothing.
+    /// Scales of each unknown, by place. The scale is the sum of its diagonal's magnitudes in all slots, so that softening does not lower it; a share of the row's largest
+    /// entry stands in where the diagonal is next to nothing. The soft scale leaves out layers (slots with changeable vertices only), whose stiffness may exceed that of the
+    /// bodies by many powers of ten; it is the scale where nothing else is there.
     /// </summary>
-    public void SumScales(Span<double> scale)
+    public void SumScales(Span<double> scale, Span<double> softScale)
     {
         scale.Clear();
-        for (int k = 0; k < _scale.Length; k++)
-            scale[_map.Place[k]] += _scale[k];
+        softScale.Clear();
+        int[] start = _plan.Pattern.SlotStart;
+        for (int slot = 0; slot < _isLayer.Length; slot++)
+            for (int k = start[slot]; k < start[slot + 1]; k++)
+            {
+                int place = _map.Place[k];
+                scale[place] += _scale[k];
+                if (!_isLayer[slot])
+                    softScale[place] += _scale[k];
+            }
+        double largest = 0;
+        for (int i = 0; i < scale.Length; i++)
+            largest = Math.Max(largest, scale[i]);
+        for (int i = 0; i < scale.Length; i++)
+        {
+            if (scale[i] == 0)
+                scale[i] = largest > 0 ? largest : 1;
+            if (softScale[i] == 0)
+                softScale[i] = scale[i];
+        }
     }
 
     /// <summary>product = K x.</summary>
@@ -125,6 +148,14 @@ internal sealed unsafe class SlotValues
                 size[unknown] += _magnitude[k];
             }
         }
+    }
+
+    private static bool IsLayer(SlotPattern pattern, int slot)
+    {
+        foreach (int unknown in pattern.Unknowns(slot))
+            if (!pattern.IsChangeable[pattern.VertexOfUnknown[unknown]])
+                return false;
+        return true;
     }
 
     private void Gather(ReadOnlySpan<double> x, int start, int count)

@@ -34,6 +34,9 @@ public sealed class SparsePlan
         for (int s = 0; s < FrontCount; s++)
             Parent[s] = RowCount(s) == 0 ? -1 : FrontOf[Rows[RowStart[s]]];
         (ChildStart, Children) = Group(Parent, FrontCount + 1);
+        FirstDescendant = new int[FrontCount + 1];
+        for (int s = 0; s <= FrontCount; s++)
+            FirstDescendant[s] = ChildStart[s] == ChildStart[s + 1] ? s : FirstDescendant[Children[ChildStart[s]]];
         (PanelStart, ContributionStart, ContributionLength) = PlaceFronts();
         Slots = new SlotMap(this);
         Runs = new RunMap(this);
@@ -100,6 +103,9 @@ public sealed class SparsePlan
 
     /// <summary>Children, front after front, rising.</summary>
     internal int[] Children { get; }
+
+    /// <summary>First front of each front's subtree; the subtree is all from there to the front itself.</summary>
+    internal int[] FirstDescendant { get; }
 
     /// <summary>Start of each front's panel; the root's dense block comes last, one more entry gives the length.</summary>
     internal long[] PanelStart { get; }

@@ -87,12 +87,24 @@ internal sealed class SymmetricRoot : DenseRoot
             Work[_order[i]] = _permuted[i];
     }
 
+    /// <inheritdoc/>
+    protected override void Probe(int k, Span<double> vector, bool left)
+    {
+        Span<double> z = _permuted.AsSpan(0, Count);
+        z.Clear();
+        z[k] = 1;
+        for (int i = k; i > 0; i--)
+            Subtract(z[..i], Matrix.AsSpan(i * Count, i), z[i]);
+        for (int i = 0; i < Count; i++)
+            vector[_order[i]] = z[i];
+    }
+
     /// <summary>Brings the next pivot to the front: 1 or 2 rows wide, -1 where its row is numerically zero.</summary>
     private int ChoosePivot(int k)
     {
         double diagonal = Math.Abs(Matrix[k * Count + k]);
         (double largest, int row) = LargestOffDiagonal(k, k);
-        if (Math.Max(diagonal, largest) <= Limit[_order[k]])
+        if (IsZero(Math.Max(diagonal, largest), k))
             return -1;
         if (diagonal >= Alpha * largest)
             return 1;

@@ -35,6 +35,7 @@ internal sealed class SparseModel
     /// <summary>Adds a vertex and returns its first unknown.</summary>
     public int Vertex(double x, double y, int unknowns, bool root = false, bool changeable = false)
     {
+        _pattern = null;
         _x.Add(x);
         _y.Add(y);
         _root.Add(root);
@@ -47,6 +48,7 @@ internal sealed class SparseModel
     /// <summary>Adds a slot; unknowns below zero are supported and drop out. Returns its index.</summary>
     public int Slot(int[] unknowns, double[] matrix)
     {
+        _pattern = null;
         int m = unknowns.Length;
         int[] kept = Enumerable.Range(0, m).Where(k => unknowns[k] >= 0).ToArray();
         var reduced = new double[kept.Length * kept.Length];

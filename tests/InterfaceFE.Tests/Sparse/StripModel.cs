@@ -39,16 +39,16 @@ internal sealed class StripModel
     public double[] LayerMatrix(double stiffness)
     {
         int pairs = _quadratic ? 3 : 2, m = 4 * pairs;
-        double[,] mass = _quadratic
-            ? new double[,] { { 4, 2, -1 }, { 2, 16, 2 }, { -1, 2, 4 } }
-            : new double[,] { { 2, 1, 0 }, { 1, 2, 0 }, { 0, 0, 0 } };
+        double[][] mass = _quadratic
+            ? [[4, 2, -1], [2, 16, 2], [-1, 2, 4]]
+            : [[2, 1], [1, 2]];
         double divisor = _quadratic ? 30 : 6;
         var matrix = new double[m * m];
         for (int a = 0; a < pairs; a++)
             for (int b = 0; b < pairs; b++)
                 for (int d = 0; d < 2; d++)
                 {
-                    double value = mass[a, b] / divisor * stiffness * (d == 0 ? 0.5 : 1);
+                    double value = mass[a][b] / divisor * stiffness * (d == 0 ? 0.5 : 1);
                     matrix[(4 * a + d) * m + 4 * b + d] += value;
                     matrix[(4 * a + d) * m + 4 * b + 2 + d] -= value;
                     matrix[(4 * a + 2 + d) * m + 4 * b + d] -= value;
