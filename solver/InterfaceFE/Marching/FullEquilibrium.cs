@@ -12,7 +12,7 @@ public sealed class FullEquilibrium : IEquilibrium
     private const double SkewTolerance = 1e-12;
 
     /// <summary>Damage from which a point counts as separated; what it still carries is lost in the tolerance of equilibrium.</summary>
-    private const double Separated = 1 - 1e-7;
+    public const double Separated = 1 - 1e-7;
 
     private readonly SpecimenModel _model;
     private readonly ElementTable _table;
@@ -392,7 +392,8 @@ public sealed class FullEquilibrium : IEquilibrium
     /// Bodies of the specimen that hang together: adherends joined by at least one layer element that still carries, by the latest evaluation. Second: length of bond that still carries,
     /// as a share of the bond at the start (1 when there is none).
     /// </summary>
-    public (int Bodies, double CarryingShare) Connections()
+    /// <param name="separated">Damage from which a point counts as separated.</param>
+    public (int Bodies, double CarryingShare) Connections(double separated = Separated)
     {
         int adherends = _model.Solids.Count, bodies = adherends, index = 0;
         var parent = Enumerable.Range(0, adherends).ToArray();
@@ -402,7 +403,7 @@ public sealed class FullEquilibrium : IEquilibrium
             for (int e = 0; e < layer.Count; e++, index++)
             {
                 all += layer.Length(e);
-                if (_leastDamage[index] > Separated)
+                if (_leastDamage[index] > separated)
                     continue;
                 carrying += layer.Length(e);
                 int a = Root(parent, layer.LowerAdherend), b = Root(parent, layer.UpperAdherend);

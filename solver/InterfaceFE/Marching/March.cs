@@ -70,6 +70,8 @@ internal sealed class StageMarch
     private const double Shorter = 0.4;
     private const double AllowedOverAim = 4;
     private const double LastBondShare = 0.03;
+    private const double Thread = 1e-6;
+    private const double AlmostSeparated = 1 - 1e-3;
 
     private readonly FullEquilibrium _equilibrium;
     private readonly MarchSettings _settings;
@@ -80,7 +82,7 @@ internal sealed class StageMarch
     private readonly double _timeAtStart;
     private readonly int _bodiesAtStart;
     private readonly double[] _way;
-    private double _wayProgress, _wayWork, _wayArc, _acceptedWork, _furthest;
+    private double _wayProgress, _wayWork, _wayArc, _acceptedWork, _furthest, _largestLoad;
     private bool _hasWay;
     private bool _onPath;
     private double _ownStride, _pathStride;
@@ -306,7 +308,21 @@ internal sealed class StageMarch
         _observer.Said(string.Create(CultureInfo.InvariantCulture, $"control: the stage's own at progress {_equilibrium.AcceptedProgress:G4} ({reason})"));
     }
 
-    private bool Severed() => _equilibrium.Connections().Bodies > _bodiesAtStart;
+    /// <summary>
+    /// Whether the specimen came apart: by points that are separated, or hanging by a thread, points that carry less than a thousandth while the grips carry less than a millionth of
+    /// what they did.
+    /// </summary>
+    private bool Severed()
+    {
+        if (_equilibrium.Connections().Bodies > _bodiesAtStart)
+            return true;
+        double load = 0;
+        for (int i = 0; i < _way.Length; i++)
+            if (_equilibrium.Model.Unknowns.IsRoot[_equilibrium.Model.Unknowns.VertexOfUnknown[i]])
+                load = Math.Max(load, Math.Abs(_equilibrium.ExternalForce(i)));
+        _largestLoad = Math.Max(_largestLoad, load);
+        return load < Thread * _largestLoad && _equilibrium.Connections(AlmostSeparated).Bodies > _bodiesAtStart;
+    }
 
     private static MarchOutcome Stop(string cause) => new(MarchStatus.StoppedEarly, cause);
 
