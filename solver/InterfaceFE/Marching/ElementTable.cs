@@ -47,7 +47,8 @@ internal sealed class ElementTable
             SlotStart = start,
             SlotUnknowns = [.. unknowns],
         };
-        FirstLayerBlock = model.Solids.Count;
+        FirstLayerBlock = model.Solids.Count + model.OpenFaces.Count;
+        SolidBlocks = model.Solids.Count;
     }
 
     public IReadOnlyList<IElementBlock> Blocks { get; }
@@ -55,6 +56,8 @@ internal sealed class ElementTable
     public SlotPattern Pattern { get; }
 
     public int FirstLayerBlock { get; }
+
+    public int SolidBlocks { get; }
 
     public int LargestNative { get; }
 

@@ -221,8 +221,10 @@ public sealed class FullEquilibrium : IEquilibrium
                     _largestDamage[layerElement] = answer.LargestDamage;
                     _leastDamage[layerElement] = answer.LeastDamage;
                 }
-                else
+                else if (block < _table.SolidBlocks)
                     storedSolids += answer.Stored;
+                else
+                    storedLayers += answer.Stored;
             }
         }
         Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature);

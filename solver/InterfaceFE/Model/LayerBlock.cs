@@ -3,7 +3,7 @@ using InterfaceFE.Mechanics.Layers;
 
 namespace InterfaceFE.Model;
 
-/// <summary>Layer elements of one joint: its bonded elements, in order from the joint's start.</summary>
+/// <summary>Layer elements of one joint, in order from its start: the bonded ones, or those that never were (starter crack, unbonded stretches) and only meet when pressed together.</summary>
 public sealed class LayerBlock : IElementBlock
 {
     private readonly MeshedJoint _joint;
@@ -20,7 +20,8 @@ public sealed class LayerBlock : IElementBlock
     /// <param name="rule">Integration along an element.</param>
     /// <param name="freeOpeningPerKelvin">Stress-free opening per change of temperature [mm/K].</param>
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
-    public LayerBlock(Mesh mesh, MeshedJoint joint, ILayerLaw law, double thickness, LayerRule rule, double freeOpeningPerKelvin, double stressFreeTemperature)
+    /// <param name="bonded">Whether the block takes the bonded elements or the others.</param>
+    public LayerBlock(Mesh mesh, MeshedJoint joint, ILayerLaw law, double thickness, LayerRule rule, double freeOpeningPerKelvin, double stressFreeTemperature, bool bonded)
     {
         _joint = joint;
         Law = law;
@@ -29,7 +30,7 @@ public sealed class LayerBlock : IElementBlock
         _freeOpeningPerKelvin = freeOpeningPerKelvin;
         _stressFreeTemperature = stressFreeTemperature;
         Stations = mesh.NodesPerFace;
-        _jointElement = [.. Enumerable.Range(0, joint.ElementCount).Where(e => joint.Bonded[e])];
+        _jointElement = [.. Enumerable.Range(0, joint.ElementCount).Where(e => joint.Bonded[e] == bonded)];
         _nodes = new int[_jointElement.Length * 2 * Stations];
         _coordinates = new double[2 * _nodes.Length];
         for (int e = 0; e < _jointElement.Length; e++)

@@ -15,6 +15,7 @@ public static class ModelBuilder
         PlaneElasticity[] materials = [.. mesh.Adherends.Select(a => MaterialFactory.Create(deck, a.Material))];
         SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature))];
         LayerBlock[] layers = [.. mesh.Joints.Select(joint => Layer(deck, mesh, joint, materials))];
+        LayerBlock[] openFaces = [.. mesh.Joints.Zip(layers, (joint, layer) => OpenFaces(deck, mesh, joint, layer)).Where(block => block.Count > 0)];
         (IReadOnlyList<GripBody> bodies, IReadOnlyList<Grip> grips) = GripPlanner.Plan(deck, mesh);
         var unknowns = new UnknownMap(mesh, bodies);
         return new SpecimenModel
@@ -22,6 +23,7 @@ public static class ModelBuilder
             Mesh = mesh,
             Unknowns = unknowns,
             Solids = solids,
+            OpenFaces = openFaces,
             Layers = layers,
             Grips = grips,
             Stages = SequencePlanner.Plan(deck, unknowns, grips),
@@ -33,16 +35,20 @@ public static class ModelBuilder
     {
         LayerDeck layer = deck.Layers![joint.Layer];
         ILayerLaw law = LayerLawFactory.Create(joint.Layer, layer, deck.Model.OutOfPlane);
-        LayerRule rule = deck.Model.LayerIntegration switch
-        {
-            LayerIntegration.Gauss => LayerRule.Gauss(mesh.NodesPerFace),
-            LayerIntegration.Lobatto => LayerRule.Lobatto(mesh.NodesPerFace),
-            _ => LayerRule.SubIntervals(mesh.NodesPerFace),
-        };
         double along = 0.5 * (materials[joint.UpperAdherend].Expansion[0] + materials[joint.LowerAdherend].Expansion[0]);
         double across = deck.Model.OutOfPlane == OutOfPlane.Held ? 0
             : 0.5 * (deck.Materials[mesh.Adherends[joint.UpperAdherend].Material].Expansion.Z + deck.Materials[mesh.Adherends[joint.LowerAdherend].Material].Expansion.Z);
         double perKelvin = LayerLawFactory.Bulk(layer, deck.Model.OutOfPlane)?.FreeOpening(1, along, across) ?? 0;
-        return new LayerBlock(mesh, joint, law, layer.Thickness, rule, perKelvin, deck.StressFreeTemperature);
+        return new LayerBlock(mesh, joint, law, layer.Thickness, Rule(deck, mesh), perKelvin, deck.StressFreeTemperature, bonded: true);
     }
+
+    private static LayerBlock OpenFaces(Deck deck, Mesh mesh, MeshedJoint joint, LayerBlock layer) =>
+        new(mesh, joint, new ClosingLaw(layer.Law.Stiffness.Contact), layer.Thickness, Rule(deck, mesh), 0, deck.StressFreeTemperature, bonded: false);
+
+    private static LayerRule Rule(Deck deck, Mesh mesh) => deck.Model.LayerIntegration switch
+    {
+        LayerIntegration.Gauss => LayerRule.Gauss(mesh.NodesPerFace),
+        LayerIntegration.Lobatto => LayerRule.Lobatto(mesh.NodesPerFace),
+        _ => LayerRule.SubIntervals(mesh.NodesPerFace),
+    };
 }

@@ -14,7 +14,10 @@ public sealed class SpecimenModel
     /// <summary>Blocks of the adherends, in order.</summary>
     public required IReadOnlyList<SolidBlock> Solids { get; init; }
 
-    /// <summary>Blocks of the joints, in order.</summary>
+    /// <summary>Unbonded stretches of the joints, which can close; joints without any are left out.</summary>
+    public required IReadOnlyList<LayerBlock> OpenFaces { get; init; }
+
+    /// <summary>Bonded parts of the joints, in order.</summary>
     public required IReadOnlyList<LayerBlock> Layers { get; init; }
 
     /// <summary>Grips in deck order.</summary>
@@ -26,6 +29,6 @@ public sealed class SpecimenModel
     /// <summary>Stress-free temperature [K].</summary>
     public required double StressFreeTemperature { get; init; }
 
-    /// <summary>All blocks: solids, then layers.</summary>
-    public IReadOnlyList<IElementBlock> Blocks => [.. Solids, .. Layers];
+    /// <summary>All blocks: solids, open faces, layers.</summary>
+    public IReadOnlyList<IElementBlock> Blocks => [.. Solids, .. OpenFaces, .. Layers];
 }

@@ -35,7 +35,7 @@ public static class SummaryMaker
         double[] displacement = [.. points.Select(p => p.Grips[g].Displacement)];
         double[] rotation = [.. points.Select(p => p.Grips[g].Rotation ?? 0)];
         Peak? force = info.DirectionX != 0 || info.DirectionY != 0 ? Peak.Of(displacement, [.. points.Select(p => p.Grips[g].Force)]) : null;
-        Peak? moment = info.Turned ? Peak.Of(rotation, [.. points.Select(p => p.Grips[g].Moment ?? 0)]) : null;
+        Peak? moment = info.Turned ? LargestMagnitude(rotation, [.. points.Select(p => p.Grips[g].Moment ?? 0)]) : null;
         return new GripSummary
         {
             Name = info.Name,
@@ -49,6 +49,14 @@ public static class SummaryMaker
             FinalRotation = last.Rotation,
             FinalMoment = info.Turned ? last.Moment : null,
         };
+    }
+
+    private static Peak? LargestMagnitude(double[] abscissa, double[] ordinate)
+    {
+        if (ordinate.Max() >= -ordinate.Min())
+            return Peak.Of(abscissa, ordinate);
+        Peak? peak = Peak.Of(abscissa, [.. ordinate.Select(v => -v)]);
+        return peak is null ? null : peak with { Value = -peak.Value };
     }
 
     private static void Judge(SelfCheck check, RunHistory history, RunMaxima maxima, SpecimenModel model)

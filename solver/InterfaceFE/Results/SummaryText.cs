@@ -29,7 +29,8 @@ public static class SummaryText
         foreach (string reason in check.Reasons)
             line("", reason);
         foreach (GripSummary grip in summary.Grips)
-            line(grip.Name, Words(grip));
+            if (Words(grip) is { Length: > 0 } words)
+                line(grip.Name, words);
         if (summary.FirstDamage is { } damage)
             line("first damage", Words(damage));
         if (summary.FirstYield is { } yield)
@@ -71,7 +72,7 @@ public static class SummaryText
             words.Add($"final force {Number(grip.FinalForce)} N at {Number(grip.FinalDisplacement)} mm");
         if (grip.FinalMoment is not null)
             words.Add($"final moment {Number(grip.FinalMoment)} N·mm at {Number(grip.FinalRotation)} rad");
-        return words.Count > 0 ? string.Join(", ", words) : "no reading";
+        return string.Join(", ", words);
     }
 
     private static string Words(JointSummary joint) =>
