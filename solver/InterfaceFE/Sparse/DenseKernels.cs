@@ -6,7 +6,7 @@ namespace InterfaceFE.Sparse;
 /// Inner loops of the factorisation and the solves, for column-major blocks. Row counts and leading dimensions marked "padded" are multiples of 8 and their columns start on
 /// a cache line. One of three forms is taken, by what the processor offers; they agree to round-off, and each gives the same bytes every time.
 /// </summary>
-internal static unsafe class DenseKernels
+public static unsafe class DenseKernels
 {
     private static readonly bool Wide = Avx512F.IsSupported && Avx512DQ.IsSupported;
     private static readonly bool Middle = Avx2.IsSupported && Fma.IsSupported;
@@ -15,7 +15,7 @@ internal static unsafe class DenseKernels
     public static int WidthBits => Wide ? 512 : Middle ? 256 : 64;
 
     /// <summary>c (rows×8) -= a (rows×depth) · packed (depth×8, row after row). Rows padded.</summary>
-    public static void SubtractProduct(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, nint rows)
+    internal static void SubtractProduct(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, nint rows)
     {
         if (Wide)
             DenseKernels512.SubtractProduct(a, aStride, packed, depth, c, cStride, rows);
@@ -26,7 +26,7 @@ internal static unsafe class DenseKernels
     }
 
     /// <summary>packed[8k + j] = source[k·stride + j] · factor[k] for j below 8.</summary>
-    public static void Pack(double* source, nint stride, double* factor, nint depth, double* packed)
+    internal static void Pack(double* source, nint stride, double* factor, nint depth, double* packed)
     {
         if (Wide)
             DenseKernels512.Pack(source, stride, factor, depth, packed);
@@ -39,7 +39,7 @@ internal static unsafe class DenseKernels
     /// <summary>
     /// x (rows×columns, at most 8 columns) becomes x · T⁻¹ · diag(inverse), with T[j, k] = triangle[j·triangleStride + k] for k above j and a unit diagonal. Rows padded.
     /// </summary>
-    public static void SolveTriangle(double* x, nint xStride, nint rows, double* triangle, nint triangleStride, double* inverse, int columns)
+    internal static void SolveTriangle(double* x, nint xStride, nint rows, double* triangle, nint triangleStride, double* inverse, int columns)
     {
         if (Wide)
             DenseKernels512.SolveTriangle(x, xStride, rows, triangle, triangleStride, inverse, columns);
@@ -50,7 +50,7 @@ internal static unsafe class DenseKernels
     }
 
     /// <summary>target += source, any count, any alignment.</summary>
-    public static void Add(double* target, double* source, nint count)
+    internal static void Add(double* target, double* source, nint count)
     {
         if (Wide)
             DenseKernels512.Add(target, source, count);
@@ -61,7 +61,7 @@ internal static unsafe class DenseKernels
     }
 
     /// <summary>y -= a (rows×columns) · x. Rows padded.</summary>
-    public static void SubtractColumns(double* y, double* a, nint stride, double* x, int columns, nint rows)
+    internal static void SubtractColumns(double* y, double* a, nint stride, double* x, int columns, nint rows)
     {
         if (Wide)
             DenseKernels512.SubtractColumns(y, a, stride, x, columns, rows);
@@ -72,7 +72,7 @@ internal static unsafe class DenseKernels
     }
 
     /// <summary>x[k] -= a[:, k] · y for each column. Rows padded.</summary>
-    public static void SubtractDots(double* x, double* a, nint stride, double* y, int columns, nint rows)
+    internal static void SubtractDots(double* x, double* a, nint stride, double* y, int columns, nint rows)
     {
         if (Wide)
             DenseKernels512.SubtractDots(x, a, stride, y, columns, rows);
@@ -83,7 +83,7 @@ internal static unsafe class DenseKernels
     }
 
     /// <summary>y += Σ over columns of |a[:, k] · b[:, k]| · weight[k]. Rows padded; a and b may be the same.</summary>
-    public static void AddAbsoluteProducts(double* y, double* a, double* b, nint stride, double* weight, int columns, nint rows)
+    internal static void AddAbsoluteProducts(double* y, double* a, double* b, nint stride, double* weight, int columns, nint rows)
     {
         if (Wide)
             DenseKernels512.AddAbsoluteProducts(y, a, b, stride, weight, columns, rows);

@@ -115,7 +115,7 @@ internal sealed class EliminationTree
         return result;
     }
 
-    /// <summary>Column structures; a column whose structure follows from its successor's shares nothing but is cheap: sizes are those of the vertex graph.</summary>
+    /// <summary>Structure of each column: its own entries and its children's, without the column itself.</summary>
     private static int[][] Structures(VertexGraph graph, int[] order, int[] position, int interiorCount)
     {
         SetPositions(order, position);

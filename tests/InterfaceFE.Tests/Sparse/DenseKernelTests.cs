@@ -76,7 +76,7 @@ public class DenseKernelTests
     private static double[] Result(Type form, string kernel, Func<Memory, object[]> arguments)
     {
         Memory memory = Memory.Random();
-        form.GetMethod(kernel, BindingFlags.Static | BindingFlags.Public)!.Invoke(null, arguments(memory));
+        form.GetMethod(kernel, BindingFlags.Static | BindingFlags.Public | BindingFlags.NonPublic)!.Invoke(null, arguments(memory));
         GC.KeepAlive(memory);
         return memory.Third;
     }

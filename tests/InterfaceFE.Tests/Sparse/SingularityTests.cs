@@ -135,6 +135,38 @@ public class SingularityTests
     }
 
     [Fact]
+    public void Random_sound_matrices_with_many_zero_diagonals_are_refined_to_round_off()
+    {
+        int lifted = 0;
+        for (int seed = 0; seed < 200; seed++)
+        {
+            var random = new Random(seed);
+            var model = new SparseModel();
+            int count = random.Next(2, 40);
+            for (int u = 0; u < count; u++)
+                model.Vertex(u, 0, 1, root: u % 9 == 8);
+            for (int slot = 0; slot < 3 * count; slot++)
+            {
+                int a = random.Next(count), b = random.Next(count);
+                double link = random.NextDouble() - 0.5;
+                if (a == b)
+                    model.Slot([a], [link]);
+                else
+                    model.Slot([a, b], [0, link, link, 0]);
+            }
+            if (model.Dense().ConditionNumber() > 1e6)
+                continue;
+            foreach (bool general in new[] { false, true })
+            {
+                MultifrontalFactor factor = Checks.Factored(model, general);
+                lifted += factor.LiftedPivots > 0 ? 1 : 0;
+                Checks.SolvesAsDense(model, factor, [], random, 1e-8);
+            }
+        }
+        Assert.True(lifted > 50, "the matrices of this test must need lifting");
+    }
+
+    [Fact]
     public void A_cancelled_diagonal_in_a_strip_is_refined_to_round_off()
     {
         var random = new Random(9);
