@@ -1,0 +1,39 @@
+using System.CommandLine;
+using System.CommandLine.Help;
+using System.CommandLine.Invocation;
+using InterfaceFE.Runs;
+
+namespace InterfaceFE.Cli;
+
+/// <summary>The command line: parses, calls the library, prints. Results go to the output, progress and errors to the other writer.</summary>
+public static class CommandLine
+{
+    /// <summary>Runs a command.</summary>
+    /// <param name="args">Arguments without the program's name.</param>
+    /// <param name="output">Takes results.</param>
+    /// <param name="error">Takes progress and errors.</param>
+    /// <param name="cancellation">Asks for an orderly end.</param>
+    /// <returns>Exit code, as <see cref="ExitCode"/>.</returns>
+    public static int Run(IReadOnlyList<string> args, TextWriter output, TextWriter error, CancellationToken cancellation)
+    {
+        try
+        {
+            var root = new RootCommand("Calculates bonded joints with layers that soften and come apart: from a deck in YAML to curves, fields and figures.");
+            Terminal terminal = new(output, error, cancellation);
+            root.Add(RunCommand.Make(terminal));
+            HelpOption help = root.Options.OfType<HelpOption>().Single();
+            help.Description = "Show what a command does, its options and an example.";
+            help.Action = new HelpWithExample((HelpAction)help.Action!);
+            ParseResult parsed = root.Parse(args, new ParserConfiguration { ResponseFileTokenReplacer = null });
+            if (parsed.Action is ParseErrorAction wrong)
+                wrong.ShowHelp = false;
+            int code = parsed.Invoke(new InvocationConfiguration { Output = output, Error = error, EnableDefaultExceptionHandler = false, ProcessTerminationTimeout = null });
+            return code;
+        }
+        catch (Exception e)
+        {
+            error.WriteLine($"this is an error in the program: {e.Message.ReplaceLineEndings(" ")} ({e.GetType().Name})");
+            return (int)ExitCode.ProgramError;
+        }
+    }
+}
