@@ -14,7 +14,7 @@ void Ask(PosixSignalContext signal)
     if (stop.IsCancellationRequested)
         return;
     signal.Cancel = true;
-    Console.Error.WriteLine("interrupted: what was found so far is being written (once more to end at once)");
+    Console.Error.WriteLine("stopping: what was found so far is being written (once more ends at once)");
     stop.Cancel();
 }
 

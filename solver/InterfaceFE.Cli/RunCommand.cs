@@ -1,5 +1,4 @@
 using System.CommandLine;
-using System.Text;
 using InterfaceFE.Results;
 using InterfaceFE.Runs;
 
@@ -29,21 +28,15 @@ internal static class RunCommand
     {
         string folder = into ?? RunFolder.DefaultFor(deck);
         FileRunOutcome outcome = DeckFileRun.Execute(deck, folder, overwrite, terminal.Progress(quiet), terminal.Cancellation);
-        foreach (string message in outcome.Messages)
-            terminal.Error.WriteLine(message);
         if (outcome.Result is not { } result)
-            return outcome.Code;
+            return terminal.Fail(outcome.Code, outcome.Messages);
         if (json)
         {
-            using MemoryStream bytes = new();
-            SummaryWriter.Write(bytes, result.Summary);
-            terminal.Output.Write(Encoding.UTF8.GetString(bytes.ToArray()));
+            terminal.Print(stream => SummaryWriter.Write(stream, result.Summary));
+            return outcome.Code;
         }
-        else
-        {
-            SummaryText.Write(result.Summary, terminal.Output);
-            terminal.Output.WriteLine($"  results         {folder}");
-        }
+        SummaryText.Write(result.Summary, terminal.Output);
+        terminal.Output.WriteLine($"Results are in {folder}");
         return outcome.Code;
     }
 }

@@ -36,7 +36,7 @@ public static class DeckFileRun
                 progress("warning: " + warning);
             RunResult result = new FolderRun(folder, progress).Execute(reading.Deck, warnings, cancellation);
             return new FileRunOutcome(CodeOf(result.Summary.Status), [], result);
-        });
+        }, (code, messages) => new FileRunOutcome(code, messages, null));
     }
 
     /// <summary>Exit code of a run's end.</summary>

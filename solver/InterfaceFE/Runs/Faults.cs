@@ -10,7 +10,8 @@ internal static class Faults
     /// <param name="reading">Where the deck's keys stand.</param>
     /// <param name="folder">Folder that is written.</param>
     /// <param name="action">What is done.</param>
-    public static FileRunOutcome Guard(DeckReading reading, string folder, Func<FileRunOutcome> action)
+    /// <param name="fail">Makes the outcome of a failure from its code and its lines.</param>
+    public static T Guard<T>(DeckReading reading, string folder, Func<T> action, Func<ExitCode, IReadOnlyList<string>, T> fail)
     {
         try
         {
@@ -18,25 +19,22 @@ internal static class Faults
         }
         catch (DeckException e)
         {
-            return new FileRunOutcome(ExitCode.WrongDeckOrCall, [.. e.Problems.Select(p => reading.Describe(p).ToString())], null);
+            return fail(ExitCode.WrongDeckOrCall, [.. e.Problems.Select(p => reading.Describe(p).ToString())]);
         }
         catch (Exception e) when (e is IOException or UnauthorizedAccessException)
         {
-            return new FileRunOutcome(ExitCode.WrongDeckOrCall, [$"{folder}: cannot be written: {OneLine(e)}"], null);
+            return fail(ExitCode.WrongDeckOrCall, [$"{folder}: cannot be written: {OneLine(e)}"]);
         }
         catch (OutOfMemoryException)
         {
-            return new FileRunOutcome(ExitCode.WrongDeckOrCall, ["the model does not fit into the memory of this machine: use longer elements, or keep fields at fewer points (`check` tells sizes)"], null);
+            return fail(ExitCode.WrongDeckOrCall, ["the model does not fit into the memory of this machine: use longer elements, or keep fields at fewer points (`check` tells sizes)"]);
         }
         catch (Exception e)
         {
             string log = Path.Join(folder, "run.log");
-            return new FileRunOutcome(ExitCode.ProgramError, [Words(e) + (File.Exists(log) ? $"; details are in {log}" : "")], null);
+            return fail(ExitCode.ProgramError, [$"this is an error in the program: {OneLine(e)} ({e.GetType().Name})" + (File.Exists(log) ? $"; details are in {log}" : "")]);
         }
     }
-
-    /// <summary>An error in the program in one line, without its place in the code.</summary>
-    public static string Words(Exception e) => $"this is an error in the program: {OneLine(e)} ({e.GetType().Name})";
 
     private static string OneLine(Exception e) => e.Message.ReplaceLineEndings(" ");
 }
