@@ -1,12 +1,24 @@
-using InterfaceFE.Decks.Reading;
-using InterfaceFE.Results;
-using InterfaceFE.Runs;
+using System.Globalization;
+using System.Runtime.InteropServices;
+using System.Text;
+using InterfaceFE.Cli;
 
-DeckReading reading = DeckReader.Read(args[1]);
-foreach (ReadProblem p in reading.Problems) Console.Error.WriteLine(p);
-foreach (ReadProblem p in reading.Warnings) Console.Error.WriteLine(p);
-if (reading.Deck is null) return 1;
-FolderRun.Clear(args[3]);
-var r = new FolderRun(args[3], Console.Error.WriteLine).Execute(reading.Deck, [], default);
-SummaryText.Write(r.Summary, Console.Out);
-return 0;
+CultureInfo.DefaultThreadCurrentCulture = CultureInfo.CurrentCulture = CultureInfo.InvariantCulture;
+CultureInfo.DefaultThreadCurrentUICulture = CultureInfo.CurrentUICulture = CultureInfo.InvariantCulture;
+Console.OutputEncoding = new UTF8Encoding(encoderShouldEmitUTF8Identifier: false);
+
+// The first signal asks for an orderly end; a second one ends the process at once.
+using var stop = new CancellationTokenSource();
+void Ask(PosixSignalContext signal)
+{
+    if (stop.IsCancellationRequested)
+        return;
+    signal.Cancel = true;
+    Console.Error.WriteLine("stopping: what was found so far is being written (once more ends at once)");
+    stop.Cancel();
+}
+
+using PosixSignalRegistration interrupt = PosixSignalRegistration.Create(PosixSignal.SIGINT, Ask);
+using PosixSignalRegistration terminate = PosixSignalRegistration.Create(PosixSignal.SIGTERM, Ask);
+using PosixSignalRegistration hangUp = PosixSignalRegistration.Create(PosixSignal.SIGHUP, Ask);
+return CommandLine.Run(args, Console.Out, Console.Error, stop.Token);

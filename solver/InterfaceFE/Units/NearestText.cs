@@ -1,7 +1,7 @@
 namespace InterfaceFE.Units;
 
 /// <summary>Finds the nearest of several words by the number of letters added, dropped, changed or swapped (Damerau 1964, neighbouring swaps).</summary>
-internal static class NearestText
+public static class NearestText
 {
     private const int LongestCompared = 64;
 
