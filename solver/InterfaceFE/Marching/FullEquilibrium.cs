@@ -20,13 +20,13 @@ public sealed class FullEquilibrium : IEquilibrium
     private readonly WorkingFactor _symmetric;
     private GeneralFactor? _general;
     private readonly StateStore _state;
-    private readonly double[] _u, _accepted, _internal, _layerForce, _magnitudes, _temperatureRate, _external, _externalRate, _held, _heldRate;
+    private readonly double[] _u, _accepted, _internal, _layerForce, _dissipationGradient, _magnitudes, _temperatureRate, _external, _externalRate, _held, _heldRate;
     private readonly double[] _rightSide, _solution, _tangentSolution, _gradient, _base, _noMagnitudes = [];
     private readonly double[] _largestDamage, _leastDamage;
     private readonly double[][] _slotTangents;
     private readonly bool[] _skew;
     private readonly bool[] _isHeld;
-    private readonly double[] _native, _force, _rate, _tangent, _work, _transformed;
+    private readonly double[] _native, _force, _rate, _dissipation, _tangent, _work, _transformed;
     private int[] _heldUnknowns = [];
     private double[] _heldStart = [], _heldEnd = [];
     private readonly double[] _externalStart, _externalEnd;
@@ -49,6 +49,7 @@ public sealed class FullEquilibrium : IEquilibrium
         _accepted = new double[n];
         _internal = new double[n];
         _layerForce = new double[n];
+        _dissipationGradient = new double[n];
         _magnitudes = new double[n];
         _temperatureRate = new double[n];
         _external = new double[n];
@@ -72,6 +73,7 @@ public sealed class FullEquilibrium : IEquilibrium
         _native = new double[native];
         _force = new double[native];
         _rate = new double[native];
+        _dissipation = new double[native];
         _tangent = new double[native * native];
         _work = new double[native * slot];
         _transformed = new double[slot * slot];
@@ -113,6 +115,12 @@ public sealed class FullEquilibrium : IEquilibrium
 
     /// <inheritdoc/>
     public double LayerWorkByProgress { get; private set; }
+
+    /// <inheritdoc/>
+    public ReadOnlySpan<double> DissipationGradient => _dissipationGradient;
+
+    /// <inheritdoc/>
+    public double DissipationByProgress { get; private set; }
 
     /// <summary>Number of layer elements in which damage grew in the latest evaluation.</summary>
     public int GrowingElements { get; private set; }
@@ -183,16 +191,17 @@ public sealed class FullEquilibrium : IEquilibrium
         Array.Clear(_layerForce);
         Array.Clear(_magnitudes);
         Array.Clear(_temperatureRate);
+        Array.Clear(_dissipationGradient);
         wanted |= Wanted.Force | Wanted.Energy;
         int changed = 0;
         GrowingElements = 0;
-        double storedSolids = 0, storedLayers = 0, spent = 0, byTemperature = 0, layersByTemperature = 0;
+        double storedSolids = 0, storedLayers = 0, spent = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
         for (int block = 0; block < _table.Blocks.Count; block++)
         {
             IElementBlock elements = _table.Blocks[block];
             bool layer = block >= _table.FirstLayerBlock;
             int n = 2 * elements.NodesPerElement;
-            var buffers = new ElementBuffers { Force = _force.AsSpan(0, n), Tangent = _tangent.AsSpan(0, n * n), LoadRate = _rate.AsSpan(0, n) };
+            var buffers = new ElementBuffers { Force = _force.AsSpan(0, n), Tangent = _tangent.AsSpan(0, n * n), LoadRate = _rate.AsSpan(0, n), Dissipation = _dissipation.AsSpan(0, n) };
             Span<double> native = _native.AsSpan(0, n);
             for (int e = 0; e < elements.Count; e++)
             {
@@ -215,6 +224,9 @@ public sealed class FullEquilibrium : IEquilibrium
                     storedLayers += answer.Stored;
                     spent += answer.Dissipated;
                     layersByTemperature += answer.StoredByTemperature;
+                    dissipatedByTemperature += answer.DissipatedByTemperature;
+                    if ((own & Wanted.Dissipation) != 0 && answer.Growing)
+                        _table.Scatter(slot, buffers.Dissipation, _dissipationGradient, _noMagnitudes);
                     if (answer.Growing)
                         GrowingElements++;
                     int layerElement = slot - _table.Slot(_table.FirstLayerBlock, 0);
@@ -229,6 +241,7 @@ public sealed class FullEquilibrium : IEquilibrium
         }
         Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature);
         LayerWorkByProgress = layersByTemperature * (_temperatureEnd - _temperatureStart);
+        DissipationByProgress = dissipatedByTemperature * (_temperatureEnd - _temperatureStart);
 
         double worst = 0, reference = 0;
         bool finite = true;

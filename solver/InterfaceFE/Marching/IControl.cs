@@ -72,6 +72,32 @@ public sealed class LayerWorkControl(double target, double stride) : IControl
 }
 
 /// <summary>
+/// Dissipated energy of the layers grows by a given amount, with its gradient from the laws (after Gutierrez 2004; Verhoosel, Remmers and Gutierrez 2009). It grows even where the rest of the
+/// bond gives back more than the front takes, so that layer work falls; it needs damage that grows.
+/// </summary>
+/// <param name="target">Dissipated energy at the end of the stride [mJ].</param>
+/// <param name="stride">Growth of dissipated energy [mJ].</param>
+public sealed class DissipationControl(double target, double stride) : IControl
+{
+    /// <inheritdoc/>
+    public string Name => "dissipation";
+
+    /// <inheritdoc/>
+    public double Stride { get; } = stride;
+
+    /// <inheritdoc/>
+    public bool FixesProgress => false;
+
+    /// <inheritdoc/>
+    public double Equation(IEquilibrium equilibrium, Span<double> gradient, out double byProgress)
+    {
+        equilibrium.DissipationGradient.CopyTo(gradient);
+        byProgress = equilibrium.DissipationByProgress;
+        return equilibrium.Energy.SpentInLayers - target;
+    }
+}
+
+/// <summary>
 /// Arc length over watched separations: the length of their way from the accepted point (after Riks 1979 and Crisfield 1981, with a normal that follows the iterations). Only
 /// separations are watched, since they grow while travel and load may turn back together.
 /// </summary>

@@ -55,6 +55,12 @@ public interface IEquilibrium
     /// <summary>d layer work / d progress at fixed displacement (free opening by temperature) [mJ].</summary>
     double LayerWorkByProgress { get; }
 
+    /// <summary>d dissipated energy of the layers / d unknown in the tentative stride, by the latest evaluation that wanted it [N].</summary>
+    ReadOnlySpan<double> DissipationGradient { get; }
+
+    /// <summary>d dissipated energy / d progress at fixed displacement [mJ].</summary>
+    double DissipationByProgress { get; }
+
     /// <summary>Evaluates force, tangent and energies at the tentative displacement and progress.</summary>
     ResidualReport Evaluate(Wanted wanted);
 

@@ -46,6 +46,8 @@ public readonly record struct NewtonIteration(int Iteration, double OutOfBalance
 /// <param name="mostIterations">Corrections before the search gives up.</param>
 public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int mostIterations = 16)
 {
+    private const Wanted Everything = Wanted.Force | Wanted.Tangent | Wanted.LoadRate | Wanted.Dissipation;
+
     private static readonly double[] Shares = [0.5, 0.25, 0.1];
 
     private double[] _gradient = [];
@@ -58,7 +60,7 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
     {
         if (_gradient.Length != equilibrium.Displacement.Length)
             _gradient = new double[equilibrium.Displacement.Length];
-        ResidualReport residual = equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
+        ResidualReport residual = equilibrium.Evaluate(Everything);
         double correction = 0, previous = double.PositiveInfinity;
         int singular = -1, slow = 0;
         for (int iteration = 0; ; iteration++)
@@ -91,7 +93,7 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
                 return new NewtonOutcome(NewtonStatus.NotFinite, iteration, singular, residual.Relative);
             correction = solved.Largest;
             equilibrium.Move(1);
-            residual = equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
+            residual = equilibrium.Evaluate(Everything);
             if (iteration > 0 && previous > 0 && !(residual.OutOfBalance <= 1.5 * previous))
                 residual = Backtrack(equilibrium, residual);
         }
@@ -110,6 +112,6 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             bestShare = share;
         }
         equilibrium.Move(bestShare);
-        return equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
+        return equilibrium.Evaluate(Everything);
     }
 }

@@ -35,6 +35,9 @@ public enum Wanted
 
     /// <summary>Change of internal force with temperature at fixed displacement.</summary>
     LoadRate = 8,
+
+    /// <summary>Change of dissipated energy with displacement in the tentative stride.</summary>
+    Dissipation = 16,
 }
 
 /// <summary>Where an element writes; spans of the element's own size n (tangent n×n, row-major), each overwritten when wanted.</summary>
@@ -48,16 +51,20 @@ public readonly ref struct ElementBuffers
 
     /// <summary>d force / d temperature [N/K], length n.</summary>
     public required Span<double> LoadRate { get; init; }
+
+    /// <summary>d dissipated / d displacement in the tentative stride [N], length n.</summary>
+    public required Span<double> Dissipation { get; init; }
 }
 
 /// <summary>Numbers that an element reports with an evaluation.</summary>
 /// <param name="Stored">Elastic energy [mJ].</param>
 /// <param name="Dissipated">Dissipated energy since the start [mJ].</param>
 /// <param name="StoredByTemperature">d stored / d temperature at fixed displacement [mJ/K].</param>
+/// <param name="DissipatedByTemperature">d dissipated / d temperature at fixed displacement in the tentative stride [mJ/K].</param>
 /// <param name="LargestDamage">Largest damage of its points; 0 for a solid.</param>
 /// <param name="LeastDamage">Least damage of its points; 0 for a solid.</param>
 /// <param name="Growing">Whether damage grows at any of its points.</param>
-public readonly record struct ElementAnswer(double Stored, double Dissipated, double StoredByTemperature, double LargestDamage, double LeastDamage, bool Growing);
+public readonly record struct ElementAnswer(double Stored, double Dissipated, double StoredByTemperature, double DissipatedByTemperature, double LargestDamage, double LeastDamage, bool Growing);
 
 /// <summary>
 /// Elements of one kind and one material. An element has two native unknowns (ux, uy) per node, in the order of <see cref="Nodes"/>. Pure functions of the

@@ -106,13 +106,13 @@ public sealed class LayerBlock : IElementBlock
     public ElementAnswer Evaluate(int element, in PathPoint at, ReadOnlySpan<double> displacement, ReadOnlySpan<double> accepted, Span<double> tentative, Wanted wanted, in ElementBuffers into)
     {
         ReadOnlySpan<double> xy = Coordinates(element);
-        bool tangent = (wanted & Wanted.Tangent) != 0, rate = (wanted & Wanted.LoadRate) != 0;
+        bool tangent = (wanted & Wanted.Tangent) != 0, rate = (wanted & Wanted.LoadRate) != 0, dissipation = (wanted & Wanted.Dissipation) != 0;
         LayerElementSums sums = LayerElement.Evaluate(_rule, xy, displacement, _joint.Width, FreeOpening(at.Temperature), Law, new LawPoint(at.Temperature, at.TimeStride), accepted, tentative,
-            into.Force, tangent ? into.Tangent : [], [], rate ? into.LoadRate : []);
+            into.Force, tangent ? into.Tangent : [], dissipation ? into.Dissipation : [], rate ? into.LoadRate : []);
         if (rate)
             for (int i = 0; i < into.LoadRate.Length; i++)
                 into.LoadRate[i] *= _freeOpeningPerKelvin;
-        return new ElementAnswer(sums.Stored, sums.Dissipated, -_freeOpeningPerKelvin * PeelResultant(xy, into.Force), sums.LargestDamage, sums.LeastDamage, sums.Growing);
+        return new ElementAnswer(sums.Stored, sums.Dissipated, -_freeOpeningPerKelvin * PeelResultant(xy, into.Force), _freeOpeningPerKelvin * sums.DissipatedByFreeOpening, sums.LargestDamage, sums.LeastDamage, sums.Growing);
     }
 
     /// <summary>The law's answer and the separation (free opening taken off) at each integration point of an element, without changing any state.</summary>

@@ -133,8 +133,10 @@ internal sealed class SolidBlock<TElement> : SolidBlock
             k.CopyTo(into.Tangent);
         if ((wanted & Wanted.LoadRate) != 0)
             thermal.CopyTo(into.LoadRate);
+        if ((wanted & Wanted.Dissipation) != 0)
+            into.Dissipation.Clear();
         double stored = 0.5 * work + change * thermalWork + 0.5 * _blocked[element] * change * change;
-        return new ElementAnswer(stored, 0, thermalWork + _blocked[element] * change, 0, 0, false);
+        return new ElementAnswer(stored, 0, thermalWork + _blocked[element] * change, 0, 0, 0, false);
     }
 
     public override PlaneElasticity Material(int element) => _materials[element];

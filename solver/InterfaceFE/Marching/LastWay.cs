@@ -1,0 +1,69 @@
+namespace InterfaceFE.Marching;
+
+/// <summary>The way from the point before to the accepted point, in every measure that a control may continue it by.</summary>
+internal sealed class LastWay
+{
+    private readonly double[] _displacement;
+
+    public LastWay(int unknowns) => _displacement = new double[unknowns];
+
+    /// <summary>Whether there is one in this stage.</summary>
+    public bool Exists { get; private set; }
+
+    /// <summary>Way of every unknown [mm or rad].</summary>
+    public double[] Displacement => _displacement;
+
+    /// <summary>Way of the progress.</summary>
+    public double Progress { get; private set; }
+
+    /// <summary>Growth of layer work [mJ].</summary>
+    public double LayerWork { get; private set; }
+
+    /// <summary>Growth of dissipated energy [mJ].</summary>
+    public double Dissipation { get; private set; }
+
+    /// <summary>Takes the tentative way of the equilibrium, before it is accepted.</summary>
+    /// <param name="equilibrium">The tentative point.</param>
+    /// <param name="before">Energies at the accepted point.</param>
+    public void Take(FullEquilibrium equilibrium, in EnergyState before)
+    {
+        ReadOnlySpan<double> now = equilibrium.Displacement, accepted = equilibrium.AcceptedDisplacement;
+        for (int i = 0; i < _displacement.Length; i++)
+            _displacement[i] = now[i] - accepted[i];
+        Progress = equilibrium.Progress - equilibrium.AcceptedProgress;
+        Dissipation = equilibrium.Energy.SpentInLayers - before.SpentInLayers;
+        LayerWork = Dissipation + equilibrium.Energy.StoredInLayers - before.StoredInLayers;
+        Exists = true;
+    }
+
+    /// <summary>The control that goes on by a share of this way in a given measure; null where the measure did not grow on it.</summary>
+    /// <param name="measure">Measure.</param>
+    /// <param name="share">Share of the way; above 1 for a longer stride.</param>
+    /// <param name="equilibrium">The equilibrium.</param>
+    /// <param name="accepted">Energies at the accepted point.</param>
+    public IControl? Continue(PathMeasure measure, double share, FullEquilibrium equilibrium, in EnergyState accepted)
+    {
+        switch (measure)
+        {
+            case PathMeasure.LayerWork when LayerWork > 0:
+                return new LayerWorkControl(accepted.StoredInLayers + accepted.SpentInLayers + share * LayerWork, share * LayerWork);
+            case PathMeasure.Dissipation when Dissipation > 0:
+                return new DissipationControl(accepted.SpentInLayers + share * Dissipation, share * Dissipation);
+            case PathMeasure.ArcLength:
+                IReadOnlyList<(int, int)> watched = equilibrium.WatchedSeparations();
+                double[] way = (double[])_displacement.Clone();
+                double length = new ArcLengthControl(watched, way, 1).Length(way, []);
+                return length > 0 ? new ArcLengthControl(watched, way, share * length) : null;
+            default:
+                return null;
+        }
+    }
+}
+
+/// <summary>By what a stride is measured where the path may turn back.</summary>
+internal enum PathMeasure
+{
+    LayerWork,
+    Dissipation,
+    ArcLength,
+}
