@@ -12,7 +12,8 @@ public readonly record struct Arm(double Modulus, double Thickness, double Width
 /// Element length along a joint from layer and arms. With l_c = E'Γ/σ² and l_s = (l_c h³)^(1/4) in peel, (l_c h)^(1/2) in shear, the process zone is about
 /// c (1 - √r) l_c l_s/(l_c + l_s), c = 0.82 in peel and 1.0 in shear, r = elastic limit over final separation; 1 % error of the whole curve is met at
 /// zone·(0.35 + 2.2 √r) with eight-node elements. Both fits are the project's own measurements on beams in peel and flexure, r up to 0.25 (DEVELOPERS.md).
-/// A bond of width b on arms of width B counts with σ, Γ and k times b/B.
+/// A bond of width b on arms of width B counts with σ, Γ and k times b/B. Independent modes fall to zero within twice their release length, which is met on about twice that share of the zone:
+/// elements longer than half of it turn the path jagged (seen on the demo's hat, 3 mm elements against a stretch of 3 mm).
 /// </summary>
 /// <param name="OnePercent">Length for about 1 % error; for four-node elements a third of the formula (a stated, not a measured factor) [mm].</param>
 /// <param name="Zone">Estimated process zone of the mode that decides [mm].</param>
@@ -35,7 +36,8 @@ public readonly record struct JointLength(double OnePercent, double Zone, double
     /// <param name="bondWidth">Width of the bond [mm].</param>
     /// <param name="bonded">Longest bonded stretch [mm].</param>
     /// <param name="kind">Kind of element.</param>
-    public static JointLength Choose(CurveNumbers peel, CurveNumbers shear, Arm upper, Arm lower, double bondWidth, double bonded, ElementKind kind)
+    /// <param name="releaseShare">Release length of independent modes as a share of the final separation; 0 for a law without a release branch.</param>
+    public static JointLength Choose(CurveNumbers peel, CurveNumbers shear, Arm upper, Arm lower, double bondWidth, double bonded, ElementKind kind, double releaseShare)
     {
         double thinner = Math.Min(upper.Thickness, lower.Thickness);
         bool four = kind == ElementKind.FourNode;
@@ -57,6 +59,8 @@ public readonly record struct JointLength(double OnePercent, double Zone, double
             (onePercent / 2, "half the length for 1 % error"),
             (four ? thinner / 2 : thinner, four ? "half the thickness of the thinner arm" : "the thickness of the thinner arm"),
             (four ? decay / 6 : decay / 3, Text.Of($"a {(four ? "sixth" : "third")} of the elastic decay length ahead of the front, {decay:G4} mm")),
+            (releaseShare > 0 ? releaseShare * zone / (four ? 2 : 1) : double.PositiveInfinity,
+                Text.Of($"{(four ? "a quarter" : "half")} of the stretch on which modes release at fracture, about {2 * releaseShare * zone:G4} mm")),
             (LargestOn(bonded, kind), Text.Of($"{(four ? "twenty" : "ten")} elements along the bonded stretch of {bonded:G4} mm")),
         ];
         (double Length, string Reason) least = limits[0];

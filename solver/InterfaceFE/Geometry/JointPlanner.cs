@@ -87,7 +87,8 @@ internal sealed class JointPlanner
             Unbonded = unbonded,
             Bonded = bonded,
             Length = JointLength.Choose(CurveNumbers.OfPeel(joint.Layer, layer, held), CurveNumbers.OfShear(joint.Layer, layer), ArmOf(upper.Strip), ArmOf(lower.Strip),
-                width, bonded.Max(b => b.To - b.From), _deck.Model.Elements),
+                width, bonded.Max(b => b.To - b.From), _deck.Model.Elements,
+                layer.Mixing == Mixing.IndependentModes ? layer.ReleaseLength : 0),
         };
     }
 

@@ -72,8 +72,8 @@ public class JointLengthTests
         CurveNumbers full = new(20, 0.5, 1e4, 2e-3, 0.05);
         CurveNumbers half = new(10, 0.25, 5e3, 2e-3, 0.05);
         Arm arm = new(70e3, 5, 20);
-        JointLength narrow = JointLength.Choose(full, full, arm, arm, 10, 100, ElementKind.EightNode);
-        JointLength weak = JointLength.Choose(half, half, arm, arm, 20, 100, ElementKind.EightNode);
+        JointLength narrow = JointLength.Choose(full, full, arm, arm, 10, 100, ElementKind.EightNode, 0);
+        JointLength weak = JointLength.Choose(half, half, arm, arm, 20, 100, ElementKind.EightNode, 0);
         Close.To(weak.OnePercent, narrow.OnePercent);
         Close.To(weak.Zone, narrow.Zone);
         Close.To(weak.Default, narrow.Default);
@@ -86,8 +86,8 @@ public class JointLengthTests
         CurveNumbers brittle = new(60, 0.15, 1e6, 6e-5, 5e-3);
         CurveNumbers tough = new(20, 3, 1e4, 2e-3, 0.3);
         Arm arm = new(210e3, 5, 20);
-        Assert.Equal("peel", JointLength.Choose(brittle, tough, arm, arm, 20, 100, ElementKind.EightNode).Mode);
-        Assert.Equal("shear", JointLength.Choose(tough, brittle, arm, arm, 20, 100, ElementKind.EightNode).Mode);
+        Assert.Equal("peel", JointLength.Choose(brittle, tough, arm, arm, 20, 100, ElementKind.EightNode, 0).Mode);
+        Assert.Equal("shear", JointLength.Choose(tough, brittle, arm, arm, 20, 100, ElementKind.EightNode, 0).Mode);
     }
 
     [Fact]
@@ -95,10 +95,10 @@ public class JointLengthTests
     {
         CurveNumbers curve = new(20, 0.5, 1e4, 2e-3, 0.05);
         Arm steel = new(210e3, 5, 20);
-        double even = JointLength.Choose(curve, curve, steel, steel, 20, 100, ElementKind.EightNode).OnePercent;
-        Assert.True(JointLength.Choose(curve, curve, steel, steel with { Modulus = 20e3 }, 20, 100, ElementKind.EightNode).OnePercent < even);
-        Assert.True(JointLength.Choose(curve, curve, steel, steel with { Thickness = 2 }, 20, 100, ElementKind.EightNode).OnePercent < even);
-        Close.To(even, JointLength.Choose(curve, curve, steel, steel with { Thickness = 50 }, 20, 100, ElementKind.EightNode).OnePercent);
+        double even = JointLength.Choose(curve, curve, steel, steel, 20, 100, ElementKind.EightNode, 0).OnePercent;
+        Assert.True(JointLength.Choose(curve, curve, steel, steel with { Modulus = 20e3 }, 20, 100, ElementKind.EightNode, 0).OnePercent < even);
+        Assert.True(JointLength.Choose(curve, curve, steel, steel with { Thickness = 2 }, 20, 100, ElementKind.EightNode, 0).OnePercent < even);
+        Close.To(even, JointLength.Choose(curve, curve, steel, steel with { Thickness = 50 }, 20, 100, ElementKind.EightNode, 0).OnePercent);
     }
 
     [Fact]
@@ -156,5 +156,17 @@ public class JointLengthTests
         Deck deck = Deck(
             new() { ["a"] = Rectangle(0, 0, 100, 2), ["b"] = Rectangle(0, 2, 100, 2, width: 15) }, new() { ["j"] = Joint("bottom of b", "top of a") });
         MeshFacts.Refused(deck, "joints.j.width", "20 mm wide, is wider than \"b\", 15 mm", "the model's");
+    }
+
+    [Fact]
+    public void Independent_modes_need_elements_of_half_the_stretch_on_which_they_release()
+    {
+        var curve = new CurveNumbers(0.5, 1.9, 2, 0.2, 5.2);
+        var arm = new Arm(70e3, 3, 20);
+        JointLength plain = JointLength.Choose(curve, curve, arm, arm, 20, 1000, ElementKind.EightNode, 0);
+        JointLength released = JointLength.Choose(curve, curve, arm, arm, 20, 1000, ElementKind.EightNode, 0.05);
+        Close.To(0.05 * released.Zone, released.Default);
+        Assert.True(released.Default < plain.Default);
+        Close.To(0.5 * released.Default, JointLength.Choose(curve, curve, arm, arm, 20, 1000, ElementKind.FourNode, 0.05).Default);
     }
 }
