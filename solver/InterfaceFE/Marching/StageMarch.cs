@@ -4,8 +4,8 @@ using InterfaceFE.Model;
 namespace InterfaceFE.Marching;
 
 /// <summary>
-/// The march through one stage. It starts under the stage's own control. When a stride fails twice, or an accepted equilibrium is unstable, a path control takes over: layer work (or arc length,
-/// if so set), and where that fails the other measures in turn. It is left again after some calm points. Each stride is a share of the last way; the share follows iterations and energy error.
+/// The march through one stage. It starts under the stage's own control. When a stride fails twice, or an accepted equilibrium is unstable, a path control takes over: layer work, dissipated energy or arc length,
+/// and where one fails the others in turn. It is left again after some calm points. Each stride is a share of the last way; the share follows iterations and energy error.
 /// </summary>
 internal sealed class StageMarch
 {
@@ -14,6 +14,7 @@ internal sealed class StageMarch
     private const int Rounds = 3;
     private const double Shorter = 0.4;
     private const double ShorterRound = 0.03;
+    private const double FairPart = 0.2;
     private const double AllowedOverAim = 4;
     private const double LastBondShare = 0.03;
     private const double Thread = 1e-6;
@@ -30,7 +31,6 @@ internal sealed class StageMarch
     private readonly double _timeAtStart;
     private readonly int _bodiesAtStart;
     private readonly LastWay _way;
-    private readonly PathMeasure[] _measures;
     private EnergyState _accepted;
     private double _furthest, _largestLoad, _ownStride, _share = 1;
     private bool _onPath;
@@ -48,9 +48,6 @@ internal sealed class StageMarch
         _timeAtStart = time;
         _bodiesAtStart = bodiesAtStart;
         _way = new LastWay(equilibrium.Displacement.Length);
-        _measures = settings.Path == PathControl.ArcLength
-            ? [PathMeasure.ArcLength, PathMeasure.Dissipation, PathMeasure.LayerWork]
-            : [PathMeasure.LayerWork, PathMeasure.Dissipation, PathMeasure.ArcLength];
         _ownStride = Math.Min(settings.FirstStride, settings.LargestStride);
     }
 
@@ -82,11 +79,23 @@ internal sealed class StageMarch
         return new MarchOutcome(MarchStatus.Finished, "");
     }
 
+    /// <summary>
+    /// Measures to try, the best first. Layer work is the best while damage begins; it has turning points of its own where the rest of the bond gives back more than the front takes, so that
+    /// dissipated energy, which never falls, is taken once it makes up a fair part of the layer work.
+    /// </summary>
+    private PathMeasure[] Measures()
+    {
+        if (_settings.Path == PathControl.ArcLength)
+            return [PathMeasure.ArcLength, PathMeasure.Dissipation, PathMeasure.LayerWork];
+        return _way.Dissipation > FairPart * Math.Abs(_way.LayerWork)
+            ? [PathMeasure.Dissipation, PathMeasure.LayerWork, PathMeasure.ArcLength]
+            : [PathMeasure.LayerWork, PathMeasure.Dissipation, PathMeasure.ArcLength];
+    }
+
     /// <summary>Finds and accepts the next point; null when it did.</summary>
     private MarchOutcome? Next(CancellationToken cancellation)
     {
         _retry = 0;
-        bool wasOnPath = _onPath;
         double share = _share, stride = _ownStride;
         string failure = "";
         for (int round = 0; round < Rounds; round++)
@@ -98,47 +107,42 @@ internal sealed class StageMarch
                 {
                     if (Cancelled(cancellation) is { } cancelled)
                         return cancelled;
-                    if (Accepted(TryOwn(stride), ref failure))
+                    Attempt attempt = TryOwn(stride);
+                    if (attempt.Good)
                     {
-                        Leave("layer work and the other measures find no way on");
+                        Leave("no measure of the path finds a way on");
+                        Accept(attempt);
                         return null;
                     }
+                    failure = attempt.Failure;
+                    _retry++;
                 }
                 if (!PathCanTakeOver)
                     break;
             }
-            foreach (PathMeasure measure in _measures)
+            foreach (PathMeasure measure in Measures())
             {
                 double tried = share * Math.Pow(ShorterRound, round);
                 for (int i = 0; i < TriesOfMeasure; i++, tried *= Shorter)
                 {
                     if (Cancelled(cancellation) is { } cancelled)
                         return cancelled;
-                    IControl? control = _way.Continue(measure, tried, _equilibrium, _accepted);
-                    if (control is null)
+                    if (_way.Continue(measure, tried, _equilibrium, _accepted) is not { } control)
                         break;
-                    string why = failure;
-                    if (!Accepted(TryPath(control, tried), ref failure))
-                        continue;
-                    if (!wasOnPath)
-                        TakePath(control.Name, why);
-                    return null;
+                    Attempt attempt = TryPath(control, tried);
+                    if (attempt.Good)
+                    {
+                        if (!_onPath)
+                            TakePath(control.Name, failure);
+                        Accept(attempt);
+                        return null;
+                    }
+                    failure = attempt.Failure;
+                    _retry++;
                 }
             }
         }
         return GiveUp();
-    }
-
-    private bool Accepted(Attempt attempt, ref string failure)
-    {
-        _retry++;
-        if (!attempt.Good)
-        {
-            failure = attempt.Failure;
-            return false;
-        }
-        Accept(attempt);
-        return true;
     }
 
     private MarchOutcome? Cancelled(CancellationToken cancellation)
@@ -222,7 +226,7 @@ internal sealed class StageMarch
             _ownStride = Math.Min(_way.Progress * _share, _settings.LargestStride);
         if (!_onPath)
         {
-            if (_unstable > 0 && PathCanTakeOver && _way.Continue(_measures[0], 1, _equilibrium, _accepted) is { } control)
+            if (_unstable > 0 && PathCanTakeOver && _way.Continue(Measures()[0], 1, _equilibrium, _accepted) is { } control)
                 TakePath(control.Name, "the equilibrium is unstable under the stage's own control");
             return;
         }
