@@ -18,6 +18,7 @@ internal sealed class StageMarch
     private const double AllowedOverAim = 4;
     private const double LastBondShare = 0.03;
     private const double Thread = 1e-6;
+    private const int MostByThread = 3;
     private const double AlmostSeparated = 1 - 1e-3;
     private const int CalmAtFirst = 3;
     private const int CalmAtMost = 48;
@@ -34,7 +35,7 @@ internal sealed class StageMarch
     private EnergyState _accepted;
     private double _furthest, _largestLoad, _ownStride, _share = 1;
     private bool _onPath;
-    private int _calmPoints, _calmNeeded = CalmAtFirst, _unstable, _retry;
+    private int _calmPoints, _calmNeeded = CalmAtFirst, _unstable, _retry, _pointsByThread;
 
     public StageMarch(FullEquilibrium equilibrium, MarchSettings settings, IMarchObserver observer, EnergyLedger ledger, LoadStage stage, int point, double time, int bodiesAtStart)
     {
@@ -265,8 +266,8 @@ internal sealed class StageMarch
     }
 
     /// <summary>
-    /// Whether the specimen came apart: by points that are separated, or hanging by a thread, points that carry less than a thousandth while the grips carry less than a millionth of
-    /// what they did.
+    /// Whether the specimen came apart: by points that are separated, or hanging by a thread for some points on end, where the bond carries less than a thousandth and the grips less than a
+    /// millionth of what they did.
     /// </summary>
     private bool Severed()
     {
@@ -277,7 +278,9 @@ internal sealed class StageMarch
             if (_equilibrium.Model.Unknowns.IsRoot[_equilibrium.Model.Unknowns.VertexOfUnknown[i]])
                 load = Math.Max(load, Math.Abs(_equilibrium.ExternalForce(i)));
         _largestLoad = Math.Max(_largestLoad, load);
-        return load < Thread * _largestLoad && _equilibrium.Connections(AlmostSeparated).Bodies > _bodiesAtStart;
+        bool thread = load < Thread * _largestLoad && _equilibrium.Connections(AlmostSeparated).Bodies > _bodiesAtStart;
+        _pointsByThread = thread ? _pointsByThread + 1 : 0;
+        return _pointsByThread > MostByThread;
     }
 
     private static MarchOutcome Stop(string cause) => new(MarchStatus.StoppedEarly, cause);
