@@ -44,6 +44,7 @@ public static class DeckCheck
         MeshingResult meshing = Mesher.Build(deck);
         SpecimenModel model = ModelBuilder.Build(deck, meshing.Mesh);
         _ = new GaugeReader(deck, meshing.Mesh);
+        FreeMovement.Refuse(model);
         var equilibrium = new FullEquilibrium(model);
         if (Loose(equilibrium) is { } loose)
             return Fail(ExitCode.WrongDeckOrCall, [loose]);

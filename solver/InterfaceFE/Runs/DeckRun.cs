@@ -28,6 +28,7 @@ public static class DeckRun
         long start = Stopwatch.GetTimestamp();
         MeshingResult meshing = Mesher.Build(deck);
         SpecimenModel model = ModelBuilder.Build(deck, meshing.Mesh);
+        FreeMovement.Refuse(model);
         var gauges = new GaugeReader(deck, meshing.Mesh);
         RunHistory history = Heading(deck, model, gauges);
         IRecordSink sink = makeSink?.Invoke(history) ?? new NoSink();
