@@ -61,6 +61,9 @@ public interface IEquilibrium
     /// <summary>d dissipated energy / d progress at fixed displacement [mJ].</summary>
     double DissipationByProgress { get; }
 
+    /// <summary>Energies less the work of given forces up to the tentative displacement, by the latest evaluation [mJ]: lowest at a stable equilibrium while the progress is given.</summary>
+    double Potential { get; }
+
     /// <summary>Evaluates force, tangent and energies at the tentative displacement and progress.</summary>
     ResidualReport Evaluate(Wanted wanted);
 
@@ -69,6 +72,9 @@ public interface IEquilibrium
 
     /// <summary>Solves for a correction of displacement and progress by the latest tangents and the control.</summary>
     Correction Solve(IControl control);
+
+    /// <summary>Work of the force out of balance along the latest solved correction, by the latest evaluation [mJ].</summary>
+    double WorkAlongCorrection();
 
     /// <summary>Applies a share of the solved correction to the displacement and progress it started from.</summary>
     void Move(double share);
