@@ -46,6 +46,9 @@ public readonly record struct NewtonIteration(int Iteration, double OutOfBalance
 /// <param name="mostIterations">Corrections before the search gives up.</param>
 public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int mostIterations = 16)
 {
+    private const double WorkTolerance = 1e-10;
+    private const int MostPolishing = 2;
+
     private static readonly double[] Shares = [0.5, 0.25, 0.1];
 
     private double[] _gradient = [];
@@ -60,7 +63,7 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             _gradient = new double[equilibrium.Displacement.Length];
         ResidualReport residual = equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
         double correction = 0, previous = double.PositiveInfinity;
-        int singular = -1, slow = 0;
+        int singular = -1, slow = 0, polishing = 0;
         for (int iteration = 0; ; iteration++)
         {
             if (!residual.Finite)
@@ -73,12 +76,16 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             bool controlled = control.FixesProgress || controlError <= controlTolerance;
             bool balanced = residual.Relative <= tolerance && residual.HeldInPlace;
             bool atFloor = !balanced && residual.HeldInPlace && controlled && slow >= 1 && residual.OutOfBalance <= equilibrium.ResidualFloor();
-            if (controlled && (balanced || atFloor))
+            // In a slender part small forces out of balance may go with a travel whose error the account of energy would show: such a point is corrected once or twice more.
+            bool polishes = balanced && residual.WorkShare > WorkTolerance && polishing < MostPolishing && iteration < mostIterations;
+            if (controlled && (balanced || atFloor) && !polishes)
             {
                 report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, atFloor ? "converged at the floor" : "converged"));
                 return new NewtonOutcome(atFloor ? NewtonStatus.AtFloor : NewtonStatus.Converged, iteration, singular, residual.Relative);
             }
-            if (iteration >= mostIterations || slow >= 6)
+            if (controlled && polishes)
+                polishing++;
+            if (iteration >= mostIterations || (slow >= 6 && !polishes))
             {
                 report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, "stalled"));
                 return new NewtonOutcome(NewtonStatus.Stalled, iteration, singular, residual.Relative);
