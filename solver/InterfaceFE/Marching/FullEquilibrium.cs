@@ -256,13 +256,15 @@ public sealed class FullEquilibrium : IEquilibrium
         LayerWorkByProgress = layersByTemperature * (_temperatureEnd - _temperatureStart);
         DissipationByProgress = dissipatedByTemperature * (_temperatureEnd - _temperatureStart);
 
-        double worst = 0, reference = 0;
+        double worst = 0, reference = 0, workOut = 0, workAll = 0;
         bool finite = true;
         for (int i = 0; i < _internal.Length; i++)
         {
-            double difference = _isHeld[i] ? 0 : Math.Abs(_external[i] - _internal[i]);
+            double difference = _isHeld[i] ? 0 : _external[i] - _internal[i], way = _u[i] - _accepted[i];
             finite &= double.IsFinite(_internal[i]);
-            worst = Math.Max(worst, difference);
+            workOut += difference * way;
+            workAll += Math.Abs(_internal[i] * way);
+            worst = Math.Max(worst, Math.Abs(difference));
             reference = Math.Max(reference, Math.Max(_magnitudes[i], Math.Abs(_external[i])));
         }
         bool inPlace = true;
@@ -271,7 +273,7 @@ public sealed class FullEquilibrium : IEquilibrium
             int h = _heldUnknowns[i];
             inPlace &= Math.Abs(_held[h] - _u[h]) <= 1e-13 * Math.Max(Math.Abs(_held[h]), Math.Abs(_heldEnd[i] - _heldStart[i]));
         }
-        return new ResidualReport(worst, reference, finite, inPlace, changed);
+        return new ResidualReport(worst, reference, finite, inPlace, changed, workAll > 0 ? Math.Abs(workOut) / workAll : 0);
     }
 
     /// <inheritdoc/>

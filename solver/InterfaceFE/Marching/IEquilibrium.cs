@@ -8,7 +8,8 @@ namespace InterfaceFE.Marching;
 /// <param name="Finite">Whether every number is finite.</param>
 /// <param name="HeldInPlace">Whether every held unknown stands where the progress wants it.</param>
 /// <param name="ChangedElements">Elements whose tangent differs from the one in the factor; 0 unless tangents were wanted.</param>
-public readonly record struct ResidualReport(double OutOfBalance, double Reference, bool Finite, bool HeldInPlace, int ChangedElements)
+/// <param name="WorkShare">Work of the forces out of balance on the way from the accepted point, over the sum of magnitudes of the internal forces' work on it; 0 for no way.</param>
+public readonly record struct ResidualReport(double OutOfBalance, double Reference, bool Finite, bool HeldInPlace, int ChangedElements, double WorkShare = 0)
 {
     /// <summary>Out of balance over reference; 0 when nothing carries force.</summary>
     public double Relative => Reference > 0 ? OutOfBalance / Reference : 0;

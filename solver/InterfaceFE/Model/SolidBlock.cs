@@ -121,12 +121,14 @@ internal sealed class SolidBlock<TElement> : SolidBlock
         double change = at.Temperature - StressFreeTemperature;
         ReadOnlySpan<double> k = _stiffness.AsSpan(element * n * n, n * n);
         ReadOnlySpan<double> thermal = _thermal.AsSpan(element * n, n);
+        Span<double> strained = stackalloc double[n];
+        TakeRigidMovementOff(element, displacement, strained);
         double work = 0, thermalWork = 0;
         for (int i = 0; i < n; i++)
         {
-            double sum = Dot(k.Slice(i * n, n), displacement);
-            work += displacement[i] * sum;
-            thermalWork += displacement[i] * thermal[i];
+            double sum = Dot(k.Slice(i * n, n), strained);
+            work += strained[i] * sum;
+            thermalWork += strained[i] * thermal[i];
             into.Force[i] = sum + thermal[i] * change;
         }
         if ((wanted & Wanted.Tangent) != 0)
@@ -154,6 +156,23 @@ internal sealed class SolidBlock<TElement> : SolidBlock
 
     public override void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues) =>
         TElement.ExtrapolateToNodes(components, gaussValues, nodeValues);
+
+    /// <summary>
+    /// Displacement less a rigid movement: that of the first node and the turn of the diagonal. It strains nothing, so forces stay the same; their rounding then grows with the
+    /// strain and not with the travel, which in slender arms is ten thousand times as large.
+    /// </summary>
+    private void TakeRigidMovementOff(int element, ReadOnlySpan<double> displacement, Span<double> strained)
+    {
+        ReadOnlySpan<double> xy = Coordinates(element);
+        double x = xy[0], y = xy[1], u = displacement[0], v = displacement[1];
+        double alongX = xy[4] - x, alongY = xy[5] - y;
+        double turn = (alongX * (displacement[5] - v) - alongY * (displacement[4] - u)) / (alongX * alongX + alongY * alongY);
+        for (int i = 0; i < strained.Length; i += 2)
+        {
+            strained[i] = displacement[i] - u + turn * (xy[i + 1] - y);
+            strained[i + 1] = displacement[i + 1] - v - turn * (xy[i] - x);
+        }
+    }
 
     private ReadOnlySpan<double> Coordinates(int element) => _coordinates.AsSpan(element * TElement.Unknowns, TElement.Unknowns);
 
