@@ -80,7 +80,7 @@ public sealed class FolderRun
             summary.Cause = "a file of the results could not be written: " + fault;
         }
         string file = Path.Join(_folder, "summary.json");
-        sink.Put(() => SummaryWriter.Write(file, summary));
+        sink.Try(() => SummaryWriter.Write(file, summary));
         long start = Stopwatch.GetTimestamp();
         if (result.History.Points.Count > 1)
         {
@@ -89,7 +89,7 @@ public sealed class FolderRun
                 sink.Log("figure: " + message);
         }
         summary.WallSeconds["figures"] = Stopwatch.GetElapsedTime(start).TotalSeconds;
-        sink.Put(() => SummaryWriter.Write(file, summary));
+        sink.Try(() => SummaryWriter.Write(file, summary));
         sink.Log(log => SummaryText.Write(summary, log));
     }
 }

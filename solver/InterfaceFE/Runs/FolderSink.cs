@@ -102,19 +102,18 @@ internal sealed class FolderSink : IRecordSink, IDisposable
         }
     }
 
-    /// <summary>Does a piece of writing; a refusal of the disk is kept, and the run is asked to stop.</summary>
-    public void Put(Action write)
+    /// <summary>Does a piece of writing, a small one that is worth a try even on a disk that refused another; a refusal is kept, and the run is asked to stop.</summary>
+    public void Try(Action write)
     {
-        if (Fault is not null)
-            return;
         try
         {
             write();
         }
         catch (Exception e) when (e is IOException or UnauthorizedAccessException)
         {
-            Fault = e.Message.ReplaceLineEndings(" ");
-            Say("a file of the results could not be written: " + Fault);
+            string reason = e.Message.ReplaceLineEndings(" ");
+            Fault ??= reason;
+            Say("a file of the results could not be written: " + reason);
             _stop.Cancel();
         }
     }
@@ -136,6 +135,12 @@ internal sealed class FolderSink : IRecordSink, IDisposable
             Quietly(files.Dispose);
         if (_log is { } log)
             Quietly(log.Dispose);
+    }
+
+    private void Put(Action write)
+    {
+        if (Fault is null)
+            Try(write);
     }
 
     private static void Quietly(Action action)
