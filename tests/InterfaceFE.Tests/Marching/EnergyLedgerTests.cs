@@ -44,7 +44,7 @@ public class EnergyLedgerTests
     [Fact]
     public void Path_error_sees_a_law_whose_energies_do_not_belong_to_its_tractions_and_balance_does_not()
     {
-        Deck deck = DeckOf.Yaml(DeckOf.Blocks("  - fix: {base: [x, y, rotation], head: [x, rotation]}\n  - pull: {grip: head, along: +y, travel: 0.02 mm}"));
+        Deck deck = DeckOf.Yaml(DeckOf.Blocks("  - fix: {base: [x, y, rotation], head: [x, rotation]}\n  - pull: {grip: head, along: +y, travel: 0.04 mm}"));
         foreach (bool stored in (ReadOnlySpan<bool>)[true, false])
         {
             (FullEquilibrium equilibrium, EnergyAccount account) = MarchWithLaw(deck, law => new Sabotaged(law, stored ? 0.05 : 0, stored ? 0 : 0.05));

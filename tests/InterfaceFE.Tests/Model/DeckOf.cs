@@ -47,8 +47,8 @@ internal static class DeckOf
         layers:
           glue: {{{layer}}}
         adherends:
-          lower: {of: stuff, rectangle: {corner: [0 mm, 0 mm], size: [6 mm, 2 mm]}, elements: {along: 3, through: 1}}
-          upper: {of: other, rectangle: {corner: [0 mm, 2 mm], size: [6 mm, 2 mm]}, elements: {along: 3, through: 1}}
+          lower: {of: stuff, rectangle: {corner: [0 mm, 0 mm], size: [6 mm, 2 mm]}, elements: {along: 3, through: 2}}
+          upper: {of: other, rectangle: {corner: [0 mm, 2 mm], size: [6 mm, 2 mm]}, elements: {along: 3, through: 2}}
         joints:
           bond: {layer: glue, upper: bottom of upper, lower: top of lower, element length: 2 mm}
         grips:

@@ -10,20 +10,20 @@ public class GripPlannerTests
     [Fact]
     public void A_pin_is_the_point_nearest_to_its_place()
     {
-        (IReadOnlyList<GripBody> bodies, Mesh mesh) = Plan("  pin: {on: right end of upper, at: end}");
+        (IReadOnlyList<GripBody> bodies, Mesh mesh) = Plan("  pin: {on: right end of upper, at: start}");
         GripBody pin = bodies[2];
         Assert.False(pin.Rigid);
-        Assert.Equal((6.0, 4.0), (mesh.X[Assert.Single(pin.Nodes)], mesh.Y[pin.Nodes[0]]));
+        Assert.Equal((6.0, 2.0), (mesh.X[Assert.Single(pin.Nodes)], mesh.Y[pin.Nodes[0]]));
     }
 
     [Fact]
     public void A_stretch_is_one_rigid_body_with_its_pin_in_the_middle()
     {
-        (IReadOnlyList<GripBody> bodies, Mesh mesh) = Plan("  block: {on: left end of lower, from: 0.5 mm, to: 2 mm}", "base: {on: right end of lower}");
+        (IReadOnlyList<GripBody> bodies, Mesh mesh) = Plan("  block: {on: left end of lower, from: 1 mm, to: 2 mm}", "base: {on: right end of lower}");
         GripBody block = bodies[2];
         Assert.True(block.Rigid);
-        Assert.Equal((0.0, 1.25), (block.PinX, block.PinY));
-        Assert.Equal(0.5, mesh.Y[block.Nodes[0]]);
+        Assert.Equal((0.0, 1.5), (block.PinX, block.PinY));
+        Assert.Equal(1.0, mesh.Y[block.Nodes[0]]);
         Assert.Equal(2.0, mesh.Y[block.Nodes[^1]]);
     }
 
@@ -39,7 +39,7 @@ public class GripPlannerTests
 
     [Theory]
     [InlineData("  side: {on: left end of lower}", "grips.side.on", "rigid")]
-    [InlineData("  pin: {on: bottom of lower, at: middle}", "grips.pin.on", "each point")]
+    [InlineData("  pin: {on: bottom of lower, at: 2 mm}", "grips.pin.on", "each point")]
     [InlineData("  block: {on: bottom of lower, pin: [0 mm, 0 mm]}", "grips.block.on", "same pin")]
     [InlineData("  pin: {on: left end of upper, at: 2.5 mm}", "grips.pin.at", "2 mm long")]
     [InlineData("  block: {on: left end of upper, from: 0 mm, to: 3 mm}", "grips.block.to", "3 mm")]
@@ -54,7 +54,7 @@ public class GripPlannerTests
     [Fact]
     public void Points_may_overlap_points_and_be_fixed_each()
     {
-        Deck deck = DeckOf.Yaml(DeckOf.Blocks("  - fix: {edge: [x]}\n  - wait: 1 s", moreGrips: "  edge: {on: left end of upper, from: 0 mm, to: 1 mm, hold: each point}\n  pin: {on: left end of upper, at: 0.5 mm}"));
+        Deck deck = DeckOf.Yaml(DeckOf.Blocks("  - fix: {edge: [x]}\n  - wait: 1 s", moreGrips: "  edge: {on: left end of upper, from: 0 mm, to: 1 mm, hold: each point}\n  pin: {on: left end of upper, at: 1 mm}"));
         SpecimenModel model = DeckOf.Model(deck);
         Grip edge = model.Grips.First(g => g.Name == "edge");
         GripBody body = model.Unknowns.Bodies[edge.Bodies[0]];
