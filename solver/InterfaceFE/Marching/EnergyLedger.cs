@@ -17,10 +17,14 @@ public sealed class EnergyLedger
 {
     private const double SmallShare = 0.02;
 
+    /// <summary>Relative errors above these are compared with rounding: a path that costs no energy leaves nothing but rounding to divide by.</summary>
+    private const double DoubtfulError = 1e-3, DoubtfulBalance = 1e-10;
+
     private readonly FullEquilibrium _equilibrium;
     private readonly double[] _displacement, _internal, _external;
     private EnergyState _energy;
     private double _temperature, _putIn, _thermal, _internalWork, _magnitude, _turnover;
+    private int _strides;
 
     /// <summary>Opens the account at the accepted point; the equilibrium must have been evaluated there.</summary>
     public EnergyLedger(FullEquilibrium equilibrium)
@@ -44,7 +48,7 @@ public sealed class EnergyLedger
         Stride stride = Measure();
         double error = Math.Abs(stride.PutIn + stride.Thermal - (_equilibrium.Energy.Total - _energy.Total));
         double turnover = Math.Max(stride.Turnover, SmallShare * (_turnover + stride.Turnover));
-        return turnover > 0 ? error / turnover : 0;
+        return Relative(error, turnover, DoubtfulError, 1);
     }
 
     /// <summary>Books the tentative stride; to be called when the march accepts it.</summary>
@@ -56,6 +60,7 @@ public sealed class EnergyLedger
         _internalWork += stride.Internal;
         _magnitude += stride.Magnitude;
         _turnover += stride.Turnover;
+        _strides++;
         ReadOnlySpan<double> u = _equilibrium.Displacement;
         u.CopyTo(_displacement);
         _equilibrium.InternalForce.CopyTo(_internal);
@@ -69,10 +74,16 @@ public sealed class EnergyLedger
     /// <summary>The account as it stands.</summary>
     public EnergyAccount Account()
     {
-        double scale = Math.Max(_magnitude, _turnover);
-        double balance = scale > 0 ? Math.Abs(_putIn - _internalWork) / scale : 0;
-        double pathError = _turnover > 0 ? Math.Abs(_putIn + _thermal - _energy.Total) / _turnover : 0;
+        double balance = Relative(Math.Abs(_putIn - _internalWork), Math.Max(_magnitude, _turnover), DoubtfulBalance, _strides);
+        double pathError = Relative(Math.Abs(_putIn + _thermal - _energy.Total), _turnover, DoubtfulError, _strides);
         return new EnergyAccount(_putIn, _thermal, _energy, balance, pathError);
+    }
+
+    /// <summary>Error over scale; 0 without scale, or where a doubtful ratio is one of rounding over rounding.</summary>
+    private double Relative(double error, double scale, double doubtful, int strides)
+    {
+        double relative = scale > 0 ? error / scale : 0;
+        return relative > doubtful && error <= strides * _equilibrium.EnergyFloor() ? 0 : relative;
     }
 
     private Stride Measure()

@@ -10,6 +10,10 @@ namespace InterfaceFE.Marching;
 public sealed class FullEquilibrium : IEquilibrium
 {
     private const double SkewTolerance = 1e-12;
+    private const double Rounding = 50.0 / (1L << 52);
+
+    /// <summary>Share of the largest reference of the run below which the reference does not fall: after full unloading only rounding is left to measure by.</summary>
+    private const double LeastReference = 1e-3;
 
     /// <summary>Damage from which a point counts as separated; what it still carries is lost in the tolerance of equilibrium.</summary>
     public const double Separated = 1 - 1e-9;
@@ -30,7 +34,7 @@ public sealed class FullEquilibrium : IEquilibrium
     private int[] _heldUnknowns = [];
     private double[] _heldStart = [], _heldEnd = [];
     private readonly double[] _externalStart, _externalEnd;
-    private double _temperatureStart, _temperatureEnd, _baseProgress, _correctionProgress;
+    private double _temperatureStart, _temperatureEnd, _baseProgress, _correctionProgress, _reference, _largestReference;
     private int _skewCount;
     private bool _factored, _generalFactored;
     private FactorOutcome _outcome;
@@ -273,29 +277,28 @@ public sealed class FullEquilibrium : IEquilibrium
             int h = _heldUnknowns[i];
             inPlace &= Math.Abs(_held[h] - _u[h]) <= 1e-13 * Math.Max(Math.Abs(_held[h]), Math.Abs(_heldEnd[i] - _heldStart[i]));
         }
-        return new ResidualReport(worst, reference, finite, inPlace, changed, workAll > 0 ? Math.Abs(workOut) / workAll : 0);
+        _reference = reference;
+        return new ResidualReport(worst, Math.Max(reference, LeastReference * _largestReference), finite, inPlace, changed, workAll > 0 ? Math.Abs(workOut) / workAll : 0);
     }
 
     /// <inheritdoc/>
     public double ResidualFloor()
     {
-        Array.Clear(_rightSide);
-        for (int slot = 0; slot < _table.SlotCount; slot++)
-        {
-            ReadOnlySpan<int> ids = _table.Pattern.Unknowns(slot);
-            double[] k = _slotTangents[slot];
-            for (int i = 0; i < ids.Length; i++)
-            {
-                double sum = 0;
-                for (int j = 0; j < ids.Length; j++)
-                    sum += Math.Abs(k[i * ids.Length + j] * _u[ids[j]]);
-                _rightSide[ids[i]] += sum;
-            }
-        }
+        StiffnessTimesDisplacement();
         double largest = 0;
         foreach (double value in _rightSide)
             largest = Math.Max(largest, value);
-        return 50 * Math.ScaleB(1, -52) * largest;
+        return Rounding * largest;
+    }
+
+    /// <summary>Energy below which rounding rules [mJ]: 50 units of rounding of displacement times stiffness times displacement, magnitudes throughout.</summary>
+    public double EnergyFloor()
+    {
+        StiffnessTimesDisplacement();
+        double sum = 0;
+        for (int i = 0; i < _rightSide.Length; i++)
+            sum += _rightSide[i] * Math.Max(Math.Abs(_u[i]), Math.Abs(_accepted[i]));
+        return Rounding * sum;
     }
 
     /// <inheritdoc/>
@@ -381,6 +384,7 @@ public sealed class FullEquilibrium : IEquilibrium
         Array.Copy(_u, _accepted, _u.Length);
         AcceptedProgress = Progress;
         AcceptedTemperature = Temperature;
+        _largestReference = Math.Max(_largestReference, _reference);
         _state.Accept();
     }
 
@@ -458,6 +462,27 @@ public sealed class FullEquilibrium : IEquilibrium
 
     /// <summary>State of a layer element at the accepted point.</summary>
     public ReadOnlySpan<double> AcceptedLayerState(int joint, int element) => _state.Accepted(_table.FirstLayerBlock + joint, element);
+
+    /// <summary>
+    /// |K|·|u| into the right side, with the larger of the tentative and the accepted displacement: the tentative one is the accepted one plus a change and carries its rounding, also where
+    /// the path leads back to nothing.
+    /// </summary>
+    private void StiffnessTimesDisplacement()
+    {
+        Array.Clear(_rightSide);
+        for (int slot = 0; slot < _table.SlotCount; slot++)
+        {
+            ReadOnlySpan<int> ids = _table.Pattern.Unknowns(slot);
+            double[] k = _slotTangents[slot];
+            for (int i = 0; i < ids.Length; i++)
+            {
+                double sum = 0;
+                for (int j = 0; j < ids.Length; j++)
+                    sum += Math.Abs(k[i * ids.Length + j]) * Math.Max(Math.Abs(_u[ids[j]]), Math.Abs(_accepted[ids[j]]));
+                _rightSide[ids[i]] += sum;
+            }
+        }
+    }
 
     private static int Root(int[] parent, int i)
     {

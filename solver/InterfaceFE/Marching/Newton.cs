@@ -56,6 +56,7 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
 
     /// <summary>Changes of the potential, relative, up to which a slow search is chatter of faces in contact; a fall to another equilibrium, left to the march's control, is far above.</summary>
     private const double Chatter = 1e-6;
+
     private const double WorkTolerance = 1e-10;
     private const int MostPolishing = 2;
 

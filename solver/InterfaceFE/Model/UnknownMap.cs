@@ -27,21 +27,22 @@ public sealed class UnknownMap
         Array.Fill(_ofNode, -1);
         Array.Fill(_bodyOfNode, -1);
 
-        var gripped = new bool[mesh.NodeCount];
+        var grippedBy = new int[mesh.NodeCount];
+        Array.Fill(grippedBy, -1);
         for (int b = 0; b < bodies.Count; b++)
         {
             foreach (int node in bodies[b].Nodes)
             {
-                if (bodies[b].Rigid && (_bodyOfNode[node] >= 0 || gripped[node]) || !bodies[b].Rigid && _bodyOfNode[node] >= 0)
+                if (bodies[b].Rigid && (_bodyOfNode[node] >= 0 || grippedBy[node] >= 0) || !bodies[b].Rigid && _bodyOfNode[node] >= 0)
                 {
-                    int other = _bodyOfNode[node] >= 0 ? _bodyOfNode[node] : b;
+                    int other = _bodyOfNode[node] >= 0 ? _bodyOfNode[node] : grippedBy[node];
                     throw new ArgumentException(string.Create(CultureInfo.InvariantCulture,
                         $"'{bodies[b].Name}' and '{bodies[other].Name}' share the point ({mesh.X[node]:G6} mm, {mesh.Y[node]:G6} mm) although one of them is rigid: a point can belong to one rigid grip only"));
                 }
                 if (bodies[b].Rigid)
                     _bodyOfNode[node] = b;
                 else
-                    gripped[node] = true;
+                    grippedBy[node] = b;
             }
         }
 
@@ -84,7 +85,7 @@ public sealed class UnknownMap
                 _ofNode[node] = vertexOfUnknown.Count;
                 vertexOfUnknown.Add(x.Count);
                 vertexOfUnknown.Add(x.Count);
-                isRoot |= gripped[node];
+                isRoot |= grippedBy[node] >= 0;
                 isChangeable |= paired[node];
             }
             x.Add(mesh.X[nodes[0]]);

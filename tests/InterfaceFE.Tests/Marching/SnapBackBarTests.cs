@@ -13,7 +13,7 @@ public class SnapBackBarTests
     public void Every_point_lies_on_the_exact_path_through_the_snap_back(ControlSetting control)
     {
         Recording run = Recording.Of(BarDeck.Make(0.6, control: control));
-        Assert.True(run.Outcome.Status == MarchStatus.Severed || run.Outcome.Status == MarchStatus.Finished, run.Outcome.Cause + string.Join("\n", run.Lines));
+        Assert.True(run.Outcome.Status == MarchStatus.Severed, run.Outcome + string.Join("\n", run.Lines));
         int head = run.Equilibrium.Model.Unknowns.OfBody(1) + 1;
         double peakTravel = 0, lowest = double.PositiveInfinity;
         for (int i = 0; i < run.Points.Count; i++)
@@ -25,7 +25,6 @@ public class SnapBackBarTests
             if (peakTravel > travel + 1e-6)
                 lowest = Math.Min(lowest, travel);
         }
-        foreach (var p in run.Points) System.Console.WriteLine(p.Number + " " + p.Progress + " " + p.Stable + " " + p.Energy.PathError);foreach (var p in run.Lines) System.Console.WriteLine(p);System.Console.WriteLine(run.Outcome);
         Assert.True(lowest < 0.5 * peakTravel, $"the travel must come back: highest {peakTravel}, lowest after {lowest}");
         Close.To(BarDeck.Toughness * BarDeck.Length * BarDeck.Width, run.Points[^1].Energy.State.SpentInLayers, 1e-8, 0, "dissipation");
         Assert.True(run.Points.Max(p => p.Energy.Balance) < 1e-9);
@@ -38,4 +37,3 @@ public class SnapBackBarTests
         return opening <= limit ? BarDeck.Stiffness * opening : opening >= final ? 0 : BarDeck.Strength * (final - opening) / (final - limit);
     }
 }
-public class Dump { [Fact] public void D() { var run = Recording.Of(BarDeck.Make(0.6, control: ControlSetting.ArcLength)); foreach (var i in run.Iterations.Where(i => i.Point is >= 28 and <= 30)) System.Console.WriteLine($"{i.Point} {i.Retries} {i.Control} {i.Stride:G4} p={i.Progress:G7} {i.Newton}"); } }
