@@ -88,9 +88,16 @@ internal sealed class JointPlanner
             Bonded = bonded,
             Length = JointLength.Choose(CurveNumbers.OfPeel(joint.Layer, layer, held), CurveNumbers.OfShear(joint.Layer, layer), ArmOf(upper.Strip), ArmOf(lower.Strip),
                 width, bonded.Max(b => b.To - b.From), _deck.Model.Elements,
-                layer.Mixing == Mixing.IndependentModes ? layer.ReleaseLength : 0),
+                ReleaseShare(layer)),
         };
     }
+
+    /// <summary>
+    /// Share of the final separation on which tractions fall steeply at fracture. A bilinear curve has come down far by then and falls on in much the same slope, so that four times the release
+    /// length is taken for it; other curves still carry most of their strength.
+    /// </summary>
+    private static double ReleaseShare(LayerDeck layer) =>
+        layer.Mixing != Mixing.IndependentModes ? 0 : layer is { Peel.Law: CurveShape.Bilinear, Shear.Law: CurveShape.Bilinear } ? 4 * layer.ReleaseLength : layer.ReleaseLength;
 
     private Arm ArmOf(Strip strip)
     {

@@ -26,7 +26,7 @@ public sealed class FullEquilibrium : IEquilibrium
     private readonly StateStore _state;
     private readonly double[] _u, _accepted, _internal, _layerForce, _dissipationGradient, _magnitudes, _temperatureRate, _external, _externalRate, _held, _heldRate;
     private readonly double[] _rightSide, _solution, _tangentSolution, _gradient, _base, _noMagnitudes = [];
-    private readonly double[] _largestDamage, _leastDamage;
+    private readonly double[] _largestDamage, _leastDamage, _acceptedLargest, _acceptedLeast;
     private readonly double[][] _slotTangents;
     private readonly bool[] _skew;
     private readonly bool[] _isHeld;
@@ -71,6 +71,8 @@ public sealed class FullEquilibrium : IEquilibrium
         int layerElements = model.Layers.Sum(l => l.Count);
         _largestDamage = new double[layerElements];
         _leastDamage = new double[layerElements];
+        _acceptedLargest = new double[layerElements];
+        _acceptedLeast = new double[layerElements];
         _slotTangents = new double[_table.SlotCount][];
         _skew = new bool[_table.SlotCount];
         int native = _table.LargestNative, slot = _table.LargestSlot;
@@ -385,6 +387,8 @@ public sealed class FullEquilibrium : IEquilibrium
         AcceptedProgress = Progress;
         AcceptedTemperature = Temperature;
         _largestReference = Math.Max(_largestReference, _reference);
+        Array.Copy(_largestDamage, _acceptedLargest, _largestDamage.Length);
+        Array.Copy(_leastDamage, _acceptedLeast, _leastDamage.Length);
         _state.Accept();
     }
 
@@ -400,12 +404,12 @@ public sealed class FullEquilibrium : IEquilibrium
     }
 
     /// <summary>
-    /// Separations that arc length watches, as pairs of unknowns: those of layer elements that are giving way by the latest evaluation, or of all that still carry while none is.
+    /// Separations that arc length watches, as pairs of unknowns: those of layer elements that are giving way at the accepted point, or of all that still carry while none is.
     /// </summary>
     public IReadOnlyList<(int Upper, int Lower)> WatchedSeparations()
     {
-        List<(int, int)> pairs = Separations(e => _largestDamage[e] > 0 && _leastDamage[e] < Separated);
-        return pairs.Count > 0 ? pairs : Separations(e => _leastDamage[e] < Separated);
+        List<(int, int)> pairs = Separations(e => _acceptedLargest[e] > 0 && _acceptedLeast[e] < Separated);
+        return pairs.Count > 0 ? pairs : Separations(e => _acceptedLeast[e] < Separated);
     }
 
     private List<(int, int)> Separations(Func<int, bool> watched)
@@ -433,7 +437,7 @@ public sealed class FullEquilibrium : IEquilibrium
     }
 
     /// <summary>
-    /// Bodies of the specimen that hang together: adherends joined by at least one layer element that still carries, by the latest evaluation. Second: length of bond that still carries,
+    /// Bodies of the specimen that hang together: adherends joined by at least one layer element that still carries at the accepted point. Second: length of bond that still carries,
     /// as a share of the bond at the start (1 when there is none).
     /// </summary>
     /// <param name="separated">Damage from which a point counts as separated.</param>
@@ -447,7 +451,7 @@ public sealed class FullEquilibrium : IEquilibrium
             for (int e = 0; e < layer.Count; e++, index++)
             {
                 all += layer.Length(e);
-                if (_leastDamage[index] > separated)
+                if (_acceptedLeast[index] > separated)
                     continue;
                 carrying += layer.Length(e);
                 int a = Root(parent, layer.LowerAdherend), b = Root(parent, layer.UpperAdherend);

@@ -15,8 +15,9 @@ internal sealed class StageMarch
     private const double Shorter = 0.4;
     private const double ShorterRound = 0.03;
     private const double FairPart = 0.2;
-    private const double AllowedOverAim = 4;
+    private const double AllowedOverAim = 3;
     private const double LastBondShare = 0.03;
+    private const double NoDissipation = 1e-12;
     private const double Thread = 1e-6;
     private const int MostByThread = 3;
     private const double AlmostSeparated = 1 - 1e-3;
@@ -121,15 +122,15 @@ internal sealed class StageMarch
                 if (!PathCanTakeOver)
                     break;
             }
-            foreach (PathMeasure measure in Measures())
+            double tried = share * Math.Pow(ShorterRound, round);
+            for (int i = 0; i < TriesOfMeasure; i++, tried *= Shorter)
             {
-                double tried = share * Math.Pow(ShorterRound, round);
-                for (int i = 0; i < TriesOfMeasure; i++, tried *= Shorter)
+                foreach (PathMeasure measure in Measures())
                 {
                     if (Cancelled(cancellation) is { } cancelled)
                         return cancelled;
                     if (_way.Continue(measure, tried, _equilibrium, _accepted) is not { } control)
-                        break;
+                        continue;
                     Attempt attempt = TryPath(control, tried);
                     if (attempt.Good)
                     {
@@ -140,6 +141,9 @@ internal sealed class StageMarch
                     }
                     failure = attempt.Failure;
                     _retry++;
+                    // Too long for the energy account: another measure would be as long.
+                    if (attempt.Error > 0)
+                        break;
                 }
             }
         }
@@ -185,6 +189,8 @@ internal sealed class StageMarch
         else
             _equilibrium.RollBack();
         Attempt attempt = Search(control);
+        if (attempt.Good && GoesBack())
+            return attempt with { Good = false, Error = 0, Failure = "the stride went back the way it came" };
         if (!attempt.Good || _equilibrium.Progress <= 1)
             return attempt;
         // The stride passed the stage's end: find the end itself from the straight line between the two points.
@@ -196,6 +202,11 @@ internal sealed class StageMarch
         _equilibrium.Progress = 1;
         return Search(new OwnControl(1, 1 - start));
     }
+
+    /// <summary>Whether the load falls without any dissipation: unloading, which fulfils the equation of arc length as well as going on does.</summary>
+    private bool GoesBack() =>
+        _equilibrium.Progress < _equilibrium.AcceptedProgress
+        && _equilibrium.Energy.SpentInLayers - _accepted.SpentInLayers <= NoDissipation * Math.Max(_way.Dissipation, _accepted.SpentInLayers);
 
     private Attempt Search(IControl control)
     {

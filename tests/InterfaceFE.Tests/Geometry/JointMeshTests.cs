@@ -114,16 +114,17 @@ public class JointMeshTests
     [Fact]
     public void Default_lengths_follow_from_zone_arm_and_decay()
     {
-        // Tape on 10 mm steel: the zone is long, the arm's thickness decides.
+        // Tape on 10 mm steel: the zone is long; half the stretch on which independent modes release (5 % of their final separation each) decides.
         MeshedJoint tape = MeshFacts.Check(Peel(400, 10, 60, Tape)).Mesh.Joints[0];
-        Close.To(10, tape.Position[^1] - tape.Position[^2], 1e-9);
+        Assert.InRange(tape.Position[^1] - tape.Position[^2], 0.95 * 0.05 * tape.ProcessZoneEstimate, 0.05 * tape.ProcessZoneEstimate);
         // Published zone of such arms: 126 mm measured with the plateau of 3.2 mm (project's physics notes), the formula gives 8 % more.
         Close.To(126, tape.ProcessZoneEstimate, 0.10);
-        // Epoxy on 6 mm steel: λ⁴ = 6k/(E'h³) with E' = 210000/0.91; a third of 1/λ decides.
+        // Epoxy on 6 mm steel: λ⁴ = 6k/(E'h³) with E' = 210000/0.91; a third of 1/λ or, for bilinear curves, four times the release share of the zone decides.
         double decay = Math.Pow(6e5 / (210e3 / 0.91 * 216), -0.25);
         MeshedJoint epoxy = MeshFacts.Check(Peel(160, 6, 60, Epoxy)).Mesh.Joints[0];
         double length = epoxy.Position[^1] - epoxy.Position[^2];
-        Assert.InRange(length, 0.97 * decay / 3, decay / 3 * (1 + 1e-9));
+        double release = 4 * 0.05 * epoxy.ProcessZoneEstimate;
+        Assert.InRange(length, 0.97 * Math.Min(decay / 3, release), Math.Min(decay / 3, release) * (1 + 1e-9));
         Assert.True(length <= epoxy.OnePercentLength / 2);
     }
 
