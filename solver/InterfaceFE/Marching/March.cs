@@ -67,6 +67,7 @@ internal sealed class StageMarch
     private const int RetriesBeforeSwitch = 2;
     private const int RetriesBeforeArc = 3;
     private const int MostRetries = 14;
+    private const double LeastStride = 1e-9;
     private const double Shorter = 0.4;
     private const double AllowedOverAim = 4;
     private const double LastBondShare = 0.03;
@@ -150,6 +151,8 @@ internal sealed class StageMarch
                 _pathStride *= Shorter;
             else
                 _ownStride *= Shorter;
+            if (!_onPath && _ownStride < LeastStride && !(HasPathControl && PathCanTakeOver()))
+                break;
             if (retry + 1 >= RetriesBeforeSwitch && !_onPath && HasPathControl && PathCanTakeOver())
                 TakePath(attempt.Reason);
             else if (_onPath && !switched && retry >= MostRetries / 2)
