@@ -400,7 +400,28 @@ public sealed class FullEquilibrium : IEquilibrium
     {
         FactorSymmetric();
         Inertia inertia = _symmetric.Inertia(_heldUnknowns);
-        return (inertia.Negative, _outcome.Status == FactorStatus.Done && inertia.Zero == 0 ? -1 : Math.Max(_outcome.Unknown, 0));
+        if (_outcome.Unknown >= 0)
+            return (inertia.Negative, _outcome.Unknown);
+        return (inertia.Negative, inertia.Zero == 0 ? -1 : LooseGrip(inertia.Zero));
+    }
+
+    /// <summary>A grip's unknown that would stop a free movement if it were held: turns are tried first, since a free turn moves x and y too.</summary>
+    private int LooseGrip(int zeros)
+    {
+        UnknownMap map = _model.Unknowns;
+        int[] held = [.. _heldUnknowns, 0];
+        for (int component = 2; component >= 0; component--)
+        {
+            for (int b = 0; b < map.Bodies.Count; b++)
+            {
+                if (component == 2 && !map.Bodies[b].Rigid)
+                    continue;
+                held[^1] = (map.Bodies[b].Rigid ? map.OfBody(b) : map.OfNode(map.Bodies[b].Nodes[0])) + component;
+                if (!_isHeld[held[^1]] && _symmetric.Inertia(held).Zero < zeros)
+                    return held[^1];
+            }
+        }
+        return 0;
     }
 
     /// <summary>

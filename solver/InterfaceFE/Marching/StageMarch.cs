@@ -12,6 +12,7 @@ internal sealed class StageMarch
     private const int OwnTries = 2;
     private const int TriesOfMeasure = 4;
     private const int Rounds = 3;
+    private const double LeastStride = 1e-9;
     private const double Shorter = 0.4;
     private const double ShorterRound = 0.03;
     private const double FairPart = 0.2;
@@ -105,7 +106,7 @@ internal sealed class StageMarch
             if (!_onPath || round > 0)
             {
                 int tries = PathCanTakeOver ? OwnTries : Rounds * TriesOfMeasure;
-                for (int i = 0; i < tries; i++, stride *= Shorter)
+                for (int i = 0; i < tries && stride >= LeastStride; i++, stride *= Shorter)
                 {
                     if (Cancelled(cancellation) is { } cancelled)
                         return cancelled;

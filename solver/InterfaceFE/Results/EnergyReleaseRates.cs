@@ -1,6 +1,7 @@
 using InterfaceFE.Geometry;
 using InterfaceFE.Marching;
 using InterfaceFE.Mechanics.Layers;
+using InterfaceFE.Mechanics.Materials;
 using InterfaceFE.Model;
 
 namespace InterfaceFE.Results;
@@ -12,8 +13,9 @@ namespace InterfaceFE.Results;
 /// whole J at the starter tip. Valid where both adherends are straight rectangles along x, no grip and no other joint touches them between the sections.
 /// </para>
 /// <para>
-/// By rotation (Paris and Paris 1988; Olsson and Stigh 1989): J = -(1/b)·sum of Fy·θ over all grips, in the linear kinematics of small rotation, plus M²/(2·b·E'I) for each couple M on an end face behind
-/// the front. Valid with one joint of straight adherends at constant temperature.
+/// By rotation (Paris and Paris 1988; Olsson and Stigh 1989): J = -(1/b)·sum of Fy·θ over all grips, in the linear kinematics of small rotation. A rigid grip behind the
+/// front is cut off with a piece of its arm as long as the arm is thick: θ is that of the section there, and a beam's M²/(2·b·E'I) + 2·V²/(5·b·G·A) of its moment and shear force
+/// is added. Valid with one joint of straight adherends at constant temperature.
 /// </para>
 /// </summary>
 public sealed class EnergyReleaseRates
@@ -73,6 +75,11 @@ public sealed class EnergyReleaseRates
         for (int g = 0; g < _model.Grips.Count; g++)
         {
             GripBody body = _model.Unknowns.Bodies[_model.Grips[g].Bodies[0]];
+            if (body.Rigid && IsBehind(body))
+            {
+                sum += CutBehind(body, readings[g], ux);
+                continue;
+            }
             if (Math.Abs(readings[g].ForceY) > 0)
             {
                 double? slope = readings[g].Rotation ?? Slope(body, ux, uy);
@@ -81,15 +88,56 @@ public sealed class EnergyReleaseRates
                 sum -= readings[g].ForceY * slope.Value;
             }
             if (readings[g].Moment is { } moment && IsEndFace(body))
-            {
-                SolidBlock solid = BlockOf(body.Nodes[0]);
-                double inertia = solid.Adherend.Width * Math.Pow(solid.Adherend.Thickness, 3) / 12;
-                double share = moment * moment / (2 * solid.Material(0).YoungAlongX * inertia);
-                sum += Math.Sign(_model.Mesh.X[_front.TipNode] - body.PinX) * share;
-            }
+                sum -= _front.Sense * moment * moment / (2 * Bending(BlockOf(body.Nodes[0])));
         }
         return _front.Sense * sum / _joint.Width;
     }
+
+    /// <summary>
+    /// Part of a rigid grip and the piece of free arm at it [N]: at its very edge the arm turns against the grip, a thickness away it is a beam. Forces from the grip, turn of the section
+    /// from the nodes of its faces. Integral of sigma_xx·u_x,x + sigma_xy·u_y,x - W over the section with the parabola of shear: M²/(2·E'I) + V·slope - 3·V²/(5·G·A), and the slope
+    /// that works with the shear is the turn of the line between the faces plus V/(G·A) (but for 0.02 of that by Poisson's ratio), hence 2/5.
+    /// </summary>
+    private double CutBehind(GripBody body, GripReading reading, double[] ux)
+    {
+        Mesh mesh = _model.Mesh;
+        SolidBlock solid = BlockOf(body.Nodes[0]);
+        double tip = mesh.X[_front.TipNode], height = solid.Adherend.Thickness, edge = mesh.X[body.Nodes[0]];
+        foreach (int node in body.Nodes)
+            if (Math.Abs(mesh.X[node] - tip) < Math.Abs(edge - tip))
+                edge = mesh.X[node];
+        double wanted = edge + _front.Sense * Math.Min(height, 0.5 * Math.Abs(tip - edge));
+        (int lower, int upper) = Section(solid, wanted);
+        double turn = -(ux[upper] - ux[lower]) / (mesh.Y[upper] - mesh.Y[lower]);
+        double moment = (reading.Moment ?? 0) + (body.PinX - mesh.X[lower]) * reading.ForceY - (body.PinY - 0.5 * (mesh.Y[lower] + mesh.Y[upper])) * reading.ForceX;
+        double share = moment * moment / (2 * Bending(solid)) + 0.4 * reading.ForceY * reading.ForceY / (solid.Material(0).ShearModulus * solid.Adherend.Width * height);
+        return _front.Sense * share - reading.ForceY * turn;
+    }
+
+    /// <summary>Lowest and highest node of the column of nodes nearest to x.</summary>
+    private (int Lower, int Upper) Section(SolidBlock solid, double x)
+    {
+        Mesh mesh = _model.Mesh;
+        int lower = solid.Adherend.FirstNode, upper = lower;
+        double slack = 1e-9 * solid.Adherend.Thickness;
+        for (int node = solid.Adherend.FirstNode; node < solid.Adherend.FirstNode + solid.Adherend.NodeCount; node++)
+        {
+            double nearer = Math.Abs(mesh.X[lower] - x) - Math.Abs(mesh.X[node] - x);
+            if (nearer > slack)
+                lower = upper = node;
+            else if (nearer >= -slack && mesh.Y[node] < mesh.Y[lower])
+                lower = node;
+            else if (nearer >= -slack && mesh.Y[node] > mesh.Y[upper])
+                upper = node;
+        }
+        return (lower, upper);
+    }
+
+    private static double Bending(SolidBlock solid) => solid.Material(0).YoungAlongX * solid.Adherend.Width * Math.Pow(solid.Adherend.Thickness, 3) / 12;
+
+    private bool IsBehind(GripBody body) => body.Nodes.All(node => _front.Sense * (_model.Mesh.X[_front.TipNode] - _model.Mesh.X[node]) > 0);
+
+    private bool IsEndFace(GripBody body) => body.Rigid && Math.Abs(_model.Mesh.X[body.Nodes[0]] - _model.Mesh.X[body.Nodes[^1]]) < 1e-9 * BlockOf(body.Nodes[0]).Adherend.Thickness;
 
     private double WorkAhead(LayerSample sample)
     {
@@ -157,14 +205,12 @@ public sealed class EnergyReleaseRates
             return "an adherend is bent";
         if (_model.Solids.Count != 2)
             return "there are further adherends";
+        if (_model.Unknowns.Bodies.Any(body => Spans(body, tip)))
+            return "a rigid grip reaches over the front";
         return Math.Abs(_front.StarterTip - (_front.Sense > 0 ? _joint.Position[0] : _joint.Position[^1])) > 0 || PathReason is null ? null : $"no crack lies behind the front at x = {tip.ToString("G6", System.Globalization.CultureInfo.InvariantCulture)} mm";
     }
 
-    private bool IsEndFace(GripBody body)
-    {
-        Mesh mesh = _model.Mesh;
-        return body.Rigid && Math.Abs(mesh.X[body.Nodes[0]] - mesh.X[body.Nodes[^1]]) < 1e-9 * BlockOf(body.Nodes[0]).Adherend.Thickness;
-    }
+    private bool Spans(GripBody body, double tip) => body.Rigid && body.Nodes.Min(n => _model.Mesh.X[n]) < tip && body.Nodes.Max(n => _model.Mesh.X[n]) > tip;
 
     /// <summary>Slope of the edge at a pin: mean over one element to each side, so that the dent under the load, which is even, drops out; null at the end of an edge.</summary>
     private double? Slope(GripBody body, double[] ux, double[] uy)

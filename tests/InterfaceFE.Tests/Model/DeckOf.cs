@@ -2,6 +2,7 @@ using InterfaceFE.Decks;
 using InterfaceFE.Decks.Reading;
 using InterfaceFE.Geometry;
 using InterfaceFE.Model;
+using InterfaceFE.Runs;
 using Xunit;
 
 namespace InterfaceFE.Tests.Model;
@@ -31,6 +32,9 @@ internal static class DeckOf
 
     /// <summary>Mesh and model of a deck.</summary>
     public static SpecimenModel Model(Deck deck) => ModelBuilder.Build(deck, Mesher.Build(deck).Mesh);
+
+    /// <summary>Runs a deck in memory.</summary>
+    public static RunResult Run(Deck deck) => DeckRun.Execute(deck, null, TestContext.Current.CancellationToken);
 
     /// <summary>Two blocks of 6 mm × 2 mm, one on the other with a layer between; `base` holds the bottom, `head` the top.</summary>
     /// <param name="sequence">Stages, indented by two.</param>
