@@ -82,31 +82,29 @@ public class SpecimenTests
             if (fronts[0].CrackTip!.Value is > 3 and < 25)
                 Assert.InRange(root, 0, 3.6);
         }
-        Close.To(0.3 * 5 * 60, run.History.Energies[^1].SpentInLayers, 2e-3, 0, "the whole bond's toughness is spent");
+        // Counted by the largest separation, what unloads before a point's release gives back (here the middle, which the two fronts load in both senses of shear) is not spent: 0.20 %.
+        Close.To(0.3 * 5 * 60, run.History.Energies[^1].SpentInLayers, 4e-3, 0, "the whole bond's toughness is spent " + run.Summary.Cause);
         Assert.True(run.Summary.SelfCheck.Balance < 1e-9 && run.Summary.SelfCheck.PathError < 1e-3);
     }
 
     [Theory]
     [InlineData("  - fix: {base: [x, rotation]}\n  - pull: {grip: head, along: +x, travel: 0.01 mm}", "along y")]
     [InlineData("  - fix: {base: [y, rotation], head: [y]}\n  - pull: {grip: head, along: +y, travel: 0.01 mm}", "along x")]
-    [InlineData("  - fix: {base: [x, y]}\n  - pull: {grip: head, along: +y, force: 1 N}", "rotation")]
+    [InlineData("  - fix: {base: [x, y]}\n  - pull: {grip: head, along: +y, force: 1 N}", "turn about (3 mm, 0 mm)")]
     public void A_specimen_that_can_move_freely_is_named_with_place_and_direction(string sequence, string direction)
     {
-        RunResult run = DeckOf.Run(DeckOf.Yaml(DeckOf.Blocks(sequence)));
-        Assert.Equal(RunStatus.StoppedEarly, run.Summary.Status);
-        Assert.Contains("can still move freely", run.Summary.Cause, StringComparison.Ordinal);
-        Assert.Contains(direction, run.Summary.Cause, StringComparison.Ordinal);
-        Assert.Contains("the grip on", run.Summary.Cause, StringComparison.Ordinal);
-        Assert.Equal(Verdict.DoNotHold, run.Summary.SelfCheck.Verdict);
+        DeckException fault = Assert.Throws<DeckException>(() => DeckOf.Run(DeckOf.Yaml(DeckOf.Blocks(sequence))));
+        Assert.Contains("can still move freely", fault.Message, StringComparison.Ordinal);
+        Assert.Contains(direction, fault.Message, StringComparison.Ordinal);
+        Assert.StartsWith("sequence.2", fault.Message, StringComparison.Ordinal);
     }
 
     [Fact]
     public void An_adherend_that_nothing_holds_is_named()
     {
-        RunResult run = DeckOf.Run(DeckOf.Yaml(DeckOf.Blocks("  - fix: {base: [x, y, rotation]}\n  - pull: {grip: head, along: +y, travel: 0.01 mm}")
-            .Replace("joints:", "  stray: {of: stuff, rectangle: {corner: [20 mm, 0 mm], size: [4 mm, 2 mm]}}\njoints:", StringComparison.Ordinal)));
-        Assert.Equal(RunStatus.StoppedEarly, run.Summary.Status);
-        Assert.Contains("adherend 'stray'", run.Summary.Cause, StringComparison.Ordinal);
+        DeckException fault = Assert.Throws<DeckException>(() => DeckOf.Run(DeckOf.Yaml(DeckOf.Blocks("  - fix: {base: [x, y, rotation]}\n  - pull: {grip: head, along: +y, travel: 0.01 mm}")
+            .Replace("joints:", "  stray: {of: stuff, rectangle: {corner: [20 mm, 0 mm], size: [4 mm, 2 mm]}}\njoints:", StringComparison.Ordinal))));
+        Assert.Contains("stray can still move freely", fault.Message, StringComparison.Ordinal);
     }
 
     [Theory]
