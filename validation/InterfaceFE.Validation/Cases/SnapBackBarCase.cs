@@ -27,7 +27,7 @@ public sealed class SnapBackBarCase : ICase
         {
             foreach (ElementKind elements in (ElementKind[])[ElementKind.EightNode, ElementKind.FourNode])
             {
-                string what = $"{(control == ControlSetting.Automatic ? "layer work" : "arc length")}, {(elements == ElementKind.EightNode ? "eight" : "four")}-node: ";
+                string what = $"{(control == ControlSetting.Automatic ? "automatic control" : "arc length")}, {(elements == ElementKind.EightNode ? "eight" : "four")}-node: ";
                 RunResult run = context.Run(what.Trim(' ', ':'), BarDeck.Make(0.6, control: control, elements: elements));
                 int head = run.History.Grips.ToList().FindIndex(g => g.Name == "head");
                 double worst = 0, highest = 0, lowestAfter = double.PositiveInfinity;
