@@ -24,7 +24,7 @@ public static class DeckReference
             mixing: independent modes
 
         adherends:
-          upper arm: {of: aluminium, rectangle: {corner: [0 mm, 13.1 mm], size: [300 mm, 12 mm]}}
+          upper arm: {of: aluminium, rectangle: {corner: [0 mm, 12 mm], size: [300 mm, 12 mm]}}
           lower arm: {of: aluminium, rectangle: {corner: [0 mm, 0 mm], size: [300 mm, 12 mm]}}
 
         joints:
