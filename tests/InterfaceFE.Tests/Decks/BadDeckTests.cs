@@ -1,4 +1,3 @@
-using System.Runtime.CompilerServices;
 using InterfaceFE.Decks.Reading;
 using Xunit;
 
@@ -24,5 +23,5 @@ public class BadDeckTests
     internal static IEnumerable<string> Lines(DeckReading reading) =>
         reading.Problems.Select(p => p.ToString()).Concat(reading.Warnings.Select(w => "warning: " + w)).Select(l => l.Replace(Folder() + Path.DirectorySeparatorChar, "", StringComparison.Ordinal));
 
-    internal static string Folder([CallerFilePath] string here = "") => Path.Combine(Path.GetDirectoryName(here)!, "Bad");
+    internal static string Folder() => Repository.Path("tests", "InterfaceFE.Tests", "Decks", "Bad");
 }

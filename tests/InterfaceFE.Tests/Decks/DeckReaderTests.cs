@@ -1,4 +1,3 @@
-using System.Runtime.CompilerServices;
 using CsCheck;
 using InterfaceFE.Decks;
 using InterfaceFE.Decks.Reading;
@@ -8,7 +7,7 @@ namespace InterfaceFE.Tests.Decks;
 
 public class DeckReaderTests
 {
-    internal static string RoofText([CallerFilePath] string here = "") => File.ReadAllText(Path.Combine(Path.GetDirectoryName(here)!, "Roof.yaml"));
+    internal static string RoofText() => File.ReadAllText(Repository.Path("tests", "InterfaceFE.Tests", "Decks", "Roof.yaml"));
 
     internal static Deck Good(DeckReading reading)
     {

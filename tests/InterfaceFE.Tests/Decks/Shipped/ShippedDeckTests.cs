@@ -1,8 +1,9 @@
-using System.Runtime.CompilerServices;
 using InterfaceFE.Decks;
 using InterfaceFE.Decks.Reading;
 using InterfaceFE.Geometry;
 using InterfaceFE.Model;
+using InterfaceFE.Results;
+using InterfaceFE.Runs;
 using Xunit;
 
 namespace InterfaceFE.Tests.Decks.Shipped;
@@ -48,13 +49,14 @@ public class ShippedDeckTests
         Assert.True(text == DeckReference.Write(), "inputs/README.md is not what the records say; make it anew: dotnet run -c Release --project solver/InterfaceFE.Cli -- deck-reference --into inputs/README.md");
     }
 
-    private static string Inputs([CallerFilePath] string here = "")
+    [Fact]
+    public void The_worked_example_of_the_deck_reference_runs()
     {
-        // From where the test runs, or, where the build stands apart from the sources, from where it was compiled.
-        foreach (string start in (ReadOnlySpan<string>)[AppContext.BaseDirectory, Path.GetDirectoryName(here)!])
-            for (DirectoryInfo? folder = new(start); folder is not null; folder = folder.Parent)
-                if (File.Exists(Path.Combine(folder.FullName, "InterfaceFE.sln")) && Directory.Exists(Path.Combine(folder.FullName, "inputs")))
-                    return Path.Combine(folder.FullName, "inputs");
-        throw new DirectoryNotFoundException("no folder `inputs` beside InterfaceFE.sln above the tests");
+        DeckReading reading = DeckReader.ReadText(DeckReference.Example, "example.yaml");
+        Assert.True(reading.Deck is not null, string.Join("\n", reading.Problems));
+        RunResult run = DeckRun.Execute(reading.Deck, cancellation: TestContext.Current.CancellationToken);
+        Assert.True(run.Summary.Status == RunStatus.Finished, run.Summary.Cause);
     }
+
+    private static string Inputs() => Repository.Path("inputs");
 }
