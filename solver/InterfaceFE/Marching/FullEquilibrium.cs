@@ -114,6 +114,19 @@ public sealed class FullEquilibrium : IEquilibrium
     /// <inheritdoc/>
     public double LayerWorkByProgress { get; private set; }
 
+    /// <inheritdoc/>
+    public double Potential
+    {
+        get
+        {
+            double potential = Energy.Total;
+            for (int i = 0; i < _u.Length; i++)
+                if (!_isHeld[i])
+                    potential -= _external[i] * _u[i];
+            return potential;
+        }
+    }
+
     /// <summary>Number of layer elements in which damage grew in the latest evaluation.</summary>
     public int GrowingElements { get; private set; }
 
@@ -310,6 +323,16 @@ public sealed class FullEquilibrium : IEquilibrium
         _baseProgress = Progress;
         int singular = _outcome.Status == FactorStatus.Done ? -1 : _outcome.Unknown;
         return new Correction(largest, _correctionProgress, Math.Abs(equation) / control.Stride, singular, finite);
+    }
+
+    /// <inheritdoc/>
+    public double WorkAlongCorrection()
+    {
+        double work = 0;
+        for (int i = 0; i < _solution.Length; i++)
+            if (!_isHeld[i])
+                work += _solution[i] * (_external[i] - _internal[i]);
+        return work;
     }
 
     /// <inheritdoc/>

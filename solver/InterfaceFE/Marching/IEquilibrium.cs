@@ -55,6 +55,9 @@ public interface IEquilibrium
     /// <summary>d layer work / d progress at fixed displacement (free opening by temperature) [mJ].</summary>
     double LayerWorkByProgress { get; }
 
+    /// <summary>Energies less the work of given forces up to the tentative displacement, by the latest evaluation [mJ]: lowest at a stable equilibrium while the progress is given.</summary>
+    double Potential { get; }
+
     /// <summary>Evaluates force, tangent and energies at the tentative displacement and progress.</summary>
     ResidualReport Evaluate(Wanted wanted);
 
@@ -63,6 +66,9 @@ public interface IEquilibrium
 
     /// <summary>Solves for a correction of displacement and progress by the latest tangents and the control.</summary>
     Correction Solve(IControl control);
+
+    /// <summary>Work of the force out of balance along the latest solved correction, by the latest evaluation [mJ].</summary>
+    double WorkAlongCorrection();
 
     /// <summary>Applies a share of the solved correction to the displacement and progress it started from.</summary>
     void Move(double share);

@@ -39,13 +39,21 @@ public readonly record struct NewtonOutcome(NewtonStatus Status, int Iterations,
 public readonly record struct NewtonIteration(int Iteration, double OutOfBalance, double Relative, double Correction, int ChangedElements, string Reason);
 
 /// <summary>
-/// Newton-Raphson's method with the consistent tangent and a backtracking line search on the force out of balance. Nothing is damped: the equations stay those of equilibrium.
+/// Newton-Raphson's method with the consistent tangent and a backtracking line search on the force out of balance. Faces that lie on each other may open and close in turn, place by
+/// place, with next to no energy in it; then corrections are shortened to where the force out of balance does no more work along them, and the search is given longer. Nothing is damped: the equations stay those of equilibrium.
 /// </summary>
 /// <param name="tolerance">Force out of balance over reference that counts as converged.</param>
 /// <param name="controlTolerance">Error of the control equation over its stride that counts as converged.</param>
 /// <param name="mostIterations">Corrections before the search gives up.</param>
 public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int mostIterations = 16)
 {
+    private const int SlowBeforeShortening = 2;
+    private const int SlowBeforeStall = 6;
+    private const int MostChatter = 100;
+
+    /// <summary>Changes of the potential, relative, up to which a slow search is chatter of faces in contact; a fall to another equilibrium, left to the march's control, is far above.</summary>
+    private const double Chatter = 1e-6;
+
     private static readonly double[] Shares = [0.5, 0.25, 0.1];
 
     private double[] _gradient = [];
@@ -59,8 +67,9 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
         if (_gradient.Length != equilibrium.Displacement.Length)
             _gradient = new double[equilibrium.Displacement.Length];
         ResidualReport residual = equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
-        double correction = 0, previous = double.PositiveInfinity;
+        double correction = 0, previous = double.PositiveInfinity, potential = double.PositiveInfinity;
         int singular = -1, slow = 0;
+        bool shortens = false;
         for (int iteration = 0; ; iteration++)
         {
             if (!residual.Finite)
@@ -70,6 +79,10 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             }
             double controlError = Math.Abs(control.Equation(equilibrium, _gradient, out _)) / control.Stride;
             slow = residual.OutOfBalance > 0.5 * previous ? slow + 1 : 0;
+            double before = potential;
+            potential = equilibrium.Potential;
+            bool chatters = control.FixesProgress && Math.Abs(potential - before) <= Chatter * Math.Abs(potential);
+            shortens |= chatters && slow >= SlowBeforeShortening;
             bool controlled = control.FixesProgress || controlError <= controlTolerance;
             bool balanced = residual.Relative <= tolerance && residual.HeldInPlace;
             bool atFloor = !balanced && residual.HeldInPlace && controlled && slow >= 1 && residual.OutOfBalance <= equilibrium.ResidualFloor();
@@ -78,7 +91,8 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
                 report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, atFloor ? "converged at the floor" : "converged"));
                 return new NewtonOutcome(atFloor ? NewtonStatus.AtFloor : NewtonStatus.Converged, iteration, singular, residual.Relative);
             }
-            if (iteration >= mostIterations || slow >= 6)
+            chatters &= shortens;
+            if (iteration >= (chatters ? MostChatter : mostIterations) || (slow >= SlowBeforeStall && !chatters))
             {
                 report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, "stalled"));
                 return new NewtonOutcome(NewtonStatus.Stalled, iteration, singular, residual.Relative);
@@ -90,11 +104,37 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             if (!solved.Finite)
                 return new NewtonOutcome(NewtonStatus.NotFinite, iteration, singular, residual.Relative);
             correction = solved.Largest;
+            double work = shortens ? equilibrium.WorkAlongCorrection() : 0;
             equilibrium.Move(1);
             residual = equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
-            if (iteration > 0 && previous > 0 && !(residual.OutOfBalance <= 1.5 * previous))
+            if (shortens)
+                residual = Shorten(equilibrium, residual, work);
+            else if (iteration > 0 && previous > 0 && !(residual.OutOfBalance <= 1.5 * previous))
                 residual = Backtrack(equilibrium, residual);
         }
+    }
+
+    /// <summary>Shortens the correction, by false position (Illinois), to where the force out of balance does no work along it, if it is passed there.</summary>
+    private static ResidualReport Shorten(IEquilibrium equilibrium, ResidualReport full, double workAtStart)
+    {
+        double workAtEnd = equilibrium.WorkAlongCorrection();
+        if (!full.Finite || !(workAtStart * workAtEnd < 0) || Math.Abs(workAtEnd) < 0.2 * Math.Abs(workAtStart))
+            return full;
+        double left = 0, right = 1, atLeft = workAtStart, atRight = workAtEnd;
+        for (int trial = 0; trial < 8; trial++)
+        {
+            double share = (left * atRight - right * atLeft) / (atRight - atLeft);
+            equilibrium.Move(share);
+            equilibrium.Evaluate(Wanted.Force);
+            double work = equilibrium.WorkAlongCorrection();
+            if (!(Math.Abs(work) > 0.1 * Math.Abs(workAtStart)))
+                break;
+            if (work * workAtStart > 0)
+                (left, atLeft, atRight) = (share, work, 0.5 * atRight);
+            else
+                (right, atRight, atLeft) = (share, work, 0.5 * atLeft);
+        }
+        return equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
     }
 
     private static ResidualReport Backtrack(IEquilibrium equilibrium, ResidualReport full)
