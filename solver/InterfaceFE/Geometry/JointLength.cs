@@ -6,10 +6,18 @@ namespace InterfaceFE.Geometry;
 /// <param name="Modulus">E' along x [MPa].</param>
 /// <param name="Thickness">Thickness [mm].</param>
 /// <param name="Width">Width [mm].</param>
-public readonly record struct Arm(double Modulus, double Thickness, double Width);
+public readonly record struct Arm(double Modulus, double Thickness, double Width)
+{
+    /// <summary>Modulus at a crack tip; null: E' in both modes.</summary>
+    public CrackTipModulus? Tip { get; init; }
+
+    /// <summary>Modulus at a crack tip in a mode [MPa].</summary>
+    public double AtTip(bool peel) => Tip is not { } tip ? Modulus : peel ? tip.Peel : tip.Shear;
+}
 
 /// <summary>
-/// Element length along a joint from layer and arms. With l_c = E'Γ/σ² and l_s = (l_c h³)^(1/4) in peel, (l_c h)^(1/2) in shear, the process zone is about
+/// Element length along a joint from layer and arms. With l_c = E*Γ/σ² (E* the modulus at a crack tip, E' in an isotropic arm) and l_s = (l_E h³)^(1/4) in peel, (l_E h)^(1/2) in
+/// shear, l_E = E'Γ/σ², the process zone is about
 /// c (1 - √r) l_c l_s/(l_c + l_s), c = 0.82 in peel and 1.0 in shear, r = elastic limit over final separation; 1 % error of the whole curve is met at
 /// zone·(0.35 + 2.2 √r) with eight-node elements. Both fits are the project's own measurements on beams in peel and flexure, r up to 0.25 (DEVELOPERS.md).
 /// A bond of width b on arms of width B counts with σ, Γ and k times b/B. Independent modes fall to zero within twice their release length, which is met on about twice that share of the zone:
@@ -79,10 +87,12 @@ public readonly record struct JointLength(double OnePercent, double Zone, double
     /// <param name="modulus">E' of the arm [MPa].</param>
     /// <param name="thickness">Thickness of the arm [mm].</param>
     /// <param name="widthShare">Width of the bond over that of the arm.</param>
-    public static double ProcessZone(CurveNumbers curve, bool peel, double modulus, double thickness, double widthShare)
+    /// <param name="tipModulus">Modulus at a crack tip [MPa]; null: E' of the arm.</param>
+    public static double ProcessZone(CurveNumbers curve, bool peel, double modulus, double thickness, double widthShare, double? tipModulus = null)
     {
         double characteristic = modulus * curve.Toughness / (curve.Strength * curve.Strength * widthShare);
         double slender = peel ? Math.Pow(characteristic * thickness * thickness * thickness, 0.25) : Math.Sqrt(characteristic * thickness);
+        characteristic *= (tipModulus ?? modulus) / modulus;
         return (peel ? 0.82 : 1.0) * (1 - Math.Sqrt(ShareOf(curve))) * characteristic * slender / (characteristic + slender);
     }
 
@@ -90,7 +100,7 @@ public readonly record struct JointLength(double OnePercent, double Zone, double
 
     private static void Consider(CurveNumbers curve, bool peel, Arm arm, double share, double thinner, ref double onePercent, ref double zone, ref string mode)
     {
-        double candidateZone = ProcessZone(curve, peel, arm.Modulus, thinner, share);
+        double candidateZone = ProcessZone(curve, peel, arm.Modulus, thinner, share, arm.AtTip(peel));
         double length = candidateZone * (0.35 + 2.2 * Math.Sqrt(ShareOf(curve)));
         if (length < onePercent)
             (onePercent, zone, mode) = (length, candidateZone, peel ? "peel" : "shear");

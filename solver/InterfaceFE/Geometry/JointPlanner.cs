@@ -104,13 +104,14 @@ internal sealed class JointPlanner
         if (!_deck.Materials.TryGetValue(strip.Deck.Of, out MaterialDeck? material))
             throw new DeckException(strip.Path + ".of", $"there is no material \"{strip.Deck.Of}\"; there are: {string.Join(", ", _deck.Materials.Keys)}");
         double modulus = material.Young.X;
-        if (_deck.Model.OutOfPlane == OutOfPlane.Held)
+        bool isHeld = _deck.Model.OutOfPlane == OutOfPlane.Held;
+        if (isHeld)
         {
             // Plane strain along x: Ex/(1 - ν_xz ν_zx) with ν_zx = ν_xz Ez/Ex.
             double held = 1 - material.Poisson.Xz * material.Poisson.Xz * material.Young.Z / material.Young.X;
             modulus = held > 0 ? modulus / held : modulus;
         }
-        return new Arm(modulus, strip.Thickness, strip.Width);
+        return new Arm(modulus, strip.Thickness, strip.Width) { Tip = CrackTipModulus.Of(material, isHeld) };
     }
 
     private JointFace Face(string text, string path, int facing)

@@ -39,7 +39,7 @@ public static class Mesher
         {
             Strip strip = strips[i];
             double bonded = joints.Where(j => j.Upper.Strip == strip || j.Lower.Strip == strip).Select(j => j.Wanted).DefaultIfEmpty(double.PositiveInfinity).Min();
-            double[] lines = ThroughDivision.Choose(strip, deck.Model.Elements, bonded, places.OnEnds[i]);
+            double[] lines = ThroughDivision.Choose(strip, deck.Model.Elements, bonded, (ZoneAt(strip, Side.Lower, joints), ZoneAt(strip, Side.Upper, joints)), places.OnEnds[i]);
             int elementsAlong = strip.Runs.Sum(r => along[r].Length - 1);
             if (quadratic && elementsAlong == 1 && lines.Length == 2)
                 throw new DeckException(strip.Path + ".elements", $"\"{strip.Name}\" would be one single eight-node element, which can deform in a way that costs no energy: use two at least, along or through the thickness");
@@ -148,5 +148,15 @@ public static class Mesher
         notes.Add(Text.Of($"{joint.Name}: elements along the bond up to {longest:G4} mm; {by}; 1 % error at about {length.OnePercent:G4} mm{share}, decided by {length.Mode} with a process zone of about {length.Zone:G4} mm"));
         if (longest > length.OnePercent * (1 + 1e-6))
             warnings.Add(Text.Of($"{joint.Name}: elements along the bond are up to {longest:G4} mm long, above the {length.OnePercent:G4} mm at which the error is about 1 %{share}; process zone about {length.Zone:G4} mm in {length.Mode}"));
+    }
+
+    private static double ZoneAt(Strip strip, Side side, JointPlan[] joints)
+    {
+        double zone = double.PositiveInfinity;
+        foreach (JointPlan joint in joints)
+            foreach (JointFace face in (ReadOnlySpan<JointFace>)[joint.Upper, joint.Lower])
+                if (face.Strip == strip && face.Side == side)
+                    zone = Math.Min(zone, joint.Length.Zone);
+        return zone;
     }
 }

@@ -40,8 +40,8 @@ public readonly record struct NewtonIteration(int Iteration, double OutOfBalance
 
 /// <summary>
 /// Newton-Raphson's method with the consistent tangent and a backtracking line search on the force out of balance. Faces that lie on each other may open and close in turn, place by
-/// place, with next to no energy in it; then corrections are shortened to where the force out of balance does no more work along them, and the search goes on while that lowers the
-/// potential. Nothing is damped: the equations stay those of equilibrium.
+/// place, with next to no energy in it; then corrections are shortened to where the force out of balance does no more work along them, and the search is given longer. Nothing
+/// is damped: the equations stay those of equilibrium.
 /// </summary>
 /// <param name="tolerance">Force out of balance over reference that counts as converged.</param>
 /// <param name="controlTolerance">Error of the control equation over its stride that counts as converged.</param>
@@ -99,7 +99,7 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
                 report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, atFloor ? "converged at the floor" : "converged"));
                 return new NewtonOutcome(atFloor ? NewtonStatus.AtFloor : NewtonStatus.Converged, iteration, singular, residual.Relative);
             }
-            bool descends = shortens && chatters && fall > 0;
+            bool descends = shortens && chatters;
             if (controlled && polishes)
                 polishing++;
             if (iteration >= (descends ? MostChatter : mostIterations) || (slow >= SlowBeforeStall && !descends && !polishes))
