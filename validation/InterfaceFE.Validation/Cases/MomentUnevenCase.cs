@@ -29,7 +29,7 @@ public sealed class MomentUnevenCase : ICase
             ? [("unequal toughness", 0.6, 1.8, [-0.5]), ("equal toughness", 1, 1, [0.2])]
             : [("unequal toughness", 0.6, 1.8, [0.6, 0.2, -0.2, -0.5, -0.8]), ("equal toughness", 1, 1, [0.2, -0.5])];
         double[] lengths = context.Quick ? [0.05] : [0.1, 0.05, 0.02];
-        List<CaseCurve> curves = [];
+        List<(double Length, double Share, double J)> found = [];
         foreach ((string toughness, double peel, double shear, double[] shares) in variants)
         {
             foreach (double share in shares)
@@ -64,16 +64,18 @@ public sealed class MomentUnevenCase : ICase
                     yield return SelfCheck.Balance(name, run);
                     yield return SelfCheck.PathError(name, run);
                     yield return CaseLine.Reported($"{name}: {SelfCheck.Words(run.Summary)}; growth", growth[^1].Growth, "mm", "after the plateau the bond may end in any way");
-                    if (length == 0.05)
-                    {
-                        curves.Add(new CaseCurve(string.Create(CultureInfo.InvariantCulture, $"{toughness}, lower couple {share:0.0}"), [.. plateau.Select(g => g.Growth)], [.. j.Select(v => v / expected)],
-                            Points: true));
-                    }
+                    if (peel != shear)
+                        found.Add((length, shearShare, j.Average()));
                 }
             }
         }
-        context.Draw(new CaseFigure("moment-uneven", "J of uneven couples over crack growth", "independent modes, release length 0.05; lower couple as a share of the upper; J over the criterion's value",
-            "crack growth (mm)", "J / steady J (-)", [.. curves.Take(5)]));
+        double[] line = [.. Enumerable.Range(0, 51).Select(i => i / 50.0)];
+        context.Draw(new CaseFigure("moment-uneven", "J of uneven couples in steady growth", "independent modes, toughness 0.6 N/mm in peel and 1.8 N/mm in shear", "share of G_II (-)", "J (N/mm)",
+        [
+            new CaseCurve("criterion", line, [.. line.Select(x => 1 / ((1 - x) / 0.6 + x / 1.8))]),
+            .. found.GroupBy(f => f.Length).Select(g => new CaseCurve(string.Create(CultureInfo.InvariantCulture, $"release length {g.Key:0.00}"),
+                [.. g.OrderBy(f => f.Share).Select(f => f.Share)], [.. g.OrderBy(f => f.Share).Select(f => f.J)], Points: true)),
+        ]));
     }
 
     private static string Layer(double peel, double shear, double release) => string.Create(CultureInfo.InvariantCulture, $$"""
