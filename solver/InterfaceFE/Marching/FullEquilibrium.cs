@@ -141,7 +141,7 @@ public sealed class FullEquilibrium : IEquilibrium
         }
     }
 
-    /// <summary>Number of layer elements in which damage grew in the latest evaluation.</summary>
+    /// <inheritdoc/>
     public int GrowingElements { get; private set; }
 
     /// <summary>Number of factorisations so far.</summary>

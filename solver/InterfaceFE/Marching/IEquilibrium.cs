@@ -62,6 +62,9 @@ public interface IEquilibrium
     /// <summary>d dissipated energy / d progress at fixed displacement [mJ].</summary>
     double DissipationByProgress { get; }
 
+    /// <summary>Number of layer elements in which damage grew in the latest evaluation.</summary>
+    int GrowingElements { get; }
+
     /// <summary>Energies less the work of given forces up to the tentative displacement, by the latest evaluation [mJ]: lowest at a stable equilibrium while the progress is given.</summary>
     double Potential { get; }
 

@@ -40,8 +40,8 @@ public readonly record struct NewtonIteration(int Iteration, double OutOfBalance
 
 /// <summary>
 /// Newton-Raphson's method with the consistent tangent and a backtracking line search on the force out of balance. Faces that lie on each other may open and close in turn, place by
-/// place, with next to no energy in it; then corrections are shortened to where the force out of balance does no more work along them, and the search is given longer. Nothing
-/// is damped: the equations stay those of equilibrium.
+/// place, with next to no energy in it; then corrections are shortened to where the force out of balance does no more work along them, and the search is given longer.
+/// Nothing is damped: the equations stay those of equilibrium.
 /// </summary>
 /// <param name="tolerance">Force out of balance over reference that counts as converged.</param>
 /// <param name="controlTolerance">Error of the control equation over its stride that counts as converged.</param>
@@ -54,7 +54,7 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
     private const int SlowBeforeStall = 6;
     private const int MostChatter = 100;
 
-    /// <summary>Changes of the potential, relative, up to which a slow search is chatter of faces in contact; a fall to another equilibrium, left to the march's control, is far above.</summary>
+    /// <summary>Changes of the potential, relative, up to which a slow search without growth of damage is chatter of faces in contact.</summary>
     private const double Chatter = 1e-6;
 
     private const double WorkTolerance = 1e-10;
@@ -85,9 +85,9 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             }
             double controlError = Math.Abs(control.Equation(equilibrium, _gradient, out _)) / control.Stride;
             slow = residual.OutOfBalance > 0.5 * previous ? slow + 1 : 0;
-            double fall = potential - equilibrium.Potential;
+            double before = potential;
             potential = equilibrium.Potential;
-            bool chatters = control.FixesProgress && Math.Abs(fall) <= Chatter * Math.Abs(potential);
+            bool chatters = control.FixesProgress && equilibrium.GrowingElements == 0 && Math.Abs(potential - before) <= Chatter * Math.Abs(potential);
             shortens |= chatters && slow >= SlowBeforeShortening;
             bool controlled = control.FixesProgress || controlError <= controlTolerance;
             bool balanced = residual.Relative <= tolerance && residual.HeldInPlace;
@@ -99,10 +99,10 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
                 report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, atFloor ? "converged at the floor" : "converged"));
                 return new NewtonOutcome(atFloor ? NewtonStatus.AtFloor : NewtonStatus.Converged, iteration, singular, residual.Relative);
             }
-            bool descends = shortens && chatters;
+            chatters &= shortens;
             if (controlled && polishes)
                 polishing++;
-            if (iteration >= (descends ? MostChatter : mostIterations) || (slow >= SlowBeforeStall && !descends && !polishes))
+            if (iteration >= (chatters ? MostChatter : mostIterations) || (slow >= SlowBeforeStall && !chatters && !polishes))
             {
                 report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, "stalled"));
                 return new NewtonOutcome(NewtonStatus.Stalled, iteration, singular, residual.Relative);

@@ -80,7 +80,11 @@ internal static class FrontFigures
     private static List<FrontRow> Rows(RunHistory history, string joint)
     {
         List<FrontRow> rows = [.. history.Fronts.Where(row => row.Joint == joint)];
-        return rows.Count > 0 ? rows : throw new NoDataException($"{joint} has no front");
+        if (rows.Count == 0)
+            throw new NoDataException($"{joint} has no front");
+        // A front at which nothing happened only draws a level line; it is shown when no front moved.
+        HashSet<int> moved = [.. rows.Where(row => row.ProcessZoneStart is not null).Select(row => row.Front)];
+        return moved.Count > 0 ? [.. rows.Where(row => moved.Contains(row.Front))] : rows;
     }
 
     private static bool Any(double[] x, double[] y)
