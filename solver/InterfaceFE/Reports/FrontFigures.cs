@@ -6,19 +6,20 @@ namespace InterfaceFE.Reports;
 /// <summary>Figures of the fronts of a joint: tip and process zone against the travel, energy release rates against the tip's opening.</summary>
 internal static class FrontFigures
 {
-    /// <summary>Crack tip, start of the process zone and the zone between them against the main grip's travel.</summary>
+    /// <summary>Crack tip, start of the process zone and the zone between them against the main grip's travel, or against the points where the travel turns back.</summary>
     /// <exception cref="NoDataException">The joint has no front.</exception>
     public static Figure Growth(RunHistory history, RunSummary summary, string joint)
     {
         MainGrip main = new(history);
         List<Curve> curves = [];
         List<Band> bands = [];
+        bool byPoint = main.TurnsBack();
         List<FrontRow> rows = Rows(history, joint);
         int[] fronts = [.. rows.Select(row => row.Front).Distinct().Order()];
         for (int f = 0; f < fronts.Length; f++)
         {
             FrontRow[] own = [.. rows.Where(row => row.Front == fronts[f])];
-            double[] x = [.. own.Select(row => main.At(row.Point))];
+            double[] x = [.. own.Select(row => byPoint ? row.Point : main.At(row.Point))];
             double[] tip = [.. own.Select(row => row.CrackTip ?? double.NaN)];
             double[] start = [.. own.Select(row => row.ProcessZoneStart ?? double.NaN)];
             string of = fronts.Length > 1 ? string.Create(CultureInfo.InvariantCulture, $" of front {fronts[f]}") : "";
@@ -34,7 +35,7 @@ internal static class FrontFigures
         {
             Title = $"Crack front and process zone of {joint}",
             Subtitles = [history.Title, .. LoadFigure.EndWords(summary)],
-            Panels = [new Panel { XTitle = main.Title, YTitle = $"Position along {joint} (mm)", Curves = curves, Bands = bands }],
+            Panels = [new Panel { XTitle = byPoint ? "Point" : main.Title, YTitle = $"Position along {joint} (mm)", Curves = curves, Bands = bands }],
         };
     }
 
@@ -44,7 +45,7 @@ internal static class FrontFigures
     {
         List<FrontRow> rows = Rows(history, joint);
         int[] fronts = [.. rows.Where(row => (row.JPath ?? row.JRotation ?? row.JUnderLaw) is not null).Select(row => row.Front).Distinct().Order()];
-        if (fronts.Length == 0)
+        if (fronts.Length == 0 || !rows.Any(row => (row.JPath ?? row.JRotation ?? row.JUnderLaw) > 0))
             throw new NoDataException($"no J has a meaning at {joint}");
         double Largest(Func<FrontRow, double?> of) => rows.Select(row => Math.Abs(of(row) ?? 0)).Where(double.IsFinite).DefaultIfEmpty(0).Max();
         bool sliding = Largest(row => row.Sliding) > Largest(row => row.Opening);

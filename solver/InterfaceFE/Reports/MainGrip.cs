@@ -45,6 +45,19 @@ internal sealed class MainGrip
     /// <summary>Value at a point; NaN for a point that is not in the history.</summary>
     public double At(int point) => !_points.TryGetValue(point, out PointRow? row) ? double.NaN : _grip < 0 ? point : Turned ? Degrees(row.Grips[_grip].Rotation) : row.Grips[_grip].Displacement;
 
+    /// <summary>Whether the travel comes back by more than a hundredth of its range, so that curves against it would lie over each other.</summary>
+    public bool TurnsBack()
+    {
+        double[] values = [.. _history.Points.Select(row => At(row.Point)).Where(double.IsFinite)];
+        double highest = double.NegativeInfinity, back = 0;
+        foreach (double value in values)
+        {
+            highest = Math.Max(highest, value);
+            back = Math.Max(back, highest - value);
+        }
+        return values.Length > 0 && back > 0.01 * (values.Max() - values.Min()) && values[^1] > values[0];
+    }
+
     /// <summary>Point number and travel in words.</summary>
     public string Words(int point)
     {

@@ -31,10 +31,17 @@ internal static class TractionFigure
             Subtitles = [history.Title, .. LoadFigure.EndWords(summary)],
             Panels =
             [
-                new Panel { XTitle = position, YTitle = "Peel traction (MPa)", Height = 290, Curves = peel },
-                new Panel { XTitle = position, YTitle = "Shear traction (MPa)", Height = 290, Curves = shear },
+                new Panel { XTitle = position, YTitle = "Peel traction (MPa)", Height = 290, Curves = WithoutNoise(peel, shear) },
+                new Panel { XTitle = position, YTitle = "Shear traction (MPa)", Height = 290, Curves = WithoutNoise(shear, peel) },
             ],
         };
+    }
+
+    /// <summary>Curves of one mode; level at zero where they hold nothing but the rounding of the other mode.</summary>
+    private static List<Curve> WithoutNoise(List<Curve> curves, List<Curve> others)
+    {
+        double Largest(List<Curve> of) => of.SelectMany(curve => curve.Y).Where(double.IsFinite).Select(Math.Abs).DefaultIfEmpty(0).Max();
+        return Largest(curves) > 1e-9 * Largest(others) ? curves : [.. curves.Select(curve => curve with { Y = [.. curve.Y.Select(y => double.IsFinite(y) ? 0 : y)] })];
     }
 
     /// <summary>Kept fields at telling moments, each once, with words for the moment.</summary>

@@ -52,7 +52,7 @@ public sealed class EnergyReleaseRates
     /// <summary>J by path [N/mm] at the accepted point; null where not valid.</summary>
     public double? Path(LayerSample sample, double[] ux, double[] uy, double temperature)
     {
-        if (PathReason is not null)
+        if (PathReason is not null || FrontIsNear)
             return null;
         double j = 0;
         foreach (SolidBlock solid in (ReadOnlySpan<SolidBlock>)[_upper, _lower])
@@ -139,6 +139,17 @@ public sealed class EnergyReleaseRates
 
     private bool IsEndFace(GripBody body) => body.Rigid && Math.Abs(_model.Mesh.X[body.Nodes[0]] - _model.Mesh.X[body.Nodes[^1]]) < 1e-9 * BlockOf(body.Nodes[0]).Adherend.Thickness;
 
+    /// <summary>Whether the process zone has come within two thicknesses of the section ahead, where stresses vary too sharply for a section of few elements.</summary>
+    private bool FrontIsNear
+    {
+        get
+        {
+            double offset = _model.Mesh.X[_joint.LowerNodes[0]] - _joint.Position[0], x = (_front.ZoneStart ?? _front.CrackTip) + offset;
+            double reach = 2 * Math.Max(_upper.Adherend.Thickness, _lower.Adherend.Thickness);
+            return _front.Sense > 0 ? x > _aheadFrom - reach : x < _aheadTo + reach;
+        }
+    }
+
     private double WorkAhead(LayerSample sample)
     {
         double sum = 0, length = 0;
@@ -187,6 +198,8 @@ public sealed class EnergyReleaseRates
             return "no free arms longer than they are thick lie behind the front";
         if (Math.Abs(ahead - tip) < thickness)
             return "the bond ahead of the front is shorter than an arm is thick";
+        // A section too near a pin sees the sharp stresses under it, which the mesh does not resolve.
+        ahead -= _front.Sense * Math.Min(2 * thickness, 0.4 * Math.Abs(ahead - tip));
         for (int j = 0; j < mesh.Joints.Count; j++)
         {
             MeshedJoint other = mesh.Joints[j];

@@ -36,6 +36,7 @@ public sealed class FieldSeries
             VtuWriter.WriteLayers(Path.Combine(_folder, Name("layers", fields.Point)), _mesh, fields);
         if (!_points.Contains(fields.Point))
             _points.Add(fields.Point);
+        _points.Sort();
         WriteList();
     }
 

@@ -10,7 +10,7 @@ public sealed class RunMaxima
 {
     private readonly SpecimenModel _model;
     private readonly IReadOnlyList<bool> _leftOut;
-    private readonly double[] _opening, _sliding, _damage, _peel, _shear, _separated, _zone, _stress;
+    private readonly double[] _opening, _sliding, _damage, _peel, _shear, _separated, _zone, _closing, _stress;
     private readonly int[] _stressNode, _stressPoint;
 
     /// <summary>Starts from nothing.</summary>
@@ -28,7 +28,7 @@ public sealed class RunMaxima
         _shear = new double[joints];
         _separated = new double[joints];
         _zone = new double[joints];
-        Array.Fill(_zone, double.PositiveInfinity);
+        _closing = new double[joints];
         _stress = new double[adherends];
         _stressNode = new int[adherends];
         _stressPoint = new int[adherends];
@@ -54,7 +54,7 @@ public sealed class RunMaxima
             TakeJoint(j, point, samples[j]);
             foreach (BondFront front in fronts[j])
                 if (front.ZoneStart is { } start && front.CrackTip != front.StarterTip && !front.RunThrough)
-                    _zone[j] = Math.Min(_zone[j], Math.Abs(start - front.CrackTip));
+                    _zone[j] = Math.Max(_zone[j], Math.Abs(start - front.CrackTip));
         }
         for (int a = 0; a < _stress.Length; a++)
         {
@@ -70,6 +70,12 @@ public sealed class RunMaxima
         }
     }
 
+    /// <summary>Largest depth to which the faces of a joint were pressed into each other, over the layer's thickness [-].</summary>
+    public double ClosingShare(int joint) => _closing[joint] / _model.Layers[joint].Thickness;
+
+    /// <summary>Whether a crack grew in a joint, so that its process zone was measured and not estimated.</summary>
+    public bool HasGrown(int joint) => _zone[joint] > 0;
+
     /// <summary>Summaries of the joints.</summary>
     public IEnumerable<JointSummary> Joints()
     {
@@ -80,7 +86,7 @@ public sealed class RunMaxima
             for (int e = 0; e < joint.ElementCount; e++)
                 if (joint.Bonded[e])
                     length = Math.Max(length, joint.Position[e + 1] - joint.Position[e]);
-            double zone = double.IsFinite(_zone[j]) ? _zone[j] : joint.ProcessZoneEstimate;
+            double zone = _zone[j] > 0 ? _zone[j] : joint.ProcessZoneEstimate;
             yield return new JointSummary
             {
                 Name = joint.Name,
@@ -122,6 +128,7 @@ public sealed class RunMaxima
         {
             LayerResponse r = sample.Response[i];
             _opening[j] = Math.Max(_opening[j], sample.Separation[i].Opening);
+            _closing[j] = Math.Max(_closing[j], -sample.Separation[i].Opening);
             _sliding[j] = Math.Max(_sliding[j], Math.Abs(sample.Separation[i].Sliding));
             _damage[j] = Math.Max(_damage[j], r.Damage);
             _peel[j] = Math.Max(_peel[j], r.Peel);

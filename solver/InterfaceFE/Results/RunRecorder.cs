@@ -20,6 +20,8 @@ public sealed class RunRecorder : IMarchObserver
     private readonly int _fieldInterval;
     private readonly RunMaxima _maxima;
     private bool _temperatureChanged;
+    private FieldSnapshot? _peak, _last;
+    private double _largestLoad;
     private LayerSample[] _samples = [];
 
     /// <summary>Prepares the records of a run.</summary>
@@ -46,22 +48,34 @@ public sealed class RunRecorder : IMarchObserver
     /// <summary>Maxima over the run so far.</summary>
     public RunMaxima Maxima => _maxima;
 
-    /// <summary>Why a front has no J by path or rotation, one line each.</summary>
+    /// <summary>Why J by path or rotation is missing, one line for each reason.</summary>
     public IEnumerable<string> Remarks()
     {
-        for (int joint = 0; joint < _fronts.Length; joint++)
+        (string, Func<EnergyReleaseRates, string?>)[] ways = [("J path", rates => rates.PathReason), ("J rotation", rates => rates.RotationReason)];
+        foreach ((string what, Func<EnergyReleaseRates, string?> reason) in ways)
         {
-            for (int f = 0; f < _fronts[joint].Length; f++)
-            {
-                string where = $"joint '{_model.Layers[joint].Name}', front {_fronts[joint][f].Number}";
-                if (_rates[joint][f].PathReason is { } path)
-                    yield return $"{where}: no J path, since {path}";
-                if (_rates[joint][f].RotationReason is { } rotation)
-                    yield return $"{where}: no J rotation, since {rotation}";
-            }
+            var fronts = _rates.SelectMany((rates, joint) => rates.Select((r, f) => (Where: $"{_model.Layers[joint].Name} front {_fronts[joint][f].Number}", Reason: reason(r))));
+            foreach (var group in fronts.Where(f => f.Reason is not null).GroupBy(f => f.Reason))
+                yield return $"no {what} at {string.Join(", ", group.Select(f => f.Where))}: {group.Key}";
         }
+        yield return "J path is left empty once the process zone has come within two thicknesses of the section ahead of it";
         if (_temperatureChanged)
             yield return "J rotation and J under law are left empty once the temperature has changed: they hold at constant temperature only";
+    }
+
+    /// <summary>Keeps the fields of the last point and of the largest load of the main grip, if fields are kept at all and these are not among them.</summary>
+    public void Finish()
+    {
+        if (_fieldInterval == 0)
+            return;
+        foreach (FieldSnapshot? snapshot in (ReadOnlySpan<FieldSnapshot?>)[_peak, _last])
+        {
+            if (snapshot is null || _history.Snapshots.Any(s => s.Point == snapshot.Point))
+                continue;
+            _history.Snapshots.Add(snapshot);
+            _sink.Write(snapshot);
+        }
+        _history.Snapshots.Sort((a, b) => a.Point.CompareTo(b.Point));
     }
 
     /// <inheritdoc/>
@@ -95,8 +109,17 @@ public sealed class RunRecorder : IMarchObserver
         for (int joint = 0; joint < _samples.Length; joint++)
             _history.Damage.Add(new DamageRow(point.Number, joint, DamageOf(_samples[joint], _model.Mesh.Joints[joint])));
         _sink.Write(row, fronts, energy);
-        if (_fieldInterval > 0 && (point.StageEnd || point.Number % _fieldInterval == 0))
-            KeepFields(point);
+        if (_fieldInterval == 0)
+            return;
+        FieldSnapshot snapshot = _fields.Snapshot(point, _samples);
+        _last = snapshot;
+        if (MainLoad(row) is var load && load > _largestLoad)
+            (_largestLoad, _peak) = (load, snapshot);
+        bool firstDamage = _maxima.FirstDamage?.Point == point.Number;
+        if (!point.StageEnd && !firstDamage && point.Number % _fieldInterval != 0)
+            return;
+        _history.Snapshots.Add(snapshot);
+        _sink.Write(snapshot);
     }
 
     /// <inheritdoc/>
@@ -127,11 +150,14 @@ public sealed class RunRecorder : IMarchObserver
     /// <inheritdoc/>
     public void Said(string line) => _sink.Say(line);
 
-    private void KeepFields(MarchPoint point)
+    private double MainLoad(PointRow row)
     {
-        FieldSnapshot snapshot = _fields.Snapshot(point, _samples);
-        _history.Snapshots.Add(snapshot);
-        _sink.Write(snapshot);
+        if (_history.CurvesOf.Count == 0)
+            return 0;
+        int main = 0;
+        while (_history.Grips[main].Name != _history.CurvesOf[0])
+            main++;
+        return _history.Grips[main].Turned ? Math.Abs(row.Grips[main].Moment ?? 0) : row.Grips[main].Force;
     }
 
     private FrontRow Front(MarchPoint point, int joint, int f, IReadOnlyList<GripReading> readings)

@@ -74,7 +74,7 @@ public sealed record GripSummary
     /// <summary>Name.</summary>
     public required string Name { get; init; }
 
-    /// <summary>Largest force along the pull, interpolated by a parabola through the three highest points [N].</summary>
+    /// <summary>Largest force along the pull, interpolated by a parabola through the highest point and its neighbours where these belong to one smooth stretch of one stage [N].</summary>
     public double? PeakForce { get; init; }
 
     /// <summary>Displacement there [mm].</summary>
@@ -82,6 +82,12 @@ public sealed record GripSummary
 
     /// <summary>Nearest accepted point.</summary>
     public int? PeakPoint { get; init; }
+
+    /// <summary>Largest force along the pull at a stable equilibrium [N]; null when every point is stable or the grip is only turned.</summary>
+    public double? LargestStableForce { get; init; }
+
+    /// <summary>Displacement there [mm].</summary>
+    public double? DisplacementAtLargestStable { get; init; }
 
     /// <summary>Largest moment of a turned grip [N·mm].</summary>
     public double? PeakMoment { get; init; }
@@ -135,7 +141,7 @@ public sealed record JointSummary
     /// <summary>Element length along the bond [mm], the largest.</summary>
     public required double ElementLength { get; init; }
 
-    /// <summary>Least number of elements within a fully grown process zone, or by the estimate when none has grown.</summary>
+    /// <summary>Elements within the longest process zone behind a growing crack, or within the estimated one when none has grown.</summary>
     public required double ElementsPerProcessZone { get; init; }
 }
 

@@ -66,6 +66,8 @@ public static class SummaryText
         List<string> words = [];
         if (grip.PeakForce is not null)
             words.Add($"peak force {Number(grip.PeakForce)} N at {Number(grip.DisplacementAtPeak)} mm");
+        if (grip.LargestStableForce is not null)
+            words.Add($"largest stable force {Number(grip.LargestStableForce)} N at {Number(grip.DisplacementAtLargestStable)} mm");
         if (grip.PeakMoment is not null)
             words.Add($"peak moment {Number(grip.PeakMoment)} N·mm at {Number(grip.RotationAtPeak)} rad");
         if (grip.FinalForce is not null)

@@ -64,6 +64,8 @@ public static class SummaryWriter
                 json.WriteNumber("peak point", point);
             else
                 json.WriteNull("peak point");
+            Number(json, "largest stable force [N]", grip.LargestStableForce);
+            Number(json, "displacement at largest stable force [mm]", grip.DisplacementAtLargestStable);
             Number(json, "peak moment [N mm]", grip.PeakMoment);
             Number(json, "rotation at peak [rad]", grip.RotationAtPeak);
             Number(json, "final force [N]", grip.FinalForce);

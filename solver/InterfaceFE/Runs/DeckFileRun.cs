@@ -35,14 +35,14 @@ public static class DeckFileRun
             foreach (string warning in warnings)
                 progress("warning: " + warning);
             RunResult result = new FolderRun(folder, progress).Execute(reading.Deck, warnings, cancellation);
-            return new FileRunOutcome(CodeOf(result.Summary.Status), [], result);
+            return new FileRunOutcome(CodeOf(result.Summary), [], result);
         }, (code, messages) => new FileRunOutcome(code, messages, null));
     }
 
-    /// <summary>Exit code of a run's end.</summary>
-    public static ExitCode CodeOf(RunStatus status) => status switch
+    /// <summary>Exit code of a run: a finished run whose numbers do not hold fell short of its self-check.</summary>
+    public static ExitCode CodeOf(RunSummary summary) => summary.Status switch
     {
-        RunStatus.Finished or RunStatus.Severed => ExitCode.Done,
+        RunStatus.Finished or RunStatus.Severed => summary.SelfCheck.Verdict == Verdict.DoNotHold ? ExitCode.FellShort : ExitCode.Done,
         RunStatus.Interrupted => ExitCode.Interrupted,
         _ => ExitCode.StoppedEarly,
     };

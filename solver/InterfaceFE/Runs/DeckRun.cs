@@ -42,6 +42,7 @@ public static class DeckRun
         start = Stopwatch.GetTimestamp();
         var recorder = new RunRecorder(equilibrium, history, gauges, deck.Keep?.Fields.Points ?? new KeepDeck().Fields.Points, sink);
         MarchOutcome outcome = new March(equilibrium, Settings(deck, model), recorder).Run(cancellation);
+        recorder.Finish();
         var summary = new RunSummary { Status = Status(outcome.Status), Cause = outcome.Cause, Title = deck.Title };
         summary.Warnings.AddRange(meshing.Warnings);
         if (history.Points.Count > 0)
@@ -87,6 +88,9 @@ public static class DeckRun
     private static RunHistory Heading(Deck deck, SpecimenModel model, GaugeReader gauges)
     {
         GripInfo[] grips = [.. model.Grips.Select(grip => Info(deck, model, grip))];
+        foreach (GripInfo info in grips)
+            if (!info.Moved && deck.Keep?.CurvesOf?.Contains(info.Name) == true)
+                throw new DeckException("keep.curves of", $"'{info.Name}' is only fixed: it has no curve of force against displacement; name a grip that is pulled, pushed or turned (its reactions stand in grips.csv)");
         IReadOnlyList<string> curves = deck.Keep?.CurvesOf ?? [.. grips.Where(g => g.Moved).Select(g => g.Name)];
         return new RunHistory
         {
