@@ -63,7 +63,7 @@ public sealed class MomentEvenCase : ICase
             yield return CaseLine.AtMost(name + ": spread of the moment over the plateau, share of its mean", 1e-3, (plateau.Max(p => p.Lower) - plateau.Min(p => p.Lower)) / mean, "",
                 "steady growth: J does not depend on the crack length");
             yield return CaseLine.Reported($"{name}: growth on the plateau ({plateau.Count} points)", plateau[^1].Growth - plateau[0].Growth, "mm", "not compared");
-            yield return new CaseLine(name + ": J path on the plateau", toughness, plateau.Average(p => p.Front.JPath ?? double.NaN), 1e-2, "N/mm", "J of steady growth is the toughness; Rice 1968");
+            yield return new CaseLine(name + ": J path on the plateau", toughness, plateau.Average(p => p.Front.JPath) ?? double.NaN, 1e-2, "N/mm", "J of steady growth is the toughness; Rice 1968; points at which it has a value");
             yield return new CaseLine(name + ": J rotation on the plateau", toughness, plateau.Average(p => p.Front.JRotation ?? double.NaN), 1e-2, "N/mm", "J of steady growth is the toughness");
             foreach (CaseLine line in SelfCheck.Lines(name, run))
                 yield return line;
