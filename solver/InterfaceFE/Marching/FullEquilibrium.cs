@@ -15,9 +15,6 @@ public sealed class FullEquilibrium : IEquilibrium
     /// <summary>Share of the largest reference of the run below which the reference does not fall: after full unloading only rounding is left to measure by.</summary>
     private const double LeastReference = 1e-3;
 
-    /// <summary>Damage from which a point counts as separated; what it still carries is lost in the tolerance of equilibrium.</summary>
-    public const double Separated = 1 - 1e-9;
-
     private readonly SpecimenModel _model;
     private readonly ElementTable _table;
     private readonly SparsePlan _plan;
@@ -26,7 +23,7 @@ public sealed class FullEquilibrium : IEquilibrium
     private readonly StateStore _state;
     private readonly double[] _u, _accepted, _internal, _layerForce, _dissipationGradient, _magnitudes, _temperatureRate, _external, _externalRate, _held, _heldRate;
     private readonly double[] _rightSide, _solution, _tangentSolution, _gradient, _base, _noMagnitudes = [];
-    private readonly double[] _largestDamage, _leastDamage, _acceptedLargest, _acceptedLeast;
+    private readonly BondDamage _bonds;
     private readonly double[][] _slotTangents;
     private readonly bool[] _skew;
     private readonly bool[] _isHeld;
@@ -68,11 +65,7 @@ public sealed class FullEquilibrium : IEquilibrium
         _gradient = new double[n];
         _base = new double[n];
         _isHeld = new bool[n];
-        int layerElements = model.Layers.Sum(l => l.Count);
-        _largestDamage = new double[layerElements];
-        _leastDamage = new double[layerElements];
-        _acceptedLargest = new double[layerElements];
-        _acceptedLeast = new double[layerElements];
+        _bonds = new BondDamage(model);
         _slotTangents = new double[_table.SlotCount][];
         _skew = new bool[_table.SlotCount];
         int native = _table.LargestNative, slot = _table.LargestSlot;
@@ -88,6 +81,9 @@ public sealed class FullEquilibrium : IEquilibrium
 
     /// <summary>The model.</summary>
     public SpecimenModel Model => _model;
+
+    /// <summary>Damage of the bonds, and what hangs together by them.</summary>
+    public BondDamage Bonds => _bonds;
 
     /// <summary>The plan of the factorisation, for its counts.</summary>
     public SparsePlan Plan => _plan;
@@ -249,8 +245,7 @@ public sealed class FullEquilibrium : IEquilibrium
                     if (answer.Growing)
                         GrowingElements++;
                     int layerElement = slot - _table.Slot(_table.FirstLayerBlock, 0);
-                    _largestDamage[layerElement] = answer.LargestDamage;
-                    _leastDamage[layerElement] = answer.LeastDamage;
+                    _bonds.Take(layerElement, answer);
                 }
                 else if (block < _table.SolidBlocks)
                     storedSolids += answer.Stored;
@@ -387,8 +382,7 @@ public sealed class FullEquilibrium : IEquilibrium
         AcceptedProgress = Progress;
         AcceptedTemperature = Temperature;
         _largestReference = Math.Max(_largestReference, _reference);
-        Array.Copy(_largestDamage, _acceptedLargest, _largestDamage.Length);
-        Array.Copy(_leastDamage, _acceptedLeast, _leastDamage.Length);
+        _bonds.Accept();
         _state.Accept();
     }
 
@@ -424,67 +418,6 @@ public sealed class FullEquilibrium : IEquilibrium
         return 0;
     }
 
-    /// <summary>
-    /// Separations that arc length watches, as pairs of unknowns: those of layer elements that are giving way at the accepted point, or of all that still carry while none is.
-    /// </summary>
-    public IReadOnlyList<(int Upper, int Lower)> WatchedSeparations()
-    {
-        List<(int, int)> pairs = Separations(e => _acceptedLargest[e] > 0 && _acceptedLeast[e] < Separated);
-        return pairs.Count > 0 ? pairs : Separations(e => _acceptedLeast[e] < Separated);
-    }
-
-    private List<(int, int)> Separations(Func<int, bool> watched)
-    {
-        var pairs = new SortedSet<(int, int)>();
-        int index = 0;
-        foreach (LayerBlock layer in _model.Layers)
-        {
-            for (int e = 0; e < layer.Count; e++, index++)
-            {
-                if (!watched(index))
-                    continue;
-                ReadOnlySpan<int> nodes = layer.Nodes(e);
-                for (int i = 0; i < layer.Stations; i++)
-                {
-                    int lower = _model.Unknowns.OfNode(nodes[i]), upper = _model.Unknowns.OfNode(nodes[layer.Stations + i]);
-                    if (lower < 0 || upper < 0)
-                        continue;
-                    pairs.Add((upper, lower));
-                    pairs.Add((upper + 1, lower + 1));
-                }
-            }
-        }
-        return [.. pairs];
-    }
-
-    /// <summary>
-    /// Bodies of the specimen that hang together: adherends joined by at least one layer element that still carries at the accepted point. Second: length of bond that still carries,
-    /// as a share of the bond at the start (1 when there is none).
-    /// </summary>
-    /// <param name="separated">Damage from which a point counts as separated.</param>
-    public (int Bodies, double CarryingShare) Connections(double separated = Separated)
-    {
-        int adherends = _model.Solids.Count, bodies = adherends, index = 0;
-        var parent = Enumerable.Range(0, adherends).ToArray();
-        double carrying = 0, all = 0;
-        foreach (LayerBlock layer in _model.Layers)
-        {
-            for (int e = 0; e < layer.Count; e++, index++)
-            {
-                all += layer.Length(e);
-                if (_acceptedLeast[index] > separated)
-                    continue;
-                carrying += layer.Length(e);
-                int a = Root(parent, layer.LowerAdherend), b = Root(parent, layer.UpperAdherend);
-                if (a == b)
-                    continue;
-                parent[a] = b;
-                bodies--;
-            }
-        }
-        return (bodies, all > 0 ? carrying / all : 1);
-    }
-
     /// <summary>State of a layer element at the accepted point.</summary>
     public ReadOnlySpan<double> AcceptedLayerState(int joint, int element) => _state.Accepted(_table.FirstLayerBlock + joint, element);
 
@@ -507,13 +440,6 @@ public sealed class FullEquilibrium : IEquilibrium
                 _rightSide[ids[i]] += sum;
             }
         }
-    }
-
-    private static int Root(int[] parent, int i)
-    {
-        while (parent[i] != i)
-            i = parent[i];
-        return i;
     }
 
     private bool Store(int slot, ReadOnlySpan<double> tangent)

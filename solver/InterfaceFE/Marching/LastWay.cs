@@ -50,7 +50,7 @@ internal sealed class LastWay
             case PathMeasure.Dissipation when Dissipation > 0:
                 return new DissipationControl(accepted.SpentInLayers + share * Dissipation, share * Dissipation);
             case PathMeasure.ArcLength:
-                IReadOnlyList<(int, int)> watched = equilibrium.WatchedSeparations();
+                IReadOnlyList<(int, int)> watched = equilibrium.Bonds.WatchedSeparations();
                 double[] way = (double[])_displacement.Clone();
                 double length = new ArcLengthControl(watched, way, 1).Length(way, []);
                 return length > 0 ? new ArcLengthControl(watched, way, share * length) : null;

@@ -55,7 +55,7 @@ public sealed class March(FullEquilibrium equilibrium, MarchSettings settings, I
             return StageMarch.CanStillMove(equilibrium, singular);
         equilibrium.Accept();
         _ledger = new EnergyLedger(equilibrium);
-        _bodiesAtStart = equilibrium.Connections().Bodies;
+        _bodiesAtStart = equilibrium.Bonds.Connections().Bodies;
         observer.PointAccepted(new MarchPoint(0, 0, true, 0, 0, equilibrium.Temperature, negative == 0, _ledger.Account()));
         return null;
     }

@@ -162,7 +162,7 @@ internal sealed class StageMarch
     private MarchOutcome GiveUp()
     {
         _equilibrium.RollBack();
-        double share = _equilibrium.Connections().CarryingShare;
+        double share = _equilibrium.Bonds.Connections().CarryingShare;
         if (share <= LastBondShare)
             return new MarchOutcome(MarchStatus.Severed, string.Create(CultureInfo.InvariantCulture,
                 $"the last {100 * share:G3} % of the bond gave way in stage {_stage.Number} at progress {_equilibrium.AcceptedProgress:G4}"));
@@ -283,14 +283,14 @@ internal sealed class StageMarch
     /// </summary>
     private bool Severed()
     {
-        if (_equilibrium.Connections().Bodies > _bodiesAtStart)
+        if (_equilibrium.Bonds.Connections().Bodies > _bodiesAtStart)
             return true;
         double load = 0;
         for (int i = 0; i < _equilibrium.Displacement.Length; i++)
             if (_equilibrium.Model.Unknowns.IsRoot[_equilibrium.Model.Unknowns.VertexOfUnknown[i]])
                 load = Math.Max(load, Math.Abs(_equilibrium.ExternalForce(i)));
         _largestLoad = Math.Max(_largestLoad, load);
-        bool thread = load < Thread * _largestLoad && _equilibrium.Connections(AlmostSeparated).Bodies > _bodiesAtStart;
+        bool thread = load < Thread * _largestLoad && _equilibrium.Bonds.Connections(AlmostSeparated).Bodies > _bodiesAtStart;
         _pointsByThread = thread ? _pointsByThread + 1 : 0;
         return _pointsByThread > MostByThread;
     }
