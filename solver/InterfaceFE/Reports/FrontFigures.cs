@@ -20,8 +20,10 @@ internal static class FrontFigures
         {
             FrontRow[] own = [.. rows.Where(row => row.Front == fronts[f])];
             double[] x = [.. own.Select(row => byPoint ? row.Point : main.At(row.Point))];
-            double[] tip = [.. own.Select(row => row.CrackTip ?? double.NaN)];
             double[] start = [.. own.Select(row => row.ProcessZoneStart ?? double.NaN)];
+            // Once its process zone is gone a front has run through its stretch: it has no tip any more.
+            int last = Array.FindLastIndex(start, double.IsFinite);
+            double[] tip = [.. own.Select((row, i) => last < 0 || i <= last ? row.CrackTip ?? double.NaN : double.NaN)];
             string of = fronts.Length > 1 ? string.Create(CultureInfo.InvariantCulture, $" of front {fronts[f]}") : "";
             bands.AddRange(Bands($"process zone{of}", x, tip, start, 2 * f));
             if (Any(x, tip))
