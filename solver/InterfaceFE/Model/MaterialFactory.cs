@@ -14,10 +14,12 @@ public static class MaterialFactory
         OutOfPlaneState state = deck.Model.OutOfPlane == OutOfPlane.Held ? OutOfPlaneState.Held : OutOfPlaneState.Free;
         try
         {
-            if (material.ShearModulus is not { } shear)
+            // An isotropic material may still expand by direction, as a drawn sheet does.
+            double shear = material.ShearModulus?.Xy ?? material.Young.X / (2 * (1 + material.Poisson.Xy));
+            if (material.ShearModulus is null && material.Expansion == new Directional(material.Expansion.X))
                 return PlaneElasticity.Isotropic(material.Young.X, material.Poisson.Xy, material.Expansion.X, state);
             return PlaneElasticity.Orthotropic(new OrthotropicConstants(material.Young.X, material.Young.Y, material.Young.Z, material.Poisson.Xy, material.Poisson.Xz, material.Poisson.Zy,
-                shear.Xy, material.Expansion.X, material.Expansion.Y, material.Expansion.Z), state);
+                shear, material.Expansion.X, material.Expansion.Y, material.Expansion.Z), state);
         }
         catch (ArgumentException fault)
         {

@@ -8,6 +8,9 @@ internal static class MaterialChecks
 {
     private const double NearlyIncompressible = 0.49;
 
+    /// <summary>Common moduli of adherends [MPa], from rubber to tungsten carbide: common practice, no source.</summary>
+    private const double LeastYoung = 1, LargestYoung = 1e6;
+
     /// <summary>Checks a material.</summary>
     public static void Run(MaterialDeck material, string path, ReadContext context)
     {
@@ -16,6 +19,13 @@ internal static class MaterialChecks
         string shear = path + ".shear modulus";
         if (!context.IsSound(young) || !context.IsSound(poisson))
             return;
+        foreach (double modulus in (ReadOnlySpan<double>)[material.Young.X, material.Young.Y, material.Young.Z])
+        {
+            if (modulus is >= LeastYoung and <= LargestYoung)
+                continue;
+            context.Warn(young, string.Create(CultureInfo.InvariantCulture, $"a modulus of {NumberText.Rounded(modulus, 4)} MPa is unusual for an adherend; common are {LeastYoung} to {LargestYoung} MPa: look at the unit"));
+            break;
+        }
         bool isIsotropic = !context.IsGiven(young + ".x") && !context.IsGiven(poisson + ".xy");
         if (isIsotropic)
         {
