@@ -8,6 +8,9 @@ namespace InterfaceFE.Model;
 /// <summary>Makes the model that is marched from a deck and its mesh.</summary>
 public static class ModelBuilder
 {
+    /// <summary>Onset of the contact of faces that were never bonded, as a share of the layer's thickness.</summary>
+    private const double OnsetShare = 1e-3;
+
     /// <summary>Builds the model.</summary>
     /// <exception cref="DeckException">The deck asks for something that the mesh or the mechanics cannot give.</exception>
     public static SpecimenModel Build(Deck deck, Mesh mesh)
@@ -43,7 +46,7 @@ public static class ModelBuilder
     }
 
     private static LayerBlock OpenFaces(Deck deck, Mesh mesh, MeshedJoint joint, LayerBlock layer) =>
-        new(mesh, joint, new ClosingLaw(layer.Law.Stiffness.Contact), layer.Thickness, Rule(deck, mesh), 0, deck.StressFreeTemperature, bonded: false);
+        new(mesh, joint, new ClosingLaw(layer.Law.Stiffness.Contact, OnsetShare * layer.Thickness), layer.Thickness, Rule(deck, mesh), 0, deck.StressFreeTemperature, bonded: false);
 
     private static LayerRule Rule(Deck deck, Mesh mesh) => deck.Model.LayerIntegration switch
     {
