@@ -13,12 +13,13 @@ public sealed record FlexureRun(RunResult Result)
     public const string PureSliding = "symmetry of two equal arms whose faces lie on each other without friction; the pins press on one face, which leaves a share of mode I below 1e-4 (0.5 deg)";
 
     /// <summary>Runs a specimen.</summary>
-    public static FlexureRun Of(CaseContext context, FlexureSpecimen specimen, double crack, double strength, Mixing mixing, double travel, int mostPoints = 2000)
+    public static FlexureRun Of(CaseContext context, FlexureSpecimen specimen, double crack, double strength, Mixing mixing, double travel, int mostPoints = 2000, double? elementLength = null)
     {
         ArgumentNullException.ThrowIfNull(context);
         ArgumentNullException.ThrowIfNull(specimen);
         string law = mixing == Mixing.BenzeggaghKenane ? "Benzeggagh-Kenane" : "independent modes";
-        return new FlexureRun(context.Run($"{specimen.Name}, crack {crack} mm, {strength} MPa, {law}", specimen.Deck(crack, strength, mixing, travel, mostPoints)));
+        string elements = elementLength is null ? "" : $", elements of {elementLength} mm";
+        return new FlexureRun(context.Run($"{specimen.Name}, crack {crack} mm, {strength} MPa, {law}{elements}", specimen.Deck(crack, strength, mixing, travel, mostPoints, elementLength)));
     }
 
     /// <summary>Peak force [N]; NaN where the run ended at its highest force, so that there is no peak.</summary>

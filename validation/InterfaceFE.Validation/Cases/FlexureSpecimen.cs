@@ -97,10 +97,12 @@ public sealed record FlexureSpecimen
     /// <param name="mixing">How the modes mix.</param>
     /// <param name="travel">Travel of the pin.</param>
     /// <param name="mostPoints">Points after which the run may stop, once the peak is past.</param>
-    public string Deck(double crack, double strength, Mixing mixing, double travel, int mostPoints = 2000)
+    /// <param name="elementLength">Element length along the joint; null: the default.</param>
+    public string Deck(double crack, double strength, Mixing mixing, double travel, int mostPoints = 2000, double? elementLength = null)
     {
         double length = 2 * (HalfSpan + Overhang);
         string mixed = mixing == Mixing.BenzeggaghKenane ? $"mixing: benzeggagh-kenane, exponent: {Exponent}" : "mixing: independent modes";
+        string elements = elementLength is { } along ? $", element length: {along} mm" : "";
         return $$$"""
             title: End-notched flexure, {{{Name}}}
             model: {width: {{{Width}}} mm, out of plane: held, rotation: small}
@@ -115,7 +117,7 @@ public sealed record FlexureSpecimen
               lower arm: {of: arm, rectangle: {corner: [0 mm, 0 mm], size: [{{{length}}} mm, {{{Height}}} mm]}}
               upper arm: {of: arm, rectangle: {corner: [0 mm, {{{Height}}} mm], size: [{{{length}}} mm, {{{Height}}} mm]}}
             joints:
-              bond: {layer: matrix, upper: bottom of upper arm, lower: top of lower arm, starter crack: {from: start, length: {{{Overhang + crack}}} mm}}
+              bond: {layer: matrix, upper: bottom of upper arm, lower: top of lower arm, starter crack: {from: start, length: {{{Overhang + crack}}} mm}{{{elements}}}}
             grips:
               left support: {on: bottom of lower arm, at: {{{Overhang}}} mm}
               right support: {on: bottom of lower arm, at: {{{length - Overhang}}} mm}

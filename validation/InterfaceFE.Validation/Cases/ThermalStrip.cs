@@ -120,6 +120,6 @@ public sealed record ThermalStrip(string OutOfPlane, double HalfLength, double S
         ? $"{{young: {{x: {young} GPa, y: 1e5 GPa, z: {young} GPa}}, poisson: {{xy: 0, xz: {poisson}, zy: 0}}, shear modulus: {{xy: 1e4 GPa}}, expansion: {{x: {expansion}e-6 1/K, y: 0 1/K, z: {expansion}e-6 1/K}}}}"
         : $"{{young: {young} GPa, poisson: {poisson}, expansion: {expansion}e-6 1/K}}";
 
-    /// <summary>A curve whose elastic limit, at a separation of 1 mm, is far beyond what the strips reach.</summary>
-    private static string Elastic(double stiffness) => $"{{law: bilinear, stiffness: {stiffness} MPa/mm, strength: {stiffness} MPa, toughness: {5 * stiffness} N/mm}}";
+    /// <summary>A curve whose elastic limit, at a separation of 1 mm, is far beyond what the strips reach, so tough that no process zone asks for short elements.</summary>
+    private static string Elastic(double stiffness) => $"{{law: bilinear, stiffness: {stiffness} MPa/mm, strength: {stiffness} MPa, toughness: {1000 * stiffness} N/mm}}";
 }
