@@ -14,10 +14,12 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     private readonly bool _isSymmetric;
     private readonly SlotValues _values;
     private readonly FrontFactor _fronts;
+    private readonly FrontSolver _solver;
     private readonly DenseRoot?[] _roots = new DenseRoot?[CachedRoots];
     private readonly bool[] _isHeld;
     private readonly AlignedBuffer _x;
     private readonly Refinement _refinement;
+    private double[]? _whole;
     private int _nextRoot;
     private bool _isFactored;
     private bool _isStale;
@@ -29,6 +31,7 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         _isSymmetric = isSymmetric;
         _values = new SlotValues(plan, isSymmetric);
         _fronts = new FrontFactor(plan, _values, isSymmetric);
+        _solver = new FrontSolver(plan, _fronts.Store);
         _isHeld = new bool[plan.RootUnknownCount];
         _x = new AlignedBuffer(plan.UnknownCount);
         _refinement = new Refinement(plan, _values, SolveOnce);
@@ -49,10 +52,29 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     public double BackwardError { get; private set; } = double.NaN;
 
     /// <summary>Pivots of the last factorisation that were lifted, numerically zero ones included.</summary>
-    public int LiftedPivots => _fronts.Judge.Zero + _fronts.Judge.Harmful;
+    public int LiftedPivots => _fronts.Tally.Zero + _fronts.Tally.Harmful;
 
     /// <summary>Largest sum of magnitudes that went into a pivot of the last factorisation, over the scale of its unknown; about 2 for a definite matrix.</summary>
-    public double Growth => _fronts.Growth;
+    public double Growth => _fronts.Tally.Growth;
+
+    /// <summary>
+    /// Threads that a factorisation may use, 1 or 2; 1 at first. The work is cut into the same parts for any number, so that the same numbers come out to the last bit. A small
+    /// factorisation stays on the calling thread.
+    /// </summary>
+    /// <exception cref="ArgumentOutOfRangeException">Neither 1 nor 2.</exception>
+    public int Threads
+    {
+        get => _fronts.MayShare ? 2 : 1;
+        set
+        {
+            ArgumentOutOfRangeException.ThrowIfLessThan(value, 1);
+            ArgumentOutOfRangeException.ThrowIfGreaterThan(value, 2);
+            _fronts.MayShare = value == 2;
+        }
+    }
+
+    /// <summary>Floating-point operations of the last <see cref="Factor"/>, root block not included (a multiply-add counts as two; a general factor does twice as many).</summary>
+    public double LastFlops => _fronts.Work;
 
     private int Halves => _isSymmetric ? 1 : 2;
 
@@ -63,17 +85,24 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     /// <exception cref="ArgumentException">The matrix has another size than the slot.</exception>
     public void Replace(int slot, ReadOnlySpan<double> elementMatrix)
     {
-        _values.Replace(slot, elementMatrix);
+        if (!_values.Replace(slot, elementMatrix))
+            return;
+        _fronts.MarkSlot(slot);
         _isStale = true;
     }
 
+    /// <summary>Makes the next <see cref="Factor"/> a whole one. It leaves the same numbers as one along the changed paths: a check, and a measure of what those save.</summary>
+    public void ForgetFactor() => _fronts.MarkAll();
+
     /// <summary>
-    /// Factors the matrix with the numbers now in the slots. <see cref="FactorStatus.NotFinite"/> names the slot and the row of the entry, or no slot (-1) where finite
-    /// entries overflowed at an unknown; solves are refused then. <see cref="FactorStatus.ZeroPivot"/> speaks of unknowns outside the root: whether the root is singular
-    /// depends on what is held, see <see cref="Inertia"/>.
+    /// Factors the matrix with the numbers now in the slots: at first all of it, later the fronts from the slots that were replaced up to the root. <see cref="FactorStatus.NotFinite"/>
+    /// names the slot and the row of the entry, or no slot (-1) where finite entries overflowed at an unknown; solves are refused then. <see cref="FactorStatus.ZeroPivot"/>
+    /// speaks of unknowns outside the root: whether the root is singular depends on what is held, see <see cref="Inertia"/>.
     /// </summary>
     public FactorOutcome Factor()
     {
+        if (_isFactored && _fronts.IsUpToDate)
+            return Outcome();
         _isFactored = false;
         foreach (DenseRoot? root in _roots)
             root?.Invalidate();
@@ -81,16 +110,15 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         if (slot >= 0)
             return new FactorOutcome(FactorStatus.NotFinite, unknown, slot, double.NaN);
         _fronts.Run();
-        PivotJudge judge = _fronts.Judge;
-        int fault = judge.FirstNotFinite >= 0 ? judge.FirstNotFinite : FirstFaultyRoot();
+        int fault = _fronts.FirstNotFinite >= 0 ? _fronts.FirstNotFinite : FirstFaultyRoot();
         if (fault >= 0)
+        {
+            _fronts.MarkAll();
             return new FactorOutcome(FactorStatus.NotFinite, Plan.OldOf[fault], -1, double.NaN);
+        }
         _isFactored = true;
         _isStale = false;
-        double smallest = Plan.InteriorUnknownCount > 0 ? judge.SmallestRatio : 1;
-        return judge.FirstZero < 0
-            ? new FactorOutcome(FactorStatus.Done, -1, -1, smallest)
-            : new FactorOutcome(FactorStatus.ZeroPivot, Plan.OldOf[judge.FirstZero], -1, smallest);
+        return Outcome();
     }
 
     /// <summary>
@@ -111,14 +139,55 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
             (RefinementSteps, BackwardError) = _refinement.Run(b, x, _isHeld);
     }
 
+    /// <summary>
+    /// Solves as <see cref="Solve(ReadOnlySpan{double}, Span{double}, ReadOnlySpan{int})"/> does, for a right side that is zero outside a path and for the values on that path alone:
+    /// the same values to the last bit. Where solves are refined it costs a whole solve, since the residual needs all values.
+    /// </summary>
+    /// <param name="b">Right side, length <see cref="Size"/>; entries outside the path must be zero.</param>
+    /// <param name="x">On entry values of held root unknowns; on return values on the path. Others stay as they are.</param>
+    /// <param name="heldRootUnknowns">Indices of root unknowns that are held.</param>
+    /// <param name="wanted">The path, of this factor's plan.</param>
+    /// <exception cref="InvalidOperationException">There is no sound factor.</exception>
+    /// <exception cref="ArgumentException">A length is wrong, or a held unknown is not a root unknown.</exception>
+    public void Solve(ReadOnlySpan<double> b, Span<double> x, ReadOnlySpan<int> heldRootUnknowns, FrontPath wanted)
+    {
+        ArgumentNullException.ThrowIfNull(wanted);
+        if (b.Length != Size || x.Length != Size)
+            throw new ArgumentException($"b and x must have {Size} entries; they have {b.Length} and {x.Length}.");
+        DenseRoot root = RootFor(heldRootUnknowns);
+        if (IsRefined && !_isStale)
+        {
+            _whole ??= new double[Size];
+            x.CopyTo(_whole);
+            Solve(b, _whole, heldRootUnknowns);
+            CopyPath(_whole, x, wanted);
+            return;
+        }
+        RefinementSteps = 0;
+        BackwardError = double.NaN;
+        int interior = Plan.InteriorUnknownCount;
+        double* work = _x.Start;
+        foreach (int front in wanted.Fronts)
+            for (int i = Plan.First[front]; i < Plan.First[front + 1]; i++)
+                work[i] = b[Plan.OldOf[i]];
+        for (int i = interior; i < Size; i++)
+            work[i] = b[Plan.OldOf[i]];
+        SolvePlaced(root, x, wanted);
+        foreach (int front in wanted.Fronts)
+            for (int i = Plan.First[front]; i < Plan.First[front + 1]; i++)
+                x[Plan.OldOf[i]] = work[i];
+        for (int i = interior; i < Size; i++)
+            x[Plan.OldOf[i]] = work[i];
+    }
+
     /// <inheritdoc/>
     /// <exception cref="InvalidOperationException">There is no sound factor: none was made, or an entry was not finite.</exception>
     /// <exception cref="ArgumentException">A held unknown is not a root unknown.</exception>
     public Inertia Inertia(ReadOnlySpan<int> heldRootUnknowns)
     {
         Inertia root = RootFor(heldRootUnknowns).Inertia;
-        PivotJudge judge = _fronts.Judge;
-        return new Inertia(judge.Positive + root.Positive, judge.Negative + root.Negative, judge.Zero + root.Zero);
+        PivotTally tally = _fronts.Tally;
+        return new Inertia(tally.Positive + root.Positive, tally.Negative + root.Negative, tally.Zero + root.Zero);
     }
 
     /// <inheritdoc/>
@@ -177,17 +246,42 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
 
     private void SolveWith(DenseRoot root, ReadOnlySpan<double> b, Span<double> x)
     {
-        int interior = Plan.InteriorUnknownCount;
         double* work = _x.Start;
         for (int i = 0; i < Size; i++)
             work[i] = b[Plan.OldOf[i]];
-        _fronts.Forward(work);
+        SolvePlaced(root, x, Plan.Whole);
+        for (int i = 0; i < Size; i++)
+            x[Plan.OldOf[i]] = work[i];
+    }
+
+    /// <summary>Solves for the right side in the work vector; held values come from x.</summary>
+    private void SolvePlaced(DenseRoot root, ReadOnlySpan<double> x, FrontPath path)
+    {
+        int interior = Plan.InteriorUnknownCount;
+        double* work = _x.Start;
+        _solver.Forward(work, path);
         for (int i = 0; i < _isHeld.Length; i++)
             if (_isHeld[i])
                 work[interior + i] = x[Plan.OldOf[interior + i]];
         root.Solve(_fronts, Halves, work + interior);
-        _fronts.Backward(work);
-        for (int i = 0; i < Size; i++)
-            x[Plan.OldOf[i]] = work[i];
+        _solver.Backward(work, path);
+    }
+
+    private void CopyPath(ReadOnlySpan<double> from, Span<double> to, FrontPath path)
+    {
+        foreach (int front in path.Fronts)
+            for (int i = Plan.First[front]; i < Plan.First[front + 1]; i++)
+                to[Plan.OldOf[i]] = from[Plan.OldOf[i]];
+        for (int i = Plan.InteriorUnknownCount; i < Size; i++)
+            to[Plan.OldOf[i]] = from[Plan.OldOf[i]];
+    }
+
+    private FactorOutcome Outcome()
+    {
+        PivotTally tally = _fronts.Tally;
+        double smallest = Plan.InteriorUnknownCount > 0 ? tally.SmallestRatio : 1;
+        return tally.FirstZero < 0
+            ? new FactorOutcome(FactorStatus.Done, -1, -1, smallest)
+            : new FactorOutcome(FactorStatus.ZeroPivot, Plan.OldOf[tally.FirstZero], -1, smallest);
     }
 }

@@ -4,7 +4,7 @@ namespace InterfaceFE.Sparse;
 /// Decides on each pivot: sound, numerically zero (no larger than the round-off of its own forming), or small and harmful (its column would grow by more than 1e7). The
 /// last two are lifted, sign kept, which refinement of the solves makes good. Small pivots that do no harm, as a slender part's last ones, stay.
 /// </summary>
-internal sealed class PivotJudge
+internal static class PivotJudge
 {
     /// <summary>Share of an unknown's scale below which a pivot is numerically zero in any case.</summary>
     public const double ZeroShare = 1e-15;
@@ -13,12 +13,12 @@ internal sealed class PivotJudge
     public const double NoiseFactor = 128;
 
     /// <summary>
-    /// Share of an unknown's soft scale below which a pivot is looked at closely. A look costs a substitution through the front's subtree; rigid turning of a long part leaves
-    /// up to 1e-5 of round-off (measured: 2000×4 elements, floating), and a clamped strip's last pivots reach the same size when it is 30 times as long as high.
+    /// Share of an unknown's soft scale below which a pivot is looked at closely. A look costs a substitution through the upper part of the front's subtree; rigid turning of
+    /// a long part leaves up to 1e-5 of round-off (measured: 2000×4 elements, floating), and a clamped strip's last pivots reach the same size when it is 30 times as long as high.
     /// </summary>
     public const double SmallShare = 1e-4;
 
-    /// <summary>The same for the scaled pivots of the root, where a look costs a substitution through all fronts.</summary>
+    /// <summary>The same for the scaled pivots of the root.</summary>
     public const double SmallRootShare = 1e-6;
 
     /// <summary>
@@ -33,68 +33,35 @@ internal sealed class PivotJudge
     /// <summary>Unit round-off.</summary>
     public const double RoundOff = 1.1102230246251565e-16;
 
-    /// <summary>Positive pivots that are not numerically zero.</summary>
-    public int Positive { get; private set; }
-
-    /// <summary>Negative pivots that are not numerically zero.</summary>
-    public int Negative { get; private set; }
-
-    /// <summary>Numerically zero pivots.</summary>
-    public int Zero { get; private set; }
-
-    /// <summary>Pivots lifted for growth alone.</summary>
-    public int Harmful { get; private set; }
-
-    /// <summary>Place of the first numerically zero pivot; -1 for none.</summary>
-    public int FirstZero { get; private set; }
-
-    /// <summary>Place of the first pivot that is not finite; -1 for none.</summary>
-    public int FirstNotFinite { get; private set; }
-
-    /// <summary>Smallest magnitude of a pivot (before lifting) over the scale of its unknown.</summary>
-    public double SmallestRatio { get; private set; }
-
-    /// <summary>Starts anew.</summary>
-    public void Reset()
-    {
-        Positive = Negative = Zero = Harmful = 0;
-        FirstZero = FirstNotFinite = -1;
-        SmallestRatio = double.PositiveInfinity;
-    }
-
     /// <summary>Whether a pivot needs a look at its column before it is taken.</summary>
     public static bool IsSmall(double pivot, double softScale) => !(Math.Abs(pivot) >= SmallShare * softScale);
 
-    /// <summary>Counts a pivot and returns the value to use.</summary>
+    /// <summary>Counts a finite pivot and returns the value to use.</summary>
+    /// <param name="tally">Counts.</param>
     /// <param name="place">Its place in the elimination order.</param>
     /// <param name="pivot">As computed.</param>
     /// <param name="scale">Scale of its unknown, above zero.</param>
     /// <param name="softScale">Scale of its unknown without layers, above zero.</param>
     /// <param name="noise">Round-off that its forming may have left in it; needed for small pivots only.</param>
     /// <param name="growth">Growth its column would cause; needed for small pivots only.</param>
-    public double Take(int place, double pivot, double scale, double softScale, double noise, double growth)
+    public static double Take(ref PivotTally tally, int place, double pivot, double scale, double softScale, double noise, double growth)
     {
-        if (!double.IsFinite(pivot))
-        {
-            FirstNotFinite = FirstNotFinite < 0 ? place : FirstNotFinite;
-            return 1;
-        }
         double size = Math.Abs(pivot), zero = Math.Max(ZeroShare * scale, NoiseFactor * noise);
-        SmallestRatio = Math.Min(SmallestRatio, size / scale);
+        tally.SmallestRatio = Math.Min(tally.SmallestRatio, size / scale);
         double lifted = Math.Max(LiftShare * softScale, zero);
         if (size <= zero)
         {
-            Zero++;
-            FirstZero = FirstZero < 0 ? place : FirstZero;
+            tally.Zero++;
+            tally.FirstZero = tally.FirstZero < 0 ? place : tally.FirstZero;
             return pivot < 0 ? -lifted : lifted;
         }
         if (pivot > 0)
-            Positive++;
+            tally.Positive++;
         else
-            Negative++;
+            tally.Negative++;
         if (size >= lifted || growth <= HarmfulGrowth)
             return pivot;
-        Harmful++;
+        tally.Harmful++;
         return pivot < 0 ? -lifted : lifted;
     }
 }

@@ -36,6 +36,13 @@ internal sealed class SlotMap
             }
         }
         ValueCount = filled;
+        (EntryStart, Entries) = SparsePlan.Group(Place, plan.UnknownCount);
+        EntrySlot = new int[Entries.Length];
+        var slotOf = new int[Place.Length];
+        for (int slot = 0; slot < slots; slot++)
+            slotOf.AsSpan(pattern.SlotStart[slot], pattern.SlotStart[slot + 1] - pattern.SlotStart[slot]).Fill(slot);
+        for (int i = 0; i < Entries.Length; i++)
+            EntrySlot[i] = slotOf[Entries[i]];
     }
 
     /// <summary>Numbers of a slot's own unknowns in elimination order, slot after slot as in the pattern.</summary>
@@ -61,6 +68,15 @@ internal sealed class SlotMap
 
     /// <summary>Length of the array of values.</summary>
     public long ValueCount { get; }
+
+    /// <summary>Start of each place's entries in <see cref="Entries"/>.</summary>
+    public int[] EntryStart { get; }
+
+    /// <summary>Numbers into <see cref="Place"/> by place, in slot order.</summary>
+    public int[] Entries { get; }
+
+    /// <summary>Slot of each of <see cref="Entries"/>.</summary>
+    public int[] EntrySlot { get; }
 
     /// <summary>Most unknowns in a slot.</summary>
     public int LargestSlot { get; }

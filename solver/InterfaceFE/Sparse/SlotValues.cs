@@ -11,8 +11,6 @@ internal sealed unsafe class SlotValues
     private readonly SparsePlan _plan;
     private readonly SlotMap _map;
     private readonly AlignedBuffer[] _triangles;
-    private readonly double[] _scale;
-    private readonly bool[] _isLayer;
     private readonly int[] _faultyUnknown;
     private readonly double[] _gathered;
     private readonly double[] _summed;
@@ -27,10 +25,7 @@ internal sealed unsafe class SlotValues
         _triangles = new AlignedBuffer[isSymmetric ? 1 : 2];
         for (int half = 0; half < _triangles.Length; half++)
             _triangles[half] = new AlignedBuffer(_map.ValueCount);
-        _scale = new double[plan.Pattern.SlotUnknowns.Length];
-        _isLayer = new bool[plan.Pattern.SlotCount];
-        for (int slot = 0; slot < _isLayer.Length; slot++)
-            _isLayer[slot] = IsLayer(plan.Pattern, slot);
+        Scales = new UnknownScales(plan);
         _faultyUnknown = new int[plan.Pattern.SlotCount];
         Array.Fill(_faultyUnknown, -1);
         _gathered = new double[_map.LargestSlot];
@@ -39,6 +34,9 @@ internal sealed unsafe class SlotValues
     }
 
     private bool IsSymmetric => _triangles.Length == 1;
+
+    /// <summary>Scales of the unknowns.</summary>
+    public UnknownScales Scales { get; }
 
     /// <summary>Lower triangles (half 0) or transposed upper ones (half 1).</summary>
     public double* Triangle(int half) => _triangles[half].Start;
@@ -52,8 +50,8 @@ internal sealed unsafe class SlotValues
         return (slot, _faultyUnknown[slot]);
     }
 
-    /// <summary>Replaces the matrix of a slot.</summary>
-    public void Replace(int slot, ReadOnlySpan<double> matrix)
+    /// <summary>Replaces the matrix of a slot. Returns whether any number changed.</summary>
+    public bool Replace(int slot, ReadOnlySpan<double> matrix)
     {
         SlotPattern pattern = _plan.Pattern;
         if ((uint)slot >= (uint)pattern.SlotCount)
@@ -64,6 +62,7 @@ internal sealed unsafe class SlotValues
         ReadOnlySpan<int> sequence = _map.Sequence.AsSpan(start, count);
         double* lower = _triangles[0].Start + _map.ValueStart[slot], upper = IsSymmetric ? lower : _triangles[1].Start + _map.ValueStart[slot];
         double sum = 0;
+        bool hasChanged = false;
         for (int c = 0; c < count; c++)
         {
             int column = sequence[c];
@@ -73,44 +72,15 @@ internal sealed unsafe class SlotValues
                 sum += Math.Abs(below) + Math.Abs(above);
                 // The mean makes the factor independent of the elimination order when symmetry holds to round-off only.
                 if (IsSymmetric)
-                    *lower++ = 0.5 * (below + above);
-                else
-                    (*lower++, *upper++) = (below, above);
+                    below = above = 0.5 * (below + above);
+                hasChanged |= *lower != below || *upper != above;
+                (*lower++, *upper++) = (below, above);
             }
         }
         NoteFault(slot, matrix, count, double.IsFinite(sum));
         for (int k = 0; k < count; k++)
-            _scale[start + k] = RowScale(matrix.Slice(sequence[k] * count, count), sequence[k]);
-    }
-
-    /// <summary>
-    /// Scales of each unknown, by place. The scale is the sum of its diagonal's magnitudes in all slots, so that softening does not lower it; a share of the row's largest
-    /// entry stands in where the diagonal is next to nothing. The soft scale leaves out layers (slots with changeable vertices only), whose stiffness may exceed that of the
-    /// bodies by many powers of ten; it is the scale where nothing else is there.
-    /// </summary>
-    public void SumScales(Span<double> scale, Span<double> softScale)
-    {
-        scale.Clear();
-        softScale.Clear();
-        int[] start = _plan.Pattern.SlotStart;
-        for (int slot = 0; slot < _isLayer.Length; slot++)
-            for (int k = start[slot]; k < start[slot + 1]; k++)
-            {
-                int place = _map.Place[k];
-                scale[place] += _scale[k];
-                if (!_isLayer[slot])
-                    softScale[place] += _scale[k];
-            }
-        double largest = 0;
-        for (int i = 0; i < scale.Length; i++)
-            largest = Math.Max(largest, scale[i]);
-        for (int i = 0; i < scale.Length; i++)
-        {
-            if (scale[i] == 0)
-                scale[i] = largest > 0 ? largest : 1;
-            if (softScale[i] == 0)
-                softScale[i] = scale[i];
-        }
+            Scales.Take(start + k, RowScale(matrix.Slice(sequence[k] * count, count), sequence[k]));
+        return hasChanged;
     }
 
     /// <summary>product = K x.</summary>
@@ -148,14 +118,6 @@ internal sealed unsafe class SlotValues
                 size[unknown] += _magnitude[k];
             }
         }
-    }
-
-    private static bool IsLayer(SlotPattern pattern, int slot)
-    {
-        foreach (int unknown in pattern.Unknowns(slot))
-            if (!pattern.IsChangeable[pattern.VertexOfUnknown[unknown]])
-                return false;
-        return true;
     }
 
     private void Gather(ReadOnlySpan<double> x, int start, int count)

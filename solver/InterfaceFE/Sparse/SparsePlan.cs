@@ -37,17 +37,25 @@ public sealed class SparsePlan
         FirstDescendant = new int[FrontCount + 1];
         for (int s = 0; s <= FrontCount; s++)
             FirstDescendant[s] = ChildStart[s] == ChildStart[s + 1] ? s : FirstDescendant[Children[ChildStart[s]]];
-        (PanelStart, ContributionStart, ContributionLength) = PlaceFronts();
+        PanelStart = PlacePanels();
         Slots = new SlotMap(this);
         Runs = new RunMap(this);
+        Work = new double[FrontCount];
         for (int s = 0; s < FrontCount; s++)
         {
             long columns = Columns(s), rows = RowCount(s);
             FactorNonZeros += columns * (columns + 1) / 2 + columns * rows;
             for (long i = 0; i < columns; i++)
-                Flops += (double)(columns + rows - i) * (columns + rows - i);
+                Work[s] += (double)(columns + rows - i) * (columns + rows - i);
+            Flops += Work[s];
             LargestFront = Math.Max(LargestFront, (int)(columns + rows));
         }
+        for (int s = 0; s <= FrontCount; s++)
+            LongestPanel = Math.Max(LongestPanel, Stride(s));
+        LastFronts = [.. Enumerable.Range(0, FrontCount).Where(s => Parent[s] < 0 || Parent[s] == FrontCount)];
+        Branches = new BranchPartition(Work, Parent, FirstDescendant);
+        Contributions = new ContributionLayout(this);
+        Whole = new FrontPath([.. Enumerable.Range(0, FrontCount)], UnknownCount);
     }
 
     /// <summary>The pattern that was analysed.</summary>
@@ -110,11 +118,23 @@ public sealed class SparsePlan
     /// <summary>Start of each front's panel; the root's dense block comes last, one more entry gives the length.</summary>
     internal long[] PanelStart { get; }
 
-    /// <summary>Start of each front's contribution block.</summary>
-    internal long[] ContributionStart { get; }
+    /// <summary>Floating-point operations of each front.</summary>
+    internal double[] Work { get; }
 
-    /// <summary>Length of the array of contribution blocks; blocks that are not alive together share places.</summary>
-    internal long ContributionLength { get; }
+    /// <summary>Fronts without a parent but the root.</summary>
+    internal int[] LastFronts { get; }
+
+    /// <summary>Longest column of a panel.</summary>
+    internal int LongestPanel { get; }
+
+    /// <summary>Branches that can be factored side by side.</summary>
+    internal BranchPartition Branches { get; }
+
+    /// <summary>Where contribution blocks live.</summary>
+    internal ContributionLayout Contributions { get; }
+
+    /// <summary>All fronts.</summary>
+    internal FrontPath Whole { get; }
 
     /// <summary>Where the slots' numbers go.</summary>
     internal SlotMap Slots { get; }
@@ -132,6 +152,39 @@ public sealed class SparsePlan
         return new SparsePlan(pattern, options ?? new PlanOptions());
     }
 
+    /// <summary>The fronts from some unknowns to the root.</summary>
+    /// <param name="unknowns">Unknowns; root unknowns add nothing, since every path ends in the root.</param>
+    /// <exception cref="ArgumentOutOfRangeException">No such unknown.</exception>
+    public FrontPath PathOf(ReadOnlySpan<int> unknowns)
+    {
+        var isOn = new bool[FrontCount + 1];
+        var fronts = new List<int>();
+        int count = RootUnknownCount;
+        foreach (int unknown in unknowns)
+        {
+            ArgumentOutOfRangeException.ThrowIfNegative(unknown, nameof(unknowns));
+            ArgumentOutOfRangeException.ThrowIfGreaterThanOrEqual(unknown, UnknownCount, nameof(unknowns));
+            for (int s = FrontOf[NewOf[unknown]]; s >= 0 && s < FrontCount && !isOn[s]; s = Parent[s])
+            {
+                isOn[s] = true;
+                fronts.Add(s);
+                count += Columns(s);
+            }
+        }
+        fronts.Sort();
+        return new FrontPath(fronts.ToArray(), count);
+    }
+
+    /// <summary>Floating-point operations of one factorisation of the fronts on a path.</summary>
+    public double FlopsOf(FrontPath path)
+    {
+        ArgumentNullException.ThrowIfNull(path);
+        double sum = 0;
+        foreach (int s in path.Fronts)
+            sum += Work[s];
+        return sum;
+    }
+
     /// <summary>Number of pivots of a front.</summary>
     internal int Columns(int front) => First[front + 1] - First[front];
 
@@ -140,6 +193,9 @@ public sealed class SparsePlan
 
     /// <summary>Pivots rounded up to the padding: local number of the first row below the pivots.</summary>
     internal int PaddedColumns(int front) => Pad(Columns(front));
+
+    /// <summary>Length of a column of the panel.</summary>
+    internal int Stride(int front) => PaddedColumns(front) + PaddedRows(front);
 
     /// <summary>Rows rounded up to the padding; column length of the contribution block.</summary>
     internal int PaddedRows(int front) => Pad(RowCount(front));
@@ -212,21 +268,11 @@ public sealed class SparsePlan
         return (start, rows);
     }
 
-    private (long[] Panel, long[] Contribution, long Length) PlaceFronts()
+    private long[] PlacePanels()
     {
         var panel = new long[FrontCount + 2];
-        var contribution = new long[FrontCount + 1];
-        var arena = new ArenaPlanner();
         for (int s = 0; s <= FrontCount; s++)
-        {
-            long rows = PaddedRows(s);
-            panel[s + 1] = panel[s] + (PaddedColumns(s) + rows) * Columns(s);
-            if (rows > 0)
-                contribution[s] = arena.Take(rows * rows);
-            for (int c = ChildStart[s]; c < ChildStart[s + 1]; c++)
-                if (PaddedRows(Children[c]) is int size and > 0)
-                    arena.Release(contribution[Children[c]], (long)size * size);
-        }
-        return (panel, contribution, arena.Length);
+            panel[s + 1] = panel[s] + (long)Stride(s) * Columns(s);
+        return panel;
     }
 }
