@@ -78,6 +78,12 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     /// <summary>Floating-point operations of the last <see cref="Factor"/>, root block not included (a multiply-add counts as two; a general factor does twice as many).</summary>
     public double LastFlops { get; private set; }
 
+    /// <summary>The fronts.</summary>
+    internal FrontFactor Fronts => _fronts;
+
+    /// <summary>Substitution through the fronts.</summary>
+    internal FrontSolver Substitution => _solver;
+
     private int Halves => _isSymmetric ? 1 : 2;
 
     private bool IsRefined => !_isSymmetric || LiftedPivots > 0 || Growth > RefinedGrowth;
@@ -232,6 +238,9 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
             throw new ArgumentException($"x and product must have {Size} entries; they have {x.Length} and {product.Length}.");
         _values.Multiply(x, product);
     }
+
+    /// <summary>residual = b - K x and size = |b| + |K| |x|, entry by entry.</summary>
+    internal void Residual(ReadOnlySpan<double> b, ReadOnlySpan<double> x, Span<double> residual, Span<double> size) => _values.Residual(b, x, residual, size);
 
     private protected abstract DenseRoot NewRoot(int size);
 
