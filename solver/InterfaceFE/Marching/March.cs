@@ -11,7 +11,8 @@ namespace InterfaceFE.Marching;
 /// <param name="equilibrium">Equilibrium of the model.</param>
 /// <param name="settings">Settings.</param>
 /// <param name="observer">Told of points and iterations.</param>
-public sealed class March(FullEquilibrium equilibrium, MarchSettings settings, IMarchObserver observer)
+/// <param name="replay">Choices of an earlier run, which are followed; null: the march chooses for itself. Of the settings the tolerance alone counts then.</param>
+public sealed class March(FullEquilibrium equilibrium, MarchSettings settings, IMarchObserver observer, ReplayPlan? replay = null)
 {
     private EnergyLedger? _ledger;
     private int _point;
@@ -35,9 +36,9 @@ public sealed class March(FullEquilibrium equilibrium, MarchSettings settings, I
                 started = true;
             }
             observer.Said($"stage {stage.Number}: {stage.Words}");
-            var march = new StageMarch(equilibrium, settings, observer, _ledger!, stage, _point, _time, _bodiesAtStart);
-            MarchOutcome outcome = march.Run(cancellation);
-            _point = march.Point;
+            var points = new StagePoints(equilibrium, settings.Tolerance, observer, _ledger!, stage, _point, _time, _bodiesAtStart);
+            MarchOutcome outcome = replay is null ? new StageMarch(points, settings, observer).Run(cancellation) : new StageReplay(points, replay).Run(cancellation);
+            _point = points.Point;
             _time += stage.Duration;
             if (outcome.Status != MarchStatus.Finished)
                 return outcome;

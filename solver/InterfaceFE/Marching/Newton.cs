@@ -57,6 +57,9 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
     /// <summary>Changes of the potential, relative, up to which a slow search without growth of damage is chatter of faces in contact.</summary>
     private const double Chatter = 1e-6;
 
+    /// <summary>A replayed search may end this many times the tolerances off: it stands where the recorded one ended, to rounding.</summary>
+    private const double Nearly = 10;
+
     private const double WorkTolerance = 1e-10;
     private const int MostPolishing = 2;
 
@@ -68,7 +71,8 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
     /// <param name="equilibrium">Equilibrium with a first guess in place.</param>
     /// <param name="control">Control of the stride.</param>
     /// <param name="report">Told of each iteration.</param>
-    public NewtonOutcome Search(IEquilibrium equilibrium, IControl control, Action<NewtonIteration> report)
+    /// <param name="recorded">Corrections of the search that is replayed, so that both end at the same iterate and not just within the same tolerance; -1: none is.</param>
+    public NewtonOutcome Search(IEquilibrium equilibrium, IControl control, Action<NewtonIteration> report, int recorded = -1)
     {
         if (_gradient.Length != equilibrium.Displacement.Length)
             _gradient = new double[equilibrium.Displacement.Length];
@@ -94,15 +98,17 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             bool atFloor = !balanced && residual.HeldInPlace && controlled && slow >= 1 && residual.OutOfBalance <= equilibrium.ResidualFloor();
             // In a slender part small forces out of balance may go with a travel whose error the account of energy would show: such a point is corrected once or twice more.
             bool polishes = balanced && residual.WorkShare > WorkTolerance && polishing < MostPolishing && iteration < mostIterations;
-            if (controlled && (balanced || atFloor) && !polishes)
+            bool isReplayed = iteration == recorded && residual.HeldInPlace && (control.FixesProgress || controlError <= Nearly * controlTolerance)
+                && (residual.Relative <= Nearly * tolerance || residual.OutOfBalance <= equilibrium.ResidualFloor());
+            if ((controlled && (balanced || atFloor) && !polishes && iteration >= recorded) || isReplayed)
             {
-                report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, atFloor ? "converged at the floor" : "converged"));
+                report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, atFloor ? IterationReason.AtFloor : IterationReason.Converged));
                 return new NewtonOutcome(atFloor ? NewtonStatus.AtFloor : NewtonStatus.Converged, iteration, singular, residual.Relative);
             }
             chatters &= shortens;
             if (controlled && polishes)
                 polishing++;
-            if (iteration >= (chatters ? MostChatter : mostIterations) || (slow >= SlowBeforeStall && !chatters && !polishes))
+            if (iteration >= recorded && (iteration >= (chatters ? MostChatter : mostIterations) || (slow >= SlowBeforeStall && !chatters && !polishes)))
             {
                 report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, "stalled"));
                 return new NewtonOutcome(NewtonStatus.Stalled, iteration, singular, residual.Relative);

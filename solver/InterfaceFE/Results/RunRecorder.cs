@@ -142,6 +142,7 @@ public sealed class RunRecorder : IMarchObserver
             UnstableDirections = iteration.UnstableDirections,
             ChangedElements = iteration.Newton.ChangedElements,
             Reason = iteration.Newton.Reason,
+            Guess = iteration.Guess,
         };
         _history.Iterations.Add(row);
         _sink.Write(row);

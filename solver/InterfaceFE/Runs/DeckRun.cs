@@ -23,12 +23,23 @@ public static class DeckRun
     /// <param name="makeSink">Makes what takes the records, once the history's heading is known; null: records stay in memory only.</param>
     /// <param name="cancellation">Stops the march; points so far are kept.</param>
     /// <exception cref="DeckException">The deck asks for something that cannot be built.</exception>
-    public static RunResult Execute(Deck deck, Func<RunHistory, IRecordSink>? makeSink = null, CancellationToken cancellation = default)
+    public static RunResult Execute(Deck deck, Func<RunHistory, IRecordSink>? makeSink = null, CancellationToken cancellation = default) => Execute(deck, makeSink, null, cancellation);
+
+    /// <summary>Runs a deck, or replays an earlier run of it.</summary>
+    /// <param name="deck">Deck as read.</param>
+    /// <param name="makeSink">Makes what takes the records, once the history's heading is known; null: records stay in memory only.</param>
+    /// <param name="replay">Choices of an earlier run that are followed; null: the march chooses for itself.</param>
+    /// <param name="cancellation">Stops the march; points so far are kept.</param>
+    /// <exception cref="DeckException">The deck asks for something that cannot be built.</exception>
+    /// <exception cref="ReplayException">The stages of the earlier run are not those of the deck.</exception>
+    public static RunResult Execute(Deck deck, Func<RunHistory, IRecordSink>? makeSink, ReplayPlan? replay, CancellationToken cancellation)
     {
         long start = Stopwatch.GetTimestamp();
         MeshingResult meshing = Mesher.Build(deck);
         SpecimenModel model = ModelBuilder.Build(deck, meshing.Mesh);
         FreeMovement.Refuse(model);
+        if (replay?.Misfit(model) is { } misfit)
+            throw new ReplayException("the record that is to be replayed is of another deck: " + misfit);
         var gauges = new GaugeReader(deck, meshing.Mesh);
         RunHistory history = Heading(deck, model, gauges);
         IRecordSink sink = makeSink?.Invoke(history) ?? new NoSink();
@@ -41,7 +52,7 @@ public static class DeckRun
         sink.Say(string.Create(CultureInfo.InvariantCulture, $"model: {model.Unknowns.Count} unknowns, {model.Solids.Sum(s => s.Count)} elements in adherends, {model.Layers.Sum(l => l.Count)} in joints"));
         start = Stopwatch.GetTimestamp();
         var recorder = new RunRecorder(equilibrium, history, gauges, deck.Keep?.Fields.Points ?? new KeepDeck().Fields.Points, sink);
-        MarchOutcome outcome = new March(equilibrium, Settings(deck, model), recorder).Run(cancellation);
+        MarchOutcome outcome = new March(equilibrium, Settings(deck, model), recorder, replay).Run(cancellation);
         recorder.Finish();
         var summary = new RunSummary { Status = Status(outcome.Status), Cause = outcome.Cause, Title = deck.Title };
         summary.Warnings.AddRange(meshing.Warnings);

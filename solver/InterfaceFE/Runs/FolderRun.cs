@@ -3,6 +3,7 @@ using System.Security.Cryptography;
 using System.Text;
 using InterfaceFE.Decks;
 using InterfaceFE.Decks.Reading;
+using InterfaceFE.Marching;
 using InterfaceFE.Reports;
 using InterfaceFE.Results;
 
@@ -33,20 +34,32 @@ public sealed class FolderRun
     /// <exception cref="DeckException">The deck cannot be built; nothing is left in the folder.</exception>
     /// <exception cref="IOException">The folder cannot be written. A disk that fills up later stops the run early instead.</exception>
     /// <exception cref="UnauthorizedAccessException">The folder must not be written.</exception>
-    public RunResult Execute(Deck deck, IReadOnlyList<string> warnings, CancellationToken cancellation)
+    public RunResult Execute(Deck deck, IReadOnlyList<string> warnings, CancellationToken cancellation) => Execute(deck, warnings, null, cancellation);
+
+    /// <summary>Runs a deck that was read without problems, or replays an earlier run of it.</summary>
+    /// <param name="deck">The deck.</param>
+    /// <param name="warnings">Warnings of the reading, for log and summary.</param>
+    /// <param name="replayFile">convergence.csv of an earlier run whose choices are followed; null: none.</param>
+    /// <param name="cancellation">Stops the march; what was found is written all the same.</param>
+    /// <exception cref="ReplayException">The earlier run cannot be replayed with this deck; nothing is left in the folder.</exception>
+    /// <exception cref="DeckException">The deck cannot be built; nothing is left in the folder.</exception>
+    /// <exception cref="IOException">The folder cannot be written. A disk that fills up later stops the run early instead.</exception>
+    /// <exception cref="UnauthorizedAccessException">The folder must not be written.</exception>
+    public RunResult Execute(Deck deck, IReadOnlyList<string> warnings, string? replayFile, CancellationToken cancellation)
     {
-        string resolved = DeckWriter.Write(deck);
+        string resolved = DeckWriter.Write(deck), hash = Convert.ToHexStringLower(SHA256.HashData(Encoding.UTF8.GetBytes(resolved)));
+        ReplayPlan? replay = replayFile is null ? null : ReplayFile.Read(replayFile, hash);
         using var stop = CancellationTokenSource.CreateLinkedTokenSource(cancellation);
         FolderSink? sink = null;
         try
         {
-            RunResult result = DeckRun.Execute(deck, history => sink = Open(resolved, warnings, history, stop), stop.Token);
-            result.Summary.DeckHash = Convert.ToHexStringLower(SHA256.HashData(Encoding.UTF8.GetBytes(resolved)));
+            RunResult result = DeckRun.Execute(deck, history => sink = Open(resolved, warnings, replayFile, history, stop), replay, stop.Token);
+            result.Summary.DeckHash = hash;
             result.Summary.Warnings.InsertRange(0, warnings);
             Complete(result, sink!);
             return result;
         }
-        catch (DeckException)
+        catch (Exception e) when (e is DeckException or ReplayException)
         {
             sink?.Discard();
             throw;
@@ -62,11 +75,13 @@ public sealed class FolderRun
         }
     }
 
-    private FolderSink Open(string resolved, IReadOnlyList<string> warnings, RunHistory history, CancellationTokenSource stop)
+    private FolderSink Open(string resolved, IReadOnlyList<string> warnings, string? replayFile, RunHistory history, CancellationTokenSource stop)
     {
         FolderSink sink = new(_folder, resolved, history, _progress, stop);
         foreach (string warning in warnings)
             sink.Log("warning: " + warning);
+        if (replayFile is not null)
+            sink.Say("replay of " + replayFile);
         return sink;
     }
 
