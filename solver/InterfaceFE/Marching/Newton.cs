@@ -125,7 +125,8 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             residual = equilibrium.Evaluate(Everything);
             if (shortens)
                 residual = Shorten(equilibrium, residual, work);
-            else if (iteration > 0 && previous > 0 && !(residual.OutOfBalance <= 1.5 * previous))
+            // Within tolerance what grows is rounding: a correction for the control's sake would be shortened by chance.
+            else if (iteration > 0 && previous > 0 && !(residual.OutOfBalance <= 1.5 * previous) && !(residual.Relative <= tolerance))
                 residual = Backtrack(equilibrium, residual);
         }
     }
