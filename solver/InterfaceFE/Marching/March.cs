@@ -1,4 +1,3 @@
-using System.Globalization;
 using InterfaceFE.Model;
 
 namespace InterfaceFE.Marching;
@@ -46,14 +45,20 @@ public sealed class March(FullEquilibrium equilibrium, MarchSettings settings, I
         return new MarchOutcome(MarchStatus.Finished, "");
     }
 
+    /// <summary>Words for a model whose numbers are not finite before anything has moved.</summary>
+    internal static string NotFinite(FullEquilibrium equilibrium) =>
+        "the stiffness of the model is not finite at the start: look for extreme numbers in the deck" + (equilibrium.Fault() is { } fault ? $" ({fault})" : "");
+
     private string? Start()
     {
         ResidualReport residual = equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
         if (!residual.Finite)
-            return "the stiffness of the model is not finite at the start: look for extreme numbers in the deck";
+            return NotFinite(equilibrium);
         (int negative, int singular) = equilibrium.Stability();
+        if (equilibrium.FactorOverflows)
+            return NotFinite(equilibrium);
         if (singular >= 0)
-            return StageMarch.CanStillMove(equilibrium, singular);
+            return LoosePart.Describe(equilibrium, singular);
         equilibrium.Accept();
         _ledger = new EnergyLedger(equilibrium);
         _bodiesAtStart = equilibrium.Bonds.Connections().Bodies;

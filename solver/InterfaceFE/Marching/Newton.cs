@@ -123,6 +123,8 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             double work = shortens ? equilibrium.WorkAlongCorrection() : 0;
             equilibrium.Move(1);
             residual = equilibrium.Evaluate(Everything);
+            if (!residual.Finite && equilibrium.Fault() is not null)
+                continue;
             if (shortens)
                 residual = Shorten(equilibrium, residual, work);
             // Within tolerance what grows is rounding: a correction for the control's sake would be shortened by chance.

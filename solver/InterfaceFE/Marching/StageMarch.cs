@@ -42,10 +42,6 @@ internal sealed class StageMarch
 
     private bool PathCanTakeOver => _settings.Path != PathControl.None && _equilibrium.Model.Layers.Count > 0 && _way.Exists;
 
-    public static string CanStillMove(FullEquilibrium equilibrium, int unknown) =>
-        $"{equilibrium.Model.Unknowns.Describe(unknown)} can still move freely: nothing holds it. Usual causes: a grip that should be fixed (x, y or rotation) in the sequence, "
-        + "an adherend that no joint connects, or a joint without bonded length";
-
     public MarchOutcome Run(CancellationToken cancellation)
     {
         if (_points.Start() is { } cause)

@@ -64,10 +64,11 @@ internal sealed class StagePoints
     /// </summary>
     public string? Start()
     {
-        Equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
+        if (!Equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate).Finite)
+            return Beyond();
         Accepted = Equilibrium.Energy;
         (Unstable, int loose) = Equilibrium.Stability();
-        return loose >= 0 && !Severed() ? StageMarch.CanStillMove(Equilibrium, loose) : null;
+        return loose >= 0 && !Severed() ? LoosePart.Describe(Equilibrium, loose) : null;
     }
 
     /// <summary>Sets the first guess: a share of the last way carried on, or the accepted point for 0.</summary>
@@ -104,7 +105,7 @@ internal sealed class StagePoints
         }, recorded);
         if (!outcome.Usable)
             Tell();
-        Failure = outcome.Usable ? "" : outcome.Status == NewtonStatus.NotFinite ? Overflow : "no convergence";
+        Failure = outcome.Usable ? "" : outcome.Status == NewtonStatus.NotFinite ? Beyond() : "no convergence";
         return outcome;
     }
 
@@ -150,7 +151,8 @@ internal sealed class StagePoints
     }
 
     /// <summary>The outcome of a specimen that came apart.</summary>
-    public MarchOutcome CameApart() => new(MarchStatus.Severed, FormattableString.Invariant($"the bond came apart in stage {Stage.Number} at progress {Equilibrium.AcceptedProgress:G4}"));
+    public MarchOutcome CameApart() => new(MarchStatus.Severed, FormattableString.Invariant($"the bond came apart in stage {Stage.Number} at progress {Equilibrium.AcceptedProgress:G4}")
+        + (Equilibrium.Bonds.Parted() is { Count: > 0 } parted ? $": nothing is left of {string.Join(" and of ", parted)}" : ""));
 
     /// <summary>The outcome where the last of the bond gave way, so that no further point exists; null when more than that carries.</summary>
     public MarchOutcome? LastOfTheBond()
@@ -168,6 +170,19 @@ internal sealed class StagePoints
             return null;
         Equilibrium.RollBack();
         return new MarchOutcome(MarchStatus.Interrupted, "interrupted from outside; points so far are kept");
+    }
+
+    /// <summary>Words for numbers that are not finite: the element that is at fault, or the place that has moved furthest.</summary>
+    private string Beyond()
+    {
+        if (Equilibrium.Fault() is { } fault)
+            return Fault = FormattableString.Invariant($"an element has no answer in stage {Stage.Number}, at progress {Equilibrium.Progress:G4}: {fault}");
+        ReadOnlySpan<double> u = Equilibrium.Displacement;
+        int furthest = 0;
+        for (int i = 1; i < u.Length; i++)
+            if (!double.IsNaN(u[i]) && !(Math.Abs(u[i]) <= Math.Abs(u[furthest])))
+                furthest = i;
+        return FormattableString.Invariant($"{Overflow}: {Equilibrium.Model.Unknowns.Describe(furthest)}, would move by {Math.Abs(u[furthest]):G3} (mm or rad); look for a load beyond all measure, or for a part that next to nothing holds");
     }
 
     private void Tell()

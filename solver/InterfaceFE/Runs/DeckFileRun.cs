@@ -1,5 +1,6 @@
 using InterfaceFE.Decks;
 using InterfaceFE.Decks.Reading;
+using InterfaceFE.Marching;
 using InterfaceFE.Results;
 
 namespace InterfaceFE.Runs;
@@ -25,7 +26,10 @@ public static class DeckFileRun
         ArgumentException.ThrowIfNullOrEmpty(deckFile);
         ArgumentException.ThrowIfNullOrEmpty(folder);
         ArgumentNullException.ThrowIfNull(progress);
-        DeckReading reading = DeckReader.Read(deckFile);
+        var clock = new PhaseClock();
+        DeckReading reading;
+        using (clock.In(Phase.Reading))
+            reading = DeckReader.Read(deckFile);
         return Faults.Guard(reading, folder, () =>
         {
             if (reading.Deck is null)
@@ -35,7 +39,7 @@ public static class DeckFileRun
             string[] warnings = [.. reading.Warnings.Select(p => p.ToString())];
             foreach (string warning in warnings)
                 progress("warning: " + warning);
-            RunResult result = new FolderRun(folder, progress).Execute(reading.Deck, warnings, replayFile, cancellation);
+            RunResult result = new FolderRun(folder, progress) { Clock = clock }.Execute(reading.Deck, warnings, replayFile, cancellation);
             return new FileRunOutcome(CodeOf(result.Summary), [], result);
         }, (code, messages) => new FileRunOutcome(code, messages, null));
     }

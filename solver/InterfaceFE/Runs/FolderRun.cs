@@ -1,4 +1,3 @@
-using System.Diagnostics;
 using System.Security.Cryptography;
 using System.Text;
 using InterfaceFE.Decks;
@@ -27,6 +26,9 @@ public sealed class FolderRun
         _progress = progress;
     }
 
+    /// <summary>Takes the time by phase. One that ran while the deck was read has that time too.</summary>
+    public PhaseClock Clock { get; init; } = new();
+
     /// <summary>Runs a deck that was read without problems.</summary>
     /// <param name="deck">The deck.</param>
     /// <param name="warnings">Warnings of the reading, for log and summary.</param>
@@ -53,7 +55,7 @@ public sealed class FolderRun
         FolderSink? sink = null;
         try
         {
-            RunResult result = DeckRun.Execute(deck, history => sink = Open(resolved, warnings, replayFile, history, stop), replay, stop.Token);
+            RunResult result = DeckRun.Execute(deck, history => sink = Open(resolved, warnings, replayFile, history, stop), replay, Clock, stop.Token);
             result.Summary.DeckHash = hash;
             result.Summary.Warnings.InsertRange(0, warnings);
             Complete(result, sink!);
@@ -95,15 +97,18 @@ public sealed class FolderRun
             summary.Cause = "a file of the results could not be written: " + fault;
         }
         string file = Path.Join(_folder, "summary.json");
-        sink.Try(() => SummaryWriter.Write(file, summary));
-        long start = Stopwatch.GetTimestamp();
-        if (result.History.Points.Count > 1)
+        using (Clock.In(Phase.Writing))
+            sink.Try(() => SummaryWriter.Write(file, summary));
+        using (Clock.In(Phase.Figures))
         {
-            _progress("figures");
-            foreach (string message in FigureWriter.WriteAll(result.History, summary, Path.Join(_folder, "figures"), _progress).Messages)
-                sink.Log("figure: " + message);
+            if (result.History.Points.Count > 1)
+            {
+                _progress("figures");
+                foreach (string message in FigureWriter.WriteAll(result.History, summary, Path.Join(_folder, "figures"), _progress).Messages)
+                    sink.Log("figure: " + message);
+            }
         }
-        summary.WallSeconds["figures"] = Stopwatch.GetElapsedTime(start).TotalSeconds;
+        Timings.Fill(summary, Clock);
         sink.Try(() => SummaryWriter.Write(file, summary));
         sink.Log(log => SummaryText.Write(summary, log));
     }
