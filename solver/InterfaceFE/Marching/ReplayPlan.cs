@@ -43,7 +43,7 @@ public sealed class ReplayPlan
             if (i > 0 && point.Stage > points[i - 1].Stage && End(points[i - 1]) is var end && !(end >= 1))
                 throw new ArgumentException(Text($"stage {points[i - 1].Stage} ends at progress {end:G6}, and yet stage {point.Stage} follows"));
             foreach (RecordedSearch search in point.Searches)
-                if (!Controls.Contains(search.Control) || !double.IsFinite(search.Stride) || search.Stride == 0 || !double.IsFinite(search.Guess) || !double.IsFinite(search.Progress) || search.Iterations < 0)
+                if (!Controls.Contains(search.Control) || !double.IsFinite(search.Stride) || search.Stride == 0 || !double.IsFinite(search.Guess) || !double.IsFinite(search.Progress) || !double.IsFinite(search.Relative) || search.Iterations < 0)
                     throw new ArgumentException(Text($"point {point.Number} has a search that cannot be followed: control '{search.Control}', stride {search.Stride:G6}, guess {search.Guess:G6}"));
             if (point.Searches.Count is not (1 or 2))
                 throw new ArgumentException(Text($"point {point.Number} has {point.Searches.Count} searches"));
@@ -55,6 +55,13 @@ public sealed class ReplayPlan
 
     /// <summary>All points, in order.</summary>
     public IReadOnlyList<RecordedPoint> Points { get; }
+
+    /// <summary>
+    /// The same choices, each search carried on by some corrections: what is left of the tolerances goes, and rounding alone stays. To be made and recorded where methods are compared that do
+    /// not iterate alike.
+    /// </summary>
+    public ReplayPlan Deeper(int corrections) =>
+        new([.. Points.Select(p => p with { Searches = [.. p.Searches.Select(s => s with { Iterations = s.Iterations + corrections })] })]);
 
     /// <summary>Points of a stage, in order.</summary>
     public IReadOnlyList<RecordedPoint> Of(int stage) => [.. Points.Where(p => p.Stage == stage)];

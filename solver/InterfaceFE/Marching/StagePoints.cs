@@ -95,8 +95,8 @@ internal sealed class StagePoints
     /// <param name="control">Control.</param>
     /// <param name="guess">Share that the guess was made with.</param>
     /// <param name="retry">Searches for this point that failed before.</param>
-    /// <param name="recorded">Iterations of the search that is replayed; -1: none is.</param>
-    public NewtonOutcome Search(IControl control, double guess, int retry, int recorded = -1)
+    /// <param name="recorded">End of the search that is replayed; null: none is.</param>
+    public NewtonOutcome Search(IControl control, double guess, int retry, RecordedEnd? recorded = null)
     {
         NewtonOutcome outcome = _newton.Search(Equilibrium, control, iteration =>
         {

@@ -52,7 +52,7 @@ internal sealed class StageReplay(StagePoints points, ReplayPlan plan)
             }
             else
                 control = points.Way.Control(MeasureOf(search.Control), search.Stride, _equilibrium, points.Accepted);
-            NewtonOutcome outcome = points.Search(control, search.Guess, recorded.Retries, search.Iterations);
+            NewtonOutcome outcome = points.Search(control, search.Guess, recorded.Retries, new RecordedEnd(search.Iterations, search.Relative));
             if (!outcome.Usable)
                 return Difference(recorded, search, outcome);
             if (i + 1 < recorded.Searches.Count)

@@ -48,7 +48,7 @@ public static class ReplayReader
         if (last.Root != 0)
             throw new ReplayException($"point {Whole(last.Point)} took root {Whole(last.Root)} of its control equation; this version knows controls with one root only");
         List<RecordedSearch> searches = [Search(last)];
-        int before = rows.Count - 1 - last.Iteration - 1;
+        int before = rows.FindLastIndex(row => row.Iteration == 0) - 1;
         if (before >= 0 && rows[before].Reason == IterationReason.PastEnd && rows[before].Retries == last.Retries)
             searches.Insert(0, Search(rows[before]));
         return new RecordedPoint(last.Stage, last.Point, last.Retries, searches);

@@ -20,6 +20,7 @@ public sealed class ReplayVerbs(TextWriter output, TextWriter progress)
     private static readonly string[] Phases = ["meshing", "plan", "elements", "factorisation", "solves", "march", "recording", "writing"];
     private static readonly string[] Counts = ["unknowns", "points", "iterations", "factorisations", "solves", "changed elements"];
 
+    private const int MoreCorrections = 2;
     private const string SummaryOfReplay = "replay.json";
 
     private int _hold, _differ;
@@ -27,8 +28,11 @@ public sealed class ReplayVerbs(TextWriter output, TextWriter progress)
     /// <summary>Runs all shipped decks into folders below a folder, and replays each at once: a replay must give the same bytes.</summary>
     /// <param name="root">Root folder of the repository.</param>
     /// <param name="folder">The folder; results that are in it are replaced.</param>
+    /// <param name="deep">
+    /// Whether each search is carried on by two corrections, until rounding alone is left: for comparing methods that do not iterate alike. The tables are then not those of the plain run.
+    /// </param>
     /// <returns>Exit code: 0, or 2 where a replay differs.</returns>
-    public int Record(string root, string folder)
+    public int Record(string root, string folder, bool deep)
     {
         foreach ((string name, string file) in ShippedDecks.In(root))
         {
@@ -36,7 +40,10 @@ public sealed class ReplayVerbs(TextWriter output, TextWriter progress)
             progress.WriteLine($"{name}: recording");
             try
             {
-                TableFolder.Make(Read(file), into, replay: null);
+                Deck deck = Read(file);
+                TableFolder.Make(deck, into, replay: null);
+                if (deep)
+                    TableFolder.Make(deck, into, ReplayReader.Read(File.ReadAllText(Path.Combine(into, "convergence.csv"))).Deeper(MoreCorrections));
             }
             catch (Exception e) when (e is DeckException or InvalidOperationException)
             {
