@@ -424,14 +424,27 @@ public sealed class FullEquilibrium : IEquilibrium
         return (inertia.Negative, inertia.Zero == 0 ? -1 : LooseGrip(inertia.Zero));
     }
 
-    /// <summary>The movement of all unknowns that next to nothing resists, of any size: what the factored tangent does under a force on the unknown of a numerically zero pivot.</summary>
+    /// <summary>
+    /// A movement of all unknowns that nothing resists, of any size, by the latest factored tangent. A grip's loose unknown is held at 1 without any force: all else follows it. Elsewhere a force
+    /// on the loose unknown moves the part, and what that force strains is taken off.
+    /// </summary>
+    /// <param name="unknown">The unknown that <see cref="Stability"/> found loose.</param>
     public double[] FreeMovement(int unknown)
     {
+        bool isGrip = _model.Unknowns.IsRoot[_model.Unknowns.VertexOfUnknown[unknown]];
         Array.Clear(_rightSide);
         Array.Clear(_solution);
-        _rightSide[unknown] = 1;
+        (isGrip ? _solution : _rightSide)[unknown] = 1;
+        _symmetric.Solve(_rightSide, _solution, isGrip ? [.. _heldUnknowns, unknown] : _heldUnknowns);
+        double[] movement = [.. _solution];
+        if (isGrip)
+            return movement;
+        _symmetric.Multiply(movement, _rightSide);
+        Array.Clear(_solution);
         _symmetric.Solve(_rightSide, _solution, _heldUnknowns);
-        return (double[])_solution.Clone();
+        for (int i = 0; i < movement.Length; i++)
+            movement[i] -= _solution[i];
+        return movement;
     }
 
     /// <summary>A grip's unknown that would stop a free movement if it were held: turns are tried first, since a free turn moves x and y too.</summary>
