@@ -392,6 +392,9 @@ public sealed class FullEquilibrium : IEquilibrium
         return (inertia.Negative, inertia.Zero == 0 ? -1 : LooseGrip(inertia.Zero));
     }
 
+    /// <summary>Estimate of the condition number of the latest tangent that <see cref="Stability"/> factored: it costs as many digits of a solution as it has.</summary>
+    public double Condition() => _factor.Condition(_heldUnknowns);
+
     /// <summary>
     /// A movement of all unknowns that nothing resists, of any size, by the latest factored tangent. A grip's loose unknown is held at 1 without any force: all else follows it. Elsewhere a force
     /// on the loose unknown moves the part, and what that force strains is taken off.

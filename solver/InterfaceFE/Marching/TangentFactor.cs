@@ -129,6 +129,9 @@ internal sealed class TangentFactor
     /// <summary>Signs of the eigenvalues of the symmetric parts without the held unknowns.</summary>
     public Inertia Inertia(ReadOnlySpan<int> held) => _symmetric.Inertia(held);
 
+    /// <summary>Estimate of the condition number of the symmetric parts without the held unknowns.</summary>
+    public double Condition(ReadOnlySpan<int> held) => _symmetric.Condition(held);
+
     /// <summary>Solves with the symmetric parts.</summary>
     public void SolveSymmetric(ReadOnlySpan<double> b, Span<double> x, ReadOnlySpan<int> held) => _symmetric.Solve(b, x, held);
 
