@@ -114,4 +114,44 @@ public static unsafe class DenseKernels
         else
             PortableKernels.SubtractLaneDots(x, a, stride, y, columns, rows);
     }
+
+    /// <summary>y (8) becomes L⁻¹ y with the first columns of a unit lower triangle, at most 8, below the diagonal of the block.</summary>
+    internal static void SolveUnitLower(double* y, double* block, nint stride, int width)
+    {
+        if (Wide)
+            DenseKernels512.SolveUnitLower(y, block, stride, width);
+        else
+            PortableKernels.SolveUnitLower(y, block, stride, width);
+    }
+
+    /// <summary>y (8) becomes U⁻¹ y with the first columns of a unit upper triangle, at most 8, above the diagonal of the block.</summary>
+    internal static void SolveUnitUpper(double* y, double* block, nint stride, int width)
+    {
+        if (Wide)
+            DenseKernels512.SolveUnitUpper(y, block, stride, width);
+        else
+            PortableKernels.SolveUnitUpper(y, block, stride, width);
+    }
+
+    /// <summary>target (8) -= factor · source (8).</summary>
+    internal static void SubtractScaled(double* target, double* source, double factor)
+    {
+        if (Wide)
+            DenseKernels512.SubtractScaled(target, source, factor);
+        else if (Middle)
+            DenseKernels256.SubtractScaled(target, source, factor);
+        else
+            PortableKernels.SubtractScaled(target, source, factor);
+    }
+
+    /// <summary>target += source, a rectangle of any size and alignment.</summary>
+    internal static void AddRectangle(double* target, nint targetStride, double* source, nint sourceStride, nint rows, nint columns)
+    {
+        if (Wide)
+            DenseKernels512.AddRectangle(target, targetStride, source, sourceStride, rows, columns);
+        else if (Middle)
+            DenseKernels256.AddRectangle(target, targetStride, source, sourceStride, rows, columns);
+        else
+            PortableKernels.AddRectangle(target, targetStride, source, sourceStride, rows, columns);
+    }
 }

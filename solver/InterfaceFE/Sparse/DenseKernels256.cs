@@ -283,4 +283,17 @@ internal static unsafe class DenseKernels256
             (Vector256.Load(x + 24) - s3).Store(x + 24);
         }
     }
+
+    public static void SubtractScaled(double* target, double* source, double factor)
+    {
+        Vector256<double> f = Vector256.Create(factor);
+        Fma.MultiplyAddNegated(Vector256.Load(source), f, Vector256.Load(target)).Store(target);
+        Fma.MultiplyAddNegated(Vector256.Load(source + 4), f, Vector256.Load(target + 4)).Store(target + 4);
+    }
+
+    public static void AddRectangle(double* target, nint targetStride, double* source, nint sourceStride, nint rows, nint columns)
+    {
+        for (nint j = 0; j < columns; j++, target += targetStride, source += sourceStride)
+            Add(target, source, rows);
+    }
 }

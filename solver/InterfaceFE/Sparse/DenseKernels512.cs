@@ -6,6 +6,13 @@ namespace InterfaceFE.Sparse;
 /// <summary>The kernels for AVX-512: 16×8 and 8×8 register blocks, unrolled by hand because the compiler keeps only named locals in registers. See <see cref="DenseKernels"/> for what each does.</summary>
 internal static unsafe class DenseKernels512
 {
+    // The arrays behind the masks, so that they live as long as the program.
+    private static readonly List<long[]> Kept = [];
+
+    // Masks of eight numbers each: those after, and those before, the c-th.
+    private static readonly long* Below = Masks(after: true);
+    private static readonly long* Above = Masks(after: false);
+
     public static void SubtractProduct(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, nint rows, int columns)
     {
         nint i = 0;
@@ -66,6 +73,8 @@ internal static unsafe class DenseKernels512
     public static void SubtractDots(double* x, double* a, nint stride, double* y, int columns, nint rows)
     {
         int k = 0;
+        for (; k + 8 <= columns; k += 8, a += 8 * stride)
+            SubtractEightDots(x + k, a, stride, y, rows);
         for (; k + 4 <= columns; k += 4, a += 4 * stride)
         {
             Vector512<double> s0 = Vector512<double>.Zero, s1 = s0, s2 = s0, s3 = s0;
@@ -166,6 +175,16 @@ internal static unsafe class DenseKernels512
             x7 = Avx512F.FusedMultiplyAddNegated(x6, Vector512.Create(triangle[6 * triangleStride + 7]), x7);
             (x7 * Vector512.Create(inverse[7])).Store(x + 7 * xStride);
         }
+    }
+
+    private static long* Masks(bool after)
+    {
+        long[] masks = GC.AllocateArray<long>(64, pinned: true);
+        for (int c = 0; c < 8; c++)
+            for (int i = 0; i < 8; i++)
+                masks[8 * c + i] = (after ? i > c : i < c) ? -1 : 0;
+        Kept.Add(masks);
+        return (long*)System.Runtime.InteropServices.Marshal.UnsafeAddrOfPinnedArrayElement(masks, 0);
     }
 
     private static void Subtract16By8(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, int columns)
@@ -355,5 +374,61 @@ internal static unsafe class DenseKernels512
         (Vector512.Load(x + 8) - s1).Store(x + 8);
         (Vector512.Load(x + 16) - s2).Store(x + 16);
         (Vector512.Load(x + 24) - s3).Store(x + 24);
+    }
+
+    public static void SolveUnitLower(double* y, double* block, nint stride, int width)
+    {
+        Vector512<double> value = Vector512.Load(y);
+        for (int c = 0; c < width; c++)
+        {
+            Vector512<double> below = Vector512.Load(block + c * stride) & Vector512.Load(Below + 8 * c).AsDouble();
+            value = Avx512F.FusedMultiplyAddNegated(below, Avx512F.PermuteVar8x64(value, Vector512.Create((long)c)), value);
+        }
+        value.Store(y);
+    }
+
+    public static void SolveUnitUpper(double* y, double* block, nint stride, int width)
+    {
+        Vector512<double> value = Vector512.Load(y);
+        for (int c = width - 1; c > 0; c--)
+        {
+            Vector512<double> above = Vector512.Load(block + c * stride) & Vector512.Load(Above + 8 * c).AsDouble();
+            value = Avx512F.FusedMultiplyAddNegated(above, Avx512F.PermuteVar8x64(value, Vector512.Create((long)c)), value);
+        }
+        value.Store(y);
+    }
+
+    public static void SubtractScaled(double* target, double* source, double factor) =>
+        Avx512F.FusedMultiplyAddNegated(Vector512.Load(source), Vector512.Create(factor), Vector512.Load(target)).Store(target);
+
+    public static void AddRectangle(double* target, nint targetStride, double* source, nint sourceStride, nint rows, nint columns)
+    {
+        for (nint j = 0; j < columns; j++, target += targetStride, source += sourceStride)
+            Add(target, source, rows);
+    }
+
+    private static void SubtractEightDots(double* x, double* a, nint stride, double* y, nint rows)
+    {
+        Vector512<double> s0 = Vector512<double>.Zero, s1 = s0, s2 = s0, s3 = s0, s4 = s0, s5 = s0, s6 = s0, s7 = s0;
+        double* a1 = a + stride, a2 = a1 + stride, a3 = a2 + stride, a4 = a3 + stride, a5 = a4 + stride, a6 = a5 + stride, a7 = a6 + stride;
+        for (nint i = 0; i < rows; i += 8)
+        {
+            Vector512<double> value = Vector512.Load(y + i);
+            s0 = Avx512F.FusedMultiplyAdd(Vector512.Load(a + i), value, s0);
+            s1 = Avx512F.FusedMultiplyAdd(Vector512.Load(a1 + i), value, s1);
+            s2 = Avx512F.FusedMultiplyAdd(Vector512.Load(a2 + i), value, s2);
+            s3 = Avx512F.FusedMultiplyAdd(Vector512.Load(a3 + i), value, s3);
+            s4 = Avx512F.FusedMultiplyAdd(Vector512.Load(a4 + i), value, s4);
+            s5 = Avx512F.FusedMultiplyAdd(Vector512.Load(a5 + i), value, s5);
+            s6 = Avx512F.FusedMultiplyAdd(Vector512.Load(a6 + i), value, s6);
+            s7 = Avx512F.FusedMultiplyAdd(Vector512.Load(a7 + i), value, s7);
+        }
+        // The eight sums are taken together: neighbours, then lanes of two, then of four.
+        Vector512<double> t0 = Avx512F.UnpackLow(s0, s1) + Avx512F.UnpackHigh(s0, s1), t1 = Avx512F.UnpackLow(s2, s3) + Avx512F.UnpackHigh(s2, s3);
+        Vector512<double> t2 = Avx512F.UnpackLow(s4, s5) + Avx512F.UnpackHigh(s4, s5), t3 = Avx512F.UnpackLow(s6, s7) + Avx512F.UnpackHigh(s6, s7);
+        Vector512<double> u0 = Avx512F.Shuffle4x128(t0, t1, 0b10_00_10_00) + Avx512F.Shuffle4x128(t0, t1, 0b11_01_11_01);
+        Vector512<double> u1 = Avx512F.Shuffle4x128(t2, t3, 0b10_00_10_00) + Avx512F.Shuffle4x128(t2, t3, 0b11_01_11_01);
+        Vector512<double> sum = Avx512F.Shuffle4x128(u0, u1, 0b10_00_10_00) + Avx512F.Shuffle4x128(u0, u1, 0b11_01_11_01);
+        (Vector512.Load(x) - sum).Store(x);
     }
 }

@@ -10,6 +10,7 @@ namespace InterfaceFE.Sparse;
 internal sealed unsafe class FrontWorker
 {
     private const int Block = SparsePlan.Padding;
+    private const int SmallBlock = 48;
 
     private readonly SparsePlan _plan;
     private readonly SlotValues _values;
@@ -78,12 +79,27 @@ internal sealed unsafe class FrontWorker
         {
             double* panel = _store.Panel(half, front), block = rows > 0 ? Contribution(half, front) : null;
             Unsafe.InitBlock(panel, 0, checked((uint)((long)stride * columns * sizeof(double))));
-            Unsafe.InitBlock(block, 0, checked((uint)((long)rows * rows * sizeof(double))));
+            ClearLower(block, rows);
             AddSlots(front, half, panel, block, padded, stride, rows);
             for (int c = _plan.ChildStart[front]; c < _plan.ChildStart[front + 1]; c++)
                 AddChild(_plan.Children[c], half, panel, block, padded, stride, rows);
         }
         AddSizes(front, size, columns, stride);
+    }
+
+    /// <summary>Zeroes a contribution block, above the diagonal only where that costs less than many small calls.</summary>
+    private static void ClearLower(double* block, int rows)
+    {
+        if (rows <= SmallBlock)
+        {
+            Unsafe.InitBlock(block, 0, (uint)(rows * rows * sizeof(double)));
+            return;
+        }
+        for (int j = 0; j < rows; j++)
+        {
+            int from = j / Block * Block;
+            Unsafe.InitBlock(block + (long)j * rows + from, 0, (uint)((rows - from) * sizeof(double)));
+        }
     }
 
     private void AddSlots(int front, int half, double* panel, double* block, int padded, int stride, int rows)
@@ -120,13 +136,14 @@ internal sealed unsafe class FrontWorker
         nint childRows = _plan.PaddedRows(child);
         fixed (int* source = runs.Source, target = runs.Target, length = runs.Length)
             for (int a = begin; a < end; a++)
+            {
+                nint columnStride = target[a] < padded ? stride : rows;
+                double* column = Column(target[a], panel, block, padded, stride, rows), childColumn = from + source[a] * childRows;
                 for (int j = 0; j < length[a]; j++)
-                {
-                    double* column = Column(target[a] + j, panel, block, padded, stride, rows), childColumn = from + (source[a] + j) * childRows;
-                    DenseKernels.Add(column + target[a] + j, childColumn + source[a] + j, length[a] - j);
-                    for (int b = a + 1; b < end; b++)
-                        DenseKernels.Add(column + target[b], childColumn + source[b], length[b]);
-                }
+                    DenseKernels.Add(column + j * columnStride + target[a] + j, childColumn + j * childRows + source[a] + j, length[a] - j);
+                for (int b = a + 1; b < end; b++)
+                    DenseKernels.AddRectangle(column + target[b], columnStride, childColumn + source[b], childRows, length[b], length[a]);
+            }
     }
 
     /// <summary>Start of a column so that a local row number can be added to it, whether it lies in the panel or in the contribution block.</summary>
@@ -148,8 +165,7 @@ internal sealed unsafe class FrontWorker
             int child = _plan.Children[c];
             double* from = _store.RowSizes + _plan.RowStart[child];
             for (int a = runs.Begin[child]; a < runs.End[child]; a++)
-                for (int i = 0; i < runs.Length[a]; i++)
-                    size[runs.Target[a] + i] += from[runs.Source[a] + i];
+                DenseKernels.Add(size + runs.Target[a], from + runs.Source[a], runs.Length[a]);
         }
     }
 
@@ -212,6 +228,8 @@ internal sealed unsafe class FrontWorker
             if (PivotJudge.IsSmall(computed, soft))
             {
                 growth = ColumnGrowth(front, p, q, stride, k0, k, width, computed);
+                Mirror(p, stride, k + 1);
+                Mirror(q, stride, k + 1);
                 noise = _look.Noise(front, k0 + k, size);
                 _tally.HasLooked = true;
             }
@@ -220,16 +238,13 @@ internal sealed unsafe class FrontWorker
             _store.Inverse[place] = inverse;
             _tally.Growth = Math.Max(_tally.Growth, own[k] / scale);
             weight[k] = Math.Abs(pivot);
+            // Whole columns of the block: what this does above the diagonal is overwritten in the end.
             for (int j = k + 1; j < width; j++)
             {
-                double above = q[k * stride + j] * inverse;
-                for (int i = j; i < width; i++)
-                    p[j * stride + i] -= p[k * stride + i] * above;
-                if (halves == 1)
-                    continue;
-                double left = p[k * stride + j] * inverse;
-                for (int i = j; i < width; i++)
-                    q[j * stride + i] -= q[k * stride + i] * left;
+                double above = q[k * stride + j] * inverse, left = p[k * stride + j] * inverse;
+                DenseKernels.SubtractScaled(p + j * stride, p + k * stride, above);
+                if (halves == 2)
+                    DenseKernels.SubtractScaled(q + j * stride, q + k * stride, left);
             }
             for (int i = k + 1; i < width; i++)
             {
@@ -239,6 +254,16 @@ internal sealed unsafe class FrontWorker
                 own[i] += Math.Abs(p[k * stride + i] * q[k * stride + i]) * weight[k];
             }
         }
+        Mirror(p, stride, width);
+        Mirror(q, stride, width);
+    }
+
+    /// <summary>Copies the lower triangle of a block's first columns above the diagonal, where substitutions look for it.</summary>
+    private static void Mirror(double* block, nint stride, int width)
+    {
+        for (int c = 0; c < width; c++)
+            for (int i = c + 1; i < width; i++)
+                block[i * stride + c] = block[c * stride + i];
     }
 
     /// <summary>

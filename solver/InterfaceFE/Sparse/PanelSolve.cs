@@ -1,6 +1,9 @@
 namespace InterfaceFE.Sparse;
 
-/// <summary>Substitution with the unit triangle and the rows of one front's panel, on a local vector: pivots first, rows from the padded number of pivots on, a block of 8 to spare.</summary>
+/// <summary>
+/// Substitution with the unit triangle and the rows of one front's panel, on a local vector: pivots first, rows from the padded number of pivots on, a block of 8 to spare. The
+/// diagonal blocks of the panel have their transposed lower triangle above the diagonal.
+/// </summary>
 internal static unsafe class PanelSolve
 {
     private const int Block = SparsePlan.Padding;
@@ -12,9 +15,7 @@ internal static unsafe class PanelSolve
         {
             int width = Math.Min(Block, columns - k);
             double* block = panel + k * stride + k, y = local + k;
-            for (int c = 0; c < width; c++)
-                for (int i = c + 1; i < width; i++)
-                    y[i] -= block[c * stride + i] * y[c];
+            DenseKernels.SolveUnitLower(y, block, stride, width);
             DenseKernels.SubtractColumns(y + Block, block + Block, stride, y, width, stride - k - Block);
         }
     }
@@ -27,9 +28,7 @@ internal static unsafe class PanelSolve
             int width = Math.Min(Block, columns - k);
             double* block = panel + k * stride + k, y = local + k;
             DenseKernels.SubtractDots(y, block + Block, stride, y + Block, width, stride - k - Block);
-            for (int c = width - 1; c >= 0; c--)
-                for (int i = c + 1; i < width; i++)
-                    y[c] -= block[c * stride + i] * y[i];
+            DenseKernels.SolveUnitUpper(y, block, stride, width);
         }
     }
 

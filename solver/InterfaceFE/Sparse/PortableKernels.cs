@@ -85,4 +85,31 @@ internal static unsafe class PortableKernels
                 x[8 * k + lane] -= sum;
             }
     }
+
+    public static void SolveUnitLower(double* y, double* block, nint stride, int width)
+    {
+        for (int c = 0; c < width; c++)
+            for (int i = c + 1; i < 8; i++)
+                y[i] -= block[c * stride + i] * y[c];
+    }
+
+    public static void SolveUnitUpper(double* y, double* block, nint stride, int width)
+    {
+        for (int c = width - 1; c > 0; c--)
+            for (int i = 0; i < c; i++)
+                y[i] -= block[c * stride + i] * y[c];
+    }
+
+    public static void SubtractScaled(double* target, double* source, double factor)
+    {
+        for (int i = 0; i < 8; i++)
+            target[i] -= source[i] * factor;
+    }
+
+    public static void AddRectangle(double* target, nint targetStride, double* source, nint sourceStride, nint rows, nint columns)
+    {
+        for (nint j = 0; j < columns; j++)
+            for (nint i = 0; i < rows; i++)
+                target[j * targetStride + i] += source[j * sourceStride + i];
+    }
 }
