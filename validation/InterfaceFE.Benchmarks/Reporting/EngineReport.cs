@@ -1,0 +1,122 @@
+using System.Globalization;
+using System.Runtime.InteropServices;
+using System.Text;
+using InterfaceFE.Benchmarks.Engine;
+using InterfaceFE.Benchmarks.Rivals;
+using InterfaceFE.Benchmarks.Timing;
+
+namespace InterfaceFE.Benchmarks.Reporting;
+
+/// <summary>The table of a run of `engine`: Markdown for people, and all figures as name and value in a CSV file.</summary>
+/// <param name="models">Outcomes, model by model.</param>
+/// <param name="tries">Tries of the iterative solvers.</param>
+/// <param name="rates">Best rates of the machine.</param>
+/// <param name="narrowRates">Those of a process with 256-bit kernels; null where there was none.</param>
+/// <param name="cholmodVersions">Versions of CHOLMOD and its libraries.</param>
+/// <param name="skipped">Why CHOLMOD was left out; null where it was not.</param>
+/// <param name="isQuick">Whether it was a short run.</param>
+public sealed class EngineReport(
+    IReadOnlyList<ModelOutcome> models,
+    IReadOnlyList<IterativeTry> tries,
+    MachineRates rates,
+    MachineRates? narrowRates,
+    string? cholmodVersions,
+    string? skipped,
+    bool isQuick)
+{
+    private readonly EngineTables _tables = new(models, rates, narrowRates);
+
+    /// <summary>Writes both files and gives their names.</summary>
+    public IReadOnlyList<string> Write(string folder)
+    {
+        string name = isQuick ? "ENGINE-QUICK" : "ENGINE";
+        File.WriteAllText(Path.Combine(folder, name + ".md"), Text());
+        File.WriteAllText(Path.Combine(folder, name + ".csv"), Csv());
+        return [name + ".md", name + ".csv"];
+    }
+
+    private IEnumerable<Ratio> AllRatios() => models.SelectMany(model => model.Ratios()).Concat(tries.Select(one => one.Ratio).OfType<Ratio>());
+
+    private string Csv()
+    {
+        StringBuilder text = new("name,value\n");
+        foreach (Ratio ratio in AllRatios())
+            text.Append(CultureInfo.InvariantCulture, $"{ratio.Name},{ratio.Value:G6}\n");
+        return text.ToString();
+    }
+
+    private string Text()
+    {
+        StringBuilder text = new();
+        text.Append("# Sparse engine: speed\n\n");
+        text.Append("Written by `dotnet run -c Release --project validation/InterfaceFE.Benchmarks -- engine").Append(isQuick ? " --quick" : "").Append("`. Compare ratios, not times: the machine was shared.\n\n");
+        AppendMachine(text);
+        text.Append("""
+
+            Every time is a median, on one thread but for the table that says otherwise. Runs of the engine and of CHOLMOD alternate, so that what else the machine does hits both. "CHOLMOD" is the fastest of its four
+            configurations on that model in that run: supernodal or simplicial, ordered by AMD or METIS; OpenBLAS and OpenMP limited to one thread; factorisation with the analysis done before, and solve. Both sides
+            solve the same matrix: aluminium arms on an adhesive layer, the starter crack open, a process zone softening ahead of it, the rest virgin; grips held.
+
+            """.ReplaceLineEndings("\n"));
+        Append(text, "Whole factorisation and solve", "Difference: largest difference of the two solutions over the largest value; errors: backward errors of CHOLMOD and of the engine.", _tables.Whole());
+        Append(text, "CHOLMOD's configurations", "", _tables.Configurations());
+        Append(text, "Changed layer elements", "Neighbouring layer elements take new softening tangents; places are spread over the bonded stretches, times are medians over places and repeats, \"slowest place\" the median at the "
+            + "slowest one. The engine's time includes taking the new matrices; the other side's does not. \"Bits\": values along the path equal those of a whole factorisation and solve to the last bit. Memory: managed "
+            + "bytes taken by an iteration.", _tables.Layers());
+        Append(text, "Yielding patches", "All solid and layer elements of full-height columns change. \"First\": first factorisation after the patch spread there, when contribution blocks that were not kept must be made.", _tables.Patches());
+        Append(text, "Two threads", "Wall clock of a whole factorisation. Two threads gain only while the second core is free.", _tables.Threads());
+        Append(text, "Order", "Arithmetic under each order, counted by one rule (CHOLMOD's symbolic analysis) without explicit zeros, and what the engine does with the zeros of merged fronts.", _tables.Orders());
+        AppendTries(text);
+        Append(text, "Arithmetic, bytes and what bounds the time", "Bytes: those that must be moved at least once. Shares: time that the arithmetic would take at the innermost loop's best rate, and that the bytes would take at the "
+            + "memory's best rate, over the measured time; the rest is assembly, index lists and loops too short to reach either. Paths mostly stay in cache, where bytes cost less than the share says.", _tables.Bounds());
+        AppendTargets(text);
+        return text.ToString();
+    }
+
+    private static void Append(StringBuilder text, string heading, string words, MarkdownTable table)
+    {
+        if (table.IsEmpty)
+            return;
+        text.Append("\n## ").Append(heading).Append("\n\n");
+        if (words.Length > 0)
+            text.Append(words).Append("\n\n");
+        text.Append(table);
+    }
+
+    private void AppendMachine(StringBuilder text)
+    {
+        MarkdownTable table = new("run", "");
+        table.Add("date", DateTime.Today.ToString("yyyy-MM-dd", CultureInfo.InvariantCulture));
+        table.Add("processor", Machine.ProcessorModel());
+        table.Add("processors seen", Environment.ProcessorCount.ToString(CultureInfo.InvariantCulture));
+        table.Add("kernel width", $"{rates.KernelWidth} bits" + (narrowRates is null ? "" : $"; narrow figures: {narrowRates.KernelWidth} bits, the same program with wider vectors switched off in the runtime"));
+        table.Add("best rate of the innermost loop", $"{Digits.Three(rates.PeakFlopsPerMs / 1e6)} Gflop/s" + (narrowRates is null ? "" : $"; narrow: {Digits.Three(narrowRates.PeakFlopsPerMs / 1e6)} Gflop/s"));
+        table.Add("best reading rate of memory", $"{Digits.Three(rates.BytesPerMs / 1e6)} GB/s");
+        table.Add("clock", ThreadClock.Description);
+        table.Add("InterfaceFE", typeof(Sparse.SparsePlan).Assembly.GetName().Version?.ToString(3) ?? "");
+        table.Add(".NET", RuntimeInformation.FrameworkDescription);
+        table.Add("CHOLMOD", cholmodVersions ?? $"skipped: {skipped}");
+        table.Add("MathNet.Numerics", IterativeSolvers.Version);
+        text.Append(table);
+    }
+
+    private void AppendTries(StringBuilder text)
+    {
+        MarkdownTable table = new("solver and preconditioner", "outcome", "time / engine's whole time");
+        foreach (IterativeTry one in tries)
+            table.Add(one.Solver, one.Words, one.Ratio is { } ratio ? Digits.Three(ratio.Value) : "–");
+        Append(text, "MathNet's sparse solvers", FormattableString.Invariant($"On {models[0].Times.Model}, to a relative residual of {IterativeSolvers.Tolerance:0E+0}. They are iterative; a sparse direct solver is not part of the package."), table);
+    }
+
+    private void AppendTargets(StringBuilder text)
+    {
+        Dictionary<string, double> values = AllRatios().ToDictionary(ratio => ratio.Name, ratio => ratio.Value);
+        MarkdownTable table = new("figure", "target", "measured", "");
+        foreach (Target target in Target.All.Where(target => values.ContainsKey(target.Name)))
+        {
+            double value = values[target.Name];
+            table.Add(target.Name, (target.IsCeiling ? "at most " : "at least ") + target.Limit.ToString(CultureInfo.InvariantCulture), Digits.Three(value), target.Holds(value) ? "held" : "missed: " + _tables.Reason(target.Name));
+        }
+        Append(text, "Targets", "", table);
+    }
+}
