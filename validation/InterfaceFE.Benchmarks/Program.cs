@@ -16,31 +16,44 @@ string usage = $"""
     """;
 
 CultureInfo.CurrentCulture = CultureInfo.InvariantCulture;
-bool isQuick = args.Contains("--quick");
-string[] words = [.. args.Where(argument => argument != "--quick")];
-switch (words)
+try
 {
-    case ["--help"] or ["-h"]:
-        Console.WriteLine(usage);
-        return 0;
-    case ["engine"]:
-        if (ValidationFolder() is { } folder)
-            return new EngineCommand(Console.Out, Console.Error).Run(folder, isQuick);
-        Console.Error.WriteLine("InterfaceFE.sln was not found here or in a folder above: run this inside the repository");
-        return 1;
-    case ["ordering"]:
-        return new OrderingCommand(Console.Out).Run(isQuick);
-    case ["times", var model] when MeshCatalogue.All.FirstOrDefault(entry => entry.Name == model) is { } entry:
-        return TimesCommand.Run(entry, isQuick, Console.Out);
-    case ["iterate", var model, var solver, var preconditioner, var limit]
-        when MeshCatalogue.All.FirstOrDefault(entry => entry.Name == model) is { } entry && IterativeSolvers.Solvers.Contains(solver) && IterativeSolvers.Preconditioners.Contains(preconditioner)
-            && double.TryParse(limit, NumberStyles.Float, CultureInfo.InvariantCulture, out double seconds) && seconds > 0 && !isQuick:
-        return IterateCommand.Run(entry, solver, preconditioner, seconds, Console.Out);
-    default:
-        if (words.Length > 0)
-            Console.Error.WriteLine($"'{string.Join(' ', args)}' is not understood");
-        Console.Error.WriteLine(usage);
-        return 1;
+    return Run(args, usage);
+}
+catch (Exception fault) when (fault is InvalidOperationException or IOException or UnauthorizedAccessException)
+{
+    Console.Error.WriteLine(fault.Message);
+    return 1;
+}
+
+static int Run(string[] args, string usage)
+{
+    bool isQuick = args.Contains("--quick");
+    string[] words = [.. args.Where(argument => argument != "--quick")];
+    switch (words)
+    {
+        case ["--help"] or ["-h"]:
+            Console.WriteLine(usage);
+            return 0;
+        case ["engine"]:
+            if (ValidationFolder() is { } folder)
+                return new EngineCommand(Console.Out, Console.Error).Run(folder, isQuick);
+            Console.Error.WriteLine("InterfaceFE.sln was not found here or in a folder above: run this inside the repository");
+            return 1;
+        case ["ordering"]:
+            return new OrderingCommand(Console.Out).Run(isQuick);
+        case ["times", var model] when MeshCatalogue.All.FirstOrDefault(entry => entry.Name == model) is { } entry:
+            return TimesCommand.Run(entry, isQuick, Console.Out);
+        case ["iterate", var model, var solver, var preconditioner, var limit]
+            when MeshCatalogue.All.FirstOrDefault(entry => entry.Name == model) is { } entry && IterativeSolvers.Solvers.Contains(solver) && IterativeSolvers.Preconditioners.Contains(preconditioner)
+                && double.TryParse(limit, NumberStyles.Float, CultureInfo.InvariantCulture, out double seconds) && seconds > 0 && !isQuick:
+            return IterateCommand.Run(entry, solver, preconditioner, seconds, Console.Out);
+        default:
+            if (words.Length > 0)
+                Console.Error.WriteLine($"'{string.Join(' ', args)}' is not understood");
+            Console.Error.WriteLine(usage);
+            return 1;
+    }
 }
 
 static string? ValidationFolder()

@@ -30,7 +30,7 @@ public sealed class EngineCommand(TextWriter output, TextWriter progress)
         progress.WriteLine("compiling the engine's loops");
         WarmUp.Run();
         MachineRates rates = MachineMeter.Measure();
-        ModelBenchmark benchmark = new(program, folder, isQuick);
+        ModelBenchmark benchmark = new(program, folder, isQuick, output);
         List<ModelOutcome> outcomes = [];
         List<IterativeTry> tries = [];
         foreach (CatalogueEntry entry in MeshCatalogue.All.Where(entry => entry.IsQuick || !isQuick))

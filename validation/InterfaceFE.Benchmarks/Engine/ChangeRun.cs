@@ -13,7 +13,7 @@ public sealed class ChangeRun
     private readonly double[][] _rightSides;
     private readonly double[] _x;
     private readonly double _size;
-    private readonly Samples _replace = new(), _factor = new(), _solve = new(), _first = new();
+    private readonly Samples _replace = new(), _factor = new(), _solve = new();
     private readonly Samples[] _totalAt;
     private readonly double[] _flops;
     private long _allocated;
@@ -50,13 +50,13 @@ public sealed class ChangeRun
     }
 
     /// <summary>Goes to each place, changes its elements a few times, and puts the model's own matrices back.</summary>
-    /// <param name="repeats">Measured changes at each place, after one that is kept apart.</param>
+    /// <param name="repeats">Measured changes at each place, after one that is not.</param>
     public void Round(int repeats)
     {
         for (int p = 0; p < _places.Length; p++)
         {
             for (int repeat = 0; repeat <= repeats; repeat++)
-                Iterate(p, isFirst: repeat == 0);
+                Iterate(p, measured: repeat > 0);
             _engine.Restore(_places[p].Slots);
         }
     }
@@ -90,7 +90,6 @@ public sealed class ChangeRun
         _factor.Median,
         _solve.Median,
         _totalAt.Max(samples => samples.Median),
-        _first.Median,
         _flops.Average(),
         _paths.Average(_engine.PathBytes),
         _allocated,
@@ -98,7 +97,7 @@ public sealed class ChangeRun
 
     private IEnumerable<int> PlacesWithLoad(int place) => Enumerable.Range(0, _x.Length).Where(i => _rightSides[place][i] != 0);
 
-    private void Iterate(int place, bool isFirst)
+    private void Iterate(int place, bool measured)
     {
         ElementChange change = _places[place];
         double[][] matrices = change.Matrices[_next++ % change.Matrices.Length];
@@ -111,11 +110,8 @@ public sealed class ChangeRun
         _engine.Solve(_rightSides[place], _x, _paths[place]);
         double solved = ThreadClock.Milliseconds();
         allocated = GC.GetAllocatedBytesForCurrentThread() - allocated;
-        if (isFirst)
-        {
-            _first.Add(factored - replaced);
+        if (!measured)
             return;
-        }
         _allocated = Math.Max(_allocated, allocated);
         _replace.Add(replaced - start);
         _factor.Add(factored - replaced);

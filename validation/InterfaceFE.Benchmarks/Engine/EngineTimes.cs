@@ -3,8 +3,9 @@ namespace InterfaceFE.Benchmarks.Engine;
 /// <summary>What the processor can do at best, measured in the same run.</summary>
 /// <param name="KernelWidth">Width of the kernels' vectors [bits].</param>
 /// <param name="PeakFlopsPerMs">Arithmetic of the innermost loop with its numbers in cache [flop/ms].</param>
-/// <param name="BytesPerMs">Reading of an array that no cache holds [byte/ms].</param>
-public sealed record MachineRates(int KernelWidth, double PeakFlopsPerMs, double BytesPerMs);
+/// <param name="CacheBytesPerMs">Reading of an array that the larger caches hold [byte/ms].</param>
+/// <param name="MemoryBytesPerMs">Reading of an array that no cache holds [byte/ms].</param>
+public sealed record MachineRates(int KernelWidth, double PeakFlopsPerMs, double CacheBytesPerMs, double MemoryBytesPerMs);
 
 /// <summary>Times of one kind of change, over several places.</summary>
 /// <param name="Size">Number of layer elements, or width of a yielding patch [mm].</param>
@@ -13,7 +14,6 @@ public sealed record MachineRates(int KernelWidth, double PeakFlopsPerMs, double
 /// <param name="FactorMs">Median of the factorisation along the paths [ms].</param>
 /// <param name="SolveMs">Median of the solve along the paths [ms].</param>
 /// <param name="SlowestPlaceMs">Sum of the three at the slowest place, by medians [ms].</param>
-/// <param name="FirstFactorMs">Median of the first factorisation at a place [ms]: contribution blocks that were not kept must then be made.</param>
 /// <param name="Flops">Arithmetic of a factorisation, mean over places [flop].</param>
 /// <param name="Bytes">Bytes it must move at least, mean over places.</param>
 /// <param name="AllocatedBytes">Most managed memory taken by an iteration [byte].</param>
@@ -25,7 +25,6 @@ public sealed record ChangeTimes(
     double FactorMs,
     double SolveMs,
     double SlowestPlaceMs,
-    double FirstFactorMs,
     double Flops,
     double Bytes,
     long AllocatedBytes,

@@ -2,10 +2,10 @@ using System.Globalization;
 
 namespace InterfaceFE.Benchmarks.Reporting;
 
-/// <summary>Numbers in tables: three digits, no exponent where it can be avoided.</summary>
+/// <summary>Numbers in tables: about three digits, no exponent where it can be avoided.</summary>
 public static class Digits
 {
-    /// <summary>Three significant digits; a dash for NaN.</summary>
+    /// <summary>Three significant digits from 1 up, four decimals below; a dash for NaN.</summary>
     public static string Three(double value)
     {
         if (double.IsNaN(value))

@@ -63,12 +63,12 @@ public sealed class EngineReport(
         Append(text, "Changed layer elements", "Neighbouring layer elements take new softening tangents; places are spread over the bonded stretches, times are medians over places and repeats, \"slowest place\" the median at the "
             + "slowest one. The engine's time includes taking the new matrices; the other side's does not. \"Bits\": values along the path equal those of a whole factorisation and solve to the last bit. Memory: managed "
             + "bytes taken by an iteration.", _tables.Layers());
-        Append(text, "Yielding patches", "All solid and layer elements of full-height columns change. \"First\": first factorisation after the patch spread there, when contribution blocks that were not kept must be made.", _tables.Patches());
+        Append(text, "Yielding patches", "All solid and layer elements of full-height columns change. Blocks beside what was not expected to change are made anew on the way.", _tables.Patches());
         Append(text, "Two threads", "Wall clock of a whole factorisation. Two threads gain only while the second core is free.", _tables.Threads());
         Append(text, "Order", "Arithmetic under each order, counted by one rule (CHOLMOD's symbolic analysis) without explicit zeros, and what the engine does with the zeros of merged fronts.", _tables.Orders());
         AppendTries(text);
         Append(text, "Arithmetic, bytes and what bounds the time", "Bytes: those that must be moved at least once. Shares: time that the arithmetic would take at the innermost loop's best rate, and that the bytes would take at the "
-            + "memory's best rate, over the measured time; the rest is assembly, index lists and loops too short to reach either. Paths mostly stay in cache, where bytes cost less than the share says.", _tables.Bounds());
+            + "best rate of the memory (of the cache, where they are 8 MB or less), over the measured time; the rest is assembly, index lists and loops too short to reach either.", _tables.Bounds());
         AppendTargets(text);
         return text.ToString();
     }
@@ -85,19 +85,18 @@ public sealed class EngineReport(
 
     private void AppendMachine(StringBuilder text)
     {
-        MarkdownTable table = new("run", "");
-        table.Add("date", DateTime.Today.ToString("yyyy-MM-dd", CultureInfo.InvariantCulture));
-        table.Add("processor", Machine.ProcessorModel());
-        table.Add("processors seen", Environment.ProcessorCount.ToString(CultureInfo.InvariantCulture));
-        table.Add("kernel width", $"{rates.KernelWidth} bits" + (narrowRates is null ? "" : $"; narrow figures: {narrowRates.KernelWidth} bits, the same program with wider vectors switched off in the runtime"));
-        table.Add("best rate of the innermost loop", $"{Digits.Three(rates.PeakFlopsPerMs / 1e6)} Gflop/s" + (narrowRates is null ? "" : $"; narrow: {Digits.Three(narrowRates.PeakFlopsPerMs / 1e6)} Gflop/s"));
-        table.Add("best reading rate of memory", $"{Digits.Three(rates.BytesPerMs / 1e6)} GB/s");
-        table.Add("clock", ThreadClock.Description);
-        table.Add("InterfaceFE", typeof(Sparse.SparsePlan).Assembly.GetName().Version?.ToString(3) ?? "");
-        table.Add(".NET", RuntimeInformation.FrameworkDescription);
-        table.Add("CHOLMOD", cholmodVersions ?? $"skipped: {skipped}");
-        table.Add("MathNet.Numerics", IterativeSolvers.Version);
-        text.Append(table);
+        string narrow = narrowRates is null ? "" : $"; narrow figures: {narrowRates.KernelWidth} bits, the same program with wider vectors switched off in the runtime";
+        string narrowPeak = narrowRates is null ? "" : $" (narrow: {Digits.Three(narrowRates.PeakFlopsPerMs / 1e6)})";
+        Item("Date", DateTime.Today.ToString("yyyy-MM-dd", CultureInfo.InvariantCulture));
+        Item("Processor", $"{Machine.ProcessorModel()}, {Environment.ProcessorCount} seen");
+        Item("Kernel width", $"{rates.KernelWidth} bits{narrow}");
+        Item("Best rates in this run", $"innermost loop {Digits.Three(rates.PeakFlopsPerMs / 1e6)}{narrowPeak} Gflop/s; reading from cache {Digits.Three(rates.CacheBytesPerMs / 1e6)} GB/s, from memory "
+            + $"{Digits.Three(rates.MemoryBytesPerMs / 1e6)} GB/s");
+        Item("Clock", ThreadClock.Description);
+        Item("Versions", $"InterfaceFE {typeof(Sparse.SparsePlan).Assembly.GetName().Version?.ToString(3)}, {RuntimeInformation.FrameworkDescription}, MathNet.Numerics {IterativeSolvers.Version}");
+        Item("CHOLMOD", cholmodVersions ?? $"skipped: {skipped}");
+
+        void Item(string name, string value) => text.Append("- ").Append(name).Append(": ").Append(value).Append('\n');
     }
 
     private void AppendTries(StringBuilder text)

@@ -72,7 +72,7 @@ public sealed class EngineTables(IReadOnlyList<ModelOutcome> models, MachineRate
     /// <summary>Yielding patches.</summary>
     public MarkdownTable Patches()
     {
-        MarkdownTable table = new("model", "width [mm]", "elements", "replace + factor + solve [ms]", "first factor [ms]", "CHOLMOD /", "own whole /", "narrow [ms]", "bits", "memory [byte]");
+        MarkdownTable table = new("model", "width [mm]", "elements", "replace + factor + solve [ms]", "CHOLMOD /", "own whole /", "narrow [ms]", "bits", "memory [byte]");
         foreach (ModelOutcome model in models)
             for (int i = 0; i < model.Times.Patches.Count; i++)
             {
@@ -83,7 +83,6 @@ public sealed class EngineTables(IReadOnlyList<ModelOutcome> models, MachineRate
                     Digits.Three(patch.Size),
                     Digits.Whole(patch.Elements),
                     Sum(patch),
-                    Digits.Three(patch.FirstFactorMs),
                     Over(model.Cholmod?.Best.TotalMs, patch.TotalMs),
                     Over(model.Times.TotalMs, patch.TotalMs),
                     narrow is null ? "–" : Sum(narrow),

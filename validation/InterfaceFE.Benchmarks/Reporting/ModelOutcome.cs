@@ -7,7 +7,6 @@ namespace InterfaceFE.Benchmarks.Reporting;
 /// <param name="Configurations">Its configurations.</param>
 /// <param name="Best">The fastest.</param>
 /// <param name="OwnOrderFlops">Flops of the engine's order, counted by CHOLMOD's rule, without explicit zeros.</param>
-/// <param name="OwnOrderNonZeros">Entries of the factor under the engine's order.</param>
 /// <param name="Difference">Largest difference of the two solutions over the largest value.</param>
 /// <param name="BackwardError">Backward error of CHOLMOD's solution.</param>
 /// <param name="OwnBackwardError">Backward error of the engine's.</param>
@@ -15,7 +14,6 @@ public sealed record CholmodOutcome(
     IReadOnlyList<CholmodConfiguration> Configurations,
     CholmodConfiguration Best,
     double OwnOrderFlops,
-    double OwnOrderNonZeros,
     double Difference,
     double BackwardError,
     double OwnBackwardError);

@@ -50,7 +50,6 @@ public sealed class CholmodSession : IDisposable
         _errors = _program.StandardError.ReadToEndAsync();
         Versions = string.Join(' ', Ask("versions", "versions"));
         Ask("open " + file, "opened");
-        File.Delete(file);
     }
 
     /// <summary>Number of rows.</summary>
