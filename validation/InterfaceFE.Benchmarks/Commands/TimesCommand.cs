@@ -15,7 +15,7 @@ public static class TimesCommand
     // The first name is that of current runtimes, the second that of earlier ones.
     private static readonly Dictionary<string, string> NarrowVectors = new() { ["DOTNET_EnableAVX512"] = "0", ["DOTNET_EnableAVX512F"] = "0" };
 
-    private static readonly TimeSpan Limit = TimeSpan.FromMinutes(5);
+    private static readonly TimeSpan Limit = TimeSpan.FromMinutes(20);
 
     /// <summary>Rounds of a run.</summary>
     public static int Rounds(bool isQuick) => isQuick ? 3 : 7;

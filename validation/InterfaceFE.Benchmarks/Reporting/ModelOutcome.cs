@@ -69,7 +69,7 @@ public sealed record ModelOutcome(string Description, EngineTimes Times, EngineT
 /// <summary>A try of one of MathNet's solvers.</summary>
 /// <param name="Model">Model.</param>
 /// <param name="Solver">Solver and preconditioner.</param>
-/// <param name="LimitSeconds">Time limit [s].</param>
+/// <param name="LimitSeconds">Limit of processor time [s].</param>
 /// <param name="Outcome">Outcome; null where it broke off or was ended.</param>
 /// <param name="EngineMs">Whole factorisation and solve of the engine [ms].</param>
 public sealed record IterativeTry(string Model, string Solver, double LimitSeconds, IterativeOutcome? Outcome, double EngineMs)
@@ -81,7 +81,7 @@ public sealed record IterativeTry(string Model, string Solver, double LimitSecon
     public string Words => Outcome switch
     {
         { Converged: true } => FormattableString.Invariant($"{Digits.Three(Outcome.Milliseconds)} ms, {Outcome.Iterations} iterations, relative residual {Outcome.RelativeResidual:0.0E+0}"),
-        not null => FormattableString.Invariant($"did not finish in {LimitSeconds} s: relative residual {Outcome.RelativeResidual:0.0E+0} after {Outcome.Iterations} iterations"),
-        null => FormattableString.Invariant($"broke off, or did not finish in {LimitSeconds} s"),
+        not null => FormattableString.Invariant($"did not finish in {LimitSeconds} s of processor time: relative residual {Outcome.RelativeResidual:0.0E+0} after {Outcome.Iterations} iterations"),
+        null => FormattableString.Invariant($"broke off, or did not finish in {LimitSeconds} s of processor time"),
     };
 }

@@ -51,20 +51,19 @@ public static class IterativeSolvers
     /// <param name="preconditioner">One of <see cref="Preconditioners"/>.</param>
     /// <param name="matrix">Matrix.</param>
     /// <param name="rightSide">Right side.</param>
-    /// <param name="seconds">Wall-clock limit of the iteration [s].</param>
+    /// <param name="seconds">Limit of preconditioner and iteration, on the clock of <see cref="ThreadClock"/> [s].</param>
     public static IterativeOutcome Solve(string solver, string preconditioner, AssembledMatrix matrix, double[] rightSide, double seconds)
     {
         Control.UseSingleThread();
         SparseMatrix full = SparseMatrix.OfIndexed(matrix.Size, matrix.Size, Entries(matrix));
         DenseVector b = DenseVector.Create(matrix.Size, i => rightSide[i]), x = DenseVector.Create(matrix.Size, 0);
-        double limit = ThreadClock.WallMilliseconds() + 1000 * seconds;
         int iterations = 0;
         double start = ThreadClock.Milliseconds();
         Iterator<double> iterator = new(
             new DelegateStopCriterion<double>((iteration, _, _, _) =>
             {
                 iterations = iteration;
-                return ThreadClock.WallMilliseconds() > limit ? IterationStatus.StoppedWithoutConvergence : IterationStatus.Continue;
+                return ThreadClock.Milliseconds() - start > 1000 * seconds ? IterationStatus.StoppedWithoutConvergence : IterationStatus.Continue;
             }),
             new ResidualStopCriterion<double>(0.5 * Tolerance),
             new IterationCountStopCriterion<double>(MostIterations));
