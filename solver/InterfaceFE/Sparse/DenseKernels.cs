@@ -92,4 +92,26 @@ public static unsafe class DenseKernels
         else
             PortableKernels.AddAbsoluteProducts(y, a, b, stride, weight, columns, rows);
     }
+
+    /// <summary>y (rows×8, row after row) -= a (rows×columns) · x (columns×8, row after row). Any number of rows.</summary>
+    internal static void SubtractLanes(double* y, double* a, nint stride, double* x, int columns, nint rows)
+    {
+        if (Wide)
+            DenseKernels512.SubtractLanes(y, a, stride, x, columns, rows);
+        else if (Middle)
+            DenseKernels256.SubtractLanes(y, a, stride, x, columns, rows);
+        else
+            PortableKernels.SubtractLanes(y, a, stride, x, columns, rows);
+    }
+
+    /// <summary>x (columns×8) -= aᵀ · y (rows×8), both row after row. Any number of rows.</summary>
+    internal static void SubtractLaneDots(double* x, double* a, nint stride, double* y, int columns, nint rows)
+    {
+        if (Wide)
+            DenseKernels512.SubtractLaneDots(x, a, stride, y, columns, rows);
+        else if (Middle)
+            DenseKernels256.SubtractLaneDots(x, a, stride, y, columns, rows);
+        else
+            PortableKernels.SubtractLaneDots(x, a, stride, y, columns, rows);
+    }
 }

@@ -203,4 +203,77 @@ internal static unsafe class DenseKernels256
         c03.Store(c + 3 * cStride);
         c13.Store(c + 3 * cStride + 4);
     }
+
+    public static void SubtractLanes(double* y, double* a, nint stride, double* x, int columns, nint rows)
+    {
+        for (; columns >= 4; columns -= 4, a += 4 * stride, x += 32)
+            SubtractFourLanes(y, a, stride, x, rows);
+        for (; columns > 0; columns--, a += stride, x += 8)
+        {
+            Vector256<double> x0 = Vector256.Load(x);
+            Vector256<double> x1 = Vector256.Load(x + 4);
+            for (nint i = 0; i < rows; i++)
+            {
+                Vector256<double> factor = Vector256.Create(a[i]);
+                Fma.MultiplyAddNegated(factor, x0, Vector256.Load(y + 8 * i)).Store(y + 8 * i);
+                Fma.MultiplyAddNegated(factor, x1, Vector256.Load(y + 8 * i + 4)).Store(y + 8 * i + 4);
+            }
+        }
+    }
+
+    public static void SubtractLaneDots(double* x, double* a, nint stride, double* y, int columns, nint rows)
+    {
+        for (; columns >= 4; columns -= 4, a += 4 * stride, x += 32)
+            SubtractFourLaneDots(x, a, stride, y, rows);
+        for (; columns > 0; columns--, a += stride, x += 8)
+        {
+            Vector256<double> sum0 = Vector256<double>.Zero;
+            Vector256<double> sum1 = Vector256<double>.Zero;
+            for (nint i = 0; i < rows; i++)
+            {
+                Vector256<double> factor = Vector256.Create(a[i]);
+                sum0 = Fma.MultiplyAdd(factor, Vector256.Load(y + 8 * i), sum0);
+                sum1 = Fma.MultiplyAdd(factor, Vector256.Load(y + 8 * i + 4), sum1);
+            }
+            (Vector256.Load(x) - sum0).Store(x);
+            (Vector256.Load(x + 4) - sum1).Store(x + 4);
+        }
+    }
+
+    private static void SubtractFourLanes(double* y, double* a, nint stride, double* x, nint rows)
+    {
+        double* a1 = a + stride, a2 = a1 + stride, a3 = a2 + stride;
+        for (nint half = 0; half < 8; half += 4, x += 4, y += 4)
+        {
+            Vector256<double> x0 = Vector256.Load(x), x1 = Vector256.Load(x + 8), x2 = Vector256.Load(x + 16), x3 = Vector256.Load(x + 24);
+            for (nint i = 0; i < rows; i++)
+            {
+                Vector256<double> value = Fma.MultiplyAddNegated(Vector256.Create(a[i]), x0, Vector256.Load(y + 8 * i));
+                value = Fma.MultiplyAddNegated(Vector256.Create(a1[i]), x1, value);
+                value = Fma.MultiplyAddNegated(Vector256.Create(a2[i]), x2, value);
+                Fma.MultiplyAddNegated(Vector256.Create(a3[i]), x3, value).Store(y + 8 * i);
+            }
+        }
+    }
+
+    private static void SubtractFourLaneDots(double* x, double* a, nint stride, double* y, nint rows)
+    {
+        double* a1 = a + stride, a2 = a1 + stride, a3 = a2 + stride;
+        for (nint half = 0; half < 8; half += 4, x += 4, y += 4)
+        {
+            Vector256<double> s0 = Vector256<double>.Zero, s1 = s0, s2 = s0, s3 = s0;
+            for (nint i = 0; i < rows; i++)
+            {
+                Vector256<double> value = Vector256.Load(y + 8 * i);
+                s0 = Fma.MultiplyAdd(Vector256.Create(a[i]), value, s0);
+                s1 = Fma.MultiplyAdd(Vector256.Create(a1[i]), value, s1);
+                s2 = Fma.MultiplyAdd(Vector256.Create(a2[i]), value, s2);
+                s3 = Fma.MultiplyAdd(Vector256.Create(a3[i]), value, s3);
+            }
+            (Vector256.Load(x) - s0).Store(x);
+            (Vector256.Load(x + 8) - s1).Store(x + 8);
+            (Vector256.Load(x + 16) - s2).Store(x + 16);
+            (Vector256.Load(x + 24) - s3).Store(x + 24);
+        }
+    }
 }

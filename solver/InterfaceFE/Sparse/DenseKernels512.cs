@@ -272,4 +272,60 @@ internal static unsafe class DenseKernels512
         c06.Store(c + 6 * cStride);
         c07.Store(c + 7 * cStride);
     }
+
+    public static void SubtractLanes(double* y, double* a, nint stride, double* x, int columns, nint rows)
+    {
+        for (; columns >= 4; columns -= 4, a += 4 * stride, x += 32)
+            SubtractFourLanes(y, a, stride, x, rows);
+        for (; columns > 0; columns--, a += stride, x += 8)
+        {
+            Vector512<double> x0 = Vector512.Load(x);
+            for (nint i = 0; i < rows; i++)
+                Avx512F.FusedMultiplyAddNegated(Vector512.Create(a[i]), x0, Vector512.Load(y + 8 * i)).Store(y + 8 * i);
+        }
+    }
+
+    public static void SubtractLaneDots(double* x, double* a, nint stride, double* y, int columns, nint rows)
+    {
+        for (; columns >= 4; columns -= 4, a += 4 * stride, x += 32)
+            SubtractFourLaneDots(x, a, stride, y, rows);
+        for (; columns > 0; columns--, a += stride, x += 8)
+        {
+            Vector512<double> sum0 = Vector512<double>.Zero;
+            for (nint i = 0; i < rows; i++)
+                sum0 = Avx512F.FusedMultiplyAdd(Vector512.Create(a[i]), Vector512.Load(y + 8 * i), sum0);
+            (Vector512.Load(x) - sum0).Store(x);
+        }
+    }
+
+    private static void SubtractFourLanes(double* y, double* a, nint stride, double* x, nint rows)
+    {
+        double* a1 = a + stride, a2 = a1 + stride, a3 = a2 + stride;
+        Vector512<double> x0 = Vector512.Load(x), x1 = Vector512.Load(x + 8), x2 = Vector512.Load(x + 16), x3 = Vector512.Load(x + 24);
+        for (nint i = 0; i < rows; i++)
+        {
+            Vector512<double> value = Avx512F.FusedMultiplyAddNegated(Vector512.Create(a[i]), x0, Vector512.Load(y + 8 * i));
+            value = Avx512F.FusedMultiplyAddNegated(Vector512.Create(a1[i]), x1, value);
+            value = Avx512F.FusedMultiplyAddNegated(Vector512.Create(a2[i]), x2, value);
+            Avx512F.FusedMultiplyAddNegated(Vector512.Create(a3[i]), x3, value).Store(y + 8 * i);
+        }
+    }
+
+    private static void SubtractFourLaneDots(double* x, double* a, nint stride, double* y, nint rows)
+    {
+        double* a1 = a + stride, a2 = a1 + stride, a3 = a2 + stride;
+        Vector512<double> s0 = Vector512<double>.Zero, s1 = s0, s2 = s0, s3 = s0;
+        for (nint i = 0; i < rows; i++)
+        {
+            Vector512<double> value = Vector512.Load(y + 8 * i);
+            s0 = Avx512F.FusedMultiplyAdd(Vector512.Create(a[i]), value, s0);
+            s1 = Avx512F.FusedMultiplyAdd(Vector512.Create(a1[i]), value, s1);
+            s2 = Avx512F.FusedMultiplyAdd(Vector512.Create(a2[i]), value, s2);
+            s3 = Avx512F.FusedMultiplyAdd(Vector512.Create(a3[i]), value, s3);
+        }
+        (Vector512.Load(x) - s0).Store(x);
+        (Vector512.Load(x + 8) - s1).Store(x + 8);
+        (Vector512.Load(x + 16) - s2).Store(x + 16);
+        (Vector512.Load(x + 24) - s3).Store(x + 24);
+    }
 }

@@ -10,7 +10,6 @@ internal abstract class DenseRoot
     private readonly double[] _left;
     private readonly double[] _right;
     private FrontFactor? _fronts;
-    private int _firstPlace;
 
     /// <summary>Makes room for up to <paramref name="size"/> unknowns.</summary>
     protected DenseRoot(int size)
@@ -56,7 +55,6 @@ internal abstract class DenseRoot
     {
         isHeld.CopyTo(_isHeld);
         _fronts = fronts;
-        _firstPlace = firstPlace;
         Count = 0;
         for (int i = 0; i < isHeld.Length; i++)
             if (!isHeld[i])
@@ -108,7 +106,7 @@ internal abstract class DenseRoot
     /// Whether a scaled pivot (for several candidates the largest) is numerically zero. The vectors whose energy it is, scaled, are asked for only when it is small: left and
     /// right ones by free unknown.
     /// </summary>
-    protected unsafe bool IsZero(double pivot, int k)
+    protected bool IsZero(double pivot, int k)
     {
         if (Math.Abs(pivot) >= PivotJudge.SmallRootShare)
             return false;
@@ -120,7 +118,7 @@ internal abstract class DenseRoot
         Probe(k, Work, left: false);
         for (int i = 0; i < Count; i++)
             _right[Free[i]] = Work[i] * Scaling[i];
-        return Math.Abs(pivot) <= Math.Max(PivotJudge.ZeroShare, PivotJudge.NoiseFactor * _fronts!.Look.RootNoise(_left, _right, _fronts.Store.Sizes + _firstPlace));
+        return Math.Abs(pivot) <= Math.Max(PivotJudge.ZeroShare, PivotJudge.NoiseFactor * _fronts!.Look.RootNoise(_left, _right));
     }
 
     /// <summary>Sets the vector by free unknown that pivot k belongs to: 1 at its place, 0 at later ones, in balance at earlier ones.</summary>

@@ -12,6 +12,7 @@ internal sealed unsafe class FrontFactor : IThreadPoolWorkItem
     private readonly SparsePlan _plan;
     private readonly SlotValues _values;
     private readonly FrontStore _store;
+    private readonly SubtreeInfluence _influence;
     private readonly FrontWorker _worker;
     private readonly int[] _faults;
     private readonly ChangedFronts _changed;
@@ -26,10 +27,11 @@ internal sealed unsafe class FrontFactor : IThreadPoolWorkItem
         _plan = plan;
         _values = values;
         _store = new FrontStore(plan, isSymmetric);
-        _worker = new FrontWorker(plan, values, _store);
+        _influence = new SubtreeInfluence(plan, _store);
+        _worker = new FrontWorker(plan, values, _store, _influence);
         _faults = new int[plan.Branches.Branches.Length];
         _changed = new ChangedFronts(plan, _store);
-        Look = new PivotLook(plan, _store);
+        Look = new PivotLook(plan, _store, _influence);
         _nextBranch = _faults.Length;
     }
 
@@ -113,7 +115,7 @@ internal sealed unsafe class FrontFactor : IThreadPoolWorkItem
         _doneBranches = 0;
         bool isShared = MayShare && Work >= WorkForTwo && _faults.Length > 1;
         if (isShared)
-            _helper ??= new FrontWorker(_plan, _values, _store);
+            _helper ??= new FrontWorker(_plan, _values, _store, _influence);
         Volatile.Write(ref _nextBranch, 0);
         if (isShared)
             ThreadPool.UnsafeQueueUserWorkItem(this, preferLocal: false);

@@ -14,6 +14,7 @@ internal sealed unsafe class FrontWorker
     private readonly SlotValues _values;
     private readonly UnknownScales _scales;
     private readonly FrontStore _store;
+    private readonly SubtreeInfluence _influence;
     private readonly PivotLook _look;
     private readonly AlignedBuffer[] _arenas;
     private readonly AlignedBuffer _packed;
@@ -23,13 +24,14 @@ internal sealed unsafe class FrontWorker
     private int _notFinite;
 
     /// <summary>Makes room for one front.</summary>
-    public FrontWorker(SparsePlan plan, SlotValues values, FrontStore store)
+    public FrontWorker(SparsePlan plan, SlotValues values, FrontStore store, SubtreeInfluence influence)
     {
         _plan = plan;
         _values = values;
         _scales = values.Scales;
         _store = store;
-        _look = new PivotLook(plan, store);
+        _influence = influence;
+        _look = new PivotLook(plan, store, influence);
         _arenas = new AlignedBuffer[store.Halves];
         for (int half = 0; half < store.Halves; half++)
             _arenas[half] = new AlignedBuffer(plan.Contributions.ArenaLength);
@@ -44,6 +46,7 @@ internal sealed unsafe class FrontWorker
     /// <summary>Sums and eliminates a front. Returns the place of a pivot that is not finite, -1 when all are.</summary>
     public int Process(int front)
     {
+        _influence.Spoil(front);
         Assemble(front, _sizes.Start);
         _tally = PivotTally.Empty;
         _notFinite = -1;

@@ -32,4 +32,30 @@ internal static unsafe class PanelSolve
                     y[c] -= block[c * stride + i] * y[i];
         }
     }
+
+    /// <summary>The same as <see cref="Forward"/> for eight vectors side by side: local has 8 numbers for each pivot and row.</summary>
+    public static void ForwardLanes(double* panel, int columns, nint stride, double* local)
+    {
+        for (int k = 0; k < columns; k += Block)
+        {
+            int width = Math.Min(Block, columns - k);
+            double* block = panel + k * stride + k, y = local + (nint)Block * k;
+            for (int c = 0; c < width; c++)
+                DenseKernels.SubtractLanes(y + Block * (c + 1), block + c * stride + c + 1, stride, y + Block * c, 1, width - c - 1);
+            DenseKernels.SubtractLanes(y + Block * Block, block + Block, stride, y, width, stride - k - Block);
+        }
+    }
+
+    /// <summary>The same as <see cref="Backward"/> for eight vectors side by side.</summary>
+    public static void BackwardLanes(double* panel, int columns, nint stride, double* local)
+    {
+        for (int k = (columns - 1) / Block * Block; k >= 0; k -= Block)
+        {
+            int width = Math.Min(Block, columns - k);
+            double* block = panel + k * stride + k, y = local + (nint)Block * k;
+            DenseKernels.SubtractLaneDots(y, block + Block, stride, y + Block * Block, width, stride - k - Block);
+            for (int c = width - 1; c >= 0; c--)
+                DenseKernels.SubtractLaneDots(y + Block * c, block + c * stride + c + 1, stride, y + Block * (c + 1), 1, width - c - 1);
+        }
+    }
 }

@@ -3,28 +3,35 @@ namespace InterfaceFE.Sparse;
 /// <summary>
 /// The close look at a small pivot: how much round-off its forming may have left in it. With v the vector that the pivot is the energy of (1 at its unknown, 0 at later ones,
 /// in balance at earlier ones), an error e in the diagonal of unknown i shows as e v²; each diagonal's own error is a unit round-off of the magnitudes that went into it, and
-/// errors of many unknowns add as squares. First-order analysis of the factor's backward error, derived here. v is followed through a few levels of fronts only: the values on
-/// the separators stand for the parts below them, since what is in balance lies between its ends.
+/// errors of many unknowns add as squares. First-order analysis of the factor's backward error, derived here. Below the front the sum runs over samples of the subtrees.
 /// </summary>
 internal sealed unsafe class PivotLook
 {
-    // The upper levels cut the body into some thirty parts, enough for a rigid turn's v² to be summed within a few parts in a hundred.
-    private const int Levels = 5;
+    private const int Lanes = SubtreeSamples.Most * SubtreeSamples.Unknowns;
 
     private readonly SparsePlan _plan;
     private readonly FrontStore _store;
-    private readonly AlignedBuffer[] _probes;
+    private readonly SubtreeInfluence _influence;
+    private readonly AlignedBuffer[] _vectors;
     private readonly AlignedBuffer _local;
+    private readonly AlignedBuffer _lanes;
+    private readonly AlignedBuffer[] _samples;
 
-    /// <summary>Makes room for the probes.</summary>
-    public PivotLook(SparsePlan plan, FrontStore store)
+    /// <summary>Makes room for the vectors of one front.</summary>
+    public PivotLook(SparsePlan plan, FrontStore store, SubtreeInfluence influence)
     {
         _plan = plan;
         _store = store;
-        _probes = new AlignedBuffer[store.Halves];
+        _influence = influence;
+        _vectors = new AlignedBuffer[store.Halves];
+        _samples = new AlignedBuffer[store.Halves];
         for (int half = 0; half < store.Halves; half++)
-            _probes[half] = new AlignedBuffer(plan.UnknownCount);
+        {
+            _vectors[half] = new AlignedBuffer(plan.LongestPanel + SparsePlan.Padding);
+            _samples[half] = new AlignedBuffer(Lanes);
+        }
         _local = new AlignedBuffer(plan.LongestPanel + SparsePlan.Padding);
+        _lanes = new AlignedBuffer(2L * Lanes * plan.LongestPanel);
     }
 
     /// <summary>Round-off that the pivot of a column may carry.</summary>
@@ -33,73 +40,81 @@ internal sealed unsafe class PivotLook
     /// <param name="size">Sums of magnitudes of the front's own pivots so far.</param>
     public double Noise(int front, int column, double* size)
     {
-        int first = _plan.First[front];
         for (int half = 0; half < _store.Halves; half++)
         {
-            double* v = _probes[half].Start + first, panel = _store.Panel(half, front);
-            nint stride = _plan.Stride(front);
+            double* v = _vectors[half].Start;
+            new Span<double>(v, _plan.Stride(front)).Clear();
             v[column] = 1;
-            for (int c = column - 1; c >= 0; c--)
-            {
-                v[c] = 0;
-                for (int i = c + 1; i <= column; i++)
-                    v[c] -= panel[c * stride + i] * v[i];
-            }
-            for (int c = column + 1; c < _plan.Columns(front); c++)
-                v[c] = 0;
-            for (int i = _plan.RowStart[front]; i < _plan.RowStart[front + 1]; i++)
-                _probes[half].Start[_plan.Rows[i]] = 0;
+            PanelSolve.Backward(_store.Panel(half, front), column + 1, _plan.Stride(front), v);
         }
-        double sum = SumOf(first, column + 1, size);
-        for (int c = _plan.ChildStart[front]; c < _plan.ChildStart[front + 1]; c++)
-            sum += Follow(_plan.Children[c], Levels);
-        return PivotJudge.RoundOff * Math.Sqrt(sum);
+        return Sum(front, column + 1, size);
     }
 
-    /// <summary>The same for a pivot of the root block: <paramref name="left"/> and <paramref name="right"/> give its vectors at the root unknowns, <paramref name="size"/> their sums of magnitudes.</summary>
-    public double RootNoise(ReadOnlySpan<double> left, ReadOnlySpan<double> right, double* size)
+    /// <summary>The same for a pivot of the root block: <paramref name="left"/> and <paramref name="right"/> give its vectors at the root unknowns.</summary>
+    public double RootNoise(ReadOnlySpan<double> left, ReadOnlySpan<double> right)
     {
-        int interior = _plan.InteriorUnknownCount;
-        left.CopyTo(new Span<double>(_probes[0].Start + interior, left.Length));
-        right.CopyTo(new Span<double>(_probes[^1].Start + interior, right.Length));
-        double sum = SumOf(interior, left.Length, size);
-        for (int c = _plan.ChildStart[_plan.FrontCount]; c < _plan.ChildStart[_plan.FrontCount + 1]; c++)
-            sum += Follow(_plan.Children[c], Levels + 1);
-        return PivotJudge.RoundOff * Math.Sqrt(sum);
+        left.CopyTo(new Span<double>(_vectors[0].Start, left.Length));
+        right.CopyTo(new Span<double>(_vectors[^1].Start, right.Length));
+        return Sum(_plan.FrontCount, left.Length, _store.Sizes + _plan.InteriorUnknownCount);
     }
 
-    private double Follow(int front, int levels)
+    /// <summary>Root of the squared errors of a front's first pivots and of all that is below.</summary>
+    private double Sum(int front, int count, double* size)
     {
-        int first = _plan.First[front], columns = _plan.Columns(front), start = _plan.RowStart[front], rows = _plan.RowCount(front), padded = _plan.PaddedColumns(front);
-        int stride = _plan.Stride(front);
-        double* local = _local.Start;
-        for (int half = 0; half < _store.Halves; half++)
-        {
-            double* v = _probes[half].Start;
-            new Span<double>(local, stride).Clear();
-            for (int i = 0; i < rows; i++)
-                local[padded + i] = v[_plan.Rows[start + i]];
-            PanelSolve.Backward(_store.Panel(half, front), columns, stride, local);
-            for (int j = 0; j < columns; j++)
-                v[first + j] = local[j];
-        }
-        double sum = SumOf(first, columns, _store.Sizes + first);
-        if (levels == 0)
-            return sum * (_plan.First[front + 1] - _plan.First[_plan.FirstDescendant[front]]) / columns;
-        for (int c = _plan.ChildStart[front]; c < _plan.ChildStart[front + 1]; c++)
-            sum += Follow(_plan.Children[c], levels - 1);
-        return sum;
-    }
-
-    private double SumOf(int first, int count, double* size)
-    {
-        double* left = _probes[0].Start + first, right = _probes[^1].Start + first;
         double sum = 0;
         for (int i = 0; i < count; i++)
+            sum += Square(_vectors[0].Start[i] * _vectors[^1].Start[i] * size[i]);
+        for (int c = _plan.ChildStart[front]; c < _plan.ChildStart[front + 1]; c++)
         {
-            double error = left[i] * right[i] * size[i];
-            sum += error * error;
+            int child = _plan.Children[c];
+            sum += _plan.Samples.IsLarge[child] ? SumOfLarge(child, count) : SumOfSmall(child, count);
+        }
+        return PivotJudge.RoundOff * Math.Sqrt(sum);
+    }
+
+    private double SumOfLarge(int child, int count)
+    {
+        RunMap runs = _plan.Runs;
+        for (int half = 0; half < _store.Halves; half++)
+        {
+            double* influence = _influence.Of(half, child, _lanes.Start), value = _samples[half].Start;
+            new Span<double>(value, Lanes).Clear();
+            for (int a = runs.Begin[child]; a < runs.End[child] && runs.Target[a] < count; a++)
+                DenseKernels.SubtractLanes(value, _vectors[half].Start + runs.Target[a], 1, influence + Lanes * runs.Source[a], Math.Min(runs.Length[a], count - runs.Target[a]), 1);
+        }
+        SubtreeSamples samples = _plan.Samples;
+        double sum = 0;
+        for (int i = samples.Start[child]; i < samples.Start[child + 1]; i++)
+        {
+            int lane = SubtreeSamples.Unknowns * (i - samples.Start[child]);
+            double squares = 0;
+            for (int unknown = 0; unknown < samples[i].Count; unknown++)
+                squares += Square(_samples[0].Start[lane + unknown] * _samples[^1].Start[lane + unknown] * _store.Sizes[samples[i].Place + unknown]);
+            sum += samples[i].Weight * squares / samples[i].Count;
         }
         return sum;
     }
+
+    private double SumOfSmall(int child, int count)
+    {
+        RunMap runs = _plan.Runs;
+        int columns = _plan.Columns(child), padded = _plan.PaddedColumns(child), first = _plan.First[child];
+        double* local = _local.Start, right = _lanes.Start;
+        for (int half = _store.Halves - 1; half >= 0; half--)
+        {
+            new Span<double>(local, _plan.Stride(child)).Clear();
+            for (int a = runs.Begin[child]; a < runs.End[child] && runs.Target[a] < count; a++)
+                for (int i = 0; i < runs.Length[a] && runs.Target[a] + i < count; i++)
+                    local[padded + runs.Source[a] + i] = _vectors[half].Start[runs.Target[a] + i];
+            PanelSolve.Backward(_store.Panel(half, child), columns, _plan.Stride(child), local);
+            if (half == _store.Halves - 1)
+                new ReadOnlySpan<double>(local, columns).CopyTo(new Span<double>(right, columns));
+        }
+        double sum = 0;
+        for (int i = 0; i < columns; i++)
+            sum += Square(local[i] * right[i] * _store.Sizes[first + i]);
+        return sum * SubtreeSamples.SubtreeUnknowns(_plan, child) / columns;
+    }
+
+    private static double Square(double value) => value * value;
 }

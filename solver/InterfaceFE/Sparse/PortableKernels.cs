@@ -65,4 +65,24 @@ internal static unsafe class PortableKernels
             for (nint i = 0; i < rows; i++)
                 y[i] += Math.Abs(a[k * stride + i] * b[k * stride + i]) * weight[k];
     }
+
+    public static void SubtractLanes(double* y, double* a, nint stride, double* x, int columns, nint rows)
+    {
+        for (int k = 0; k < columns; k++)
+            for (nint i = 0; i < rows; i++)
+                for (int lane = 0; lane < 8; lane++)
+                    y[8 * i + lane] -= a[k * stride + i] * x[8 * k + lane];
+    }
+
+    public static void SubtractLaneDots(double* x, double* a, nint stride, double* y, int columns, nint rows)
+    {
+        for (int k = 0; k < columns; k++)
+            for (int lane = 0; lane < 8; lane++)
+            {
+                double sum = 0;
+                for (nint i = 0; i < rows; i++)
+                    sum += a[k * stride + i] * y[8 * i + lane];
+                x[8 * k + lane] -= sum;
+            }
+    }
 }

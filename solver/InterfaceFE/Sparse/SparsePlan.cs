@@ -55,6 +55,7 @@ public sealed class SparsePlan
         LastFronts = [.. Enumerable.Range(0, FrontCount).Where(s => Parent[s] < 0 || Parent[s] == FrontCount)];
         Branches = new BranchPartition(Work, Parent, FirstDescendant);
         Contributions = new ContributionLayout(this);
+        Samples = new SubtreeSamples(this);
         Whole = new FrontPath([.. Enumerable.Range(0, FrontCount)], UnknownCount);
     }
 
@@ -132,6 +133,9 @@ public sealed class SparsePlan
 
     /// <summary>Where contribution blocks live.</summary>
     internal ContributionLayout Contributions { get; }
+
+    /// <summary>Places that stand for large subtrees.</summary>
+    internal SubtreeSamples Samples { get; }
 
     /// <summary>All fronts.</summary>
     internal FrontPath Whole { get; }

@@ -53,6 +53,17 @@ public class DenseKernelTests
         }
     }
 
+    [Fact]
+    public void All_forms_take_eight_lanes_alike()
+    {
+        for (int columns = 0; columns <= 9; columns++)
+            foreach (nint rows in new nint[] { 0, 1, 5, 40 })
+            {
+                Agree(nameof(DenseKernels.SubtractLanes), m => [m.C, m.A, Stride, m.B, columns, rows]);
+                Agree(nameof(DenseKernels.SubtractLaneDots), m => [m.C, m.A, Stride, m.B, columns, rows]);
+            }
+    }
+
     /// <summary>Runs each form that the processor has on the same numbers; entries that the portable one leaves alone must stay to the bit.</summary>
     private static void Agree(string kernel, Func<Memory, object[]> arguments)
     {
