@@ -42,10 +42,10 @@ static int Run(string[] args, string usage)
             return 1;
         case ["ordering"]:
             return new OrderingCommand(Console.Out).Run(isQuick);
-        case ["times", var model] when MeshCatalogue.All.FirstOrDefault(entry => entry.Name == model) is { } entry:
+        case ["times", var model] when Find(model) is { } entry:
             return TimesCommand.Run(entry, isQuick, Console.Out);
         case ["iterate", var model, var solver, var preconditioner, var limit]
-            when MeshCatalogue.All.FirstOrDefault(entry => entry.Name == model) is { } entry && IterativeSolvers.Solvers.Contains(solver) && IterativeSolvers.Preconditioners.Contains(preconditioner)
+            when Find(model) is { } entry && IterativeSolvers.Solvers.Contains(solver) && IterativeSolvers.Preconditioners.Contains(preconditioner)
                 && double.TryParse(limit, NumberStyles.Float, CultureInfo.InvariantCulture, out double seconds) && seconds > 0 && !isQuick:
             return IterateCommand.Run(entry, solver, preconditioner, seconds, Console.Out);
         default:
@@ -55,6 +55,8 @@ static int Run(string[] args, string usage)
             return 1;
     }
 }
+
+static CatalogueEntry? Find(string model) => MeshCatalogue.All.FirstOrDefault(entry => entry.Name == model);
 
 static string? ValidationFolder()
 {

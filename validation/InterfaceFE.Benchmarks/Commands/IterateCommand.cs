@@ -33,9 +33,10 @@ public static class IterateCommand
         foreach (string solver in IterativeSolvers.Solvers.Take(isQuick ? 2 : int.MaxValue))
             foreach (string preconditioner in IterativeSolvers.Preconditioners.Take(isQuick ? 1 : int.MaxValue))
             {
-                string? text = OwnProcess.Run(
-                    ["iterate", model, solver, preconditioner, seconds.ToString(CultureInfo.InvariantCulture)], new Dictionary<string, string>(), TimeSpan.FromSeconds(WallFactor * seconds + PreparationSeconds));
-                yield return new IterativeTry(model, $"{solver}-{preconditioner}", seconds, text is null ? null : JsonSerializer.Deserialize<IterativeOutcome>(text), engineMs);
+                string[] arguments = ["iterate", model, solver, preconditioner, seconds.ToString(CultureInfo.InvariantCulture)];
+                string? text = OwnProcess.Run(arguments, new Dictionary<string, string>(), TimeSpan.FromSeconds(WallFactor * seconds + PreparationSeconds));
+                IterativeOutcome? outcome = text is null ? null : JsonSerializer.Deserialize<IterativeOutcome>(text);
+                yield return new IterativeTry(model, $"{solver}-{preconditioner}", seconds, outcome, engineMs);
             }
     }
 }

@@ -8,6 +8,7 @@ public sealed class EngineRun
 {
     private static readonly int[] LayerCounts = [1, 10, 50, 100, 200];
     private static readonly double[] PatchWidths = [2.5, 5, 10, 20, 50];
+    private static readonly double[] PatchMiddles = [0.55 * MeshCatalogue.StripLength, 0.65 * MeshCatalogue.StripLength];
 
     // A round gives each measurement about this long, so that small models get enough readings.
     private const double RoundMs = 60;
@@ -38,7 +39,7 @@ public sealed class EngineRun
         foreach (int count in LayerCounts)
             _layers.Add(new ChangeRun(_engine, model, count, ElementChange.OfLayer(model, count, isQuick ? 5 : 9)));
         foreach (double width in isStrip ? PatchWidths : [])
-            _patches.Add(new ChangeRun(_engine, model, width, [ElementChange.OfColumns(model, width, 0.55 * MeshCatalogue.StripLength), ElementChange.OfColumns(model, width, 0.65 * MeshCatalogue.StripLength)]));
+            _patches.Add(new ChangeRun(_engine, model, width, [.. PatchMiddles.Select(middle => ElementChange.OfColumns(model, width, middle))]));
         double start = ThreadClock.Milliseconds();
         WholeRun(measured: false);
         _wholeRepeats = Math.Clamp((int)(RoundMs / (ThreadClock.Milliseconds() - start)), 1, 10);

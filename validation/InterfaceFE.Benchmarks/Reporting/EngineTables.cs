@@ -12,7 +12,8 @@ public sealed class EngineTables(IReadOnlyList<ModelOutcome> models, MachineRate
     /// <summary>Whole factorisation and solve.</summary>
     public MarkdownTable Whole()
     {
-        MarkdownTable table = new("model", "unknowns", "CHOLMOD", "its factor + solve [ms]", "factor + solve [ms]", "ratio", "narrow [ms]", "narrow ratio", "difference", "errors", "negative", "memory [byte]");
+        MarkdownTable table = new(
+            "model", "unknowns", "CHOLMOD", "its factor + solve [ms]", "factor + solve [ms]", "ratio", "narrow [ms]", "narrow ratio", "difference", "errors", "negative", "memory [byte]");
         foreach (ModelOutcome model in models)
         {
             EngineTimes times = model.Times;
@@ -40,7 +41,14 @@ public sealed class EngineTables(IReadOnlyList<ModelOutcome> models, MachineRate
         MarkdownTable table = new("model", "configuration", "analysis [ms]", "factor [ms]", "solve [ms]", "Gflop", "Gflop/s", "million entries");
         foreach (ModelOutcome model in models)
             foreach (CholmodConfiguration c in model.Cholmod?.Configurations ?? [])
-                table.Add(model.Times.Model, c.Name, Digits.Three(c.AnalysisMs), Digits.Three(c.Factor.Median), Digits.Three(c.Solve.Median), Digits.Three(c.Flops / 1e9), Digits.Three(c.Flops / 1e6 / c.Factor.Median),
+                table.Add(
+                    model.Times.Model,
+                    c.Name,
+                    Digits.Three(c.AnalysisMs),
+                    Digits.Three(c.Factor.Median),
+                    Digits.Three(c.Solve.Median),
+                    Digits.Three(c.Flops / 1e9),
+                    Digits.Three(c.Flops / 1e6 / c.Factor.Median),
                     Digits.Three(c.FactorNonZeros / 1e6));
         return table;
     }
@@ -48,7 +56,8 @@ public sealed class EngineTables(IReadOnlyList<ModelOutcome> models, MachineRate
     /// <summary>Changed layer elements.</summary>
     public MarkdownTable Layers()
     {
-        MarkdownTable table = new("model", "elements", "replace + factor + solve [ms]", "slowest place [ms]", "CHOLMOD /", "own whole /", "narrow [ms]", "CHOLMOD / narrow", "bits", "memory [byte]");
+        MarkdownTable table = new(
+            "model", "elements", "replace + factor + solve [ms]", "slowest place [ms]", "CHOLMOD /", "own whole /", "narrow [ms]", "CHOLMOD / narrow", "bits", "memory [byte]");
         foreach (ModelOutcome model in models)
             for (int i = 0; i < model.Times.Layers.Count; i++)
             {
@@ -72,7 +81,8 @@ public sealed class EngineTables(IReadOnlyList<ModelOutcome> models, MachineRate
     /// <summary>Yielding patches.</summary>
     public MarkdownTable Patches()
     {
-        MarkdownTable table = new("model", "width [mm]", "elements", "replace + factor + solve [ms]", "CHOLMOD /", "own whole /", "narrow [ms]", "bits", "memory [byte]");
+        MarkdownTable table = new(
+            "model", "width [mm]", "elements", "replace + factor + solve [ms]", "CHOLMOD /", "own whole /", "narrow [ms]", "bits", "memory [byte]");
         foreach (ModelOutcome model in models)
             for (int i = 0; i < model.Times.Patches.Count; i++)
             {
@@ -110,9 +120,8 @@ public sealed class EngineTables(IReadOnlyList<ModelOutcome> models, MachineRate
         MarkdownTable table = new("model", "own [Gflop]", "METIS [Gflop]", "AMD [Gflop]", "own / METIS", "with merged fronts [Gflop]");
         foreach (ModelOutcome model in models.Where(model => model.Cholmod is not null))
         {
-            double own = model.Cholmod!.OwnOrderFlops;
-            table.Add(model.Times.Model, Digits.Three(own / 1e9), Digits.Three(model.FlopsWith("METIS") / 1e9), Digits.Three(model.FlopsWith("AMD") / 1e9), Over(own, model.FlopsWith("METIS")),
-                Digits.Three(model.Times.Flops / 1e9));
+            double own = model.Cholmod!.OwnOrderFlops, metis = model.FlopsWith("METIS"), amd = model.FlopsWith("AMD");
+            table.Add(model.Times.Model, Digits.Three(own / 1e9), Digits.Three(metis / 1e9), Digits.Three(amd / 1e9), Over(own, metis), Digits.Three(model.Times.Flops / 1e9));
         }
         return table;
     }
@@ -158,8 +167,17 @@ public sealed class EngineTables(IReadOnlyList<ModelOutcome> models, MachineRate
     private static void Add(MarkdownTable table, string model, string what, double milliseconds, double flops, double bytes, MachineRates rates)
     {
         Bound bound = Bound.Of(milliseconds, flops, bytes, rates);
-        table.Add(model, what, Digits.Three(flops / 1e6), Digits.Three(bytes / 1e6), Digits.Three(milliseconds), Digits.Three(flops / 1e6 / milliseconds), Digits.Percent(bound.Arithmetic), Digits.Percent(bound.Memory),
-            Digits.Percent(bound.Rest), bound.Name);
+        table.Add(
+            model,
+            what,
+            Digits.Three(flops / 1e6),
+            Digits.Three(bytes / 1e6),
+            Digits.Three(milliseconds),
+            Digits.Three(flops / 1e6 / milliseconds),
+            Digits.Percent(bound.Arithmetic),
+            Digits.Percent(bound.Memory),
+            Digits.Percent(bound.Rest),
+            bound.Name);
     }
 
     private static string Sum(double factor, double solve) => $"{Digits.Three(factor)} + {Digits.Three(solve)}";

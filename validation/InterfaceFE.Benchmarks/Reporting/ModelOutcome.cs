@@ -80,8 +80,10 @@ public sealed record IterativeTry(string Model, string Solver, double LimitSecon
     /// <summary>How it went, in words.</summary>
     public string Words => Outcome switch
     {
-        { Converged: true } => FormattableString.Invariant($"{Digits.Three(Outcome.Milliseconds)} ms, {Outcome.Iterations} iterations, relative residual {Outcome.RelativeResidual:0.0E+0}"),
-        not null => FormattableString.Invariant($"did not finish in {LimitSeconds} s of processor time: relative residual {Outcome.RelativeResidual:0.0E+0} after {Outcome.Iterations} iterations"),
+        { Converged: true } => $"{Digits.Three(Outcome.Milliseconds)} ms, {Reached}",
+        not null => FormattableString.Invariant($"did not finish in {LimitSeconds} s of processor time: {Reached}"),
         null => FormattableString.Invariant($"broke off, or did not finish in {LimitSeconds} s of processor time"),
     };
+
+    private string Reached => FormattableString.Invariant($"{Outcome?.Iterations} iterations, relative residual {Outcome?.RelativeResidual:0.0E+0}");
 }

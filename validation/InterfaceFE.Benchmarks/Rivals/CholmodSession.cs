@@ -24,7 +24,9 @@ public sealed record CholmodConfiguration(string Name, double FactorNonZeros, do
 
 /// <summary>
 /// CHOLMOD on one matrix in a program of its own, one thread throughout: OpenBLAS and OpenMP are told so, and the thread limit keeps the OpenMP runtime from waiting in loops
-/// that a bare thread count of one leaves it (measured: half of the time). OpenBLAS chooses its kernels itself; forcing those for 512-bit vectors changed nothing (measured). It waits for requests, so that its runs can alternate with the engine's.
+/// that a bare thread count of one leaves it (measured: half of the time).
+/// OpenBLAS chooses its kernels itself; forcing those for 512-bit vectors changed nothing (measured). The program waits for requests, so that its runs can alternate with the
+/// engine's.
 /// </summary>
 public sealed class CholmodSession : IDisposable
 {
@@ -63,7 +65,8 @@ public sealed class CholmodSession : IDisposable
 
     /// <summary>The fastest configuration by its medians.</summary>
     /// <exception cref="RivalException">All of them refused the matrix.</exception>
-    public CholmodConfiguration Best => Configurations.Where(c => c.Factor.Count > 0).MinBy(c => c.TotalMs) ?? throw new RivalException("each configuration of CHOLMOD refused the matrix");
+    public CholmodConfiguration Best => Configurations.Where(c => c.Factor.Count > 0).MinBy(c => c.TotalMs)
+        ?? throw new RivalException("each configuration of CHOLMOD refused the matrix");
 
     /// <summary>Analyses the matrix in each configuration and runs each once, unmeasured: later runs find their memory in place.</summary>
     public void Analyze()
