@@ -22,6 +22,13 @@ internal static class CommonOptions
         return option;
     }
 
+    public static Option<string> File(string name, string description)
+    {
+        Option<string> option = new(name) { Description = description, HelpName = "FILE" };
+        option.Validators.Add(result => RefuseEmpty(result, $"{name} is empty"));
+        return option;
+    }
+
     public static Option<bool> Overwrite() => new("--overwrite") { Description = "Replace results that are in the folder already; other files there stay." };
 
     public static Option<bool> Quiet() => new("--quiet") { Description = "Tell no progress." };

@@ -1,12 +1,15 @@
 using System.Reflection;
 using InterfaceFE.Decks;
 using InterfaceFE.Validation.Framework;
+using InterfaceFE.Validation.Replays;
 
 const string Usage = """
     Published and computed cases against the program's answers.
       all [--quick]   all cases, or those that together take about a minute; all of them write validation/REPORT.md
       list            names and groups of the cases
       NAME…           the cases of these names
+      record DIR [--deep]   runs all shipped decks and keeps their tables below DIR; --deep converges each point to rounding
+      replay DIR            makes the points of all runs below DIR again and compares their tables: at most 1e-9 apart
     """;
 
 IReadOnlyList<ICase> cases = CaseFinder.In(Assembly.GetExecutingAssembly());
@@ -21,6 +24,17 @@ if (args is ["list"])
     foreach (ICase one in cases)
         Console.WriteLine($"{one.Name.PadRight(widest)}  {(one.Quick ? "quick" : "     ")}  {one.Group}");
     return 0;
+}
+if (args is ["record" or "replay", ..])
+{
+    bool isDeep = args is ["record", _, "--deep"];
+    if (args.Length != (isDeep ? 3 : 2) || Repository.RootAbove(Directory.GetCurrentDirectory()) is not { } top)
+    {
+        Console.Error.WriteLine($"`{args[0]}` takes one folder, and is run inside the repository");
+        return 1;
+    }
+    var verbs = new ReplayVerbs(Console.Out, Console.Error);
+    return args[0] == "record" ? verbs.Record(top, args[1], isDeep) : verbs.Replay(args[1]);
 }
 bool isAll = args[0] == "all", isQuick = args.Contains("--quick");
 string[] names = [.. args.Where(a => a != "--quick")];

@@ -97,6 +97,22 @@ public sealed class BondDamage
         return (bodies, all > 0 ? carrying / all : 1);
     }
 
+    /// <summary>Joints none of whose layer elements carries any more at the accepted point.</summary>
+    public IReadOnlyList<string> Parted()
+    {
+        List<string> parted = [];
+        int index = 0;
+        foreach (LayerBlock layer in _model.Layers)
+        {
+            bool carries = layer.Count == 0;
+            for (int e = 0; e < layer.Count; e++, index++)
+                carries |= _acceptedLeast[index] <= Separated;
+            if (!carries)
+                parted.Add(layer.Name);
+        }
+        return parted;
+    }
+
     private static int Root(int[] parent, int i)
     {
         while (parent[i] != i)

@@ -143,6 +143,18 @@ public sealed class FullEquilibrium : IEquilibrium
     /// <summary>Number of factorisations so far.</summary>
     public long Factorisations { get; private set; }
 
+    /// <summary>Number of solves so far, each with its refinement.</summary>
+    public long Solves { get; private set; }
+
+    /// <summary>Number of element tangents so far that differed from those in the factor, the first ones not counted.</summary>
+    public long ChangedTangents { get; private set; }
+
+    /// <summary>Time by phase.</summary>
+    public PhaseClock Clock { get; init; } = new();
+
+    /// <summary>Whether the latest factorisation met numbers that are not finite.</summary>
+    public bool FactorOverflows => _outcome.Status == FactorStatus.NotFinite;
+
     /// <summary>Unknowns held in the current stage.</summary>
     public ReadOnlySpan<int> HeldUnknowns => _heldUnknowns;
 
@@ -194,6 +206,7 @@ public sealed class FullEquilibrium : IEquilibrium
     /// <inheritdoc/>
     public ResidualReport Evaluate(Wanted wanted)
     {
+        using PhaseClock.Stretch time = Clock.In(Phase.Elements);
         LoadStage stage = _stage ?? throw new InvalidOperationException("no stage has been started");
         Temperature = _temperatureStart + Progress * (_temperatureEnd - _temperatureStart);
         for (int i = 0; i < _external.Length; i++)
@@ -201,7 +214,8 @@ public sealed class FullEquilibrium : IEquilibrium
         for (int i = 0; i < _heldUnknowns.Length; i++)
             _held[_heldUnknowns[i]] = _heldStart[i] + Progress * (_heldEnd[i] - _heldStart[i]);
 
-        var at = new PathPoint(Progress, Temperature, stage.Duration * Math.Max(Progress - AcceptedProgress, 0), stage.Number);
+        PathPoint at = At(stage);
+        bool finite = true;
         Array.Clear(_internal);
         Array.Clear(_layerForce);
         Array.Clear(_magnitudes);
@@ -231,8 +245,12 @@ public sealed class FullEquilibrium : IEquilibrium
                     _table.Scatter(slot, buffers.Force, _layerForce, _noMagnitudes);
                 if ((own & Wanted.LoadRate) != 0)
                     _table.Scatter(slot, buffers.LoadRate, _temperatureRate, _noMagnitudes);
-                if ((own & Wanted.Tangent) != 0 && Store(slot, _table.TransformTangent(slot, buffers.Tangent, _work, _transformed)))
-                    changed++;
+                if ((own & Wanted.Tangent) != 0)
+                {
+                    finite &= IsFinite(buffers.Tangent);
+                    if (Store(slot, _table.TransformTangent(slot, buffers.Tangent, _work, _transformed)))
+                        changed++;
+                }
                 byTemperature += answer.StoredByTemperature;
                 if (layer)
                 {
@@ -258,7 +276,7 @@ public sealed class FullEquilibrium : IEquilibrium
         DissipationByProgress = dissipatedByTemperature * (_temperatureEnd - _temperatureStart);
 
         double worst = 0, reference = 0, workOut = 0, workAll = 0;
-        bool finite = true;
+        finite &= double.IsFinite(Energy.Total);
         for (int i = 0; i < _internal.Length; i++)
         {
             double difference = _isHeld[i] ? 0 : _external[i] - _internal[i], way = _u[i] - _accepted[i];
@@ -277,6 +295,9 @@ public sealed class FullEquilibrium : IEquilibrium
         _reference = reference;
         return new ResidualReport(worst, Math.Max(reference, LeastReference * _largestReference), finite, inPlace, changed, workAll > 0 ? Math.Abs(workOut) / workAll : 0);
     }
+
+    /// <inheritdoc/>
+    public string? Fault() => ElementFault.IsModerate(_model, _u) ? ElementFault.Find(_model, _table, _state, _u, At(_stage!)) : null;
 
     /// <inheritdoc/>
     public double ResidualFloor()
@@ -302,6 +323,8 @@ public sealed class FullEquilibrium : IEquilibrium
     public Correction Solve(IControl control)
     {
         FactorIfNeeded();
+        if (FactorOverflows)
+            return new Correction(double.PositiveInfinity, 0, 0, -1, false);
         for (int i = 0; i < _rightSide.Length; i++)
         {
             _rightSide[i] = _external[i] - _internal[i];
@@ -393,10 +416,35 @@ public sealed class FullEquilibrium : IEquilibrium
     public (int Negative, int Singular) Stability()
     {
         FactorSymmetric();
+        if (FactorOverflows)
+            return (0, -1);
         Inertia inertia = _symmetric.Inertia(_heldUnknowns);
         if (_outcome.Unknown >= 0)
             return (inertia.Negative, _outcome.Unknown);
         return (inertia.Negative, inertia.Zero == 0 ? -1 : LooseGrip(inertia.Zero));
+    }
+
+    /// <summary>
+    /// A movement of all unknowns that nothing resists, of any size, by the latest factored tangent. A grip's loose unknown is held at 1 without any force: all else follows it. Elsewhere a force
+    /// on the loose unknown moves the part, and what that force strains is taken off.
+    /// </summary>
+    /// <param name="unknown">The unknown that <see cref="Stability"/> found loose.</param>
+    public double[] FreeMovement(int unknown)
+    {
+        bool isGrip = _model.Unknowns.IsRoot[_model.Unknowns.VertexOfUnknown[unknown]];
+        Array.Clear(_rightSide);
+        Array.Clear(_solution);
+        (isGrip ? _solution : _rightSide)[unknown] = 1;
+        _symmetric.Solve(_rightSide, _solution, isGrip ? [.. _heldUnknowns, unknown] : _heldUnknowns);
+        double[] movement = [.. _solution];
+        if (isGrip)
+            return movement;
+        _symmetric.Multiply(movement, _rightSide);
+        Array.Clear(_solution);
+        _symmetric.Solve(_rightSide, _solution, _heldUnknowns);
+        for (int i = 0; i < movement.Length; i++)
+            movement[i] -= _solution[i];
+        return movement;
     }
 
     /// <summary>A grip's unknown that would stop a free movement if it were held: turns are tried first, since a free turn moves x and y too.</summary>
@@ -442,11 +490,22 @@ public sealed class FullEquilibrium : IEquilibrium
         }
     }
 
+    private PathPoint At(LoadStage stage) => new(Progress, Temperature, stage.Duration * Math.Max(Progress - AcceptedProgress, 0), stage.Number);
+
+    private static bool IsFinite(ReadOnlySpan<double> values)
+    {
+        double sum = 0;
+        foreach (double value in values)
+            sum += 0 * value;
+        return sum == 0;
+    }
+
     private bool Store(int slot, ReadOnlySpan<double> tangent)
     {
         double[]? stored = _slotTangents[slot];
         if (stored is not null && tangent.SequenceEqual(stored))
             return false;
+        ChangedTangents += stored is null ? 0 : 1;
         stored ??= _slotTangents[slot] = new double[tangent.Length];
         tangent.CopyTo(stored);
         int n = _table.Pattern.Unknowns(slot).Length;
@@ -504,6 +563,7 @@ public sealed class FullEquilibrium : IEquilibrium
         }
         if (_generalFactored)
             return;
+        using PhaseClock.Stretch time = Clock.In(Phase.Factorisation);
         _outcome = _general!.Factor();
         _generalFactored = true;
         Factorisations++;
@@ -513,6 +573,7 @@ public sealed class FullEquilibrium : IEquilibrium
     {
         if (_factored)
             return;
+        using PhaseClock.Stretch time = Clock.In(Phase.Factorisation);
         _outcome = _symmetric.Factor();
         _factored = true;
         Factorisations++;
@@ -520,6 +581,8 @@ public sealed class FullEquilibrium : IEquilibrium
 
     private void SolveWith(double[] rightSide, double[] solution)
     {
+        using PhaseClock.Stretch time = Clock.In(Phase.Solves);
+        Solves++;
         if (_skewCount == 0)
             _symmetric.Solve(rightSide, solution, _heldUnknowns);
         else

@@ -3,7 +3,7 @@ namespace InterfaceFE.Marching;
 /// <summary>The equation that fixes how far a stride goes: zero when the stride is done.</summary>
 public interface IControl
 {
-    /// <summary>Name in logs.</summary>
+    /// <summary>Name in logs and records.</summary>
     string Name { get; }
 
     /// <summary>Length of the stride in the control's own measure; scales its equation.</summary>
@@ -24,8 +24,11 @@ public interface IControl
 /// <param name="stride">Length of the stride in progress.</param>
 public sealed class OwnControl(double target, double stride) : IControl
 {
+    /// <summary>Name in logs and records.</summary>
+    public const string Label = "own";
+
     /// <inheritdoc/>
-    public string Name => "own";
+    public string Name => Label;
 
     /// <inheritdoc/>
     public double Stride { get; } = stride;
@@ -53,8 +56,11 @@ public sealed class OwnControl(double target, double stride) : IControl
 /// <param name="stride">Growth of layer work [mJ].</param>
 public sealed class LayerWorkControl(double target, double stride) : IControl
 {
+    /// <summary>Name in logs and records.</summary>
+    public const string Label = "layer work";
+
     /// <inheritdoc/>
-    public string Name => "layer work";
+    public string Name => Label;
 
     /// <inheritdoc/>
     public double Stride { get; } = stride;
@@ -79,8 +85,11 @@ public sealed class LayerWorkControl(double target, double stride) : IControl
 /// <param name="stride">Growth of dissipated energy [mJ].</param>
 public sealed class DissipationControl(double target, double stride) : IControl
 {
+    /// <summary>Name in logs and records.</summary>
+    public const string Label = "dissipation";
+
     /// <inheritdoc/>
-    public string Name => "dissipation";
+    public string Name => Label;
 
     /// <inheritdoc/>
     public double Stride { get; } = stride;
@@ -106,8 +115,11 @@ public sealed class DissipationControl(double target, double stride) : IControl
 /// <param name="stride">Arc length [mm].</param>
 public sealed class ArcLengthControl(IReadOnlyList<(int Upper, int Lower)> watched, double[] direction, double stride) : IControl
 {
+    /// <summary>Name in logs and records.</summary>
+    public const string Label = "arc length";
+
     /// <inheritdoc/>
-    public string Name => "arc length";
+    public string Name => Label;
 
     /// <inheritdoc/>
     public double Stride { get; } = stride;

@@ -71,6 +71,12 @@ public interface IEquilibrium
     /// <summary>Evaluates force, tangent and energies at the tentative displacement and progress.</summary>
     ResidualReport Evaluate(Wanted wanted);
 
+    /// <summary>
+    /// The first element whose answer is not finite although the displacements are of a size that it must have an answer for: where it lies and what is wrong, in words. Null when there is
+    /// none, or when the displacements themselves are beyond measure.
+    /// </summary>
+    string? Fault();
+
     /// <summary>Force below which rounding rules [N]: 50 units of rounding of the largest stiffness times displacement.</summary>
     double ResidualFloor();
 

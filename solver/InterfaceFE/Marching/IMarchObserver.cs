@@ -17,10 +17,11 @@ public sealed record MarchPoint(int Number, int Stage, bool StageEnd, double Pro
 /// <param name="Retries">How often its stride was shortened.</param>
 /// <param name="Control">Control.</param>
 /// <param name="Stride">Stride in the control's measure.</param>
+/// <param name="Guess">Share of the way that the first guess carried on; 0: the accepted point.</param>
 /// <param name="Progress">Progress.</param>
 /// <param name="UnstableDirections">Unstable directions at the accepted point before.</param>
 /// <param name="Newton">The iteration.</param>
-public readonly record struct MarchIteration(int Stage, int Point, int Retries, string Control, double Stride, double Progress, int UnstableDirections, NewtonIteration Newton);
+public readonly record struct MarchIteration(int Stage, int Point, int Retries, string Control, double Stride, double Guess, double Progress, int UnstableDirections, NewtonIteration Newton);
 
 /// <summary>Is told what the march does. Observers may read the equilibrium at the accepted point; they change nothing.</summary>
 public interface IMarchObserver

@@ -43,21 +43,26 @@ internal sealed class LastWay
     /// <param name="accepted">Energies at the accepted point.</param>
     public IControl? Continue(PathMeasure measure, double share, FullEquilibrium equilibrium, in EnergyState accepted)
     {
-        switch (measure)
+        double stride = share * measure switch
         {
-            case PathMeasure.LayerWork when LayerWork > 0:
-                return new LayerWorkControl(accepted.StoredInLayers + accepted.SpentInLayers + share * LayerWork, share * LayerWork);
-            case PathMeasure.Dissipation when Dissipation > 0:
-                return new DissipationControl(accepted.SpentInLayers + share * Dissipation, share * Dissipation);
-            case PathMeasure.ArcLength:
-                IReadOnlyList<(int, int)> watched = equilibrium.Bonds.WatchedSeparations();
-                double[] way = (double[])_displacement.Clone();
-                double length = new ArcLengthControl(watched, way, 1).Length(way, []);
-                return length > 0 ? new ArcLengthControl(watched, way, share * length) : null;
-            default:
-                return null;
-        }
+            PathMeasure.LayerWork => LayerWork,
+            PathMeasure.Dissipation => Dissipation,
+            _ => new ArcLengthControl(equilibrium.Bonds.WatchedSeparations(), _displacement, 1).Length(_displacement, []),
+        };
+        return stride > 0 ? Control(measure, stride, equilibrium, accepted) : null;
     }
+
+    /// <summary>The control that goes on by a stride in a given measure.</summary>
+    /// <param name="measure">Measure.</param>
+    /// <param name="stride">Stride [mJ, for arc length mm].</param>
+    /// <param name="equilibrium">The equilibrium.</param>
+    /// <param name="accepted">Energies at the accepted point.</param>
+    public IControl Control(PathMeasure measure, double stride, FullEquilibrium equilibrium, in EnergyState accepted) => measure switch
+    {
+        PathMeasure.LayerWork => new LayerWorkControl(accepted.StoredInLayers + accepted.SpentInLayers + stride, stride),
+        PathMeasure.Dissipation => new DissipationControl(accepted.SpentInLayers + stride, stride),
+        _ => new ArcLengthControl(equilibrium.Bonds.WatchedSeparations(), (double[])_displacement.Clone(), stride),
+    };
 }
 
 /// <summary>By what a stride is measured where the path may turn back.</summary>

@@ -1,4 +1,3 @@
-using System.Globalization;
 using InterfaceFE.Model;
 
 namespace InterfaceFE.Marching;
@@ -11,7 +10,8 @@ namespace InterfaceFE.Marching;
 /// <param name="equilibrium">Equilibrium of the model.</param>
 /// <param name="settings">Settings.</param>
 /// <param name="observer">Told of points and iterations.</param>
-public sealed class March(FullEquilibrium equilibrium, MarchSettings settings, IMarchObserver observer)
+/// <param name="replay">Choices of an earlier run, which are followed; null: the march chooses for itself. Of the settings the tolerance alone counts then.</param>
+public sealed class March(FullEquilibrium equilibrium, MarchSettings settings, IMarchObserver observer, ReplayPlan? replay = null)
 {
     private EnergyLedger? _ledger;
     private int _point;
@@ -35,9 +35,9 @@ public sealed class March(FullEquilibrium equilibrium, MarchSettings settings, I
                 started = true;
             }
             observer.Said($"stage {stage.Number}: {stage.Words}");
-            var march = new StageMarch(equilibrium, settings, observer, _ledger!, stage, _point, _time, _bodiesAtStart);
-            MarchOutcome outcome = march.Run(cancellation);
-            _point = march.Point;
+            var points = new StagePoints(equilibrium, settings.Tolerance, observer, _ledger!, stage, _point, _time, _bodiesAtStart);
+            MarchOutcome outcome = replay is null ? new StageMarch(points, settings, observer).Run(cancellation) : new StageReplay(points, replay).Run(cancellation);
+            _point = points.Point;
             _time += stage.Duration;
             if (outcome.Status != MarchStatus.Finished)
                 return outcome;
@@ -45,14 +45,20 @@ public sealed class March(FullEquilibrium equilibrium, MarchSettings settings, I
         return new MarchOutcome(MarchStatus.Finished, "");
     }
 
+    /// <summary>Words for a model whose numbers are not finite before anything has moved.</summary>
+    internal static string NotFinite(FullEquilibrium equilibrium) =>
+        "the stiffness of the model is not finite at the start: look for extreme numbers in the deck" + (equilibrium.Fault() is { } fault ? $" ({fault})" : "");
+
     private string? Start()
     {
         ResidualReport residual = equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
         if (!residual.Finite)
-            return "the stiffness of the model is not finite at the start: look for extreme numbers in the deck";
+            return NotFinite(equilibrium);
         (int negative, int singular) = equilibrium.Stability();
+        if (equilibrium.FactorOverflows)
+            return NotFinite(equilibrium);
         if (singular >= 0)
-            return StageMarch.CanStillMove(equilibrium, singular);
+            return LoosePart.Describe(equilibrium, singular);
         equilibrium.Accept();
         _ledger = new EnergyLedger(equilibrium);
         _bodiesAtStart = equilibrium.Bonds.Connections().Bodies;

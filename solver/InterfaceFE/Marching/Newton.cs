@@ -38,6 +38,11 @@ public readonly record struct NewtonOutcome(NewtonStatus Status, int Iterations,
 /// <param name="Reason">What was done next, in words.</param>
 public readonly record struct NewtonIteration(int Iteration, double OutOfBalance, double Relative, double Correction, int ChangedElements, string Reason);
 
+/// <summary>Where a search of an earlier run ended.</summary>
+/// <param name="Iterations">Corrections that it took.</param>
+/// <param name="Relative">Force out of balance over the reference there.</param>
+public readonly record struct RecordedEnd(int Iterations, double Relative);
+
 /// <summary>
 /// Newton-Raphson's method with the consistent tangent and a backtracking line search on the force out of balance. Faces that lie on each other may open and close in turn, place by
 /// place, with next to no energy in it; then corrections are shortened to where the force out of balance does no more work along them, and the search is given longer.
@@ -57,6 +62,9 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
     /// <summary>Changes of the potential, relative, up to which a slow search without growth of damage is chatter of faces in contact.</summary>
     private const double Chatter = 1e-6;
 
+    /// <summary>A replayed search has come as far as the recorded one when it is at most this many times as far off.</summary>
+    private const double Nearly = 10;
+
     private const double WorkTolerance = 1e-10;
     private const int MostPolishing = 2;
 
@@ -68,7 +76,11 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
     /// <param name="equilibrium">Equilibrium with a first guess in place.</param>
     /// <param name="control">Control of the stride.</param>
     /// <param name="report">Told of each iteration.</param>
-    public NewtonOutcome Search(IEquilibrium equilibrium, IControl control, Action<NewtonIteration> report)
+    /// <param name="recorded">
+    /// End of the search that is replayed; null: none is. The replay makes as many corrections and goes on until it is about as close, so that the same method ends at the same iterate, and
+    /// another one no worse; two points within one tolerance may lie further apart than rounding.
+    /// </param>
+    public NewtonOutcome Search(IEquilibrium equilibrium, IControl control, Action<NewtonIteration> report, RecordedEnd? recorded = null)
     {
         if (_gradient.Length != equilibrium.Displacement.Length)
             _gradient = new double[equilibrium.Displacement.Length];
@@ -94,15 +106,21 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             bool atFloor = !balanced && residual.HeldInPlace && controlled && slow >= 1 && residual.OutOfBalance <= equilibrium.ResidualFloor();
             // In a slender part small forces out of balance may go with a travel whose error the account of energy would show: such a point is corrected once or twice more.
             bool polishes = balanced && residual.WorkShare > WorkTolerance && polishing < MostPolishing && iteration < mostIterations;
-            if (controlled && (balanced || atFloor) && !polishes)
+            bool converged = controlled && (balanced || atFloor) && !polishes;
+            bool exhausted = iteration >= (chatters && shortens ? MostChatter : mostIterations) || (slow >= SlowBeforeStall && !(chatters && shortens) && !polishes);
+            if (recorded is { } end)
             {
-                report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, atFloor ? "converged at the floor" : "converged"));
+                exhausted = iteration >= end.Iterations + mostIterations;
+                converged = iteration >= end.Iterations && (exhausted ? converged : IsAsClose(equilibrium, residual, control.FixesProgress ? 0 : controlError, end));
+            }
+            if (converged)
+            {
+                report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, atFloor ? IterationReason.AtFloor : IterationReason.Converged));
                 return new NewtonOutcome(atFloor ? NewtonStatus.AtFloor : NewtonStatus.Converged, iteration, singular, residual.Relative);
             }
-            chatters &= shortens;
             if (controlled && polishes)
                 polishing++;
-            if (iteration >= (chatters ? MostChatter : mostIterations) || (slow >= SlowBeforeStall && !chatters && !polishes))
+            if (exhausted)
             {
                 report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, "stalled"));
                 return new NewtonOutcome(NewtonStatus.Stalled, iteration, singular, residual.Relative);
@@ -117,12 +135,19 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             double work = shortens ? equilibrium.WorkAlongCorrection() : 0;
             equilibrium.Move(1);
             residual = equilibrium.Evaluate(Everything);
+            if (!residual.Finite && equilibrium.Fault() is not null)
+                continue;
             if (shortens)
                 residual = Shorten(equilibrium, residual, work);
-            else if (iteration > 0 && previous > 0 && !(residual.OutOfBalance <= 1.5 * previous))
+            // Within tolerance what grows is rounding: a correction for the control's sake would be shortened by chance.
+            else if (iteration > 0 && previous > 0 && !(residual.OutOfBalance <= 1.5 * previous) && !(residual.Relative <= tolerance))
                 residual = Backtrack(equilibrium, residual);
         }
     }
+
+    private bool IsAsClose(IEquilibrium equilibrium, in ResidualReport residual, double controlError, RecordedEnd end) =>
+        residual.HeldInPlace && controlError <= Nearly * controlTolerance
+        && (residual.Relative <= Nearly * end.Relative || residual.OutOfBalance <= equilibrium.ResidualFloor());
 
     /// <summary>Shortens the correction, by false position (Illinois), to where the force out of balance does no work along it, if it is passed there.</summary>
     private static ResidualReport Shorten(IEquilibrium equilibrium, ResidualReport full, double workAtStart)

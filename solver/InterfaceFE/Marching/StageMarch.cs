@@ -17,67 +17,43 @@ internal sealed class StageMarch
     private const double ShorterRound = 0.03;
     private const double FairPart = 0.2;
     private const double AllowedOverAim = 3;
-    private const double LastBondShare = 0.03;
     private const double NoDissipation = 1e-12;
-    private const double Thread = 1e-6;
-    private const int MostByThread = 3;
-    private const double AlmostSeparated = 1 - 1e-3;
     private const int CalmAtFirst = 3;
     private const int CalmAtMost = 48;
 
+    private readonly StagePoints _points;
     private readonly FullEquilibrium _equilibrium;
+    private readonly LastWay _way;
     private readonly MarchSettings _settings;
     private readonly IMarchObserver _observer;
-    private readonly EnergyLedger _ledger;
-    private readonly LoadStage _stage;
-    private readonly Newton _newton;
-    private readonly double _timeAtStart;
-    private readonly int _bodiesAtStart;
-    private readonly LastWay _way;
-    private EnergyState _accepted;
-    private double _furthest, _largestLoad, _ownStride, _share = 1;
+    private double _ownStride, _share = 1;
     private bool _onPath;
-    private int _calmPoints, _calmNeeded = CalmAtFirst, _unstable, _retry, _pointsByThread;
+    private int _calmPoints, _calmNeeded = CalmAtFirst, _retry;
 
-    public StageMarch(FullEquilibrium equilibrium, MarchSettings settings, IMarchObserver observer, EnergyLedger ledger, LoadStage stage, int point, double time, int bodiesAtStart)
+    public StageMarch(StagePoints points, MarchSettings settings, IMarchObserver observer)
     {
-        _equilibrium = equilibrium;
+        _points = points;
+        _equilibrium = points.Equilibrium;
+        _way = points.Way;
         _settings = settings;
         _observer = observer;
-        _ledger = ledger;
-        _stage = stage;
-        _newton = new Newton(settings.Tolerance);
-        Point = point;
-        _timeAtStart = time;
-        _bodiesAtStart = bodiesAtStart;
-        _way = new LastWay(equilibrium.Displacement.Length);
         _ownStride = Math.Min(settings.FirstStride, settings.LargestStride);
     }
 
-    public int Point { get; private set; }
-
     private bool PathCanTakeOver => _settings.Path != PathControl.None && _equilibrium.Model.Layers.Count > 0 && _way.Exists;
-
-    public static string CanStillMove(FullEquilibrium equilibrium, int unknown) =>
-        $"{equilibrium.Model.Unknowns.Describe(unknown)} can still move freely: nothing holds it. Usual causes: a grip that should be fixed (x, y or rotation) in the sequence, "
-        + "an adherend that no joint connects, or a joint without bonded length";
 
     public MarchOutcome Run(CancellationToken cancellation)
     {
-        // Bring residual, tangents and energies to the stage's start: held unknowns and forces may have changed hands.
-        _equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate);
-        _accepted = _equilibrium.Energy;
-        (_unstable, int loose) = _equilibrium.Stability();
-        if (loose >= 0 && !Severed())
-            return Stop(CanStillMove(_equilibrium, loose));
+        if (_points.Start() is { } cause)
+            return Stop(cause);
         for (int points = 0; _equilibrium.AcceptedProgress < 1; points++)
         {
             if (points >= _settings.MostPoints)
-                return Stop(string.Create(CultureInfo.InvariantCulture, $"stage {_stage.Number} took {points} points without reaching its end (progress {_equilibrium.AcceptedProgress:G4})"));
+                return Stop(string.Create(CultureInfo.InvariantCulture, $"stage {_points.Stage.Number} took {points} points without reaching its end (progress {_equilibrium.AcceptedProgress:G4})"));
             if (Next(cancellation) is { } outcome)
                 return outcome;
-            if (Severed())
-                return new MarchOutcome(MarchStatus.Severed, string.Create(CultureInfo.InvariantCulture, $"the bond came apart in stage {_stage.Number} at progress {_equilibrium.AcceptedProgress:G4}"));
+            if (_points.Severed())
+                return _points.CameApart();
         }
         return new MarchOutcome(MarchStatus.Finished, "");
     }
@@ -108,7 +84,7 @@ internal sealed class StageMarch
                 int tries = PathCanTakeOver ? OwnTries : Rounds * TriesOfMeasure;
                 for (int i = 0; i < tries && stride >= LeastStride; i++, stride *= Shorter)
                 {
-                    if (Cancelled(cancellation) is { } cancelled)
+                    if (_points.Cancelled(cancellation) is { } cancelled)
                         return cancelled;
                     Attempt attempt = TryOwn(stride);
                     if (attempt.Good)
@@ -117,6 +93,8 @@ internal sealed class StageMarch
                         Accept(attempt);
                         return null;
                     }
+                    if (attempt.Fault is { } fault)
+                        return Stop(fault);
                     failure = attempt.Failure;
                     _retry++;
                 }
@@ -128,9 +106,9 @@ internal sealed class StageMarch
             {
                 foreach (PathMeasure measure in Measures())
                 {
-                    if (Cancelled(cancellation) is { } cancelled)
+                    if (_points.Cancelled(cancellation) is { } cancelled)
                         return cancelled;
-                    if (_way.Continue(measure, tried, _equilibrium, _accepted) is not { } control)
+                    if (_way.Continue(measure, tried, _equilibrium, _points.Accepted) is not { } control)
                         continue;
                     Attempt attempt = TryPath(control, tried);
                     if (attempt.Good)
@@ -140,6 +118,8 @@ internal sealed class StageMarch
                         Accept(attempt);
                         return null;
                     }
+                    if (attempt.Fault is { } fault)
+                        return Stop(fault);
                     failure = attempt.Failure;
                     _retry++;
                     // Too long for the energy account: another measure would be as long.
@@ -148,25 +128,16 @@ internal sealed class StageMarch
                 }
             }
         }
-        return GiveUp();
+        return GiveUp(failure);
     }
 
-    private MarchOutcome? Cancelled(CancellationToken cancellation)
-    {
-        if (!cancellation.IsCancellationRequested)
-            return null;
-        _equilibrium.RollBack();
-        return new MarchOutcome(MarchStatus.Interrupted, "interrupted from outside; points so far are kept");
-    }
-
-    private MarchOutcome GiveUp()
+    private MarchOutcome GiveUp(string failure)
     {
         _equilibrium.RollBack();
-        double share = _equilibrium.Bonds.Connections().CarryingShare;
-        if (share <= LastBondShare)
-            return new MarchOutcome(MarchStatus.Severed, string.Create(CultureInfo.InvariantCulture,
-                $"the last {100 * share:G3} % of the bond gave way in stage {_stage.Number} at progress {_equilibrium.AcceptedProgress:G4}"));
-        return Stop(string.Create(CultureInfo.InvariantCulture, $"no equilibrium was found beyond progress {_equilibrium.AcceptedProgress:G6} of stage {_stage.Number} ({_stage.Words}), however short the stride")
+        if (_points.LastOfTheBond() is { } severed)
+            return severed;
+        return Stop(string.Create(CultureInfo.InvariantCulture, $"no equilibrium was found beyond progress {_equilibrium.AcceptedProgress:G6} of stage {_points.Stage.Number} ({_points.Stage.Words}), however short the stride")
+            + (failure.StartsWith(StagePoints.Overflow, StringComparison.Ordinal) ? ": " + failure : "")
             + (_settings.Path == PathControl.None ? "; a limit point needs `control: automatic`" : ""));
     }
 
@@ -175,63 +146,51 @@ internal sealed class StageMarch
         double start = _equilibrium.AcceptedProgress, target = start + stride;
         if (target > 1 - 0.2 * stride)
             target = 1;
-        if (_way.Exists && Extrapolates() && _way.Progress > 0)
-            _equilibrium.Guess(_way.Displacement, _way.Progress, Math.Min((target - start) / _way.Progress, 2));
-        else
-            _equilibrium.RollBack();
+        double guess = _way.Exists && Extrapolates() && _way.Progress > 0 ? Math.Min((target - start) / _way.Progress, 2) : 0;
+        _points.Guess(guess);
         _equilibrium.Progress = target;
-        return Search(new OwnControl(target, target - start));
+        return Search(new OwnControl(target, target - start), guess);
     }
 
     private Attempt TryPath(IControl control, double share)
     {
-        if (Extrapolates() && share <= 2.5)
-            _equilibrium.Guess(_way.Displacement, _way.Progress, share);
-        else
-            _equilibrium.RollBack();
-        Attempt attempt = Search(control);
+        double guess = Extrapolates() && share <= 2.5 ? share : 0;
+        _points.Guess(guess);
+        Attempt attempt = Search(control, guess);
         if (attempt.Good && GoesBack())
+        {
+            _points.Refuse(IterationReason.WentBack);
             return attempt with { Good = false, Error = 0, Failure = "the stride went back the way it came" };
+        }
         if (!attempt.Good || _equilibrium.Progress <= 1)
             return attempt;
         // The stride passed the stage's end: find the end itself from the straight line between the two points.
-        double start = _equilibrium.AcceptedProgress, beyond = _equilibrium.Progress;
-        var way = new double[_equilibrium.Displacement.Length];
-        for (int i = 0; i < way.Length; i++)
-            way[i] = _equilibrium.Displacement[i] - _equilibrium.AcceptedDisplacement[i];
-        _equilibrium.Guess(way, beyond - start, (1 - start) / (beyond - start));
-        _equilibrium.Progress = 1;
-        return Search(new OwnControl(1, 1 - start));
+        _points.Refuse(IterationReason.PastEnd);
+        double start = _equilibrium.AcceptedProgress, between = (1 - start) / (_equilibrium.Progress - start);
+        _points.GuessBetween(between, 1);
+        return Search(new OwnControl(1, 1 - start), between);
     }
 
     /// <summary>Whether the load falls without any dissipation: unloading, which fulfils the equation of arc length as well as going on does.</summary>
     private bool GoesBack() =>
         _equilibrium.Progress < _equilibrium.AcceptedProgress
-        && _equilibrium.Energy.SpentInLayers - _accepted.SpentInLayers <= NoDissipation * Math.Max(_way.Dissipation, _accepted.SpentInLayers);
+        && _equilibrium.Energy.SpentInLayers - _points.Accepted.SpentInLayers <= NoDissipation * Math.Max(_way.Dissipation, _points.Accepted.SpentInLayers);
 
-    private Attempt Search(IControl control)
+    private Attempt Search(IControl control, double guess)
     {
-        NewtonOutcome outcome = _newton.Search(_equilibrium, control, iteration => _observer.IterationMade(new MarchIteration(
-            _stage.Number, Point + 1, _retry, control.Name, control.Stride, _equilibrium.Progress, _unstable, iteration)));
+        NewtonOutcome outcome = _points.Search(control, guess, _retry);
         if (!outcome.Usable)
-            return new Attempt(false, outcome.Iterations, 0, outcome.Status == NewtonStatus.NotFinite ? "numbers overflow" : "no convergence", control);
-        double error = _ledger.StrideError() / _settings.PathError;
-        return error > AllowedOverAim
-            ? new Attempt(false, outcome.Iterations, error, "energy error of the stride too large", control)
-            : new Attempt(true, outcome.Iterations, error, "", control);
+            return new Attempt(false, outcome.Iterations, 0, _points.Failure, control) { Fault = _points.Fault };
+        double error = _points.Ledger.StrideError() / _settings.PathError;
+        if (error <= AllowedOverAim)
+            return new Attempt(true, outcome.Iterations, error, "", control);
+        _points.Refuse(IterationReason.TooLong);
+        return new Attempt(false, outcome.Iterations, error, "energy error of the stride too large", control);
     }
 
     private void Accept(Attempt attempt)
     {
-        _way.Take(_equilibrium, _accepted);
-        _accepted = _equilibrium.Energy;
-        EnergyAccount account = _ledger.Book();
-        _equilibrium.Accept();
-        (_unstable, _) = _equilibrium.Stability();
-        Point++;
-        _furthest = Math.Max(_furthest, _equilibrium.AcceptedProgress);
-        _observer.PointAccepted(new MarchPoint(Point, _stage.Number, _equilibrium.AcceptedProgress >= 1, _equilibrium.AcceptedProgress, _timeAtStart + _stage.Duration * _furthest,
-            _equilibrium.AcceptedTemperature, _unstable == 0, account));
+        _points.Accept();
         _share = Factor(attempt);
         if (Math.Max(_way.LayerWork, _way.Dissipation) is var work && work * _share > _settings.LargestLayerWork)
             _share = _settings.LargestLayerWork / work;
@@ -239,11 +198,11 @@ internal sealed class StageMarch
             _ownStride = Math.Min(_way.Progress * _share, _settings.LargestStride);
         if (!_onPath)
         {
-            if (_unstable > 0 && PathCanTakeOver && _way.Continue(Measures()[0], 1, _equilibrium, _accepted) is { } control)
+            if (_points.Unstable > 0 && PathCanTakeOver && _way.Continue(Measures()[0], 1, _equilibrium, _points.Accepted) is { } control)
                 TakePath(control.Name, "the equilibrium is unstable under the stage's own control");
             return;
         }
-        _calmPoints = _unstable == 0 && _way.Progress > 0 ? _calmPoints + 1 : 0;
+        _calmPoints = _points.Unstable == 0 && _way.Progress > 0 ? _calmPoints + 1 : 0;
         if (_calmPoints < _calmNeeded)
             return;
         Leave("the path is stable and advances again");
@@ -277,25 +236,11 @@ internal sealed class StageMarch
         _observer.Said(string.Create(CultureInfo.InvariantCulture, $"control: the stage's own at progress {_equilibrium.AcceptedProgress:G4} ({reason})"));
     }
 
-    /// <summary>
-    /// Whether the specimen came apart: by points that are separated, or hanging by a thread for some points on end, where the bond carries less than a thousandth and the grips less than a
-    /// millionth of what they did.
-    /// </summary>
-    private bool Severed()
-    {
-        if (_equilibrium.Bonds.Connections().Bodies > _bodiesAtStart)
-            return true;
-        double load = 0;
-        for (int i = 0; i < _equilibrium.Displacement.Length; i++)
-            if (_equilibrium.Model.Unknowns.IsRoot[_equilibrium.Model.Unknowns.VertexOfUnknown[i]])
-                load = Math.Max(load, Math.Abs(_equilibrium.ExternalForce(i)));
-        _largestLoad = Math.Max(_largestLoad, load);
-        bool thread = load < Thread * _largestLoad && _equilibrium.Bonds.Connections(AlmostSeparated).Bodies > _bodiesAtStart;
-        _pointsByThread = thread ? _pointsByThread + 1 : 0;
-        return _pointsByThread > MostByThread;
-    }
-
     private static MarchOutcome Stop(string cause) => new(MarchStatus.StoppedEarly, cause);
 
-    private readonly record struct Attempt(bool Good, int Iterations, double Error, string Failure, IControl Control);
+    private readonly record struct Attempt(bool Good, int Iterations, double Error, string Failure, IControl Control)
+    {
+        /// <summary>What no shorter stride will mend, in words; null when it may.</summary>
+        public string? Fault { get; init; }
+    }
 }

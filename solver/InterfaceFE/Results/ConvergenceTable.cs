@@ -3,10 +3,10 @@ namespace InterfaceFE.Results;
 /// <summary>convergence.csv: one row per iteration of the march, enough to replay the run.</summary>
 public sealed class ConvergenceTable : IDisposable
 {
-    private static readonly string[] Header =
+    internal static readonly string[] Header =
     [
         "stage", "point", "retries", "iteration", "control", "stride", "progress", "load factor", "root", "out of balance [N]", "relative", "correction [mm]",
-        "unstable directions", "changed elements", "reason",
+        "unstable directions", "changed elements", "reason", "guess",
     ];
 
     private readonly CsvTable _table;
@@ -25,7 +25,7 @@ public sealed class ConvergenceTable : IDisposable
         _table.Add(row.Stage).Add(row.Point).Add(row.Retries).Add(row.Iteration)
             .Add(row.Control).Add(row.Stride).Add(row.Progress).Add(row.LoadFactor).Add(row.Root)
             .Add(row.OutOfBalance).Add(row.Relative).Add(row.Correction)
-            .Add(row.UnstableDirections).Add(row.ChangedElements).Add(row.Reason)
+            .Add(row.UnstableDirections).Add(row.ChangedElements).Add(row.Reason).Add(row.Guess)
             .EndRow();
     }
 

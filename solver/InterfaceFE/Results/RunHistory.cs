@@ -231,8 +231,11 @@ public sealed record IterationRow
     /// <summary>Elements whose tangent changed.</summary>
     public required int ChangedElements { get; init; }
 
-    /// <summary>Why: predicted, corrected, converged, converged at the floor, stride shortened, control changed.</summary>
+    /// <summary>How it stands: predicted, corrected, stalled, not finite, or as the last row of a search says of its point (see <see cref="Marching.IterationReason"/>).</summary>
     public required string Reason { get; init; }
+
+    /// <summary>Share of the way that the first guess carried on: of the last stride, or of the search before where that passed the stage's end. 0: from the accepted point.</summary>
+    public required double Guess { get; init; }
 }
 
 /// <summary>Damage along a joint at a point: one value per layer element (its largest), 1 where it was never bonded is NaN.</summary>

@@ -68,6 +68,7 @@ public sealed class RunRecorder : IMarchObserver
     {
         if (_fieldInterval == 0)
             return;
+        using PhaseClock.Stretch time = _equilibrium.Clock.In(Phase.Writing);
         foreach (FieldSnapshot? snapshot in (ReadOnlySpan<FieldSnapshot?>)[_peak, _last])
         {
             if (snapshot is null || _history.Snapshots.Any(s => s.Point == snapshot.Point))
@@ -81,6 +82,7 @@ public sealed class RunRecorder : IMarchObserver
     /// <inheritdoc/>
     public void PointAccepted(MarchPoint point)
     {
+        using PhaseClock.Stretch time = _equilibrium.Clock.In(Phase.Recording);
         _temperatureChanged |= point.Temperature != _model.StressFreeTemperature;
         _fields.Sample(_equilibrium);
         _samples = [.. _model.Layers.Select((layer, joint) => new LayerSample(layer, joint, _equilibrium, _fields.DisplacementX, _fields.DisplacementY))];
@@ -108,7 +110,8 @@ public sealed class RunRecorder : IMarchObserver
         _history.Energies.Add(energy);
         for (int joint = 0; joint < _samples.Length; joint++)
             _history.Damage.Add(new DamageRow(point.Number, joint, DamageOf(_samples[joint], _model.Mesh.Joints[joint])));
-        _sink.Write(row, fronts, energy);
+        using (_equilibrium.Clock.In(Phase.Writing))
+            _sink.Write(row, fronts, energy);
         if (_fieldInterval == 0)
             return;
         FieldSnapshot snapshot = _fields.Snapshot(point, _samples);
@@ -119,6 +122,7 @@ public sealed class RunRecorder : IMarchObserver
         if (!point.StageEnd && !firstDamage && point.Number % _fieldInterval != 0)
             return;
         _history.Snapshots.Add(snapshot);
+        using PhaseClock.Stretch writing = _equilibrium.Clock.In(Phase.Writing);
         _sink.Write(snapshot);
     }
 
@@ -142,8 +146,10 @@ public sealed class RunRecorder : IMarchObserver
             UnstableDirections = iteration.UnstableDirections,
             ChangedElements = iteration.Newton.ChangedElements,
             Reason = iteration.Newton.Reason,
+            Guess = iteration.Guess,
         };
         _history.Iterations.Add(row);
+        using PhaseClock.Stretch time = _equilibrium.Clock.In(Phase.Writing);
         _sink.Write(row);
     }
 

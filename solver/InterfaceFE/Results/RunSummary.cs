@@ -52,10 +52,10 @@ public sealed class RunSummary
     /// <summary>Warnings met on the way.</summary>
     public List<string> Warnings { get; } = [];
 
-    /// <summary>Seconds of wall clock by phase.</summary>
+    /// <summary>Seconds of wall clock by phase, and in total.</summary>
     public Dictionary<string, double> WallSeconds { get; } = [];
 
-    /// <summary>Counts: unknowns, elements, layer elements, points, iterations, factorisations.</summary>
+    /// <summary>Counts: unknowns, elements, layer elements, points, iterations, factorisations, solves, changed elements (tangents that differed from those in the factor).</summary>
     public Dictionary<string, long> Counts { get; } = [];
 
     /// <summary>Vector width of the factorisation's kernels in bits.</summary>

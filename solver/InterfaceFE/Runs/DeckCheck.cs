@@ -80,9 +80,11 @@ public static class DeckCheck
         {
             equilibrium.StartStage(stage);
             if (!equilibrium.Evaluate(Wanted.Force | Wanted.Tangent | Wanted.LoadRate).Finite)
-                return "the stiffness of the model is not finite at the start: look for extreme numbers in the deck";
+                return March.NotFinite(equilibrium);
             if (equilibrium.Stability() is { Singular: >= 0 and int unknown })
-                return Text.Of($"stage {stage.Number} ({stage.Words}): {StageMarch.CanStillMove(equilibrium, unknown)}");
+                return Text.Of($"stage {stage.Number} ({stage.Words}): {LoosePart.Describe(equilibrium, unknown)}");
+            if (equilibrium.FactorOverflows)
+                return March.NotFinite(equilibrium);
         }
         return null;
     }

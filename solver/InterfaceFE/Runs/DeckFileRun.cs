@@ -1,5 +1,6 @@
 using InterfaceFE.Decks;
 using InterfaceFE.Decks.Reading;
+using InterfaceFE.Marching;
 using InterfaceFE.Results;
 
 namespace InterfaceFE.Runs;
@@ -17,24 +18,28 @@ public static class DeckFileRun
     /// <param name="deckFile">The deck.</param>
     /// <param name="folder">Folder of the results.</param>
     /// <param name="overwrite">Whether results that are there are replaced.</param>
+    /// <param name="replayFile">convergence.csv of an earlier run whose strides, controls and roots are followed; null: none.</param>
     /// <param name="progress">Takes lines of progress.</param>
     /// <param name="cancellation">Stops the march; what was found is written all the same.</param>
-    public static FileRunOutcome Execute(string deckFile, string folder, bool overwrite, Action<string> progress, CancellationToken cancellation)
+    public static FileRunOutcome Execute(string deckFile, string folder, bool overwrite, string? replayFile, Action<string> progress, CancellationToken cancellation)
     {
         ArgumentException.ThrowIfNullOrEmpty(deckFile);
         ArgumentException.ThrowIfNullOrEmpty(folder);
         ArgumentNullException.ThrowIfNull(progress);
-        DeckReading reading = DeckReader.Read(deckFile);
+        var clock = new PhaseClock();
+        DeckReading reading;
+        using (clock.In(Phase.Reading))
+            reading = DeckReader.Read(deckFile);
         return Faults.Guard(reading, folder, () =>
         {
             if (reading.Deck is null)
                 return Wrong([.. reading.Problems.Select(p => p.ToString())]);
-            if (RunFolder.Refusal(folder, overwrite, [deckFile, .. reading.IncludedFiles]) is { } refusal)
+            if (RunFolder.Refusal(folder, overwrite, [deckFile, .. reading.IncludedFiles, .. replayFile is null ? (string[])[] : [replayFile]]) is { } refusal)
                 return Wrong([refusal]);
             string[] warnings = [.. reading.Warnings.Select(p => p.ToString())];
             foreach (string warning in warnings)
                 progress("warning: " + warning);
-            RunResult result = new FolderRun(folder, progress).Execute(reading.Deck, warnings, cancellation);
+            RunResult result = new FolderRun(folder, progress) { Clock = clock }.Execute(reading.Deck, warnings, replayFile, cancellation);
             return new FileRunOutcome(CodeOf(result.Summary), [], result);
         }, (code, messages) => new FileRunOutcome(code, messages, null));
     }

@@ -1,4 +1,3 @@
-using System.Diagnostics;
 using System.Globalization;
 using InterfaceFE.Decks;
 using InterfaceFE.Geometry;
@@ -23,41 +22,56 @@ public static class DeckRun
     /// <param name="makeSink">Makes what takes the records, once the history's heading is known; null: records stay in memory only.</param>
     /// <param name="cancellation">Stops the march; points so far are kept.</param>
     /// <exception cref="DeckException">The deck asks for something that cannot be built.</exception>
-    public static RunResult Execute(Deck deck, Func<RunHistory, IRecordSink>? makeSink = null, CancellationToken cancellation = default)
+    public static RunResult Execute(Deck deck, Func<RunHistory, IRecordSink>? makeSink = null, CancellationToken cancellation = default) => Execute(deck, makeSink, null, new PhaseClock(), cancellation);
+
+    /// <summary>Runs a deck, or replays an earlier run of it.</summary>
+    /// <param name="deck">Deck as read.</param>
+    /// <param name="makeSink">Makes what takes the records, once the history's heading is known; null: records stay in memory only.</param>
+    /// <param name="replay">Choices of an earlier run that are followed; null: the march chooses for itself.</param>
+    /// <param name="clock">Takes the time by phase.</param>
+    /// <param name="cancellation">Stops the march; points so far are kept.</param>
+    /// <exception cref="DeckException">The deck asks for something that cannot be built.</exception>
+    /// <exception cref="ReplayException">The stages of the earlier run are not those of the deck.</exception>
+    public static RunResult Execute(Deck deck, Func<RunHistory, IRecordSink>? makeSink, ReplayPlan? replay, PhaseClock clock, CancellationToken cancellation)
     {
-        long start = Stopwatch.GetTimestamp();
-        MeshingResult meshing = Mesher.Build(deck);
-        SpecimenModel model = ModelBuilder.Build(deck, meshing.Mesh);
-        FreeMovement.Refuse(model);
+        ArgumentNullException.ThrowIfNull(clock);
+        MeshingResult meshing;
+        SpecimenModel model;
+        using (clock.In(Phase.Meshing))
+        {
+            meshing = Mesher.Build(deck);
+            model = ModelBuilder.Build(deck, meshing.Mesh);
+            FreeMovement.Refuse(model);
+        }
+        if (replay?.Misfit(model) is { } misfit)
+            throw new ReplayException("the record that is to be replayed is of another deck: " + misfit);
         var gauges = new GaugeReader(deck, meshing.Mesh);
         RunHistory history = Heading(deck, model, gauges);
-        IRecordSink sink = makeSink?.Invoke(history) ?? new NoSink();
+        IRecordSink sink;
+        using (clock.In(Phase.Writing))
+            sink = makeSink?.Invoke(history) ?? new NoSink();
         foreach (string note in meshing.Notes)
             sink.Say(note);
-        double meshSeconds = Stopwatch.GetElapsedTime(start).TotalSeconds;
-        start = Stopwatch.GetTimestamp();
-        var equilibrium = new FullEquilibrium(model);
-        double planSeconds = Stopwatch.GetElapsedTime(start).TotalSeconds;
+        FullEquilibrium equilibrium;
+        using (clock.In(Phase.Plan))
+            equilibrium = new FullEquilibrium(model) { Clock = clock };
         sink.Say(string.Create(CultureInfo.InvariantCulture, $"model: {model.Unknowns.Count} unknowns, {model.Solids.Sum(s => s.Count)} elements in adherends, {model.Layers.Sum(l => l.Count)} in joints"));
-        start = Stopwatch.GetTimestamp();
-        var recorder = new RunRecorder(equilibrium, history, gauges, deck.Keep?.Fields.Points ?? new KeepDeck().Fields.Points, sink);
-        MarchOutcome outcome = new March(equilibrium, Settings(deck, model), recorder).Run(cancellation);
+        RunRecorder recorder;
+        using (clock.In(Phase.Recording))
+            recorder = new RunRecorder(equilibrium, history, gauges, deck.Keep?.Fields.Points ?? new KeepDeck().Fields.Points, sink);
+        MarchOutcome outcome = new March(equilibrium, Settings(deck, model), recorder, replay).Run(cancellation);
         recorder.Finish();
         var summary = new RunSummary { Status = Status(outcome.Status), Cause = outcome.Cause, Title = deck.Title };
         summary.Warnings.AddRange(meshing.Warnings);
-        if (history.Points.Count > 0)
-            SummaryMaker.Fill(summary, history, recorder, model);
-        else
-            NoPoint(summary);
-        summary.WallSeconds["mesh and model"] = meshSeconds;
-        summary.WallSeconds["plan of the factorisation"] = planSeconds;
-        summary.WallSeconds["march and records"] = Stopwatch.GetElapsedTime(start).TotalSeconds;
-        summary.Counts["unknowns"] = model.Unknowns.Count;
-        summary.Counts["elements"] = model.Solids.Sum(s => (long)s.Count);
-        summary.Counts["layer elements"] = model.Layers.Sum(l => (long)l.Count);
-        summary.Counts["points"] = history.Points.Count;
-        summary.Counts["iterations"] = history.Iterations.Count(i => i.Iteration > 0);
-        summary.Counts["factorisations"] = equilibrium.Factorisations;
+        using (clock.In(Phase.Recording))
+        {
+            if (history.Points.Count > 0)
+                SummaryMaker.Fill(summary, history, recorder, model);
+            else
+                NoPoint(summary);
+        }
+        Count(summary, history, equilibrium);
+        Timings.Fill(summary, clock);
         summary.KernelWidth = DenseKernels.WidthBits;
         summary.Version = typeof(DeckRun).Assembly.GetName().Version?.ToString(3) ?? "";
         return new RunResult(history, summary, equilibrium);
@@ -115,6 +129,19 @@ public static class DeckRun
             (x, y) = component == GripComponent.X ? (sense, 0) : (0, sense);
         }
         return new GripInfo(grip.Name, pull is not null || turned, x, y, turned, body.PinX, body.PinY);
+    }
+
+    private static void Count(RunSummary summary, RunHistory history, FullEquilibrium equilibrium)
+    {
+        SpecimenModel model = equilibrium.Model;
+        summary.Counts["unknowns"] = model.Unknowns.Count;
+        summary.Counts["elements"] = model.Solids.Sum(s => (long)s.Count);
+        summary.Counts["layer elements"] = model.Layers.Sum(l => (long)l.Count);
+        summary.Counts["points"] = history.Points.Count;
+        summary.Counts["iterations"] = history.Iterations.Count(i => i.Iteration > 0);
+        summary.Counts["factorisations"] = equilibrium.Factorisations;
+        summary.Counts["solves"] = equilibrium.Solves;
+        summary.Counts["changed elements"] = equilibrium.ChangedTangents;
     }
 
     private static void NoPoint(RunSummary summary)

@@ -1,5 +1,6 @@
 using InterfaceFE.Decks;
 using InterfaceFE.Decks.Reading;
+using InterfaceFE.Results;
 
 namespace InterfaceFE.Runs;
 
@@ -20,6 +21,10 @@ internal static class Faults
         catch (DeckException e)
         {
             return fail(ExitCode.WrongDeckOrCall, [.. e.Problems.Select(p => reading.Describe(p).ToString())]);
+        }
+        catch (ReplayException e)
+        {
+            return fail(ExitCode.WrongDeckOrCall, [OneLine(e)]);
         }
         catch (Exception e) when (e is IOException or UnauthorizedAccessException)
         {

@@ -1,8 +1,8 @@
-using System.Diagnostics;
 using System.Security.Cryptography;
 using System.Text;
 using InterfaceFE.Decks;
 using InterfaceFE.Decks.Reading;
+using InterfaceFE.Marching;
 using InterfaceFE.Reports;
 using InterfaceFE.Results;
 
@@ -26,6 +26,9 @@ public sealed class FolderRun
         _progress = progress;
     }
 
+    /// <summary>Takes the time by phase. One that ran while the deck was read has that time too.</summary>
+    public PhaseClock Clock { get; init; } = new();
+
     /// <summary>Runs a deck that was read without problems.</summary>
     /// <param name="deck">The deck.</param>
     /// <param name="warnings">Warnings of the reading, for log and summary.</param>
@@ -33,20 +36,32 @@ public sealed class FolderRun
     /// <exception cref="DeckException">The deck cannot be built; nothing is left in the folder.</exception>
     /// <exception cref="IOException">The folder cannot be written. A disk that fills up later stops the run early instead.</exception>
     /// <exception cref="UnauthorizedAccessException">The folder must not be written.</exception>
-    public RunResult Execute(Deck deck, IReadOnlyList<string> warnings, CancellationToken cancellation)
+    public RunResult Execute(Deck deck, IReadOnlyList<string> warnings, CancellationToken cancellation) => Execute(deck, warnings, null, cancellation);
+
+    /// <summary>Runs a deck that was read without problems, or replays an earlier run of it.</summary>
+    /// <param name="deck">The deck.</param>
+    /// <param name="warnings">Warnings of the reading, for log and summary.</param>
+    /// <param name="replayFile">convergence.csv of an earlier run whose choices are followed; null: none.</param>
+    /// <param name="cancellation">Stops the march; what was found is written all the same.</param>
+    /// <exception cref="ReplayException">The earlier run cannot be replayed with this deck; nothing is left in the folder.</exception>
+    /// <exception cref="DeckException">The deck cannot be built; nothing is left in the folder.</exception>
+    /// <exception cref="IOException">The folder cannot be written. A disk that fills up later stops the run early instead.</exception>
+    /// <exception cref="UnauthorizedAccessException">The folder must not be written.</exception>
+    public RunResult Execute(Deck deck, IReadOnlyList<string> warnings, string? replayFile, CancellationToken cancellation)
     {
-        string resolved = DeckWriter.Write(deck);
+        string resolved = DeckWriter.Write(deck), hash = Convert.ToHexStringLower(SHA256.HashData(Encoding.UTF8.GetBytes(resolved)));
+        ReplayPlan? replay = replayFile is null ? null : ReplayFile.Read(replayFile, hash);
         using var stop = CancellationTokenSource.CreateLinkedTokenSource(cancellation);
         FolderSink? sink = null;
         try
         {
-            RunResult result = DeckRun.Execute(deck, history => sink = Open(resolved, warnings, history, stop), stop.Token);
-            result.Summary.DeckHash = Convert.ToHexStringLower(SHA256.HashData(Encoding.UTF8.GetBytes(resolved)));
+            RunResult result = DeckRun.Execute(deck, history => sink = Open(resolved, warnings, replayFile, history, stop), replay, Clock, stop.Token);
+            result.Summary.DeckHash = hash;
             result.Summary.Warnings.InsertRange(0, warnings);
             Complete(result, sink!);
             return result;
         }
-        catch (DeckException)
+        catch (Exception e) when (e is DeckException or ReplayException)
         {
             sink?.Discard();
             throw;
@@ -62,11 +77,13 @@ public sealed class FolderRun
         }
     }
 
-    private FolderSink Open(string resolved, IReadOnlyList<string> warnings, RunHistory history, CancellationTokenSource stop)
+    private FolderSink Open(string resolved, IReadOnlyList<string> warnings, string? replayFile, RunHistory history, CancellationTokenSource stop)
     {
         FolderSink sink = new(_folder, resolved, history, _progress, stop);
         foreach (string warning in warnings)
             sink.Log("warning: " + warning);
+        if (replayFile is not null)
+            sink.Say("replay of " + replayFile);
         return sink;
     }
 
@@ -80,15 +97,18 @@ public sealed class FolderRun
             summary.Cause = "a file of the results could not be written: " + fault;
         }
         string file = Path.Join(_folder, "summary.json");
-        sink.Try(() => SummaryWriter.Write(file, summary));
-        long start = Stopwatch.GetTimestamp();
-        if (result.History.Points.Count > 1)
+        using (Clock.In(Phase.Writing))
+            sink.Try(() => SummaryWriter.Write(file, summary));
+        using (Clock.In(Phase.Figures))
         {
-            _progress("figures");
-            foreach (string message in FigureWriter.WriteAll(result.History, summary, Path.Join(_folder, "figures"), _progress).Messages)
-                sink.Log("figure: " + message);
+            if (result.History.Points.Count > 1)
+            {
+                _progress("figures");
+                foreach (string message in FigureWriter.WriteAll(result.History, summary, Path.Join(_folder, "figures"), _progress).Messages)
+                    sink.Log("figure: " + message);
+            }
         }
-        summary.WallSeconds["figures"] = Stopwatch.GetElapsedTime(start).TotalSeconds;
+        Timings.Fill(summary, Clock);
         sink.Try(() => SummaryWriter.Write(file, summary));
         sink.Log(log => SummaryText.Write(summary, log));
     }

@@ -50,9 +50,6 @@ internal sealed unsafe class FrontFactor : IThreadPoolWorkItem
     /// <summary>Place of a pivot that is not finite; -1 for none.</summary>
     public int FirstNotFinite { get; private set; } = -1;
 
-    /// <summary>Floating-point operations of the last run.</summary>
-    public double Work { get; private set; }
-
     /// <summary>Whether a second thread may help.</summary>
     public bool MayShare { get; set; }
 
@@ -75,13 +72,13 @@ internal sealed unsafe class FrontFactor : IThreadPoolWorkItem
     /// <summary>All fronts are to be worked on in the next run.</summary>
     public void MarkAll() => _changed.MarkAll();
 
-    /// <summary>Works on the marked fronts with the slots' present numbers. A branch ends early at its first pivot that is not finite; everything is marked again then.</summary>
-    public void Run()
+    /// <summary>Works on the marked fronts with the slots' present numbers. A branch ends early at its first pivot that is not finite; everything is marked again then. Returns the floating-point operations.</summary>
+    public double Run()
     {
         _values.Scales.Update();
-        Work = _changed.Complete(_values.Scales);
+        double work = _changed.Complete(_values.Scales);
         FirstNotFinite = -1;
-        RunBranches();
+        RunBranches(MayShare && work >= WorkForTwo && _faults.Length > 1);
         foreach (int fault in _faults)
             Note(fault);
         foreach (int front in _plan.Branches.Tops)
@@ -90,7 +87,7 @@ internal sealed unsafe class FrontFactor : IThreadPoolWorkItem
         if (FirstNotFinite >= 0)
         {
             _changed.MarkAll();
-            return;
+            return work;
         }
         _worker.AssembleRoot();
         PivotTally tally = PivotTally.Empty;
@@ -98,6 +95,7 @@ internal sealed unsafe class FrontFactor : IThreadPoolWorkItem
             tally.Join(_store.Tallies[front]);
         Tally = tally;
         _changed.Clear();
+        return work;
     }
 
     /// <summary>A second thread's share of the branches.</summary>
@@ -110,10 +108,9 @@ internal sealed unsafe class FrontFactor : IThreadPoolWorkItem
         Volatile.Write(ref _isHelping, 0);
     }
 
-    private void RunBranches()
+    private void RunBranches(bool isShared)
     {
         _doneBranches = 0;
-        bool isShared = MayShare && Work >= WorkForTwo && _faults.Length > 1;
         if (isShared)
             _helper ??= new FrontWorker(_plan, _values, _store, _influence);
         Volatile.Write(ref _nextBranch, 0);

@@ -6,9 +6,10 @@ internal sealed class GeneralRoot : DenseRoot
     private readonly int[] _exchanged;
     private readonly bool[] _isZero;
 
-    public GeneralRoot(int size)
-        : base(size)
+    public GeneralRoot(int size, int borderRows = 0)
+        : base(size, borderRows)
     {
+        size += borderRows;
         _exchanged = new int[size];
         _isZero = new bool[size];
     }

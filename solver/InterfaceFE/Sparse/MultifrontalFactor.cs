@@ -20,6 +20,8 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     private readonly AlignedBuffer _x;
     private readonly Refinement _refinement;
     private double[]? _whole;
+    private LaneSolver? _laneSolver;
+    private AlignedBuffer? _lanes;
     private int _nextRoot;
     private bool _isFactored;
     private bool _isStale;
@@ -74,7 +76,13 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     }
 
     /// <summary>Floating-point operations of the last <see cref="Factor"/>, root block not included (a multiply-add counts as two; a general factor does twice as many).</summary>
-    public double LastFlops => _fronts.Work;
+    public double LastFlops { get; private set; }
+
+    /// <summary>The fronts.</summary>
+    internal FrontFactor Fronts => _fronts;
+
+    /// <summary>Substitution through the fronts.</summary>
+    internal FrontSolver Substitution => _solver;
 
     private int Halves => _isSymmetric ? 1 : 2;
 
@@ -102,14 +110,17 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     public FactorOutcome Factor()
     {
         if (_isFactored && _fronts.IsUpToDate)
+        {
+            LastFlops = 0;
             return Outcome();
+        }
         _isFactored = false;
         foreach (DenseRoot? root in _roots)
             root?.Invalidate();
         (int slot, int unknown) = _values.FirstFault();
         if (slot >= 0)
             return new FactorOutcome(FactorStatus.NotFinite, unknown, slot, double.NaN);
-        _fronts.Run();
+        LastFlops = _fronts.Run();
         int fault = _fronts.FirstNotFinite >= 0 ? _fronts.FirstNotFinite : FirstFaultyRoot();
         if (fault >= 0)
         {
@@ -180,6 +191,35 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
             x[Plan.OldOf[i]] = work[i];
     }
 
+    /// <summary>
+    /// Solves for several right sides, eight at a time, so that the factor is read once for eight of them; one after the other where solves are refined. Agrees with single solves
+    /// to round-off.
+    /// </summary>
+    /// <param name="b">Right sides, one after the other, each of length <see cref="Size"/>.</param>
+    /// <param name="x">Solutions likewise; on entry with the values of held root unknowns. With <paramref name="wanted"/>, values outside the path stay as they are.</param>
+    /// <param name="heldRootUnknowns">Indices of root unknowns that are held.</param>
+    /// <param name="wanted">Path outside which all right sides are zero and no values are wanted; null for everything.</param>
+    /// <exception cref="InvalidOperationException">There is no sound factor.</exception>
+    /// <exception cref="ArgumentException">A length is wrong, or a held unknown is not a root unknown.</exception>
+    public void SolveMany(ReadOnlySpan<double> b, Span<double> x, ReadOnlySpan<int> heldRootUnknowns, FrontPath? wanted = null)
+    {
+        if (b.Length != x.Length || (Size > 0 && b.Length % Size != 0))
+            throw new ArgumentException($"b and x must have one length, a multiple of {Size}; they have {b.Length} and {x.Length}.");
+        int count = Size > 0 ? b.Length / Size : 0;
+        FrontPath path = wanted ?? Plan.Whole;
+        DenseRoot root = RootFor(heldRootUnknowns);
+        if (IsRefined && !_isStale)
+        {
+            for (int c = 0; c < count; c++)
+                Solve(b.Slice(c * Size, Size), x.Slice(c * Size, Size), heldRootUnknowns, path);
+            return;
+        }
+        _laneSolver ??= new LaneSolver(Plan, _fronts.Store);
+        _lanes ??= new AlignedBuffer((long)LaneSolver.Lanes * Size);
+        for (int from = 0; from < count; from += LaneSolver.Lanes)
+            SolveLanes(root, b[(from * Size)..], x[(from * Size)..], Math.Min(LaneSolver.Lanes, count - from), path);
+    }
+
     /// <inheritdoc/>
     /// <exception cref="InvalidOperationException">There is no sound factor: none was made, or an entry was not finite.</exception>
     /// <exception cref="ArgumentException">A held unknown is not a root unknown.</exception>
@@ -198,6 +238,9 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
             throw new ArgumentException($"x and product must have {Size} entries; they have {x.Length} and {product.Length}.");
         _values.Multiply(x, product);
     }
+
+    /// <summary>residual = b - K x and size = |b| + |K| |x|, entry by entry.</summary>
+    internal void Residual(ReadOnlySpan<double> b, ReadOnlySpan<double> x, Span<double> residual, Span<double> size) => _values.Residual(b, x, residual, size);
 
     private protected abstract DenseRoot NewRoot(int size);
 
@@ -226,8 +269,10 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         foreach (DenseRoot? known in _roots)
             if (known is not null && known.Serves(_isHeld))
                 return known;
-        DenseRoot root = _roots[_nextRoot] ??= NewRoot(Plan.RootUnknownCount);
-        _nextRoot = (_nextRoot + 1) % CachedRoots;
+        int at = Array.FindIndex(_roots, known => known is null || !known.IsValid);
+        if (at < 0)
+            (at, _nextRoot) = (_nextRoot, (_nextRoot + 1) % CachedRoots);
+        DenseRoot root = _roots[at] ??= NewRoot(Plan.RootUnknownCount);
         root.Factor(_fronts, Plan.InteriorUnknownCount, _isHeld, Halves);
         return root;
     }
@@ -265,6 +310,42 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
                 work[interior + i] = x[Plan.OldOf[interior + i]];
         root.Solve(_fronts, Halves, work + interior);
         _solver.Backward(work, path);
+    }
+
+    private void SolveLanes(DenseRoot root, ReadOnlySpan<double> b, Span<double> x, int count, FrontPath path)
+    {
+        int interior = Plan.InteriorUnknownCount;
+        double* work = _lanes!.Start;
+        foreach (int front in path.Fronts)
+            TakeLanes(Plan.First[front], Plan.First[front + 1], b, count);
+        TakeLanes(interior, Size, b, count);
+        _laneSolver!.Forward(work, path.Fronts, 0);
+        for (int lane = 0; lane < count; lane++)
+        {
+            for (int i = 0; i < _isHeld.Length; i++)
+                _x.Start[interior + i] = _isHeld[i] ? x[lane * Size + Plan.OldOf[interior + i]] : work[(nint)LaneSolver.Lanes * (interior + i) + lane];
+            root.Solve(_fronts, Halves, _x.Start + interior);
+            for (int i = interior; i < Size; i++)
+                work[(nint)LaneSolver.Lanes * i + lane] = _x.Start[i];
+        }
+        _laneSolver.Backward(work, path.Fronts);
+        foreach (int front in path.Fronts)
+            GiveLanes(Plan.First[front], Plan.First[front + 1], x, count);
+        GiveLanes(interior, Size, x, count);
+    }
+
+    private void TakeLanes(int first, int end, ReadOnlySpan<double> b, int count)
+    {
+        for (int i = first; i < end; i++)
+            for (int lane = 0; lane < LaneSolver.Lanes; lane++)
+                _lanes!.Start[(nint)LaneSolver.Lanes * i + lane] = lane < count ? b[lane * Size + Plan.OldOf[i]] : 0;
+    }
+
+    private void GiveLanes(int first, int end, Span<double> x, int count)
+    {
+        for (int i = first; i < end; i++)
+            for (int lane = 0; lane < count; lane++)
+                x[lane * Size + Plan.OldOf[i]] = _lanes!.Start[(nint)LaneSolver.Lanes * i + lane];
     }
 
     private void CopyPath(ReadOnlySpan<double> from, Span<double> to, FrontPath path)

@@ -16,9 +16,10 @@ internal sealed class SymmetricRoot : DenseRoot
     // Per pivot: 1 or 2 rows wide (the second row of a pair has 0), -1 where numerically zero.
     private readonly int[] _kind;
 
-    public SymmetricRoot(int size)
-        : base(size)
+    public SymmetricRoot(int size, int borderRows = 0)
+        : base(size, borderRows)
     {
+        size += borderRows;
         _order = new int[size];
         _permuted = new double[size];
         _first = new double[size];

@@ -3,8 +3,9 @@ namespace InterfaceFE.Sparse;
 /// <summary>Graph of the vertices that carry unknowns: two are neighbours when a slot has unknowns of both. Checks the pattern on the way.</summary>
 internal sealed class VertexGraph
 {
-    private VertexGraph(int[] firstUnknown, int[] weight, int[] slotVertexStart, int[] slotVertices)
+    private VertexGraph(int[] firstUnknown, int[] weight, bool[] isChangeable, int[] slotVertexStart, int[] slotVertices)
     {
+        IsChangeable = isChangeable;
         FirstUnknown = firstUnknown;
         Weight = weight;
         (Start, Neighbours) = Connect(weight.Length, slotVertexStart, slotVertices);
@@ -18,6 +19,9 @@ internal sealed class VertexGraph
 
     /// <summary>Number of unknowns of each vertex.</summary>
     public int[] Weight { get; }
+
+    /// <summary>Whether element matrices at a vertex are expected to change.</summary>
+    public bool[] IsChangeable { get; }
 
     /// <summary>Start of each vertex's neighbours; one more entry than vertices.</summary>
     public int[] Start { get; }
@@ -56,7 +60,7 @@ internal sealed class VertexGraph
             }
             start[slot + 1] = vertices.Count;
         }
-        return new VertexGraph(firstUnknown, weight, start, vertices.ToArray());
+        return new VertexGraph(firstUnknown, weight, pattern.IsChangeable, start, vertices.ToArray());
     }
 
     private static (int[] FirstUnknown, int[] Weight) UnknownsOfVertices(SlotPattern pattern)

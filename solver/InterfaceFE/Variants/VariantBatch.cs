@@ -96,7 +96,7 @@ public sealed class VariantBatch
     private VariantRow RunOne(string deck, string name, CancellationToken cancellation)
     {
         string folder = Path.Join(_into, name);
-        FileRunOutcome outcome = DeckFileRun.Execute(deck, folder, overwrite: true, line => _progress($"{name}: {line}"), cancellation);
+        FileRunOutcome outcome = DeckFileRun.Execute(deck, folder, overwrite: true, replayFile: null, line => _progress($"{name}: {line}"), cancellation);
         if (outcome.Result is null && outcome.Code == ExitCode.WrongDeckOrCall)
             KeepProblems(folder, outcome.Messages);
         VariantRow row = VariantRow.Of(name, outcome);

@@ -178,6 +178,7 @@ internal static class InventedRun
             UnstableDirections = 0,
             ChangedElements = 12,
             Reason = "converged",
+            Guess = 1,
         });
         FieldSnapshot fields = Fields(mesh, i, pulling ? 2 : 1, 3600.0 * i, temperature, (x, upper) => (0, (upper ? 0.5 : -0.5) * travel * Bent(x, tip)), tip);
         AddDamage(history, mesh, fields, i);

@@ -18,7 +18,7 @@ public class LargeStripTests
         factor.Solve(b, x, held);
         Close.To(0, Checks.BackwardError(model, b, x, held), absolute: 1e-14);
         Assert.Equal(new Inertia(model.Unknowns - held.Length, 0, 0), factor.Inertia(held));
-        // Measured 0.445; a poor order needs several times as many.
-        Assert.InRange(plan.Flops, 0.1e9, 0.55e9);
+        // Measured 0.423; a poor order needs several times as many.
+        Assert.InRange(plan.Flops, 0.1e9, 0.5e9);
     }
 }

@@ -32,7 +32,7 @@ public class SparsePlanTests
             model.Vertex(v, 0, 1);
         for (int v = 0; v + 1 < 1000; v++)
             model.Spring(v, v + 1, 1);
-        SparsePlan plan = SparsePlan.Analyze(model.Pattern, new PlanOptions(SmallFront: 1, ZeroShare: 0));
+        SparsePlan plan = SparsePlan.Analyze(model.Pattern, new PlanOptions(FrontCost: 0, EntryCost: 0));
         // Without fill 1999; nested dissection of a chain fills less than another 1000.
         Assert.InRange(plan.FactorNonZeros, 1999, 2999);
     }

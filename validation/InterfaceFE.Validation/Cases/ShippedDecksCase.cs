@@ -28,13 +28,8 @@ public sealed class ShippedDecksCase : ICase
     /// <inheritdoc/>
     public IEnumerable<CaseLine> Run(CaseContext context)
     {
-        string inputs = Path.Combine(context.Root, "inputs");
-        foreach (string path in Directory.EnumerateFiles(inputs, "*.yaml", SearchOption.AllDirectories).Order(StringComparer.Ordinal))
+        foreach ((string name, string path) in ShippedDecks.In(context.Root))
         {
-            string name = Path.GetRelativePath(inputs, path).Replace('\\', '/');
-            // A file of materials, a folder of variants or a record has no sequence of its own.
-            if (!File.ReadLines(path).Any(line => line.StartsWith("sequence:", StringComparison.Ordinal) || line.StartsWith("coupon:", StringComparison.Ordinal)))
-                continue;
             DeckReading reading = DeckReader.Read(path);
             if (reading.Deck is not { } deck)
             {
