@@ -41,6 +41,17 @@ public class BenchmarkModelTests
     }
 
     [Fact]
+    public void Hat_is_definite_with_its_grip_held()
+    {
+        BenchmarkModel model = new(MeshCatalogue.Hat("hat", 4));
+        WorkingFactor factor = new(SparsePlan.Analyze(model.Pattern));
+        for (int slot = 0; slot < model.Matrices.Length; slot++)
+            factor.Replace(slot, model.Matrices[slot]);
+        Assert.Equal(FactorStatus.Done, factor.Factor().Status);
+        Assert.Equal(0, factor.Inertia(model.Held).Negative);
+    }
+
+    [Fact]
     public void Upper_triangle_has_each_entry_once_with_rising_rows()
     {
         AssembledMatrix matrix = AssembledMatrix.From(new BenchmarkModel(MeshCatalogue.Hat("hat", 1)));
@@ -66,6 +77,23 @@ public class BenchmarkModelTests
     }
 
     [Theory]
+    [InlineData(4)]
+    [InlineData(8)]
+    public void Layer_tangents_are_symmetric_at_each_level(int nodesPerSolid)
+    {
+        BenchmarkMesh mesh = MeshCatalogue.Strip("strip", nodesPerSolid, 20, 2);
+        ElementMatrices matrices = new(mesh);
+        int size = 4 * mesh.NodesPerFace;
+        for (int level = 0; level < ElementMatrices.OpenLevel; level++)
+        {
+            double[] tangent = matrices.Layer(0, level);
+            for (int r = 0; r < size; r++)
+                for (int c = 0; c < r; c++)
+                    Close.To(tangent[r * size + c], tangent[c * size + r], absolute: 1e-12 * Math.Abs(tangent[0]));
+        }
+    }
+
+    [Theory]
     [InlineData(1)]
     [InlineData(10)]
     [InlineData(100)]
@@ -80,6 +108,26 @@ public class BenchmarkModelTests
                 model.LayerSlot(joint.FirstElement + joint.FirstBonded) <= change.Slots[0] && change.Slots[^1] < model.LayerSlot(joint.FirstElement + joint.Count));
             Assert.All(change.Matrices, set => Assert.Equal(count, set.Length));
         }
+    }
+
+    [Theory]
+    [InlineData(4, 1)]
+    [InlineData(4, 50)]
+    [InlineData(8, 10)]
+    public void Each_change_gives_each_element_other_numbers_than_it_had(int nodesPerSolid, int count)
+    {
+        BenchmarkModel model = new(MeshCatalogue.Strip("strip", nodesPerSolid, 100, 2));
+        foreach (ElementChange change in (ElementChange[])[.. ElementChange.OfLayer(model, count, 3), ElementChange.OfColumns(model, 5, 55)])
+            for (int i = 0; i < change.Slots.Length; i++)
+            {
+                double[] had = model.Matrices[change.Slots[i]];
+                for (int set = 0; set <= change.Matrices.Length; set++)
+                {
+                    double[] gets = change.Matrices[set % change.Matrices.Length][i];
+                    Assert.True(gets.Zip(had, (a, b) => Math.Abs(a - b)).Max() > 1e-3 * had.Max(Math.Abs));
+                    had = gets;
+                }
+            }
     }
 
     [Fact]

@@ -18,7 +18,7 @@ public static class TimesCommand
     private static readonly TimeSpan Limit = TimeSpan.FromMinutes(20);
 
     /// <summary>Rounds of a run.</summary>
-    public static int Rounds(bool isQuick) => isQuick ? 3 : 7;
+    public static int Rounds(bool isQuick) => isQuick ? 3 : 5;
 
     /// <summary>Measures and prints.</summary>
     public static int Run(CatalogueEntry entry, bool isQuick, TextWriter output)

@@ -64,5 +64,6 @@ public sealed record ElementChange(int[] Slots, double[][][] Matrices)
         bool IsWithin(double x) => Math.Abs(x - middle) < 0.5 * width;
     }
 
-    private static int Level(int element, int count, int set) => 1 + (int)((ElementMatrices.OpenLevel - 2) * (element + (double)set / Sets) / count);
+    /// <summary>Levels fall through the zone; each set starts a third of the zone further on, so that every element gets numbers well away from those it had.</summary>
+    private static int Level(int element, int count, int set) => 1 + (int)((ElementMatrices.OpenLevel - 2) * (((double)element / count + (double)set / Sets) % 1));
 }

@@ -5,13 +5,13 @@ using InterfaceFE.Mechanics.Materials;
 namespace InterfaceFE.Benchmarks.Models;
 
 /// <summary>
-/// Element matrices of a benchmark mesh by the library's own elements and laws: aluminium arms, an adhesive layer on a bilinear law in peel. Elements of one shape share
+/// Element matrices of a benchmark mesh by the library's own elements and laws: aluminium arms, an adhesive layer that softens exponentially in peel, so that each opening has a tangent of its own. Elements of one shape share
 /// one matrix. Not safe for use by several threads.
 /// </summary>
 /// <param name="mesh">The mesh.</param>
 public sealed class ElementMatrices(BenchmarkMesh mesh)
 {
-    /// <summary>Levels of a layer element: 0 is the virgin one, the last but one is nearly separated, this one stands open and carries nothing.</summary>
+    /// <summary>Levels of a layer element: 0 is the virgin one, then come softening ones, and this one stands open and carries nothing.</summary>
     public const int OpenLevel = 64;
 
     /// <summary>States of a solid element: 0 elastic, then yielding ones.</summary>
@@ -20,12 +20,14 @@ public sealed class ElementMatrices(BenchmarkMesh mesh)
     // Aluminium; width of a lap coupon. Numbers invented within the usual range.
     private const double Young = 70_000, Poisson = 0.33, Width = 25;
 
-    // An epoxy layer of 0.2 mm: stiffness [MPa/mm], strength [MPa] and toughness [N/mm] in peel and shear. Invented within the usual range.
-    private const double PeelStiffness = 1e4, PeelStrength = 30, PeelToughness = 1, ShearStiffness = 4e3, ShearStrength = 25, ShearToughness = 2;
+    // An epoxy layer of 0.2 mm: stiffness [MPa/mm], strength [MPa] and toughness [N/mm] in peel and shear, final opening [mm]. Invented within the usual range.
+    private const double PeelStiffness = 1e4, PeelStrength = 30, PeelToughness = 1, PeelEnd = 0.12, ShearStiffness = 4e3, ShearStrength = 25, ShearToughness = 2;
+
+    private const double SofteningShare = 0.5;
 
     private const double PartsPerMillimetre = 1e6;
 
-    private static readonly BilinearCurve Peel = new(PeelStiffness, PeelStrength, PeelToughness);
+    private static readonly ExponentialCurve Peel = new(PeelStiffness, PeelStrength, PeelToughness, PeelEnd);
     private static readonly IndependentModesLaw Law = new(Peel, new BilinearCurve(ShearStiffness, ShearStrength, ShearToughness), PeelStiffness);
 
     // Flow leaves the resistance to change of volume and little else: a low modulus near incompressibility stands for a yielding metal's tangent.
@@ -63,7 +65,7 @@ public sealed class ElementMatrices(BenchmarkMesh mesh)
 
     /// <summary>Tangent of a layer element [N/mm], row-major; not to be changed.</summary>
     /// <param name="element">Element.</param>
-    /// <param name="level">0 virgin; up to <see cref="OpenLevel"/> the share of the softening branch that the opening has run through.</param>
+    /// <param name="level">0 virgin; up to <see cref="OpenLevel"/> the opening has run through the first half of the softening branch, where tangents are symmetric; <see cref="OpenLevel"/> stands open.</param>
     public double[] Layer(int element, int level)
     {
         double[] coordinates = Coordinates(mesh.LayerNodes(element));
@@ -74,7 +76,7 @@ public sealed class ElementMatrices(BenchmarkMesh mesh)
         var tangent = new double[size * size];
         if (level < OpenLevel)
         {
-            double opening = level == 0 ? 0 : Peel.ElasticLimit + (Peel.FinalSeparation - Peel.ElasticLimit) * level / OpenLevel;
+            double opening = level == 0 ? 0 : Peel.ElasticLimit + SofteningShare * (Peel.FinalSeparation - Peel.ElasticLimit) * level / OpenLevel;
             var displacements = new double[size];
             for (int i = size / 2 + 1; i < size; i += 2)
                 displacements[i] = opening;
