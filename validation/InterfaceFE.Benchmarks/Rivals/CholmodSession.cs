@@ -117,7 +117,14 @@ public sealed class CholmodSession : IDisposable
     /// <inheritdoc/>
     public void Dispose()
     {
-        _program.StandardInput.Close();
+        try
+        {
+            _program.StandardInput.Close();
+        }
+        catch (IOException)
+        {
+            // It has ended by itself.
+        }
         if (!_program.WaitForExit(5000))
             _program.Kill();
         _program.Dispose();
