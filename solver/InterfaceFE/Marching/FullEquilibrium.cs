@@ -5,11 +5,9 @@ namespace InterfaceFE.Marching;
 
 /// <summary>
 /// The plain form of equilibrium: every element is evaluated at every evaluation, in slot order. It is the measure for faster forms.
-/// Tangents go to a symmetric factor; once a slot's tangent is skew, solves use a general factor and the symmetric one keeps the symmetric parts for stability counts.
 /// </summary>
 public sealed class FullEquilibrium : IEquilibrium
 {
-    private const double SkewTolerance = 1e-12;
     private const double Rounding = 50.0 / (1L << 52);
 
     /// <summary>Share of the largest reference of the run below which the reference does not fall: after full unloading only rounding is left to measure by.</summary>
@@ -17,24 +15,17 @@ public sealed class FullEquilibrium : IEquilibrium
 
     private readonly SpecimenModel _model;
     private readonly ElementTable _table;
-    private readonly SparsePlan _plan;
-    private readonly WorkingFactor _symmetric;
-    private GeneralFactor? _general;
+    private readonly TangentFactor _factor;
     private readonly StateStore _state;
     private readonly double[] _u, _accepted, _internal, _layerForce, _dissipationGradient, _magnitudes, _temperatureRate, _external, _externalRate, _held, _heldRate;
-    private readonly double[] _rightSide, _solution, _tangentSolution, _gradient, _base, _noMagnitudes = [];
+    private readonly double[] _rightSide, _solution, _progressRate, _gradient, _base, _noMagnitudes = [];
     private readonly BondDamage _bonds;
-    private readonly double[][] _slotTangents;
-    private readonly bool[] _skew;
     private readonly bool[] _isHeld;
     private readonly double[] _native, _force, _rate, _dissipation, _tangent, _work, _transformed;
     private int[] _heldUnknowns = [];
     private double[] _heldStart = [], _heldEnd = [];
     private readonly double[] _externalStart, _externalEnd;
     private double _temperatureStart, _temperatureEnd, _baseProgress, _correctionProgress, _reference, _largestReference;
-    private int _skewCount;
-    private bool _factored, _generalFactored;
-    private FactorOutcome _outcome;
     private LoadStage? _stage;
 
     /// <summary>Makes the equilibrium of a model at its stress-free state, with the constant tangents in place.</summary>
@@ -42,8 +33,7 @@ public sealed class FullEquilibrium : IEquilibrium
     {
         _model = model;
         _table = new ElementTable(model);
-        _plan = SparsePlan.Analyze(_table.Pattern);
-        _symmetric = new WorkingFactor(_plan);
+        _factor = new TangentFactor(_table.Pattern, _table.LargestSlot);
         _state = new StateStore(_table.Blocks);
         int n = model.Unknowns.Count;
         _u = new double[n];
@@ -61,13 +51,11 @@ public sealed class FullEquilibrium : IEquilibrium
         _heldRate = new double[n];
         _rightSide = new double[n];
         _solution = new double[n];
-        _tangentSolution = new double[n];
+        _progressRate = new double[n];
         _gradient = new double[n];
         _base = new double[n];
         _isHeld = new bool[n];
         _bonds = new BondDamage(model);
-        _slotTangents = new double[_table.SlotCount][];
-        _skew = new bool[_table.SlotCount];
         int native = _table.LargestNative, slot = _table.LargestSlot;
         _native = new double[native];
         _force = new double[native];
@@ -86,7 +74,7 @@ public sealed class FullEquilibrium : IEquilibrium
     public BondDamage Bonds => _bonds;
 
     /// <summary>The plan of the factorisation, for its counts.</summary>
-    public SparsePlan Plan => _plan;
+    public SparsePlan Plan => _factor.Plan;
 
     /// <inheritdoc/>
     public double Progress { get; set; }
@@ -141,19 +129,19 @@ public sealed class FullEquilibrium : IEquilibrium
     public int GrowingElements { get; private set; }
 
     /// <summary>Number of factorisations so far.</summary>
-    public long Factorisations { get; private set; }
+    public long Factorisations => _factor.Factorisations;
 
     /// <summary>Number of solves so far, each with its refinement.</summary>
     public long Solves { get; private set; }
 
     /// <summary>Number of element tangents so far that differed from those in the factor, the first ones not counted.</summary>
-    public long ChangedTangents { get; private set; }
+    public long ChangedTangents => _factor.Changed;
 
     /// <summary>Time by phase.</summary>
     public PhaseClock Clock { get; init; } = new();
 
     /// <summary>Whether the latest factorisation met numbers that are not finite.</summary>
-    public bool FactorOverflows => _outcome.Status == FactorStatus.NotFinite;
+    public bool FactorOverflows => _factor.Outcome.Status == FactorStatus.NotFinite;
 
     /// <summary>Unknowns held in the current stage.</summary>
     public ReadOnlySpan<int> HeldUnknowns => _heldUnknowns;
@@ -236,7 +224,7 @@ public sealed class FullEquilibrium : IEquilibrium
             {
                 int slot = _table.Slot(block, e);
                 Wanted own = wanted;
-                if (elements.Kind == TangentKind.Constant && _slotTangents[slot] is not null)
+                if (elements.Kind == TangentKind.Constant && _factor.Has(slot))
                     own &= ~Wanted.Tangent;
                 _table.Gather(slot, _u, native);
                 ElementAnswer answer = elements.Evaluate(e, at, native, _state.Accepted(block, e), _state.Tentative(block, e), own, buffers);
@@ -248,7 +236,7 @@ public sealed class FullEquilibrium : IEquilibrium
                 if ((own & Wanted.Tangent) != 0)
                 {
                     finite &= IsFinite(buffers.Tangent);
-                    if (Store(slot, _table.TransformTangent(slot, buffers.Tangent, _work, _transformed)))
+                    if (_factor.Store(slot, _table.TransformTangent(slot, buffers.Tangent, _work, _transformed)))
                         changed++;
                 }
                 byTemperature += answer.StoredByTemperature;
@@ -330,28 +318,8 @@ public sealed class FullEquilibrium : IEquilibrium
             _rightSide[i] = _external[i] - _internal[i];
             _solution[i] = _isHeld[i] ? _held[i] - _u[i] : 0;
         }
-        SolveWith(_rightSide, _solution);
         double equation = control.Equation(this, _gradient, out double byProgress);
-        _correctionProgress = 0;
-        if (!control.FixesProgress)
-        {
-            double temperatureRate = _temperatureEnd - _temperatureStart;
-            for (int i = 0; i < _rightSide.Length; i++)
-            {
-                _rightSide[i] = _externalRate[i] - _temperatureRate[i] * temperatureRate;
-                _tangentSolution[i] = _isHeld[i] ? _heldRate[i] : 0;
-            }
-            SolveWith(_rightSide, _tangentSolution);
-            double along = byProgress, rest = equation;
-            for (int i = 0; i < _gradient.Length; i++)
-            {
-                along += _gradient[i] * _tangentSolution[i];
-                rest += _gradient[i] * _solution[i];
-            }
-            _correctionProgress = -rest / along;
-            for (int i = 0; i < _solution.Length; i++)
-                _solution[i] += _correctionProgress * _tangentSolution[i];
-        }
+        SolveWith(control, equation, byProgress);
         double largest = 0;
         bool finite = double.IsFinite(_correctionProgress);
         foreach (double value in _solution)
@@ -361,7 +329,7 @@ public sealed class FullEquilibrium : IEquilibrium
         }
         Array.Copy(_u, _base, _u.Length);
         _baseProgress = Progress;
-        int singular = _outcome.Status == FactorStatus.Done ? -1 : _outcome.Unknown;
+        int singular = _factor.Outcome.Status == FactorStatus.Done ? -1 : _factor.Outcome.Unknown;
         return new Correction(largest, _correctionProgress, Math.Abs(equation) / control.Stride, singular, finite);
     }
 
@@ -418,11 +386,14 @@ public sealed class FullEquilibrium : IEquilibrium
         FactorSymmetric();
         if (FactorOverflows)
             return (0, -1);
-        Inertia inertia = _symmetric.Inertia(_heldUnknowns);
-        if (_outcome.Unknown >= 0)
-            return (inertia.Negative, _outcome.Unknown);
+        Inertia inertia = _factor.Inertia(_heldUnknowns);
+        if (_factor.Outcome.Unknown >= 0)
+            return (inertia.Negative, _factor.Outcome.Unknown);
         return (inertia.Negative, inertia.Zero == 0 ? -1 : LooseGrip(inertia.Zero));
     }
+
+    /// <summary>Estimate of the condition number of the latest tangent that <see cref="Stability"/> factored: it costs as many digits of a solution as it has.</summary>
+    public double Condition() => _factor.Condition(_heldUnknowns);
 
     /// <summary>
     /// A movement of all unknowns that nothing resists, of any size, by the latest factored tangent. A grip's loose unknown is held at 1 without any force: all else follows it. Elsewhere a force
@@ -435,13 +406,13 @@ public sealed class FullEquilibrium : IEquilibrium
         Array.Clear(_rightSide);
         Array.Clear(_solution);
         (isGrip ? _solution : _rightSide)[unknown] = 1;
-        _symmetric.Solve(_rightSide, _solution, isGrip ? [.. _heldUnknowns, unknown] : _heldUnknowns);
+        _factor.SolveSymmetric(_rightSide, _solution, isGrip ? [.. _heldUnknowns, unknown] : _heldUnknowns);
         double[] movement = [.. _solution];
         if (isGrip)
             return movement;
-        _symmetric.Multiply(movement, _rightSide);
+        _factor.MultiplySymmetric(movement, _rightSide);
         Array.Clear(_solution);
-        _symmetric.Solve(_rightSide, _solution, _heldUnknowns);
+        _factor.SolveSymmetric(_rightSide, _solution, _heldUnknowns);
         for (int i = 0; i < movement.Length; i++)
             movement[i] -= _solution[i];
         return movement;
@@ -459,7 +430,7 @@ public sealed class FullEquilibrium : IEquilibrium
                 if (component == 2 && !map.Bodies[b].Rigid)
                     continue;
                 held[^1] = (map.Bodies[b].Rigid ? map.OfBody(b) : map.OfNode(map.Bodies[b].Nodes[0])) + component;
-                if (!_isHeld[held[^1]] && _symmetric.Inertia(held).Zero < zeros)
+                if (!_isHeld[held[^1]] && _factor.Inertia(held).Zero < zeros)
                     return held[^1];
             }
         }
@@ -479,7 +450,7 @@ public sealed class FullEquilibrium : IEquilibrium
         for (int slot = 0; slot < _table.SlotCount; slot++)
         {
             ReadOnlySpan<int> ids = _table.Pattern.Unknowns(slot);
-            double[] k = _slotTangents[slot];
+            ReadOnlySpan<double> k = _factor.Tangent(slot);
             for (int i = 0; i < ids.Length; i++)
             {
                 double sum = 0;
@@ -500,92 +471,32 @@ public sealed class FullEquilibrium : IEquilibrium
         return sum == 0;
     }
 
-    private bool Store(int slot, ReadOnlySpan<double> tangent)
+    /// <summary>Solves for the correction that the right side and held values ask for, with that of the progress where the control does not fix it.</summary>
+    private void SolveWith(IControl control, double equation, double byProgress)
     {
-        double[]? stored = _slotTangents[slot];
-        if (stored is not null && tangent.SequenceEqual(stored))
-            return false;
-        ChangedTangents += stored is null ? 0 : 1;
-        stored ??= _slotTangents[slot] = new double[tangent.Length];
-        tangent.CopyTo(stored);
-        int n = _table.Pattern.Unknowns(slot).Length;
-        bool skew = IsSkew(stored, n);
-        if (skew != _skew[slot])
+        using PhaseClock.Stretch time = Clock.In(Phase.Solves);
+        Solves++;
+        _correctionProgress = 0;
+        if (control.FixesProgress)
         {
-            _skew[slot] = skew;
-            _skewCount += skew ? 1 : -1;
+            _factor.Solve(_rightSide, _solution, _heldUnknowns);
+            return;
         }
-        if (skew && _general is null)
-            StartGeneral();
-        _general?.Replace(slot, stored);
-        if (skew)
-        {
-            Span<double> symmetric = _transformed.AsSpan(0, n * n);
-            for (int i = 0; i < n; i++)
-                for (int j = 0; j < n; j++)
-                    symmetric[i * n + j] = 0.5 * (stored[i * n + j] + stored[j * n + i]);
-            _symmetric.Replace(slot, symmetric);
-        }
-        else
-            _symmetric.Replace(slot, stored);
-        _factored = _generalFactored = false;
-        return true;
-    }
-
-    private void StartGeneral()
-    {
-        _general = new GeneralFactor(_plan);
-        for (int slot = 0; slot < _slotTangents.Length; slot++)
-            if (_slotTangents[slot] is not null)
-                _general.Replace(slot, _slotTangents[slot]);
-    }
-
-    private static bool IsSkew(double[] tangent, int n)
-    {
-        double scale = 0, difference = 0;
-        for (int i = 0; i < n; i++)
-        {
-            for (int j = 0; j < i; j++)
-            {
-                scale = Math.Max(scale, Math.Abs(tangent[i * n + j]));
-                difference = Math.Max(difference, Math.Abs(tangent[i * n + j] - tangent[j * n + i]));
-            }
-        }
-        return difference > SkewTolerance * scale;
+        double temperatureRate = _temperatureEnd - _temperatureStart;
+        for (int i = 0; i < _progressRate.Length; i++)
+            _progressRate[i] = _externalRate[i] - _temperatureRate[i] * temperatureRate;
+        _correctionProgress = _factor.SolveControlled(_rightSide, _progressRate, _gradient, byProgress, -equation, _solution, _heldUnknowns, _heldRate);
     }
 
     private void FactorIfNeeded()
     {
-        if (_skewCount == 0)
-        {
-            FactorSymmetric();
-            return;
-        }
-        if (_generalFactored)
-            return;
         using PhaseClock.Stretch time = Clock.In(Phase.Factorisation);
-        _outcome = _general!.Factor();
-        _generalFactored = true;
-        Factorisations++;
+        _factor.Factor();
     }
 
     private void FactorSymmetric()
     {
-        if (_factored)
-            return;
         using PhaseClock.Stretch time = Clock.In(Phase.Factorisation);
-        _outcome = _symmetric.Factor();
-        _factored = true;
-        Factorisations++;
-    }
-
-    private void SolveWith(double[] rightSide, double[] solution)
-    {
-        using PhaseClock.Stretch time = Clock.In(Phase.Solves);
-        Solves++;
-        if (_skewCount == 0)
-            _symmetric.Solve(rightSide, solution, _heldUnknowns);
-        else
-            _general!.Solve(rightSide, solution, _heldUnknowns);
+        _factor.FactorSymmetric();
     }
 }

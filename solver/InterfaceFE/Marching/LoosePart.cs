@@ -4,7 +4,7 @@ using InterfaceFE.Model;
 namespace InterfaceFE.Marching;
 
 /// <summary>Says in an engineer's words what a numerically zero pivot means: which part can still move, where, in which direction, and the usual causes.</summary>
-public static class LoosePart
+internal static class LoosePart
 {
     /// <summary>Share of the largest movement from which a part counts as moving.</summary>
     private const double Moving = 1e-2;
@@ -18,7 +18,6 @@ public static class LoosePart
     /// <param name="unknown">The unknown that stability found loose.</param>
     public static string Describe(FullEquilibrium equilibrium, int unknown)
     {
-        ArgumentNullException.ThrowIfNull(equilibrium);
         SpecimenModel model = equilibrium.Model;
         double[] movement = equilibrium.FreeMovement(unknown);
         double[] reach = [.. model.Mesh.Adherends.Select(a => Furthest(model, a, movement).Size)];

@@ -36,6 +36,9 @@ public sealed class CheckReport
     /// <summary>Estimated memory of the fields of one point [MB].</summary>
     public required double FieldMegabytes { get; init; }
 
+    /// <summary>Estimated condition number of the stiffness at the start, scaled; null where no stage marches.</summary>
+    public required double? Condition { get; init; }
+
     /// <summary>The deck as resolved, YAML.</summary>
     public required string ResolvedDeck { get; init; }
 
@@ -49,6 +52,8 @@ public sealed class CheckReport
         Lines("mesh", Mesh);
         Line("size", string.Join(", ", Counts.Select(count => string.Create(CultureInfo.InvariantCulture, $"{count.Key} {count.Value}"))));
         Line("memory", string.Create(CultureInfo.InvariantCulture, $"about {MemoryMegabytes:0} MB, and {FieldMegabytes:0.###} MB for each point whose fields are kept"));
+        if (Condition is { } condition)
+            Line("rounding", string.Create(CultureInfo.InvariantCulture, $"displacements keep about {Digits(condition)} of 16 digits (condition of the stiffness about {condition:0.0e0})"));
         Lines("advice", Advice);
         Lines("warning", Warnings);
         Line("outcome", "the deck can be run");
@@ -81,6 +86,8 @@ public sealed class CheckReport
             json.WriteEndObject();
             json.WriteNumber("memory [MB]", MemoryMegabytes);
             json.WriteNumber("memory of fields of a point [MB]", FieldMegabytes);
+            if (Condition is { } condition)
+                json.WriteNumber("condition of the stiffness", condition);
             Strings(json, "advice", Advice);
             Strings(json, "warnings", Warnings);
             if (withDeck)
@@ -89,6 +96,8 @@ public sealed class CheckReport
         }
         to.Write("\n"u8);
     }
+
+    private static int Digits(double condition) => (int)Math.Clamp(Math.Floor(16 - Math.Log10(condition)), 0, 16);
 
     private static void Strings(Utf8JsonWriter json, string name, IReadOnlyList<string> lines)
     {

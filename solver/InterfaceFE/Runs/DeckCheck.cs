@@ -68,6 +68,7 @@ public static class DeckCheck
             Advice = OutOfPlaneAdvice.For(deck, meshing.Mesh),
             Warnings = [.. reading.Warnings.Select(w => w.ToString()), .. meshing.Warnings],
             MemoryMegabytes = Math.Ceiling(ProgramMegabytes + (BytesPerFactorEntry * equilibrium.Plan.FactorNonZeros + BytesPerElement * (elements + layerElements)) / Megabyte),
+            Condition = model.Stages.Any(s => s.Marches) ? equilibrium.Condition() : null,
             FieldMegabytes = Math.Round((8.0 * 8 * meshing.Mesh.NodeCount + 8.0 * 6 * 3 * layerElements) / Megabyte, 3),
             ResolvedDeck = DeckWriter.Write(deck),
         });

@@ -58,6 +58,19 @@ internal sealed unsafe class BorderVectors
         return Count - 1;
     }
 
+    /// <summary>Adds a vector with a value for each unknown, zeros left out, and returns its number.</summary>
+    public int Add(ReadOnlySpan<double> values)
+    {
+        for (int i = 0; i < values.Length; i++)
+            if (values[i] != 0)
+            {
+                _unknowns.Add(i);
+                _values.Add(values[i]);
+            }
+        _start.Add(_unknowns.Count);
+        return Count - 1;
+    }
+
     /// <summary>Carries all vectors forward and makes the products V'ᵀ D⁻¹ V' over the unknowns outside the root.</summary>
     public void Forward()
     {

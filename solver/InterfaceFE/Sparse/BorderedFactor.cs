@@ -57,8 +57,8 @@ public sealed unsafe class BorderedFactor
     /// <summary>Signs of the eigenvalues of the whole where the border is symmetric; else of the pivots, whose product has the sign of the determinant.</summary>
     public Inertia Inertia { get; private set; }
 
-    /// <summary>Largest residual of the last solve over the largest sum of magnitudes of its kind.</summary>
-    public double BackwardError { get; private set; }
+    /// <summary>Largest componentwise backward error of the last solve; NaN where it was not refined, since then it was not measured.</summary>
+    public double BackwardError { get; private set; } = double.NaN;
 
     /// <summary>Takes all rows and vectors away.</summary>
     public void Clear()
@@ -80,6 +80,14 @@ public sealed unsafe class BorderedFactor
             if ((uint)unknown >= (uint)_plan.UnknownCount)
                 throw new ArgumentOutOfRangeException(nameof(unknowns), unknown, $"There are {_plan.UnknownCount} unknowns.");
         return _vectors.Add(unknowns, values);
+    }
+
+    /// <summary>Adds a vector with a value for each unknown, zeros left out; returns its number.</summary>
+    public int AddVector(ReadOnlySpan<double> values)
+    {
+        if (values.Length != _plan.UnknownCount)
+            throw new ArgumentException($"{values.Length} values for {_plan.UnknownCount} unknowns.", nameof(values));
+        return _vectors.Add(values);
     }
 
     /// <summary>Adds a row and a column of zeros with the given corner; returns its number.</summary>
@@ -144,10 +152,7 @@ public sealed unsafe class BorderedFactor
     /// <exception cref="InvalidOperationException">The factor is not sound.</exception>
     public void Factor(ReadOnlySpan<int> heldRootUnknowns)
     {
-        Inertia held = _factor.Inertia(heldRootUnknowns);
-        Array.Clear(_isHeld);
-        foreach (int unknown in heldRootUnknowns)
-            _isHeld[_plan.NewOf[unknown] - _plan.InteriorUnknownCount] = true;
+        _factor.MarkHeld(heldRootUnknowns, _isHeld);
         _vectors.Forward();
         bool isSymmetric = IsSymmetric();
         FillBlock(isSymmetric);
@@ -158,7 +163,7 @@ public sealed unsafe class BorderedFactor
         Inertia = new Inertia(tally.Positive + own.Positive, tally.Negative + own.Negative, tally.Zero + own.Zero);
     }
 
-    /// <summary>Solves for both; refined with the true matrix.</summary>
+    /// <summary>Solves for both; refined with the true matrix where the factor's own solves are.</summary>
     /// <param name="b">Right side of the unknowns; entries of held ones are ignored.</param>
     /// <param name="g">Right side of the border.</param>
     /// <param name="x">On entry values of held root unknowns, to which held moves are added; on return all values.</param>
@@ -170,6 +175,9 @@ public sealed unsafe class BorderedFactor
             throw new InvalidOperationException("The border has not been factored.");
         MakeRoom();
         SolveOnce(b, g, x, y);
+        BackwardError = double.NaN;
+        if (!_factor.IsRefined)
+            return;
         BackwardError = Measure(b, g, x, y);
         for (int step = 0; step < MostRefinements && BackwardError > Target; step++)
         {

@@ -14,15 +14,15 @@ public static unsafe class DenseKernels
     /// <summary>Width of the vectors in use, in bits: 512, 256, or 64 for the portable form.</summary>
     public static int WidthBits => Wide ? 512 : Middle ? 256 : 64;
 
-    /// <summary>c (rows×8) -= a (rows×depth) · packed (depth×8, row after row). Rows padded.</summary>
-    internal static void SubtractProduct(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, nint rows)
+    /// <summary>The first columns, at most 8, of c (rows×8) -= a (rows×depth) · packed (depth×8, row after row). Rows padded; the other columns of c are read, not written.</summary>
+    internal static void SubtractProduct(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, nint rows, int columns)
     {
         if (Wide)
-            DenseKernels512.SubtractProduct(a, aStride, packed, depth, c, cStride, rows);
+            DenseKernels512.SubtractProduct(a, aStride, packed, depth, c, cStride, rows, columns);
         else if (Middle)
-            DenseKernels256.SubtractProduct(a, aStride, packed, depth, c, cStride, rows);
+            DenseKernels256.SubtractProduct(a, aStride, packed, depth, c, cStride, rows, columns);
         else
-            PortableKernels.SubtractProduct(a, aStride, packed, depth, c, cStride, rows);
+            PortableKernels.SubtractProduct(a, aStride, packed, depth, c, cStride, rows, columns);
     }
 
     /// <summary>packed[8k + j] = source[k·stride + j] · factor[k] for j below 8.</summary>

@@ -6,12 +6,13 @@ namespace InterfaceFE.Sparse;
 /// <summary>The kernels for AVX2 with fused multiply-add: 8×4 register blocks, unrolled by hand because the compiler keeps only named locals in registers. See <see cref="DenseKernels"/> for what each does.</summary>
 internal static unsafe class DenseKernels256
 {
-    public static void SubtractProduct(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, nint rows)
+    public static void SubtractProduct(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, nint rows, int columns)
     {
         for (nint i = 0; i < rows; i += 8)
         {
-            Subtract8By4(a + i, aStride, packed, depth, c + i, cStride);
-            Subtract8By4(a + i, aStride, packed + 4, depth, c + 4 * cStride + i, cStride);
+            Subtract8By4(a + i, aStride, packed, depth, c + i, cStride, columns);
+            if (columns > 4)
+                Subtract8By4(a + i, aStride, packed + 4, depth, c + 4 * cStride + i, cStride, columns - 4);
         }
     }
 
@@ -167,7 +168,7 @@ internal static unsafe class DenseKernels256
         }
     }
 
-    private static void Subtract8By4(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride)
+    private static void Subtract8By4(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, int columns)
     {
         Vector256<double> c00 = Vector256.Load(c);
         Vector256<double> c10 = Vector256.Load(c + 4);
@@ -196,10 +197,16 @@ internal static unsafe class DenseKernels256
         }
         c00.Store(c);
         c10.Store(c + 4);
+        if (columns == 1)
+            return;
         c01.Store(c + cStride);
         c11.Store(c + cStride + 4);
+        if (columns == 2)
+            return;
         c02.Store(c + 2 * cStride);
         c12.Store(c + 2 * cStride + 4);
+        if (columns == 3)
+            return;
         c03.Store(c + 3 * cStride);
         c13.Store(c + 3 * cStride + 4);
     }

@@ -6,13 +6,13 @@ namespace InterfaceFE.Sparse;
 /// <summary>The kernels for AVX-512: 16×8 and 8×8 register blocks, unrolled by hand because the compiler keeps only named locals in registers. See <see cref="DenseKernels"/> for what each does.</summary>
 internal static unsafe class DenseKernels512
 {
-    public static void SubtractProduct(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, nint rows)
+    public static void SubtractProduct(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, nint rows, int columns)
     {
         nint i = 0;
         for (; i + 16 <= rows; i += 16)
-            Subtract16By8(a + i, aStride, packed, depth, c + i, cStride);
+            Subtract16By8(a + i, aStride, packed, depth, c + i, cStride, columns);
         if (i < rows)
-            Subtract8By8(a + i, aStride, packed, depth, c + i, cStride);
+            Subtract8By8(a + i, aStride, packed, depth, c + i, cStride, columns);
     }
 
     public static void Pack(double* source, nint stride, double* factor, nint depth, double* packed)
@@ -168,7 +168,7 @@ internal static unsafe class DenseKernels512
         }
     }
 
-    private static void Subtract16By8(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride)
+    private static void Subtract16By8(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, int columns)
     {
         Vector512<double> c00 = Vector512.Load(c);
         Vector512<double> c10 = Vector512.Load(c + 8);
@@ -217,23 +217,37 @@ internal static unsafe class DenseKernels512
         }
         c00.Store(c);
         c10.Store(c + 8);
+        if (columns == 1)
+            return;
         c01.Store(c + cStride);
         c11.Store(c + cStride + 8);
+        if (columns == 2)
+            return;
         c02.Store(c + 2 * cStride);
         c12.Store(c + 2 * cStride + 8);
+        if (columns == 3)
+            return;
         c03.Store(c + 3 * cStride);
         c13.Store(c + 3 * cStride + 8);
+        if (columns == 4)
+            return;
         c04.Store(c + 4 * cStride);
         c14.Store(c + 4 * cStride + 8);
+        if (columns == 5)
+            return;
         c05.Store(c + 5 * cStride);
         c15.Store(c + 5 * cStride + 8);
+        if (columns == 6)
+            return;
         c06.Store(c + 6 * cStride);
         c16.Store(c + 6 * cStride + 8);
+        if (columns == 7)
+            return;
         c07.Store(c + 7 * cStride);
         c17.Store(c + 7 * cStride + 8);
     }
 
-    private static void Subtract8By8(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride)
+    private static void Subtract8By8(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, int columns)
     {
         Vector512<double> c00 = Vector512.Load(c);
         Vector512<double> c01 = Vector512.Load(c + cStride);
@@ -264,12 +278,26 @@ internal static unsafe class DenseKernels512
             c07 = Avx512F.FusedMultiplyAddNegated(a0, b, c07);
         }
         c00.Store(c);
+        if (columns == 1)
+            return;
         c01.Store(c + cStride);
+        if (columns == 2)
+            return;
         c02.Store(c + 2 * cStride);
+        if (columns == 3)
+            return;
         c03.Store(c + 3 * cStride);
+        if (columns == 4)
+            return;
         c04.Store(c + 4 * cStride);
+        if (columns == 5)
+            return;
         c05.Store(c + 5 * cStride);
+        if (columns == 6)
+            return;
         c06.Store(c + 6 * cStride);
+        if (columns == 7)
+            return;
         c07.Store(c + 7 * cStride);
     }
 

@@ -27,7 +27,8 @@ internal sealed unsafe class FrontStore
         ContributionLayout layout = plan.Contributions;
         for (int half = 0; half < Halves; half++)
         {
-            _panels[half] = new AlignedBuffer(plan.PanelStart[^1]);
+            // Kernels read, but do not write, up to seven columns behind a panel.
+            _panels[half] = new AlignedBuffer(plan.PanelStart[^1] + (long)SparsePlan.Padding * plan.LongestPanel);
             _kept[half] = new AlignedBuffer(layout.KeptLength);
             _blocks[half] = new double*[plan.FrontCount];
             for (int front = 0; front < plan.FrontCount; front++)

@@ -1,4 +1,5 @@
 using System.Runtime.CompilerServices;
+using System.Runtime.Intrinsics;
 
 namespace InterfaceFE.Sparse;
 
@@ -18,7 +19,6 @@ internal sealed unsafe class FrontWorker
     private readonly PivotLook _look;
     private readonly AlignedBuffer[] _arenas;
     private readonly AlignedBuffer _packed;
-    private readonly AlignedBuffer _tail;
     private readonly AlignedBuffer _sizes;
     private PivotTally _tally;
     private int _notFinite;
@@ -39,7 +39,6 @@ internal sealed unsafe class FrontWorker
         for (int front = 0; front <= plan.FrontCount; front++)
             widest = Math.Max(widest, plan.PaddedColumns(front));
         _packed = new AlignedBuffer((long)Block * widest);
-        _tail = new AlignedBuffer((long)Block * plan.LongestPanel);
         _sizes = new AlignedBuffer(plan.LongestPanel);
     }
 
@@ -79,11 +78,7 @@ internal sealed unsafe class FrontWorker
         {
             double* panel = _store.Panel(half, front), block = rows > 0 ? Contribution(half, front) : null;
             Unsafe.InitBlock(panel, 0, checked((uint)((long)stride * columns * sizeof(double))));
-            for (int j = 0; j < rows; j++)
-            {
-                int from = j / Block * Block;
-                Unsafe.InitBlock(block + (long)j * rows + from, 0, (uint)((rows - from) * sizeof(double)));
-            }
+            Unsafe.InitBlock(block, 0, checked((uint)((long)rows * rows * sizeof(double))));
             AddSlots(front, half, panel, block, padded, stride, rows);
             for (int c = _plan.ChildStart[front]; c < _plan.ChildStart[front + 1]; c++)
                 AddChild(_plan.Children[c], half, panel, block, padded, stride, rows);
@@ -101,11 +96,16 @@ internal sealed unsafe class FrontWorker
                 int slot = map.OfFront[s], count = slotStart[slot + 1] - slotStart[slot];
                 double* value = _values.Triangle(half) + map.ValueStart[slot];
                 int* local = locals + slotStart[slot];
+                bool isPaired = map.IsPaired[slot];
                 for (int c = 0; c < count; c++)
                 {
                     double* column = Column(local[c], panel, block, padded, stride, rows);
-                    for (int r = c; r < count; r++)
-                        column[local[r]] += *value++;
+                    if (!isPaired)
+                        for (int r = c; r < count; r++)
+                            column[local[r]] += *value++;
+                    else
+                        for (int r = c & ~1; r < count; r += 2, value += 2)
+                            (Vector128.Load(column + local[r]) + Vector128.Load(value)).Store(column + local[r]);
                 }
             }
     }
@@ -179,7 +179,7 @@ internal sealed unsafe class FrontWorker
             for (int j = 0; j < rows; j += Block)
             {
                 DenseKernels.Pack(other + j, stride, diagonal, columns, _packed.Start);
-                DenseKernels.SubtractProduct(mine + j, stride, _packed.Start, columns, block + (nint)j * rows + j, rows, rows - j);
+                DenseKernels.SubtractProduct(mine + j, stride, _packed.Start, columns, block + (nint)j * rows + j, rows, rows - j, Block);
             }
         }
         new ReadOnlySpan<double>(size, columns).CopyTo(new Span<double>(_store.Sizes + first, columns));
@@ -191,25 +191,7 @@ internal sealed unsafe class FrontWorker
     private void UpdateColumns(double* mine, double* other, nint stride, int k, int width, double* diagonal)
     {
         DenseKernels.Pack(other + k, stride, diagonal, k, _packed.Start);
-        double* target = mine + k * stride + k;
-        nint length = stride - k;
-        if (width == Block)
-        {
-            DenseKernels.SubtractProduct(mine + k, stride, _packed.Start, k, target, stride, length);
-            return;
-        }
-        // The kernel writes whole blocks of columns: the last few are worked on aside.
-        for (int j = 0; j < Block; j++)
-        {
-            Span<double> aside = new(_tail.Start + j * length, (int)length);
-            if (j < width)
-                new ReadOnlySpan<double>(target + j * stride, (int)length).CopyTo(aside);
-            else
-                aside.Clear();
-        }
-        DenseKernels.SubtractProduct(mine + k, stride, _packed.Start, k, _tail.Start, length, length);
-        for (int j = 0; j < width; j++)
-            new ReadOnlySpan<double>(_tail.Start + j * length, (int)length).CopyTo(new Span<double>(target + j * stride, (int)length));
+        DenseKernels.SubtractProduct(mine + k, stride, _packed.Start, k, mine + k * stride + k, stride, stride - k, width);
     }
 
     /// <summary>Takes the pivots of a diagonal block one after the other and updates the rest of the block.</summary>

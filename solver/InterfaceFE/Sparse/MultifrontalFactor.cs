@@ -42,6 +42,9 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     /// <summary>The plan that this factor follows.</summary>
     public SparsePlan Plan { get; }
 
+    /// <summary>Whether the factor is that of the numbers now in the slots.</summary>
+    public bool IsUpToDate => _isFactored && _fronts.IsUpToDate;
+
     /// <inheritdoc/>
     public int Size => Plan.UnknownCount;
 
@@ -86,7 +89,8 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
 
     private int Halves => _isSymmetric ? 1 : 2;
 
-    private bool IsRefined => !_isSymmetric || LiftedPivots > 0 || Growth > RefinedGrowth;
+    /// <summary>Whether solves are refined with the true matrix.</summary>
+    internal bool IsRefined => !_isSymmetric || LiftedPivots > 0 || Growth > RefinedGrowth;
 
     /// <inheritdoc/>
     /// <exception cref="ArgumentOutOfRangeException">No such slot.</exception>
@@ -109,7 +113,7 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     /// </summary>
     public FactorOutcome Factor()
     {
-        if (_isFactored && _fronts.IsUpToDate)
+        if (IsUpToDate)
         {
             LastFlops = 0;
             return Outcome();
@@ -255,17 +259,25 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         return -1;
     }
 
-    private DenseRoot RootFor(ReadOnlySpan<int> held)
+    /// <summary>Marks the held ones among the root unknowns, in the order of the dense block.</summary>
+    /// <exception cref="InvalidOperationException">There is no sound factor.</exception>
+    /// <exception cref="ArgumentException">A held unknown is not a root unknown.</exception>
+    internal void MarkHeld(ReadOnlySpan<int> held, Span<bool> isHeld)
     {
         if (!_isFactored)
             throw new InvalidOperationException("There is no sound factor: call Factor first and look at its outcome.");
-        Array.Clear(_isHeld);
+        isHeld.Clear();
         foreach (int unknown in held)
         {
             if ((uint)unknown >= (uint)Size || Plan.NewOf[unknown] < Plan.InteriorUnknownCount)
                 throw new ArgumentException($"Unknown {unknown} is not a root unknown and cannot be held.", nameof(held));
-            _isHeld[Plan.NewOf[unknown] - Plan.InteriorUnknownCount] = true;
+            isHeld[Plan.NewOf[unknown] - Plan.InteriorUnknownCount] = true;
         }
+    }
+
+    private DenseRoot RootFor(ReadOnlySpan<int> held)
+    {
+        MarkHeld(held, _isHeld);
         foreach (DenseRoot? known in _roots)
             if (known is not null && known.Serves(_isHeld))
                 return known;

@@ -3,9 +3,9 @@ namespace InterfaceFE.Sparse;
 /// <summary>The kernels in plain loops, for any processor; see <see cref="DenseKernels"/> for what each does.</summary>
 internal static unsafe class PortableKernels
 {
-    public static void SubtractProduct(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, nint rows)
+    public static void SubtractProduct(double* a, nint aStride, double* packed, nint depth, double* c, nint cStride, nint rows, int columns)
     {
-        for (int j = 0; j < 8; j++)
+        for (int j = 0; j < columns; j++)
             for (nint k = 0; k < depth; k++)
             {
                 double factor = packed[8 * k + j];

@@ -2,7 +2,8 @@ namespace InterfaceFE.Sparse;
 
 /// <summary>
 /// Scatter map from slots to fronts. A slot goes as a whole into the front of its first eliminated unknown. Its numbers are kept as a lower triangle, column after column,
-/// with the unknowns in elimination order, and slot after slot in the order in which fronts need them, so that assembly reads them once from start to end.
+/// with the unknowns in elimination order, and slot after slot in the order in which fronts need them, so that assembly reads them once from start to end. Where unknowns come
+/// in pairs of one vertex, a column starts at the pair that holds its diagonal, so that pairs are added at once; the entry above the diagonal is zero and not used.
 /// </summary>
 internal sealed class SlotMap
 {
@@ -19,6 +20,7 @@ internal sealed class SlotMap
             SortSlot(plan, slot);
         (FrontStart, OfFront) = SparsePlan.Group(Front, plan.FrontCount + 1);
         ValueStart = new long[slots];
+        IsPaired = new bool[slots];
         var local = new int[plan.UnknownCount];
         long filled = 0;
         for (int front = 0; front <= plan.FrontCount; front++)
@@ -29,10 +31,11 @@ internal sealed class SlotMap
                 int slot = OfFront[i], start = pattern.SlotStart[slot], end = pattern.SlotStart[slot + 1];
                 for (int k = start; k < end; k++)
                     Local[k] = local[Place[k]];
+                IsPaired[slot] = ComesInPairs(plan, start, end);
                 ValueStart[slot] = filled;
                 long size = end - start;
                 LargestSlot = Math.Max(LargestSlot, (int)size);
-                filled += size * (size + 1) / 2;
+                filled += size * (size + 1) / 2 + (IsPaired[slot] ? size / 2 : 0);
             }
         }
         ValueCount = filled;
@@ -66,6 +69,9 @@ internal sealed class SlotMap
     /// <summary>Start of each slot's lower triangle in the array of values.</summary>
     public long[] ValueStart { get; }
 
+    /// <summary>Whether the unknowns of a slot come in pairs.</summary>
+    public bool[] IsPaired { get; }
+
     /// <summary>Length of the array of values.</summary>
     public long ValueCount { get; }
 
@@ -80,6 +86,21 @@ internal sealed class SlotMap
 
     /// <summary>Most unknowns in a slot.</summary>
     public int LargestSlot { get; }
+
+    /// <summary>First row of a slot's column that is kept.</summary>
+    public int FirstRow(int slot, int column) => IsPaired[slot] ? column & ~1 : column;
+
+    private bool ComesInPairs(SparsePlan plan, int start, int end)
+    {
+        if ((end - start) % 2 != 0)
+            return false;
+        for (int k = start; k < end; k += 2)
+            if (Local[k + 1] != Local[k] + 1 || VertexAt(k) != VertexAt(k + 1))
+                return false;
+        return true;
+
+        int VertexAt(int k) => plan.Pattern.VertexOfUnknown[plan.OldOf[Place[k]]];
+    }
 
     private void SortSlot(SparsePlan plan, int slot)
     {

@@ -65,7 +65,9 @@ internal sealed unsafe class SlotValues
         bool hasChanged = false;
         for (int c = 0; c < count; c++)
         {
-            int column = sequence[c];
+            int column = sequence[c], skipped = c - _map.FirstRow(slot, c);
+            lower += skipped;
+                upper += skipped;
             for (int r = c; r < count; r++)
             {
                 double below = matrix[sequence[r] * count + column], above = matrix[column * count + sequence[r]];
@@ -133,6 +135,9 @@ internal sealed unsafe class SlotValues
         fixed (double* x = _gathered, y = _summed)
             for (int c = 0; c < count; c++)
             {
+                int skipped = c - _map.FirstRow(slot, c);
+                lower += skipped;
+                upper += skipped;
                 double sum = y[c] + *lower++ * x[c], value = x[c];
                 upper++;
                 for (int r = c + 1; r < count; r++)
@@ -150,6 +155,9 @@ internal sealed unsafe class SlotValues
         double* lower = _triangles[0].Start + _map.ValueStart[slot], upper = _triangles[^1].Start + _map.ValueStart[slot];
         for (int c = 0; c < count; c++)
         {
+            int skipped = c - _map.FirstRow(slot, c);
+            lower += skipped;
+            upper += skipped;
             _magnitude[c] += Math.Abs(*lower++ * _gathered[c]);
             upper++;
             for (int r = c + 1; r < count; r++)

@@ -24,7 +24,7 @@ internal sealed class Recording : IMarchObserver
 
     public List<string> Lines { get; } = [];
 
-    public static Recording Of(Deck deck, Func<MarchSettings, MarchSettings>? change = null)
+    public static Recording Of(Deck deck, Func<MarchSettings, MarchSettings>? change = null, ReplayPlan? replay = null)
     {
         SpecimenModel model = ModelBuilder.Build(deck, Mesher.Build(deck).Mesh);
         var equilibrium = new FullEquilibrium(model);
@@ -39,7 +39,7 @@ internal sealed class Recording : IMarchObserver
             MostPoints = march.MostPoints,
             Path = march.Control switch { ControlSetting.Own => PathControl.None, ControlSetting.ArcLength => PathControl.ArcLength, _ => PathControl.LayerWork },
         };
-        recording.Outcome = new March(equilibrium, change is null ? settings : change(settings), recording).Run();
+        recording.Outcome = new March(equilibrium, change is null ? settings : change(settings), recording, replay).Run();
         return recording;
     }
 

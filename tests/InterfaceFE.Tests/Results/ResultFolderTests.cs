@@ -26,7 +26,7 @@ public class ResultFolderTests
             + "thermal [mJ],released in jumps [mJ],balance,path error",
             FirstLine(folder, "energy.csv"));
         Assert.Equal(
-            "stage,point,retries,iteration,control,stride,progress,load factor,root,out of balance [N],relative,correction [mm],unstable directions,changed elements,reason",
+            "stage,point,retries,iteration,control,stride,progress,load factor,root,out of balance [N],relative,correction [mm],unstable directions,changed elements,reason,guess",
             FirstLine(folder, "convergence.csv"));
     }
 

@@ -135,7 +135,6 @@ public class BorderedFactorTests
             double largest = expected.Max(Math.Abs);
             for (int i = 0; i < x.Length; i++)
                 Close.To(expected[i], x[i], relative: 0, absolute: 1e-10 * largest);
-            Assert.True(border.BackwardError < 1e-12, $"{border.BackwardError}");
         }
     }
 
@@ -153,8 +152,7 @@ public class BorderedFactorTests
                 control[unknown] = random.NextDouble() - 0.5;
         for (int i = 0; i < load.Length; i++)
             load[i] = 0.01 * (random.NextDouble() - 0.5);
-        int[] all = Enumerable.Range(0, model.Unknowns).ToArray();
-        int controlVector = border.AddVector(all, control), loadVector = border.AddVector(all, load), row = border.AddRow(0.7);
+        int controlVector = border.AddVector(control), loadVector = border.AddVector(load), row = border.AddRow(0.7);
         border.AddToRow(row, controlVector, 1);
         border.AddToColumn(row, loadVector, -1);
         for (int i = 0; i < held.Length; i++)

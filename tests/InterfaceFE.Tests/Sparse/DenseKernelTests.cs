@@ -22,7 +22,8 @@ public class DenseKernelTests
     {
         for (nint rows = 8; rows <= 48; rows += 8)
             foreach (nint depth in new nint[] { 0, 1, 7, 24 })
-                Agree(nameof(DenseKernels.SubtractProduct), m => [m.A, Stride, m.B, depth, m.C, Stride, rows]);
+                for (int columns = 1; columns <= 8; columns++)
+                    Agree(nameof(DenseKernels.SubtractProduct), m => [m.A, Stride, m.B, depth, m.C, Stride, rows, columns]);
     }
 
     [Fact]

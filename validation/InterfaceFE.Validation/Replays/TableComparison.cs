@@ -10,14 +10,14 @@ namespace InterfaceFE.Validation.Replays;
 public readonly record struct TableDifference(double Relative, string Where);
 
 /// <summary>
-/// Compares the tables of two runs column by column. A difference is measured by the largest magnitude of its column in the recorded table, but by a hundredth of the largest of the columns
-/// with the same unit at least, so that a sliding that is 0 by symmetry is measured by the opening. Forces are measured by the largest of all forces of the table, and by a thousandth of the
-/// largest carried inside at least: a reaction that is 0 by balance holds nothing but the rounding of what balances. Columns without a unit (shares, relative errors) are measured by 1 at
-/// least, angles in degrees by a right angle.
+/// Compares the tables of two runs column by column. A difference is measured by the largest magnitude of its column in the recorded table, but by a tenth of the largest of the columns
+/// with the same unit at least: in what is 0 by symmetry, a sliding beside an opening, the march's tolerance of 1e-10 leaves as much of the other. Forces are measured by the largest of all forces of the table, and by a thousandth of the
+/// largest carried inside at least: a reaction that is 0 by balance holds nothing but the rounding of what balances. Moments likewise, by such a force on an arm of 1 mm at least; rotations by
+/// a thousandth at least. Columns without a unit (shares, relative errors) are measured by 1 at least, angles in degrees by a right angle.
 /// </summary>
 public static class TableComparison
 {
-    private const double ShareOfCarried = 1e-3, ShareOfUnit = 1e-2;
+    private const double ShareOfCarried = 1e-3, ShareOfUnit = 0.1, LeastRotation = 1e-3;
 
     /// <summary>Columns of convergence.csv that a replay repeats, at the last iteration of each point.</summary>
     private static readonly string[] Followed = ["stage", "point", "retries", "control", "stride", "progress", "load factor", "root", "unstable directions", "guess"];
@@ -88,9 +88,10 @@ public static class TableComparison
             double all = own.Where((_, other) => Unit(rows[0][other]) == unit).Max();
             scales[c] = unit switch
             {
-                "N" => Math.Max(all, ShareOfCarried * carried),
+                "N" or "N mm" => Math.Max(all, ShareOfCarried * carried),
                 "" => Math.Max(own[c], 1),
                 "deg" => Math.Max(own[c], 90),
+                "rad" => Math.Max(all, LeastRotation),
                 _ => Math.Max(own[c], ShareOfUnit * all),
             };
         }
