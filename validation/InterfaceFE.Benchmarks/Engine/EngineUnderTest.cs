@@ -131,7 +131,7 @@ public sealed class EngineUnderTest
         {
             double start = ThreadClock.Milliseconds();
             for (int i = 0; i < repeats; i++)
-                DenseKernels.SubtractProduct(a.Start, rows, packed.Start, depth, c.Start, rows, rows);
+                DenseKernels.SubtractProduct(a.Start, rows, packed.Start, depth, c.Start, rows, rows, columns);
             double time = ThreadClock.Milliseconds() - start;
             if (time > 0)
                 best = Math.Max(best, 2.0 * rows * depth * columns * repeats / time);
