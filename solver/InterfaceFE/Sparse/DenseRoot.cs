@@ -76,10 +76,10 @@ internal abstract class DenseRoot
         for (int i = 0; i < _freeCount; i++)
             for (int j = 0; j <= i; j++)
             {
-                double scaling = RowScaling[i] * ColumnScaling[j];
+                // One factor after the other: of the smallest numbers the factors' product would overflow.
                 nint at = Free[j] * stride + Free[i];
-                Matrix[j * Count + i] = upper[at] * scaling;
-                Matrix[i * Count + j] = lower[at] * scaling;
+                Matrix[j * Count + i] = upper[at] * RowScaling[i] * ColumnScaling[j];
+                Matrix[i * Count + j] = lower[at] * RowScaling[i] * ColumnScaling[j];
             }
         if (border is not null)
             TakeBorder(border);

@@ -234,6 +234,11 @@ internal sealed unsafe class FrontWorker
                 _tally.HasLooked = true;
             }
             double pivot = PivotJudge.Take(ref _tally, place, computed, scale, soft, noise, growth), inverse = 1 / pivot;
+            if (!double.IsFinite(pivot) || !double.IsFinite(inverse))
+            {
+                _notFinite = place;
+                return;
+            }
             _store.Diagonal[place] = pivot;
             _store.Inverse[place] = inverse;
             _tally.Growth = Math.Max(_tally.Growth, own[k] / scale);
@@ -282,7 +287,8 @@ internal sealed unsafe class FrontWorker
             double low = isInBlock ? p[k * stride + i - k0] : Updated(p, q, stride, k, i - k0);
             double high = _store.Halves == 1 ? low : isInBlock ? q[k * stride + i - k0] : Updated(q, p, stride, k, i - k0);
             int place = i < columns ? first + i : _plan.Rows[_plan.RowStart[front] + i - padded];
-            largest = Math.Max(largest, Math.Abs(low * high / pivot) / _scales[place]);
+            // Two ratios: their product overflows only where the growth itself is beyond bounds.
+            largest = Math.Max(largest, Math.Abs(low / _scales[place] * (high / pivot)));
         }
         return largest;
 

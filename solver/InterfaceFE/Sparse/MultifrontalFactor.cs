@@ -48,7 +48,7 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     /// <inheritdoc/>
     public int Size => Plan.UnknownCount;
 
-    /// <summary>Refinement steps of the last solve.</summary>
+    /// <summary>Refinement steps of the last solve; of several right sides the most.</summary>
     public int RefinementSteps { get; private set; }
 
     /// <summary>
@@ -214,10 +214,16 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         DenseRoot root = RootFor(heldRootUnknowns);
         if (IsRefined && !_isStale)
         {
+            (int steps, double error) = (0, double.NaN);
             for (int c = 0; c < count; c++)
+            {
                 Solve(b.Slice(c * Size, Size), x.Slice(c * Size, Size), heldRootUnknowns, path);
+                (steps, error) = (Math.Max(steps, RefinementSteps), c == 0 ? BackwardError : Math.Max(error, BackwardError));
+            }
+            (RefinementSteps, BackwardError) = (steps, error);
             return;
         }
+        (RefinementSteps, BackwardError) = (0, double.NaN);
         _laneSolver ??= new LaneSolver(Plan, _fronts.Store);
         _lanes ??= new AlignedBuffer((long)LaneSolver.Lanes * Size);
         for (int from = 0; from < count; from += LaneSolver.Lanes)

@@ -8,6 +8,7 @@ namespace InterfaceFE.Sparse;
 internal sealed unsafe class PivotLook
 {
     private const int Lanes = SubtreeSamples.Most * SubtreeSamples.Unknowns;
+    private const int LargestExponent = 1000;
 
     private readonly SparsePlan _plan;
     private readonly FrontStore _store;
@@ -16,6 +17,7 @@ internal sealed unsafe class PivotLook
     private readonly AlignedBuffer _local;
     private readonly AlignedBuffer _lanes;
     private readonly AlignedBuffer[] _samples;
+    private double _inverseUnit;
 
     /// <summary>Makes room for the vectors of one front.</summary>
     public PivotLook(SparsePlan plan, FrontStore store, SubtreeInfluence influence)
@@ -47,7 +49,7 @@ internal sealed unsafe class PivotLook
             v[column] = 1;
             PanelSolve.Backward(_store.Panel(half, front), column + 1, _plan.Stride(front), v);
         }
-        return Sum(front, column + 1, size);
+        return Sum(front, column + 1, size, size[column]);
     }
 
     /// <summary>The same for a pivot of the root block: <paramref name="left"/> and <paramref name="right"/> give its vectors at the root unknowns.</summary>
@@ -55,21 +57,22 @@ internal sealed unsafe class PivotLook
     {
         left.CopyTo(new Span<double>(_vectors[0].Start, left.Length));
         right.CopyTo(new Span<double>(_vectors[^1].Start, right.Length));
-        return Sum(_plan.FrontCount, left.Length, _store.Sizes + _plan.InteriorUnknownCount);
+        return Sum(_plan.FrontCount, left.Length, _store.Sizes + _plan.InteriorUnknownCount, 1);
     }
 
-    /// <summary>Root of the squared errors of a front's first pivots and of all that is below.</summary>
-    private double Sum(int front, int count, double* size)
+    /// <summary>Root of the squared errors of a front's first pivots and of all that is below, summed in a unit (a power of two) near the given size, so that squares stay in range.</summary>
+    private double Sum(int front, int count, double* size, double near)
     {
-        double sum = 0;
+        double sum = 0, unit = double.IsFinite(near) ? Math.ScaleB(1, Math.Clamp(Math.ILogB(near), -LargestExponent, LargestExponent)) : 1;
+        _inverseUnit = 1 / unit;
         for (int i = 0; i < count; i++)
-            sum += Square(_vectors[0].Start[i] * _vectors[^1].Start[i] * size[i]);
+            sum += SquaredError(_vectors[0].Start[i], _vectors[^1].Start[i], size[i]);
         for (int c = _plan.ChildStart[front]; c < _plan.ChildStart[front + 1]; c++)
         {
             int child = _plan.Children[c];
             sum += _plan.Samples.IsLarge[child] ? SumOfLarge(child, count) : SumOfSmall(child, count);
         }
-        return PivotJudge.RoundOff * Math.Sqrt(sum);
+        return PivotJudge.RoundOff * Math.Sqrt(sum) * unit;
     }
 
     private double SumOfLarge(int child, int count)
@@ -89,7 +92,7 @@ internal sealed unsafe class PivotLook
             int lane = SubtreeSamples.Unknowns * (i - samples.Start[child]);
             double squares = 0;
             for (int unknown = 0; unknown < samples[i].Count; unknown++)
-                squares += Square(_samples[0].Start[lane + unknown] * _samples[^1].Start[lane + unknown] * _store.Sizes[samples[i].Place + unknown]);
+                squares += SquaredError(_samples[0].Start[lane + unknown], _samples[^1].Start[lane + unknown], _store.Sizes[samples[i].Place + unknown]);
             sum += samples[i].Weight * squares / samples[i].Count;
         }
         return sum;
@@ -112,9 +115,13 @@ internal sealed unsafe class PivotLook
         }
         double sum = 0;
         for (int i = 0; i < columns; i++)
-            sum += Square(local[i] * right[i] * _store.Sizes[first + i]);
+            sum += SquaredError(local[i], right[i], _store.Sizes[first + i]);
         return sum * SubtreeSamples.SubtreeUnknowns(_plan, child) / columns;
     }
 
-    private static double Square(double value) => value * value;
+    private double SquaredError(double left, double right, double size)
+    {
+        double error = size * _inverseUnit * left * right;
+        return error * error;
+    }
 }

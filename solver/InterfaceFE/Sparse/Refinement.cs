@@ -15,6 +15,7 @@ internal sealed class Refinement
     private const int MostSteps = 8;
     private const int Directions = 24;
     private const int Restarts = 3;
+    private const int LargestExponent = 1000;
 
     private readonly SparsePlan _plan;
     private readonly SlotValues _values;
@@ -143,7 +144,7 @@ internal sealed class Refinement
             double next = Expand(count, isHeld);
             Rotate(count);
             count++;
-            if (!(next > 1e-14 * start) && count > 0 && !(next > 0))
+            if (!(next > 0))
                 break;
         }
         Combine(count, x);
@@ -213,5 +214,17 @@ internal sealed class Refinement
         return sum;
     }
 
-    private static double Norm(double[] a) => Math.Sqrt(Dot(a, a));
+    /// <summary>Length of a vector, summed in a unit (a power of two) near its largest entry, so that squares stay in range.</summary>
+    private static double Norm(double[] a)
+    {
+        double largest = 0, sum = 0;
+        foreach (double value in a)
+            largest = Math.Max(largest, Math.Abs(value));
+        if (!(largest > 0) || !double.IsFinite(largest))
+            return largest;
+        double unit = Math.ScaleB(1, Math.Clamp(Math.ILogB(largest), -LargestExponent, LargestExponent)), inverse = 1 / unit;
+        foreach (double value in a)
+            sum += value * inverse * (value * inverse);
+        return Math.Sqrt(sum) * unit;
+    }
 }

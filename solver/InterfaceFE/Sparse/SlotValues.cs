@@ -50,7 +50,7 @@ internal sealed unsafe class SlotValues
         return (slot, _faultyUnknown[slot]);
     }
 
-    /// <summary>Replaces the matrix of a slot. Returns whether any number changed.</summary>
+    /// <summary>Replaces the matrix of a slot. Returns whether any number that the factor depends on changed.</summary>
     public bool Replace(int slot, ReadOnlySpan<double> matrix)
     {
         SlotPattern pattern = _plan.Pattern;
@@ -73,15 +73,17 @@ internal sealed unsafe class SlotValues
                 double below = matrix[sequence[r] * count + column], above = matrix[column * count + sequence[r]];
                 sum += Math.Abs(below) + Math.Abs(above);
                 // The mean makes the factor independent of the elimination order when symmetry holds to round-off only.
-                if (IsSymmetric)
-                    below = above = 0.5 * (below + above);
+                if (IsSymmetric && below != above)
+                    below = above = 0.5 * below + 0.5 * above;
                 hasChanged |= *lower != below || *upper != above;
                 (*lower++, *upper++) = (below, above);
             }
         }
+        // A sum of finite entries may overflow: only then each is looked at.
         NoteFault(slot, matrix, count, double.IsFinite(sum));
+        // A scale can move alone where a matrix is symmetric to round-off only.
         for (int k = 0; k < count; k++)
-            Scales.Take(start + k, RowScale(matrix.Slice(sequence[k] * count, count), sequence[k]));
+            hasChanged |= Scales.Take(start + k, RowScale(matrix.Slice(sequence[k] * count, count), sequence[k]));
         return hasChanged;
     }
 
@@ -182,9 +184,6 @@ internal sealed unsafe class SlotValues
         for (int k = 0; k < matrix.Length && !isFinite && unknown < 0; k++)
             if (!double.IsFinite(matrix[k]))
                 unknown = _plan.Pattern.Unknowns(slot)[k / count];
-        // Finite entries whose sum overflows cannot be computed with either.
-        if (!isFinite && unknown < 0)
-            unknown = _plan.Pattern.Unknowns(slot)[0];
         _faults += (unknown >= 0 ? 1 : 0) - (_faultyUnknown[slot] >= 0 ? 1 : 0);
         _faultyUnknown[slot] = unknown;
     }

@@ -49,15 +49,16 @@ internal sealed class UnknownScales
     /// <summary>Whether the last update changed any scale.</summary>
     public bool AnyMoved => _movedCount > 0;
 
-    /// <summary>Takes the share of a slot's row.</summary>
+    /// <summary>Takes the share of a slot's row. Returns whether it is another one than before.</summary>
     /// <param name="entry">Number of the slot's unknown in the pattern's list, in elimination order within the slot.</param>
     /// <param name="value">Magnitude of the diagonal or its substitute.</param>
-    public void Take(int entry, double value)
+    public bool Take(int entry, double value)
     {
         if (_ofEntry[entry] == value)
-            return;
+            return false;
         _ofEntry[entry] = value;
         MarkStale(_plan.Slots.Place[entry]);
+        return true;
     }
 
     /// <summary>Sums the stale ones.</summary>
@@ -79,8 +80,9 @@ internal sealed class UnknownScales
                 if (!_isLayer[map.EntrySlot[e]])
                     soft += value;
             }
-            scale = scale == 0 ? 1 : scale;
-            soft = soft == 0 ? scale : soft;
+            // Magnitudes can overflow where the numbers themselves, of both signs, do not.
+            scale = Math.Min(scale == 0 ? 1 : scale, double.MaxValue);
+            soft = Math.Min(soft == 0 ? scale : soft, double.MaxValue);
             if (scale == _scale[place] && soft == _soft[place])
                 continue;
             (_scale[place], _soft[place]) = (scale, soft);

@@ -16,11 +16,18 @@ internal static class Checks
         return values;
     }
 
-    public static MultifrontalFactor Factored(SparseModel model, bool general = false, PlanOptions? options = null)
+    /// <summary>A factor with the model's numbers, not yet made.</summary>
+    public static MultifrontalFactor Loaded(SparseModel model, bool general = false, PlanOptions? options = null)
     {
         SparsePlan plan = SparsePlan.Analyze(model.Pattern, options);
         MultifrontalFactor factor = general ? new GeneralFactor(plan) : new WorkingFactor(plan);
         model.Load(factor);
+        return factor;
+    }
+
+    public static MultifrontalFactor Factored(SparseModel model, bool general = false, PlanOptions? options = null)
+    {
+        MultifrontalFactor factor = Loaded(model, general, options);
         factor.Factor();
         return factor;
     }
@@ -48,6 +55,29 @@ internal static class Checks
         return worst / (rowSum.Max() * x.Max(Math.Abs) + b.Max(Math.Abs));
     }
 
+    /// <summary>Largest |b - K x| / (|K| |x| + |b|) over free unknowns, entry by entry of the slots' matrices: componentwise backward error.</summary>
+    public static double ComponentwiseError(SparseModel model, ReadOnlySpan<double> b, ReadOnlySpan<double> x, int[] held)
+    {
+        double[] residual = b.ToArray(), size = Array.ConvertAll(residual, Math.Abs);
+        for (int slot = 0; slot < model.Pattern.SlotCount; slot++)
+        {
+            ReadOnlySpan<int> unknowns = model.Pattern.Unknowns(slot);
+            int m = unknowns.Length;
+            for (int r = 0; r < m; r++)
+                for (int c = 0; c < m; c++)
+                {
+                    double product = model.Matrices[slot][r * m + c] * x[unknowns[c]];
+                    residual[unknowns[r]] -= product;
+                    size[unknowns[r]] += Math.Abs(product);
+                }
+        }
+        double worst = 0;
+        for (int i = 0; i < b.Length; i++)
+            if (!held.Contains(i) && residual[i] != 0)
+                worst = Math.Max(worst, double.IsFinite(residual[i]) ? Math.Abs(residual[i]) / size[i] : double.PositiveInfinity);
+        return worst;
+    }
+
     /// <summary>Solves with held values and compares with the dense solution of the free part.</summary>
     public static void SolvesAsDense(SparseModel model, IWorkingFactor factor, int[] held, Random random, double relative)
     {
@@ -69,6 +99,17 @@ internal static class Checks
         foreach (int h in held)
             Close.To(given[h], x[h], relative: 0, what: "held value");
         Close.To(0, BackwardError(model, b, x, held), absolute: 1e-13, what: "backward error");
+    }
+
+    /// <summary>Two factors solve a random right side to the same bits and tell the same of it.</summary>
+    public static void SameBytes(MultifrontalFactor expected, MultifrontalFactor actual, int[] held, Random random)
+    {
+        double[] b = Checks.RandomVector(expected.Size, random), x = Checks.RandomVector(expected.Size, random), y = (double[])x.Clone();
+        expected.Solve(b, x, held);
+        actual.Solve(b, y, held);
+        Assert.Equal(Array.ConvertAll(x, BitConverter.DoubleToInt64Bits), Array.ConvertAll(y, BitConverter.DoubleToInt64Bits));
+        Assert.Equal((expected.Growth, expected.LiftedPivots, expected.Inertia(held)), (actual.Growth, actual.LiftedPivots, actual.Inertia(held)));
+        Assert.Equal((expected.RefinementSteps, expected.BackwardError), (actual.RefinementSteps, actual.BackwardError));
     }
 
     /// <summary>Compares the inertia with the signs of the dense eigenvalues of the free part.</summary>
