@@ -210,7 +210,7 @@ public sealed class FullEquilibrium : IEquilibrium
         wanted |= Wanted.Force | Wanted.Energy;
         int changed = 0;
         GrowingElements = 0;
-        double storedSolids = 0, storedLayers = 0, spent = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
+        double storedSolids = 0, storedLayers = 0, spent = 0, yielding = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
         for (int block = 0; block < _table.Blocks.Count; block++)
         {
             IElementBlock elements = _table.Blocks[block];
@@ -248,12 +248,15 @@ public sealed class FullEquilibrium : IEquilibrium
                     _bonds.Take(layerElement, answer);
                 }
                 else if (block < _table.SolidBlocks)
+                {
                     storedSolids += answer.Stored;
+                    yielding += answer.Dissipated;
+                }
                 else
                     storedLayers += answer.Stored;
             }
         }
-        Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature);
+        Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature) { SpentInYielding = yielding };
         LayerWorkByProgress = layersByTemperature * (_temperatureEnd - _temperatureStart);
         DissipationByProgress = dissipatedByTemperature * (_temperatureEnd - _temperatureStart);
 
@@ -417,6 +420,9 @@ public sealed class FullEquilibrium : IEquilibrium
         }
         return 0;
     }
+
+    /// <summary>State of an element of an adherend at the accepted point.</summary>
+    public ReadOnlySpan<double> AcceptedSolidState(int adherend, int element) => _state.Accepted(adherend, element);
 
     /// <summary>State of a layer element at the accepted point.</summary>
     public ReadOnlySpan<double> AcceptedLayerState(int joint, int element) => _state.Accepted(_table.FirstLayerBlock + joint, element);

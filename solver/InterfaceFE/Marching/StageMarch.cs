@@ -207,7 +207,7 @@ internal sealed class StageMarch
     /// <summary>Whether the load falls without any dissipation: unloading, which fulfils the equation of arc length as well as going on does.</summary>
     private bool GoesBack() =>
         _equilibrium.Progress < _equilibrium.AcceptedProgress
-        && _equilibrium.Energy.SpentInLayers - _accepted.SpentInLayers <= NoDissipation * Math.Max(_way.Dissipation, _accepted.SpentInLayers);
+        && _equilibrium.Energy.Spent - _accepted.Spent <= NoDissipation * Math.Max(_way.Dissipation, _accepted.Spent);
 
     private Attempt Search(IControl control)
     {

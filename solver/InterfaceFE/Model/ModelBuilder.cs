@@ -16,7 +16,7 @@ public static class ModelBuilder
     public static SpecimenModel Build(Deck deck, Mesh mesh)
     {
         PlaneElasticity[] materials = [.. mesh.Adherends.Select(a => MaterialFactory.Create(deck, a.Material))];
-        SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature))];
+        SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature, MaterialFactory.Yielding(deck, a.Material)))];
         LayerBlock[] layers = [.. mesh.Joints.Select(joint => Layer(deck, mesh, joint, materials))];
         LayerBlock[] openFaces = [.. mesh.Joints.Zip(layers, (joint, layer) => OpenFaces(deck, mesh, joint, layer)).Where(block => block.Count > 0)];
         (IReadOnlyList<GripBody> bodies, IReadOnlyList<Grip> grips) = GripPlanner.Plan(deck, mesh);

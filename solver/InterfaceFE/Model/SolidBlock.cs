@@ -6,7 +6,7 @@ namespace InterfaceFE.Model;
 
 /// <summary>
 /// Elements of one adherend. Linear elastic at small rotation: stiffness, thermal force and blocked thermal energy of each element are computed once, after which
-/// force = K·u + thermal force·dT, energy = ½·u·K·u + dT·(thermal force·u) + ½·c·dT².
+/// force = K·u + thermal force·dT, energy = ½·u·K·u + dT·(thermal force·u) + ½·c·dT². A material that yields is in <see cref="YieldingBlock"/>.
 /// </summary>
 public abstract class SolidBlock : IElementBlock
 {
@@ -32,10 +32,13 @@ public abstract class SolidBlock : IElementBlock
     public abstract int NodesPerElement { get; }
 
     /// <inheritdoc/>
-    public int StateSize => 0;
+    public virtual int StateSize => 0;
 
     /// <inheritdoc/>
-    public TangentKind Kind => TangentKind.Constant;
+    public virtual TangentKind Kind => TangentKind.Constant;
+
+    /// <summary>Yield stress of the material; null when it does not yield.</summary>
+    public virtual YieldCurve? YieldCurve => null;
 
     /// <inheritdoc/>
     public ReadOnlySpan<int> Nodes(int element) => Adherend.Connectivity.AsSpan(element * NodesPerElement, NodesPerElement);
@@ -50,8 +53,14 @@ public abstract class SolidBlock : IElementBlock
     /// <param name="element">Element index.</param>
     /// <param name="displacement">Native displacements [mm].</param>
     /// <param name="temperature">Temperature [K].</param>
+    /// <param name="accepted">Accepted state that goes with the displacements.</param>
     /// <param name="stresses">Point after point xx, yy, zz, xy [MPa]; length 16, overwritten.</param>
-    public abstract void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> stresses);
+    public abstract void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, ReadOnlySpan<double> accepted, Span<double> stresses);
+
+    /// <summary>Equivalent plastic strain at the Gauss points of an element, from its accepted state.</summary>
+    /// <param name="accepted">Accepted state.</param>
+    /// <param name="strains">Length 4, overwritten.</param>
+    public virtual void PlasticStrains(ReadOnlySpan<double> accepted, Span<double> strains) => strains.Clear();
 
     /// <summary>Displacement gradients at the Gauss points: du/dx, du/dy, dv/dx, dv/dy, point after point; length 16, overwritten.</summary>
     public abstract void Gradients(int element, ReadOnlySpan<double> displacement, Span<double> gradients);
@@ -70,15 +79,21 @@ public abstract class SolidBlock : IElementBlock
     /// <param name="adherend">Adherend.</param>
     /// <param name="material">Material in the axes of the adherend: x along it.</param>
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
-    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature) =>
-        mesh.NodesPerSolid == Quadrilateral8.NodeCount
-            ? new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature)
-            : new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature);
+    /// <param name="yielding">The same material as it yields; null: it does not.</param>
+    /// <exception cref="ArgumentException">The material yields and the elements have four nodes.</exception>
+    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature, J2Plasticity? yielding = null) =>
+        (mesh.NodesPerSolid, yielding) switch
+        {
+            (Quadrilateral8.NodeCount, null) => new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature),
+            (Quadrilateral8.NodeCount, _) => new YieldingBlock(mesh, adherend, material, yielding, stressFreeTemperature),
+            (_, null) => new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature),
+            _ => throw new ArgumentException("yielding needs eight-node elements", nameof(yielding)),
+        };
 }
 
 /// <summary>The block for one kind of element.</summary>
 /// <typeparam name="TElement">Kind of element.</typeparam>
-internal sealed class SolidBlock<TElement> : SolidBlock
+internal class SolidBlock<TElement> : SolidBlock
     where TElement : struct, IPlaneElement
 {
     private readonly double[] _coordinates, _stiffness, _thermal, _blocked;
@@ -143,7 +158,7 @@ internal sealed class SolidBlock<TElement> : SolidBlock
 
     public override PlaneElasticity Material(int element) => _materials[element];
 
-    public override void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> stresses) =>
+    public override void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, ReadOnlySpan<double> accepted, Span<double> stresses) =>
         TElement.Stresses(Coordinates(element), _materials[element], displacement, temperature - StressFreeTemperature, stresses);
 
     public override void Gradients(int element, ReadOnlySpan<double> displacement, Span<double> gradients) =>
@@ -161,7 +176,7 @@ internal sealed class SolidBlock<TElement> : SolidBlock
     /// Displacement less a rigid movement: that of the first node and the turn of the diagonal. It strains nothing, so forces stay the same; their rounding then grows with the
     /// strain and not with the travel, which in slender arms is ten thousand times as large.
     /// </summary>
-    private void TakeRigidMovementOff(int element, ReadOnlySpan<double> displacement, Span<double> strained)
+    protected void TakeRigidMovementOff(int element, ReadOnlySpan<double> displacement, Span<double> strained)
     {
         ReadOnlySpan<double> xy = Coordinates(element);
         double x = xy[0], y = xy[1], u = displacement[0], v = displacement[1];
@@ -174,7 +189,8 @@ internal sealed class SolidBlock<TElement> : SolidBlock
         }
     }
 
-    private ReadOnlySpan<double> Coordinates(int element) => _coordinates.AsSpan(element * TElement.Unknowns, TElement.Unknowns);
+    /// <summary>Coordinates of an element's nodes.</summary>
+    protected ReadOnlySpan<double> Coordinates(int element) => _coordinates.AsSpan(element * TElement.Unknowns, TElement.Unknowns);
 
     private static double Dot(ReadOnlySpan<double> a, ReadOnlySpan<double> b)
     {
@@ -184,6 +200,7 @@ internal sealed class SolidBlock<TElement> : SolidBlock
         return sum;
     }
 
-    private static double AngleAlong(ReadOnlySpan<double> xy) =>
+    /// <summary>Angle from the model's x axis to an element's way along its adherend [rad].</summary>
+    protected static double AngleAlong(ReadOnlySpan<double> xy) =>
         Math.Atan2(xy[3] + xy[5] - xy[1] - xy[7], xy[2] + xy[4] - xy[0] - xy[6]);
 }

@@ -23,6 +23,7 @@ public static class SummaryMaker
         summary.Joints.AddRange(recorder.Maxima.Joints());
         summary.Adherends.AddRange(recorder.Maxima.Adherends());
         summary.FirstDamage = recorder.Maxima.FirstDamage;
+        summary.FirstYield = recorder.Maxima.FirstYield;
         summary.Remarks.AddRange(recorder.Remarks());
         if (history.Points.Find(p => !p.Stable) is { } first)
             summary.Remarks.Add(string.Create(System.Globalization.CultureInfo.InvariantCulture,

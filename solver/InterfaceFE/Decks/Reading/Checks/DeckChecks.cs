@@ -10,7 +10,11 @@ internal static class DeckChecks
     public static void Run(Deck deck, ReadContext context)
     {
         foreach ((string name, MaterialDeck material) in Entries(deck.Materials))
+        {
             MaterialChecks.Run(material, $"materials.{name}", context);
+            if (material.YieldCurve is { } curve)
+                YieldChecks.Run(deck, name, material, curve, context);
+        }
         foreach ((string name, LayerDeck layer) in Entries(deck.Layers))
             LayerChecks.Run(layer, $"layers.{name}", context);
         foreach ((string name, AdherendDeck adherend) in Entries(deck.Adherends))

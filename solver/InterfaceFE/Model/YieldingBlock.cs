@@ -1,0 +1,58 @@
+using InterfaceFE.Geometry;
+using InterfaceFE.Mechanics.Elements;
+using InterfaceFE.Mechanics.Materials;
+
+namespace InterfaceFE.Model;
+
+/// <summary>Elements of an adherend whose material yields, at small rotation. An element in which no point yields has the elastic tangent, the same to the last bit.</summary>
+internal sealed class YieldingBlock : SolidBlock<Quadrilateral8>
+{
+    private readonly J2Plasticity[] _laws;
+
+    public YieldingBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, J2Plasticity yielding, double stressFreeTemperature)
+        : base(mesh, adherend, material, stressFreeTemperature)
+    {
+        _laws = new J2Plasticity[Count];
+        for (int e = 0; e < Count; e++)
+            _laws[e] = adherend.StraightAlongX ? yielding : yielding.Rotated(AngleAlong(Coordinates(e)));
+        YieldCurve = yielding.Curve;
+        StateSize = GaussPoints.Count * yielding.StateSize;
+    }
+
+    public override int StateSize { get; }
+
+    public override TangentKind Kind => TangentKind.Symmetric;
+
+    public override YieldCurve YieldCurve { get; }
+
+    public override ElementAnswer Evaluate(int element, in PathPoint at, ReadOnlySpan<double> displacement, ReadOnlySpan<double> accepted, Span<double> tentative, Wanted wanted, in ElementBuffers into)
+    {
+        Span<double> strained = stackalloc double[Quadrilateral8.UnknownCount];
+        TakeRigidMovementOff(element, displacement, strained);
+        PlaneEnergy energy = Quadrilateral8.Respond(Coordinates(element), _laws[element], Adherend.Width, strained, at.Temperature - StressFreeTemperature, accepted, tentative, into.Force,
+            (wanted & Wanted.Tangent) != 0 ? into.Tangent : [], (wanted & Wanted.LoadRate) != 0 ? into.LoadRate : []);
+        if ((wanted & Wanted.Dissipation) != 0)
+            into.Dissipation.Clear();
+        return new ElementAnswer(energy.Stored, energy.Dissipated, energy.StoredByTemperature, 0, 0, 0, false);
+    }
+
+    public override void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, ReadOnlySpan<double> accepted, Span<double> stresses)
+    {
+        J2Plasticity law = _laws[element];
+        int state = law.StateSize;
+        Span<double> gradients = stackalloc double[16], strain = stackalloc double[3], scratch = stackalloc double[state], moduli = stackalloc double[9];
+        Gradients(element, displacement, gradients);
+        for (int point = 0; point < GaussPoints.Count; point++)
+        {
+            ReadOnlySpan<double> g = gradients.Slice(4 * point, 4);
+            (strain[0], strain[1], strain[2]) = (g[0], g[3], g[1] + g[2]);
+            law.Update(strain, temperature - StressFreeTemperature, accepted.Slice(point * state, state), scratch, stresses.Slice(4 * point, 4), moduli);
+        }
+    }
+
+    public override void PlasticStrains(ReadOnlySpan<double> accepted, Span<double> strains)
+    {
+        for (int point = 0; point < GaussPoints.Count; point++)
+            strains[point] = accepted[point * _laws[0].StateSize + J2Plasticity.EquivalentStrain];
+    }
+}
