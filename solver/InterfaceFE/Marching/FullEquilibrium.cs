@@ -15,6 +15,9 @@ public sealed class FullEquilibrium : IEquilibrium
     /// <summary>Share of the largest reference of the run below which the reference does not fall: after full unloading only rounding is left to measure by.</summary>
     private const double LeastReference = 1e-3;
 
+    /// <summary>Share of the reference above which rounding is no excuse once metal has yielded: displacements have run away, as they do at its limit load.</summary>
+    private const double LargestFloor = 1e-5;
+
     private readonly SpecimenModel _model;
     private readonly ElementTable _table;
     private readonly SparsePlan _plan;
@@ -288,7 +291,8 @@ public sealed class FullEquilibrium : IEquilibrium
         double largest = 0;
         foreach (double value in _rightSide)
             largest = Math.Max(largest, value);
-        return Rounding * largest;
+        double mostWhileFlowing = Energy.SpentInYielding > 0 ? LargestFloor * Math.Max(_reference, LeastReference * _largestReference) : double.PositiveInfinity;
+        return Math.Min(Rounding * largest, mostWhileFlowing);
     }
 
     /// <summary>Energy below which rounding rules [mJ]: 50 units of rounding of displacement times stiffness times displacement, magnitudes throughout.</summary>
