@@ -218,7 +218,7 @@ public sealed class FullEquilibrium : IEquilibrium
         {
             IElementBlock elements = _table.Blocks[block];
             bool layer = block >= _table.FirstLayerBlock;
-            int n = 2 * elements.NodesPerElement;
+            int n = elements.NativeCount;
             var buffers = new ElementBuffers { Force = _force.AsSpan(0, n), Tangent = _tangent.AsSpan(0, n * n), LoadRate = _rate.AsSpan(0, n), Dissipation = _dissipation.AsSpan(0, n) };
             Span<double> native = _native.AsSpan(0, n);
             for (int e = 0; e < elements.Count; e++)

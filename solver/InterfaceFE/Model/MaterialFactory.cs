@@ -27,7 +27,8 @@ public static class MaterialFactory
             table.KinematicHardening, StateOf(deck), deck.StressFreeTemperature));
     }
 
-    private static OutOfPlaneState StateOf(Deck deck) => deck.Model.OutOfPlane == OutOfPlane.Held ? OutOfPlaneState.Held : OutOfPlaneState.Free;
+    /// <summary>With a uniform strain the law is the held one: the strain comes on top.</summary>
+    private static OutOfPlaneState StateOf(Deck deck) => deck.Model.OutOfPlane == OutOfPlane.Free ? OutOfPlaneState.Free : OutOfPlaneState.Held;
 
     // An isotropic material may still expand by direction, as a drawn sheet does.
     private static OrthotropicConstants Constants(MaterialDeck material) => new(material.Young.X, material.Young.Y, material.Young.Z, material.Poisson.Xy, material.Poisson.Xz, material.Poisson.Zy,

@@ -32,6 +32,12 @@ public abstract class SolidBlock : IElementBlock
     public abstract int NodesPerElement { get; }
 
     /// <inheritdoc/>
+    public virtual int NativeCount => 2 * NodesPerElement;
+
+    /// <inheritdoc/>
+    public virtual int OutOfPlaneUnknown => -1;
+
+    /// <inheritdoc/>
     public virtual int StateSize => 0;
 
     /// <inheritdoc/>
@@ -51,7 +57,7 @@ public abstract class SolidBlock : IElementBlock
 
     /// <summary>Stresses at the four Gauss points of an element.</summary>
     /// <param name="element">Element index.</param>
-    /// <param name="displacement">Native displacements [mm].</param>
+    /// <param name="displacement">Native displacements [mm], <see cref="NativeCount"/> numbers.</param>
     /// <param name="temperature">Temperature [K].</param>
     /// <param name="accepted">Accepted state that goes with the displacements.</param>
     /// <param name="stresses">Point after point xx, yy, zz, xy [MPa]; length 16, overwritten.</param>
@@ -80,16 +86,27 @@ public abstract class SolidBlock : IElementBlock
     /// <param name="material">Material in the axes of the adherend: x along it.</param>
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
     /// <param name="yielding">The same material as it yields; null: it does not.</param>
+    /// <param name="outOfPlane">The unknown with which it strains out of plane; null: none.</param>
     /// <exception cref="ArgumentException">The material yields and the elements have four nodes.</exception>
-    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature, J2Plasticity? yielding = null) =>
-        (mesh.NodesPerSolid, yielding) switch
+    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature, J2Plasticity? yielding = null, OutOfPlaneLink? outOfPlane = null)
+    {
+        bool eight = mesh.NodesPerSolid == Quadrilateral8.NodeCount;
+        if (yielding is not null)
         {
-            (Quadrilateral8.NodeCount, null) => new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature),
-            (Quadrilateral8.NodeCount, _) => new YieldingBlock(mesh, adherend, material, yielding, stressFreeTemperature),
-            (_, null) => new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature),
-            _ => throw new ArgumentException("yielding needs eight-node elements", nameof(yielding)),
-        };
+            return eight
+                ? new YieldingBlock(mesh, adherend, material, yielding, stressFreeTemperature, outOfPlane)
+                : throw new ArgumentException("yielding needs eight-node elements", nameof(yielding));
+        }
+        if (outOfPlane is { } link)
+            return eight ? new UniformBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature, link) : new UniformBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature, link);
+        return eight ? new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature) : new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature);
+    }
 }
+
+/// <summary>The unknown with which a block strains out of plane.</summary>
+/// <param name="Unknown">Elongation of the group [mm].</param>
+/// <param name="Length">Length over which it is counted [mm]: strain = elongation over length.</param>
+public readonly record struct OutOfPlaneLink(int Unknown, double Length);
 
 /// <summary>The block for one kind of element.</summary>
 /// <typeparam name="TElement">Kind of element.</typeparam>
@@ -188,6 +205,9 @@ internal class SolidBlock<TElement> : SolidBlock
             strained[i + 1] = displacement[i + 1] - v - turn * (xy[i] - x);
         }
     }
+
+    /// <summary>Elastic stiffness of an element [N/mm], row-major.</summary>
+    protected ReadOnlySpan<double> ElasticStiffness(int element) => _stiffness.AsSpan(element * TElement.Unknowns * TElement.Unknowns, TElement.Unknowns * TElement.Unknowns);
 
     /// <summary>Coordinates of an element's nodes.</summary>
     protected ReadOnlySpan<double> Coordinates(int element) => _coordinates.AsSpan(element * TElement.Unknowns, TElement.Unknowns);

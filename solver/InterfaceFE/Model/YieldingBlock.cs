@@ -8,16 +8,22 @@ namespace InterfaceFE.Model;
 internal sealed class YieldingBlock : SolidBlock<Quadrilateral8>
 {
     private readonly J2Plasticity[] _laws;
+    private readonly OutOfPlaneLink? _link;
 
-    public YieldingBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, J2Plasticity yielding, double stressFreeTemperature)
+    public YieldingBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, J2Plasticity yielding, double stressFreeTemperature, OutOfPlaneLink? link)
         : base(mesh, adherend, material, stressFreeTemperature)
     {
+        _link = link;
         _laws = new J2Plasticity[Count];
         for (int e = 0; e < Count; e++)
             _laws[e] = adherend.StraightAlongX ? yielding : yielding.Rotated(AngleAlong(Coordinates(e)));
         YieldCurve = yielding.Curve;
         StateSize = GaussPoints.Count * yielding.StateSize;
     }
+
+    public override int NativeCount => Quadrilateral8.UnknownCount + (_link is null ? 0 : 1);
+
+    public override int OutOfPlaneUnknown => _link?.Unknown ?? -1;
 
     public override int StateSize { get; }
 
@@ -27,10 +33,19 @@ internal sealed class YieldingBlock : SolidBlock<Quadrilateral8>
 
     public override ElementAnswer Evaluate(int element, in PathPoint at, ReadOnlySpan<double> displacement, ReadOnlySpan<double> accepted, Span<double> tentative, Wanted wanted, in ElementBuffers into)
     {
-        Span<double> strained = stackalloc double[Quadrilateral8.UnknownCount];
-        TakeRigidMovementOff(element, displacement, strained);
-        PlaneEnergy energy = Quadrilateral8.Respond(Coordinates(element), _laws[element], Adherend.Width, strained, at.Temperature - StressFreeTemperature, accepted, tentative, into.Force,
-            (wanted & Wanted.Tangent) != 0 ? into.Tangent : [], (wanted & Wanted.LoadRate) != 0 ? into.LoadRate : []);
+        const int n = Quadrilateral8.UnknownCount;
+        Span<double> strained = stackalloc double[n + 1], tangent = (wanted & Wanted.Tangent) != 0 ? into.Tangent : [], rate = (wanted & Wanted.LoadRate) != 0 ? into.LoadRate : [];
+        double change = at.Temperature - StressFreeTemperature;
+        TakeRigidMovementOff(element, displacement[..n], strained[..n]);
+        PlaneEnergy energy;
+        if (_link is { } link)
+        {
+            strained[n] = displacement[n] / link.Length;
+            energy = UniformQuadrilateral8.Respond(Coordinates(element), _laws[element], Adherend.Width, strained, change, accepted, tentative, into.Force, tangent, rate);
+            Scale(1 / link.Length, into.Force, tangent, rate);
+        }
+        else
+            energy = Quadrilateral8.Respond(Coordinates(element), _laws[element], Adherend.Width, strained[..n], change, accepted, tentative, into.Force, tangent, rate);
         if ((wanted & Wanted.Dissipation) != 0)
             into.Dissipation.Clear();
         return new ElementAnswer(energy.Stored, energy.Dissipated, energy.StoredByTemperature, 0, 0, 0, false);
@@ -40,7 +55,9 @@ internal sealed class YieldingBlock : SolidBlock<Quadrilateral8>
     {
         J2Plasticity law = _laws[element];
         int state = law.StateSize;
-        Span<double> gradients = stackalloc double[16], strain = stackalloc double[3], scratch = stackalloc double[state], moduli = stackalloc double[9];
+        Span<double> gradients = stackalloc double[16], strain = stackalloc double[_link is null ? 3 : 4], scratch = stackalloc double[state], moduli = stackalloc double[16];
+        if (_link is { } link)
+            strain[3] = displacement[Quadrilateral8.UnknownCount] / link.Length;
         Gradients(element, displacement, gradients);
         for (int point = 0; point < GaussPoints.Count; point++)
         {
@@ -54,5 +71,19 @@ internal sealed class YieldingBlock : SolidBlock<Quadrilateral8>
     {
         for (int point = 0; point < GaussPoints.Count; point++)
             strains[point] = accepted[point * _laws[0].StateSize + J2Plasticity.EquivalentStrain];
+    }
+
+    /// <summary>From the strain out of plane to the elongation over a length, whose inverse is the scale.</summary>
+    private static void Scale(double scale, Span<double> force, Span<double> tangent, Span<double> rate)
+    {
+        const int n = Quadrilateral8.UnknownCount;
+        force[n] *= scale;
+        if (!rate.IsEmpty)
+            rate[n] *= scale;
+        for (int i = 0; i <= n && !tangent.IsEmpty; i++)
+        {
+            tangent[i * (n + 1) + n] *= scale;
+            tangent[n * (n + 1) + i] *= scale;
+        }
     }
 }

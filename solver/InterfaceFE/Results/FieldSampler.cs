@@ -63,11 +63,13 @@ public sealed class FieldSampler
         Array.Clear(PlasticStrain);
         Array.Clear(Yielding);
         LargestRotation = 0;
-        Span<double> native = stackalloc double[16], gauss = stackalloc double[16], nodal = stackalloc double[32], gradients = stackalloc double[16];
+        Span<double> native = stackalloc double[17], gauss = stackalloc double[16], nodal = stackalloc double[32], gradients = stackalloc double[16];
         for (int adherend = 0; adherend < _model.Solids.Count; adherend++)
         {
             SolidBlock solid = _model.Solids[adherend];
             int n = solid.NodesPerElement;
+            if (solid.OutOfPlaneUnknown >= 0)
+                native[2 * n] = equilibrium.AcceptedDisplacement[solid.OutOfPlaneUnknown];
             for (int e = 0; e < solid.Count; e++)
             {
                 ReadOnlySpan<int> nodes = solid.Nodes(e);
@@ -75,7 +77,7 @@ public sealed class FieldSampler
                 if (solid.YieldCurve is not null)
                     TakeYielding(adherend, e, state);
                 LayerSample.Gather(nodes, DisplacementX, DisplacementY, native);
-                solid.Stresses(e, native[..(2 * n)], equilibrium.AcceptedTemperature, state, gauss);
+                solid.Stresses(e, native[..solid.NativeCount], equilibrium.AcceptedTemperature, state, gauss);
                 solid.Gradients(e, native[..(2 * n)], gradients);
                 for (int p = 0; p < 4; p++)
                     LargestRotation = Math.Max(LargestRotation, 0.5 * Math.Abs(gradients[4 * p + 2] - gradients[4 * p + 1]));

@@ -73,6 +73,10 @@ public sealed class RunRecorder : IMarchObserver
 
     private IEnumerable<string> Named(Func<int, bool> which) => Enumerable.Range(0, _model.Solids.Count).Where(which).Select(a => $"'{_model.Solids[a].Name}'");
 
+    /// <summary>Strains out of plane of the groups that have one, in order.</summary>
+    private IEnumerable<double> OutOfPlaneStrains() =>
+        Enumerable.Range(0, _model.Unknowns.OutOfPlane?.Count ?? 0).Select(g => _model.Unknowns.OutOfPlaneStrain(_model.Unknowns.OutOfPlane!.FirstOf(g), _equilibrium.AcceptedDisplacement));
+
     /// <summary>Says once for each adherend that it yields, and that it yields beyond its curve.</summary>
     private void TellYielding()
     {
@@ -117,7 +121,7 @@ public sealed class RunRecorder : IMarchObserver
             LoadFactor = point.Progress,
             Stable = point.Stable,
             Grips = readings,
-            Gauges = _gauges.Read(_fields.DisplacementX, _fields.DisplacementY),
+            Gauges = [.. _gauges.Read(_fields.DisplacementX, _fields.DisplacementY), .. OutOfPlaneStrains()],
         };
         var fronts = new List<FrontRow>();
         for (int joint = 0; joint < _fronts.Length; joint++)
@@ -205,7 +209,7 @@ public sealed class RunRecorder : IMarchObserver
             ProcessZone = front.ZoneStart is { } start ? Math.Abs(start - front.CrackTip) : null,
             Opening = front.TipSeparation.Opening,
             Sliding = front.TipSeparation.Sliding,
-            JPath = yielded ? null : _rates[joint][f].Path(sample, _fields.DisplacementX, _fields.DisplacementY, point.Temperature),
+            JPath = yielded ? null : _rates[joint][f].Path(sample, _fields.DisplacementX, _fields.DisplacementY, point.Temperature, _model.Unknowns.OutOfPlaneStrain(_model.Layers[joint].LowerAdherend, _equilibrium.AcceptedDisplacement)),
             JRotation = yielded ? null : _rates[joint][f].Rotation(readings, _fields.DisplacementX, _fields.DisplacementY, _temperatureChanged),
             JUnderLaw = _temperatureChanged ? null : front.TipWork,
             ModeMixDegrees = front.ModeMixDegrees,

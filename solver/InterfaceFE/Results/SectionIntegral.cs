@@ -18,7 +18,8 @@ public static class SectionIntegral
     /// <param name="uy">Displacement of nodes along y [mm].</param>
     /// <param name="temperature">Temperature [K].</param>
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
-    public static double? Mean(SolidBlock solid, double fromX, double toX, double[] ux, double[] uy, double temperature, double stressFreeTemperature)
+    /// <param name="outOfPlane">Strain out of plane.</param>
+    public static double? Mean(SolidBlock solid, double fromX, double toX, double[] ux, double[] uy, double temperature, double stressFreeTemperature, double outOfPlane = 0)
     {
         int n = solid.NodesPerElement;
         Span<double> native = stackalloc double[2 * n], gradients = stackalloc double[16], positions = stackalloc double[8];
@@ -39,8 +40,8 @@ public static class SectionIntegral
                 strain[0] = g[0];
                 strain[1] = g[3];
                 strain[2] = g[1] + g[2];
-                solid.Material(e).Stress(strain, temperature - stressFreeTemperature, stress);
-                double energy = solid.Material(e).EnergyDensity(strain, temperature - stressFreeTemperature);
+                solid.Material(e).Stress(strain, temperature - stressFreeTemperature, stress, outOfPlane);
+                double energy = solid.Material(e).EnergyDensity(strain, temperature - stressFreeTemperature, outOfPlane);
                 sum += areas[p] * (stress[0] * g[0] + stress[3] * g[2] - energy);
                 area += areas[p];
             }

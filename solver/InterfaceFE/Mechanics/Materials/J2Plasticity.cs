@@ -95,6 +95,8 @@ public sealed class J2Plasticity : IPlaneLaw
         ElasticStrain(strain, temperatureChange, accepted, elastic);
         double before = accepted[EquivalentStrain];
         double size = share * Curve.At(before).Stress;
+        if (strain.Length > 3)
+            size += 2 * _shear * Math.Abs(strain[3]);
         for (int i = 0; i < 3; i++)
             size += 2 * _shear * (Math.Abs(strain[i]) + Math.Abs(elastic[i]) + Math.Abs(accepted[i]));
         var point = new YieldInput(_bulk, _shear, _moving, Curve, share, before, Rounding * size);
@@ -108,13 +110,13 @@ public sealed class J2Plasticity : IPlaneLaw
             tentative[EquivalentStrain] = before + found.Growth;
             tentative[Dissipated] += 0.5 * (shareBefore + share) * (Curve.Area(tentative[EquivalentStrain]) - Curve.Area(before));
             ElasticStrain(strain, temperatureChange, tentative, elastic);
-            Inner(held ? 4 : 3, moduli, tangent);
+            Inner(held ? 4 : 3, strain.Length, moduli, tangent);
             if (!byTemperature.IsEmpty)
                 StressByTemperature(held, moduli, byYield, shareByTemperature * found.TableStress, byTemperature);
         }
         else
         {
-            _elastic.Stiffness.CopyTo(tangent);
+            _elastic.Tangent(strain.Length, tangent);
             if (!byTemperature.IsEmpty)
                 _elastic.StressByTemperature(byTemperature);
         }
@@ -129,7 +131,7 @@ public sealed class J2Plasticity : IPlaneLaw
     {
         elastic[0] = strain[0] - _expansion[0] * temperatureChange - state[0];
         elastic[1] = strain[1] - _expansion[1] * temperatureChange - state[1];
-        elastic[2] = -_expansion[2] * temperatureChange + state[0] + state[1];
+        elastic[2] = (strain.Length > 3 ? strain[3] : 0) - _expansion[2] * temperatureChange + state[0] + state[1];
         elastic[3] = strain[2] - _expansion[3] * temperatureChange - state[2];
     }
 
@@ -146,7 +148,7 @@ public sealed class J2Plasticity : IPlaneLaw
     private void StressByTemperature(bool held, ReadOnlySpan<double> moduli, ReadOnlySpan<double> byYield, double yieldByTemperature, Span<double> byTemperature)
     {
         int size = held ? 4 : 3;
-        for (int i = 0; i < 3; i++)
+        for (int i = 0; i < byTemperature.Length; i++)
         {
             ReadOnlySpan<double> row = moduli.Slice(size * i, size);
             double blocked = row[0] * _expansion[0] + row[1] * _expansion[1] + row[2] * _expansion[3] + (held ? row[3] * _expansion[2] : 0);
@@ -154,10 +156,10 @@ public sealed class J2Plasticity : IPlaneLaw
         }
     }
 
-    private static void Inner(int size, ReadOnlySpan<double> moduli, Span<double> tangent)
+    private static void Inner(int size, int wanted, ReadOnlySpan<double> moduli, Span<double> tangent)
     {
-        for (int i = 0; i < 3; i++)
-            for (int j = 0; j < 3; j++)
-                tangent[3 * i + j] = moduli[size * i + j];
+        for (int i = 0; i < wanted; i++)
+            for (int j = 0; j < wanted; j++)
+                tangent[wanted * i + j] = moduli[size * i + j];
     }
 }

@@ -23,6 +23,8 @@ internal static class DeckChecks
             JointChecks.Run(deck, joint, $"joints.{name}", context);
         foreach ((string name, GripDeck grip) in Entries(deck.Grips))
             GripChecks.Run(deck, grip, $"grips.{name}", context);
+        if (deck.Model is { StrainOutOfPlane: not null, OutOfPlane: not OutOfPlane.UniformStrain } && context.IsSound("model.strain out of plane"))
+            context.Fail("model.strain out of plane", "applies to `out of plane: uniform strain` only");
         SequenceChecks.Run(deck, context);
         KeepChecks.Run(deck, context);
         // In a deck with errors a name may seem unused only because of them.
