@@ -6,7 +6,6 @@ namespace InterfaceFE.Decks;
 /// Material of an adherend. Isotropic when <see cref="Young"/> and <see cref="Poisson"/> hold one number, else orthotropic with axes x (along), y (through the thickness), z (out of plane).
 /// </summary>
 [Block("A material of adherends: elastic, and with a yield curve elastic and plastic. One number each makes it isotropic; values by direction make it orthotropic: x along, y through the thickness, z out of plane.")]
-[NotBuiltYet("plies")]
 public sealed record MaterialDeck
 {
     /// <summary>Young's modulus or moduli [MPa].</summary>
@@ -90,4 +89,12 @@ public sealed record ShearModuli
     /// <summary>Shear modulus in the plane of the model [MPa].</summary>
     [Key("xy", "Shear modulus in the plane of the model.", Dimension = Dimension.Stress, Example = "3.6 GPa", Above = 0)]
     public required double Xy { get; init; }
+
+    /// <summary>Shear modulus along and out of plane [MPa].</summary>
+    [Key("xz", "Shear modulus in the plane of a sheet; needed by plies that are turned.", Dimension = Dimension.Stress, Example = "4.1 GPa", Above = 0)]
+    public double? Xz { get; init; }
+
+    /// <summary>Shear modulus through the thickness and out of plane [MPa].</summary>
+    [Key("zy", "Shear modulus through the thickness and out of plane; needed by plies that are turned.", Dimension = Dimension.Stress, Example = "3.6 GPa", Above = 0)]
+    public double? Zy { get; init; }
 }

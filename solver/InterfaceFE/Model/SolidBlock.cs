@@ -83,23 +83,23 @@ public abstract class SolidBlock : IElementBlock
     /// <summary>Makes the block of an adherend in the mesh's kind of element.</summary>
     /// <param name="mesh">The mesh.</param>
     /// <param name="adherend">Adherend.</param>
-    /// <param name="material">Material in the axes of the adherend: x along it.</param>
+    /// <param name="materials">Material in the axes of the adherend, x along it: one, or one for each row of elements from the bottom up.</param>
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
     /// <param name="yielding">The same material as it yields; null: it does not.</param>
     /// <param name="outOfPlane">The unknown with which it strains out of plane; null: none.</param>
     /// <exception cref="ArgumentException">The material yields and the elements have four nodes.</exception>
-    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature, J2Plasticity? yielding = null, OutOfPlaneLink? outOfPlane = null)
+    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity[] materials, double stressFreeTemperature, J2Plasticity? yielding = null, OutOfPlaneLink? outOfPlane = null)
     {
         bool eight = mesh.NodesPerSolid == Quadrilateral8.NodeCount;
         if (yielding is not null)
         {
             return eight
-                ? new YieldingBlock(mesh, adherend, material, yielding, stressFreeTemperature, outOfPlane)
+                ? new YieldingBlock(mesh, adherend, materials, yielding, stressFreeTemperature, outOfPlane)
                 : throw new ArgumentException("yielding needs eight-node elements", nameof(yielding));
         }
         if (outOfPlane is { } link)
-            return eight ? new UniformBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature, link) : new UniformBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature, link);
-        return eight ? new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature) : new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature);
+            return eight ? new UniformBlock<Quadrilateral8>(mesh, adherend, materials, stressFreeTemperature, link) : new UniformBlock<Quadrilateral4>(mesh, adherend, materials, stressFreeTemperature, link);
+        return eight ? new SolidBlock<Quadrilateral8>(mesh, adherend, materials, stressFreeTemperature) : new SolidBlock<Quadrilateral4>(mesh, adherend, materials, stressFreeTemperature);
     }
 }
 
@@ -116,7 +116,7 @@ internal class SolidBlock<TElement> : SolidBlock
     private readonly double[] _coordinates, _stiffness, _thermal, _blocked;
     private readonly PlaneElasticity[] _materials;
 
-    public SolidBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature)
+    public SolidBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity[] materials, double stressFreeTemperature)
         : base(adherend, stressFreeTemperature)
     {
         int n = TElement.Unknowns;
@@ -136,6 +136,7 @@ internal class SolidBlock<TElement> : SolidBlock
                 xy[2 * i] = mesh.X[nodes[i]];
                 xy[2 * i + 1] = mesh.Y[nodes[i]];
             }
+            PlaneElasticity material = materials[e % materials.Length];
             _materials[e] = adherend.StraightAlongX ? material : material.Rotated(AngleAlong(xy));
             TElement.Stiffness(xy, _materials[e], adherend.Width, _stiffness.AsSpan(e * n * n, n * n));
             TElement.ThermalForce(xy, _materials[e], adherend.Width, _thermal.AsSpan(e * n, n));

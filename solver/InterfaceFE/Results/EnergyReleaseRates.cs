@@ -221,6 +221,8 @@ public sealed class EnergyReleaseRates
             return "the formula holds for a single joint";
         if (!_upper.Adherend.StraightAlongX || !_lower.Adherend.StraightAlongX)
             return "an adherend is bent";
+        if (_upper.Adherend.PlyOfRow.Count > 0 || _lower.Adherend.PlyOfRow.Count > 0)
+            return "an adherend has plies";
         if (_model.Solids.Count != 2)
             return "there are further adherends";
         if (_model.Unknowns.Bodies.Any(body => Spans(body, tip)))

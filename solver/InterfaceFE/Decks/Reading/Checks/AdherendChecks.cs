@@ -20,6 +20,8 @@ internal static class AdherendChecks
             context.FailAt(context.Find(path, out _).Key, path, "has no shape; give `rectangle` or `sheet`, for example rectangle: {corner: [0 mm, 0 mm], size: [300 mm, 4 mm]}");
         if (adherend.Sheet is { } drawn)
             CheckSheet(drawn, path + ".sheet", context);
+        if (adherend.Plies is { } plies)
+            PlyChecks.Run(deck, adherend, plies, path, context);
         if (adherend.Elements?.Finer is { } finer)
             for (int i = 0; i < finer.Count; i++)
                 if (finer[i] is { } place)
