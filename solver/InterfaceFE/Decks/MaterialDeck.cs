@@ -24,6 +24,10 @@ public sealed record MaterialDeck
     [Key("expansion", "Thermal expansion, one number or by direction {x, y, z}.", Dimension = Dimension.Expansion, Example = "23e-6 1/K", Default = "0 1/K", Above = -1e-3, Below = 1e-3)]
     public Directional Expansion { get; init; } = new(0);
 
+    /// <summary>Density [t/mm³]; null: not known.</summary>
+    [Key("density", "Density; needed where the model has `gravity`.", Dimension = Dimension.Density, Example = "2700 kg/m^3", Above = 0)]
+    public double? Density { get; init; }
+
     /// <summary>Yielding; null: the material stays elastic.</summary>
     [Key("yield curve", "Yielding by von Mises; isotropic materials in eight-node elements. Left out: the material stays elastic.")]
     public YieldCurveDeck? YieldCurve { get; init; }

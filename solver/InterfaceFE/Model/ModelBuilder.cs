@@ -32,7 +32,7 @@ public static class ModelBuilder
             OpenFaces = openFaces,
             Layers = layers,
             Grips = grips,
-            Stages = SequencePlanner.Plan(deck, unknowns, grips),
+            Stages = SequencePlanner.Plan(deck, unknowns, grips, WeightPlanner.Plan(deck, mesh, unknowns, solids)),
             StressFreeTemperature = deck.StressFreeTemperature,
         };
     }

@@ -74,6 +74,9 @@ public abstract class SolidBlock : IElementBlock
     /// <summary>Derivatives of the shape functions at the Gauss points [1/mm] (point after point, one per node) and the areas the points stand for [mm²].</summary>
     public abstract void ShapeGradients(int element, Span<double> byX, Span<double> byY, Span<double> areas);
 
+    /// <summary>Volume of an element that each of its nodes stands for: integral of its shape function [mm³]; one per node, overwritten.</summary>
+    public abstract void VolumeShares(int element, Span<double> volumes);
+
     /// <summary>Positions of the Gauss points x, y [mm], point after point; length 8, overwritten.</summary>
     public abstract void GaussPositions(int element, Span<double> positions);
 
@@ -186,6 +189,19 @@ internal class SolidBlock<TElement> : SolidBlock
         TElement.ShapeGradients(Coordinates(element), byX, byY, areas);
 
     public override void GaussPositions(int element, Span<double> positions) => TElement.GaussPositions(Coordinates(element), positions);
+
+    public override void VolumeShares(int element, Span<double> volumes)
+    {
+        Span<double> byX = stackalloc double[4 * TElement.Nodes], byY = stackalloc double[4 * TElement.Nodes], areas = stackalloc double[GaussPoints.Count], shape = stackalloc double[TElement.Nodes];
+        TElement.ShapeGradients(Coordinates(element), byX, byY, areas);
+        volumes.Clear();
+        for (int point = 0; point < GaussPoints.Count; point++)
+        {
+            TElement.ShapeFunctions(GaussPoints.Xi(point), GaussPoints.Eta(point), shape);
+            for (int i = 0; i < shape.Length; i++)
+                volumes[i] += shape[i] * areas[point] * Adherend.Width;
+        }
+    }
 
     public override void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues) =>
         TElement.ExtrapolateToNodes(components, gaussValues, nodeValues);
