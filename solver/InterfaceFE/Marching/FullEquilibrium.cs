@@ -13,6 +13,9 @@ public sealed class FullEquilibrium : IEquilibrium
     /// <summary>Share of the largest reference of the run below which the reference does not fall: after full unloading only rounding is left to measure by.</summary>
     private const double LeastReference = 1e-3;
 
+    /// <summary>Share of the reference above which rounding is no excuse once metal has yielded: displacements have run away, as they do at its limit load.</summary>
+    private const double LargestFloor = 1e-5;
+
     private readonly SpecimenModel _model;
     private readonly ElementTable _table;
     private readonly TangentFactor _factor;
@@ -24,7 +27,7 @@ public sealed class FullEquilibrium : IEquilibrium
     private readonly double[] _native, _force, _rate, _dissipation, _tangent, _work, _transformed;
     private int[] _heldUnknowns = [];
     private double[] _heldStart = [], _heldEnd = [];
-    private readonly double[] _externalStart, _externalEnd;
+    private readonly double[] _externalStart, _externalEnd, _weightStart, _weightEnd;
     private double _temperatureStart, _temperatureEnd, _baseProgress, _correctionProgress, _reference, _largestReference;
     private LoadStage? _stage;
 
@@ -47,6 +50,8 @@ public sealed class FullEquilibrium : IEquilibrium
         _externalRate = new double[n];
         _externalStart = new double[n];
         _externalEnd = new double[n];
+        _weightStart = new double[n];
+        _weightEnd = new double[n];
         _held = new double[n];
         _heldRate = new double[n];
         _rightSide = new double[n];
@@ -149,15 +154,22 @@ public sealed class FullEquilibrium : IEquilibrium
     /// <summary>External force on an unknown at the tentative progress: the reaction where it is held, else the applied force [N or N·mm].</summary>
     public double ExternalForce(int unknown) => _isHeld[unknown] ? _internal[unknown] : _external[unknown];
 
+    /// <summary>Force of a grip on an unknown: the external force without the weight that acts there [N or N·mm].</summary>
+    public double GripForce(int unknown) => ExternalForce(unknown) - _weightStart[unknown] - Progress * (_weightEnd[unknown] - _weightStart[unknown]);
+
     /// <summary>Begins a stage from the accepted point: values held, forces from where they are, temperature.</summary>
     public void StartStage(LoadStage stage)
     {
         _stage = stage;
         Array.Copy(_accepted, _u, _u.Length);
+        Array.Copy(_weightEnd, _weightStart, _weightEnd.Length);
+        Array.Clear(_weightEnd);
+        foreach (ForceTarget weight in stage.Weights)
+            _weightEnd[weight.Unknown] = weight.Value;
         for (int i = 0; i < _externalStart.Length; i++)
         {
             _externalStart[i] = _isHeld[i] ? _internal[i] : _external[i];
-            _externalEnd[i] = _isHeld[i] ? 0 : _external[i];
+            _externalEnd[i] = (_isHeld[i] ? 0 : _external[i] - _weightStart[i]) + _weightEnd[i];
         }
         Array.Clear(_isHeld);
         _heldUnknowns = [.. stage.Held.Select(h => h.Unknown)];
@@ -176,7 +188,7 @@ public sealed class FullEquilibrium : IEquilibrium
             };
         }
         foreach (ForceTarget force in stage.Forces)
-            _externalEnd[force.Unknown] = force.Value;
+            _externalEnd[force.Unknown] = force.Value + _weightEnd[force.Unknown];
         for (int i = 0; i < _externalRate.Length; i++)
         {
             if (_isHeld[i])
@@ -212,12 +224,12 @@ public sealed class FullEquilibrium : IEquilibrium
         wanted |= Wanted.Force | Wanted.Energy;
         int changed = 0;
         GrowingElements = 0;
-        double storedSolids = 0, storedLayers = 0, spent = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
+        double storedSolids = 0, storedLayers = 0, spent = 0, yielding = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
         for (int block = 0; block < _table.Blocks.Count; block++)
         {
             IElementBlock elements = _table.Blocks[block];
             bool layer = block >= _table.FirstLayerBlock;
-            int n = 2 * elements.NodesPerElement;
+            int n = elements.NativeCount;
             var buffers = new ElementBuffers { Force = _force.AsSpan(0, n), Tangent = _tangent.AsSpan(0, n * n), LoadRate = _rate.AsSpan(0, n), Dissipation = _dissipation.AsSpan(0, n) };
             Span<double> native = _native.AsSpan(0, n);
             for (int e = 0; e < elements.Count; e++)
@@ -254,12 +266,15 @@ public sealed class FullEquilibrium : IEquilibrium
                     _bonds.Take(layerElement, answer);
                 }
                 else if (block < _table.SolidBlocks)
+                {
                     storedSolids += answer.Stored;
+                    yielding += answer.Dissipated;
+                }
                 else
                     storedLayers += answer.Stored;
             }
         }
-        Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature);
+        Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature) { SpentInYielding = yielding };
         LayerWorkByProgress = layersByTemperature * (_temperatureEnd - _temperatureStart);
         DissipationByProgress = dissipatedByTemperature * (_temperatureEnd - _temperatureStart);
 
@@ -294,7 +309,8 @@ public sealed class FullEquilibrium : IEquilibrium
         double largest = 0;
         foreach (double value in _rightSide)
             largest = Math.Max(largest, value);
-        return Rounding * largest;
+        double mostWhileFlowing = Energy.SpentInYielding > 0 ? LargestFloor * Math.Max(_reference, LeastReference * _largestReference) : double.PositiveInfinity;
+        return Math.Min(Rounding * largest, mostWhileFlowing);
     }
 
     /// <summary>Energy below which rounding rules [mJ]: 50 units of rounding of displacement times stiffness times displacement, magnitudes throughout.</summary>
@@ -436,6 +452,9 @@ public sealed class FullEquilibrium : IEquilibrium
         }
         return 0;
     }
+
+    /// <summary>State of an element of an adherend at the accepted point.</summary>
+    public ReadOnlySpan<double> AcceptedSolidState(int adherend, int element) => _state.Accepted(adherend, element);
 
     /// <summary>State of a layer element at the accepted point.</summary>
     public ReadOnlySpan<double> AcceptedLayerState(int joint, int element) => _state.Accepted(_table.FirstLayerBlock + joint, element);

@@ -138,7 +138,8 @@ internal sealed class StageMarch
             return severed;
         return Stop(string.Create(CultureInfo.InvariantCulture, $"no equilibrium was found beyond progress {_equilibrium.AcceptedProgress:G6} of stage {_points.Stage.Number} ({_points.Stage.Words}), however short the stride")
             + (failure.StartsWith(StagePoints.Overflow, StringComparison.Ordinal) ? ": " + failure : "")
-            + (_settings.Path == PathControl.None ? "; a limit point needs `control: automatic`" : ""));
+            + (_settings.Path == PathControl.None ? "; a limit point needs `control: automatic`" : "")
+            + (_equilibrium.Energy.SpentInYielding > 0 ? "; an adherend has yielded: if this is its limit load, drive the grip by travel or angle instead" : ""));
     }
 
     private Attempt TryOwn(double stride)
@@ -174,7 +175,7 @@ internal sealed class StageMarch
     /// <summary>Whether the load falls without any dissipation: unloading, which fulfils the equation of arc length as well as going on does.</summary>
     private bool GoesBack() =>
         _equilibrium.Progress < _equilibrium.AcceptedProgress
-        && _equilibrium.Energy.SpentInLayers - _points.Accepted.SpentInLayers <= NoDissipation * Math.Max(_way.Dissipation, _points.Accepted.SpentInLayers);
+        && _equilibrium.Energy.Spent - _points.Accepted.Spent <= NoDissipation * Math.Max(_way.Dissipation, _points.Accepted.Spent);
 
     private Attempt Search(IControl control, double guess)
     {

@@ -6,7 +6,7 @@ namespace InterfaceFE.Model;
 
 /// <summary>
 /// Elements of one adherend. Linear elastic at small rotation: stiffness, thermal force and blocked thermal energy of each element are computed once, after which
-/// force = K·u + thermal force·dT, energy = ½·u·K·u + dT·(thermal force·u) + ½·c·dT².
+/// force = K·u + thermal force·dT, energy = ½·u·K·u + dT·(thermal force·u) + ½·c·dT². A material that yields is in <see cref="YieldingBlock"/>.
 /// </summary>
 public abstract class SolidBlock : IElementBlock
 {
@@ -32,10 +32,19 @@ public abstract class SolidBlock : IElementBlock
     public abstract int NodesPerElement { get; }
 
     /// <inheritdoc/>
-    public int StateSize => 0;
+    public virtual int NativeCount => 2 * NodesPerElement;
 
     /// <inheritdoc/>
-    public TangentKind Kind => TangentKind.Constant;
+    public virtual int OutOfPlaneUnknown => -1;
+
+    /// <inheritdoc/>
+    public virtual int StateSize => 0;
+
+    /// <inheritdoc/>
+    public virtual TangentKind Kind => TangentKind.Constant;
+
+    /// <summary>Yield stress of the material; null when it does not yield.</summary>
+    public virtual YieldCurve? YieldCurve => null;
 
     /// <inheritdoc/>
     public ReadOnlySpan<int> Nodes(int element) => Adherend.Connectivity.AsSpan(element * NodesPerElement, NodesPerElement);
@@ -48,16 +57,25 @@ public abstract class SolidBlock : IElementBlock
 
     /// <summary>Stresses at the four Gauss points of an element.</summary>
     /// <param name="element">Element index.</param>
-    /// <param name="displacement">Native displacements [mm].</param>
+    /// <param name="displacement">Native displacements [mm], <see cref="NativeCount"/> numbers.</param>
     /// <param name="temperature">Temperature [K].</param>
+    /// <param name="accepted">Accepted state that goes with the displacements.</param>
     /// <param name="stresses">Point after point xx, yy, zz, xy [MPa]; length 16, overwritten.</param>
-    public abstract void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> stresses);
+    public abstract void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, ReadOnlySpan<double> accepted, Span<double> stresses);
+
+    /// <summary>Equivalent plastic strain at the Gauss points of an element, from its accepted state.</summary>
+    /// <param name="accepted">Accepted state.</param>
+    /// <param name="strains">Length 4, overwritten.</param>
+    public virtual void PlasticStrains(ReadOnlySpan<double> accepted, Span<double> strains) => strains.Clear();
 
     /// <summary>Displacement gradients at the Gauss points: du/dx, du/dy, dv/dx, dv/dy, point after point; length 16, overwritten.</summary>
     public abstract void Gradients(int element, ReadOnlySpan<double> displacement, Span<double> gradients);
 
     /// <summary>Derivatives of the shape functions at the Gauss points [1/mm] (point after point, one per node) and the areas the points stand for [mm²].</summary>
     public abstract void ShapeGradients(int element, Span<double> byX, Span<double> byY, Span<double> areas);
+
+    /// <summary>Volume of an element that each of its nodes stands for: integral of its shape function [mm³]; one per node, overwritten.</summary>
+    public abstract void VolumeShares(int element, Span<double> volumes);
 
     /// <summary>Positions of the Gauss points x, y [mm], point after point; length 8, overwritten.</summary>
     public abstract void GaussPositions(int element, Span<double> positions);
@@ -68,23 +86,40 @@ public abstract class SolidBlock : IElementBlock
     /// <summary>Makes the block of an adherend in the mesh's kind of element.</summary>
     /// <param name="mesh">The mesh.</param>
     /// <param name="adherend">Adherend.</param>
-    /// <param name="material">Material in the axes of the adherend: x along it.</param>
+    /// <param name="materials">Material in the axes of the adherend, x along it: one, or one for each row of elements from the bottom up.</param>
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
-    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature) =>
-        mesh.NodesPerSolid == Quadrilateral8.NodeCount
-            ? new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature)
-            : new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature);
+    /// <param name="yielding">The same material as it yields; null: it does not.</param>
+    /// <param name="outOfPlane">The unknown with which it strains out of plane; null: none.</param>
+    /// <exception cref="ArgumentException">The material yields and the elements have four nodes.</exception>
+    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity[] materials, double stressFreeTemperature, J2Plasticity? yielding = null, OutOfPlaneLink? outOfPlane = null)
+    {
+        bool eight = mesh.NodesPerSolid == Quadrilateral8.NodeCount;
+        if (yielding is not null)
+        {
+            return eight
+                ? new YieldingBlock(mesh, adherend, materials, yielding, stressFreeTemperature, outOfPlane)
+                : throw new ArgumentException("yielding needs eight-node elements", nameof(yielding));
+        }
+        if (outOfPlane is { } link)
+            return eight ? new UniformBlock<Quadrilateral8>(mesh, adherend, materials, stressFreeTemperature, link) : new UniformBlock<Quadrilateral4>(mesh, adherend, materials, stressFreeTemperature, link);
+        return eight ? new SolidBlock<Quadrilateral8>(mesh, adherend, materials, stressFreeTemperature) : new SolidBlock<Quadrilateral4>(mesh, adherend, materials, stressFreeTemperature);
+    }
 }
+
+/// <summary>The unknown with which a block strains out of plane.</summary>
+/// <param name="Unknown">Elongation of the group [mm].</param>
+/// <param name="Length">Length over which it is counted [mm]: strain = elongation over length.</param>
+public readonly record struct OutOfPlaneLink(int Unknown, double Length);
 
 /// <summary>The block for one kind of element.</summary>
 /// <typeparam name="TElement">Kind of element.</typeparam>
-internal sealed class SolidBlock<TElement> : SolidBlock
+internal class SolidBlock<TElement> : SolidBlock
     where TElement : struct, IPlaneElement
 {
     private readonly double[] _coordinates, _stiffness, _thermal, _blocked;
     private readonly PlaneElasticity[] _materials;
 
-    public SolidBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature)
+    public SolidBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity[] materials, double stressFreeTemperature)
         : base(adherend, stressFreeTemperature)
     {
         int n = TElement.Unknowns;
@@ -104,6 +139,7 @@ internal sealed class SolidBlock<TElement> : SolidBlock
                 xy[2 * i] = mesh.X[nodes[i]];
                 xy[2 * i + 1] = mesh.Y[nodes[i]];
             }
+            PlaneElasticity material = materials[e % materials.Length];
             _materials[e] = adherend.StraightAlongX ? material : material.Rotated(AngleAlong(xy));
             TElement.Stiffness(xy, _materials[e], adherend.Width, _stiffness.AsSpan(e * n * n, n * n));
             TElement.ThermalForce(xy, _materials[e], adherend.Width, _thermal.AsSpan(e * n, n));
@@ -143,7 +179,7 @@ internal sealed class SolidBlock<TElement> : SolidBlock
 
     public override PlaneElasticity Material(int element) => _materials[element];
 
-    public override void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> stresses) =>
+    public override void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, ReadOnlySpan<double> accepted, Span<double> stresses) =>
         TElement.Stresses(Coordinates(element), _materials[element], displacement, temperature - StressFreeTemperature, stresses);
 
     public override void Gradients(int element, ReadOnlySpan<double> displacement, Span<double> gradients) =>
@@ -154,6 +190,19 @@ internal sealed class SolidBlock<TElement> : SolidBlock
 
     public override void GaussPositions(int element, Span<double> positions) => TElement.GaussPositions(Coordinates(element), positions);
 
+    public override void VolumeShares(int element, Span<double> volumes)
+    {
+        Span<double> byX = stackalloc double[4 * TElement.Nodes], byY = stackalloc double[4 * TElement.Nodes], areas = stackalloc double[GaussPoints.Count], shape = stackalloc double[TElement.Nodes];
+        TElement.ShapeGradients(Coordinates(element), byX, byY, areas);
+        volumes.Clear();
+        for (int point = 0; point < GaussPoints.Count; point++)
+        {
+            TElement.ShapeFunctions(GaussPoints.Xi(point), GaussPoints.Eta(point), shape);
+            for (int i = 0; i < shape.Length; i++)
+                volumes[i] += shape[i] * areas[point] * Adherend.Width;
+        }
+    }
+
     public override void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues) =>
         TElement.ExtrapolateToNodes(components, gaussValues, nodeValues);
 
@@ -161,7 +210,7 @@ internal sealed class SolidBlock<TElement> : SolidBlock
     /// Displacement less a rigid movement: that of the first node and the turn of the diagonal. It strains nothing, so forces stay the same; their rounding then grows with the
     /// strain and not with the travel, which in slender arms is ten thousand times as large.
     /// </summary>
-    private void TakeRigidMovementOff(int element, ReadOnlySpan<double> displacement, Span<double> strained)
+    protected void TakeRigidMovementOff(int element, ReadOnlySpan<double> displacement, Span<double> strained)
     {
         ReadOnlySpan<double> xy = Coordinates(element);
         double x = xy[0], y = xy[1], u = displacement[0], v = displacement[1];
@@ -174,7 +223,11 @@ internal sealed class SolidBlock<TElement> : SolidBlock
         }
     }
 
-    private ReadOnlySpan<double> Coordinates(int element) => _coordinates.AsSpan(element * TElement.Unknowns, TElement.Unknowns);
+    /// <summary>Elastic stiffness of an element [N/mm], row-major.</summary>
+    protected ReadOnlySpan<double> ElasticStiffness(int element) => _stiffness.AsSpan(element * TElement.Unknowns * TElement.Unknowns, TElement.Unknowns * TElement.Unknowns);
+
+    /// <summary>Coordinates of an element's nodes.</summary>
+    protected ReadOnlySpan<double> Coordinates(int element) => _coordinates.AsSpan(element * TElement.Unknowns, TElement.Unknowns);
 
     private static double Dot(ReadOnlySpan<double> a, ReadOnlySpan<double> b)
     {
@@ -184,6 +237,7 @@ internal sealed class SolidBlock<TElement> : SolidBlock
         return sum;
     }
 
-    private static double AngleAlong(ReadOnlySpan<double> xy) =>
+    /// <summary>Angle from the model's x axis to an element's way along its adherend [rad].</summary>
+    protected static double AngleAlong(ReadOnlySpan<double> xy) =>
         Math.Atan2(xy[3] + xy[5] - xy[1] - xy[7], xy[2] + xy[4] - xy[0] - xy[6]);
 }

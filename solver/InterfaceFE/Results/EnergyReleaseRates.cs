@@ -35,12 +35,13 @@ public sealed class EnergyReleaseRates
         _upper = model.Solids[_joint.UpperAdherend];
         _lower = model.Solids[_joint.LowerAdherend];
         double tip = model.Mesh.X[front.TipNode];
-        PathReason = Place(tip, out double behind, out double ahead);
+        bool isHeavy = model.Stages.Any(stage => stage.Weights.Count > 0);
+        PathReason = Place(tip, out double behind, out double ahead) ?? (isHeavy ? "weight acts on the arms" : null);
         _behindFrom = Math.Min(tip + 0.3 * (behind - tip), tip + 0.7 * (behind - tip));
         _behindTo = Math.Max(tip + 0.3 * (behind - tip), tip + 0.7 * (behind - tip));
         _aheadFrom = Math.Min(tip + 0.85 * (ahead - tip), tip + 0.95 * (ahead - tip));
         _aheadTo = Math.Max(tip + 0.85 * (ahead - tip), tip + 0.95 * (ahead - tip));
-        RotationReason = CheckRotation(tip);
+        RotationReason = CheckRotation(tip) ?? (isHeavy ? "weight acts on the arms" : null);
     }
 
     /// <summary>Why J by path has no value; null when it has.</summary>
@@ -50,15 +51,20 @@ public sealed class EnergyReleaseRates
     public string? RotationReason { get; }
 
     /// <summary>J by path [N/mm] at the accepted point; null where not valid.</summary>
-    public double? Path(LayerSample sample, double[] ux, double[] uy, double temperature)
+    /// <param name="sample">The joint's layer.</param>
+    /// <param name="ux">Displacement of nodes along x [mm].</param>
+    /// <param name="uy">Displacement of nodes along y [mm].</param>
+    /// <param name="temperature">Temperature [K].</param>
+    /// <param name="outOfPlane">Strain out of plane of both adherends.</param>
+    public double? Path(LayerSample sample, double[] ux, double[] uy, double temperature, double outOfPlane = 0)
     {
         if (PathReason is not null || FrontIsNear)
             return null;
         double j = 0;
         foreach (SolidBlock solid in (ReadOnlySpan<SolidBlock>)[_upper, _lower])
         {
-            double? behind = SectionIntegral.Mean(solid, _behindFrom, _behindTo, ux, uy, temperature, _model.StressFreeTemperature);
-            double? ahead = SectionIntegral.Mean(solid, _aheadFrom, _aheadTo, ux, uy, temperature, _model.StressFreeTemperature);
+            double? behind = SectionIntegral.Mean(solid, _behindFrom, _behindTo, ux, uy, temperature, _model.StressFreeTemperature, outOfPlane);
+            double? ahead = SectionIntegral.Mean(solid, _aheadFrom, _aheadTo, ux, uy, temperature, _model.StressFreeTemperature, outOfPlane);
             if (behind is null || ahead is null)
                 return null;
             j += (behind.Value - ahead.Value) * solid.Adherend.Width / _joint.Width;
@@ -216,6 +222,8 @@ public sealed class EnergyReleaseRates
             return "the formula holds for a single joint";
         if (!_upper.Adherend.StraightAlongX || !_lower.Adherend.StraightAlongX)
             return "an adherend is bent";
+        if (_upper.Adherend.PlyOfRow.Count > 0 || _lower.Adherend.PlyOfRow.Count > 0)
+            return "an adherend has plies";
         if (_model.Solids.Count != 2)
             return "there are further adherends";
         if (_model.Unknowns.Bodies.Any(body => Spans(body, tip)))

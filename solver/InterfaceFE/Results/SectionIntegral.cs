@@ -4,7 +4,7 @@ namespace InterfaceFE.Results;
 
 /// <summary>
 /// Upright sections through a straight adherend for J: the integral over the section of sigma_xx·u_x,x + sigma_xy·u_y,x - W per width, W the mechanical energy density with its
-/// out-of-plane part (Rice 1968; Eshelby's energy momentum). It is the same at every section between loads, so it is averaged over whole columns of elements.
+/// out-of-plane part (Rice 1968; Eshelby's energy momentum), for a material that has not yielded. It is the same at every section between loads, so it is averaged over whole columns of elements.
 /// </summary>
 public static class SectionIntegral
 {
@@ -18,11 +18,12 @@ public static class SectionIntegral
     /// <param name="uy">Displacement of nodes along y [mm].</param>
     /// <param name="temperature">Temperature [K].</param>
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
-    public static double? Mean(SolidBlock solid, double fromX, double toX, double[] ux, double[] uy, double temperature, double stressFreeTemperature)
+    /// <param name="outOfPlane">Strain out of plane.</param>
+    public static double? Mean(SolidBlock solid, double fromX, double toX, double[] ux, double[] uy, double temperature, double stressFreeTemperature, double outOfPlane = 0)
     {
         int n = solid.NodesPerElement;
-        Span<double> native = stackalloc double[2 * n], stresses = stackalloc double[16], gradients = stackalloc double[16], positions = stackalloc double[8];
-        Span<double> byX = stackalloc double[4 * n], byY = stackalloc double[4 * n], areas = stackalloc double[4], strain = stackalloc double[3];
+        Span<double> native = stackalloc double[2 * n], gradients = stackalloc double[16], positions = stackalloc double[8];
+        Span<double> byX = stackalloc double[4 * n], byY = stackalloc double[4 * n], areas = stackalloc double[4], strain = stackalloc double[3], stress = stackalloc double[4];
         double sum = 0, area = 0;
         for (int e = 0; e < solid.Count; e++)
         {
@@ -31,7 +32,6 @@ public static class SectionIntegral
             if (middle < fromX || middle > toX)
                 continue;
             LayerSample.Gather(solid.Nodes(e), ux, uy, native);
-            solid.Stresses(e, native, temperature, stresses);
             solid.Gradients(e, native, gradients);
             solid.ShapeGradients(e, byX, byY, areas);
             for (int p = 0; p < 4; p++)
@@ -40,8 +40,9 @@ public static class SectionIntegral
                 strain[0] = g[0];
                 strain[1] = g[3];
                 strain[2] = g[1] + g[2];
-                double energy = solid.Material(e).EnergyDensity(strain, temperature - stressFreeTemperature);
-                sum += areas[p] * (stresses[4 * p] * g[0] + stresses[4 * p + 3] * g[2] - energy);
+                solid.Material(e).Stress(strain, temperature - stressFreeTemperature, stress, outOfPlane);
+                double energy = solid.Material(e).EnergyDensity(strain, temperature - stressFreeTemperature, outOfPlane);
+                sum += areas[p] * (stress[0] * g[0] + stress[3] * g[2] - energy);
                 area += areas[p];
             }
         }

@@ -51,7 +51,7 @@ public class LayerPatchTests
             for (int e = 0; e < solid.Count; e++)
             {
                 LayerSample.Gather(solid.Nodes(e), ux, uy, native);
-                solid.Stresses(e, native.AsSpan(0, 2 * solid.NodesPerElement), equilibrium.AcceptedTemperature, stress);
+                solid.Stresses(e, native.AsSpan(0, 2 * solid.NodesPerElement), equilibrium.AcceptedTemperature, [], stress);
                 for (int p = 0; p < 4; p++)
                 {
                     Close.To(xx, stress[4 * p], 1e-9, 0, "xx");
@@ -109,7 +109,7 @@ public class LayerPatchTests
         {
             Mesh = mesh,
             Unknowns = unknowns,
-            Solids = [.. mesh.Adherends.Select(a => SolidBlock.Create(mesh, a, material, 293.15))],
+            Solids = [.. mesh.Adherends.Select(a => SolidBlock.Create(mesh, a, [material], 293.15))],
             OpenFaces = [],
             Layers = [new LayerBlock(mesh, mesh.Joints[0], law, 0.1, LayerRule.SubIntervals(mesh.NodesPerFace), 0, 293.15, bonded: true)],
             Grips = [new Grip("outline", [0])],

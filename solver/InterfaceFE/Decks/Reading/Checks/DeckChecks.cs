@@ -10,7 +10,11 @@ internal static class DeckChecks
     public static void Run(Deck deck, ReadContext context)
     {
         foreach ((string name, MaterialDeck material) in Entries(deck.Materials))
+        {
             MaterialChecks.Run(material, $"materials.{name}", context);
+            if (material.YieldCurve is { } curve)
+                YieldChecks.Run(deck, name, material, curve, context);
+        }
         foreach ((string name, LayerDeck layer) in Entries(deck.Layers))
             LayerChecks.Run(layer, $"layers.{name}", context);
         foreach ((string name, AdherendDeck adherend) in Entries(deck.Adherends))
@@ -19,6 +23,8 @@ internal static class DeckChecks
             JointChecks.Run(deck, joint, $"joints.{name}", context);
         foreach ((string name, GripDeck grip) in Entries(deck.Grips))
             GripChecks.Run(deck, grip, $"grips.{name}", context);
+        if (deck.Model is { StrainOutOfPlane: not null, OutOfPlane: not OutOfPlane.UniformStrain } && context.IsSound("model.strain out of plane"))
+            context.Fail("model.strain out of plane", "applies to `out of plane: uniform strain` only");
         SequenceChecks.Run(deck, context);
         KeepChecks.Run(deck, context);
         // In a deck with errors a name may seem unused only because of them.
