@@ -210,6 +210,7 @@ public sealed class FullEquilibrium : IEquilibrium
         wanted |= Wanted.Force | Wanted.Energy;
         int changed = 0;
         GrowingElements = 0;
+        _table.Turn(_u);
         double storedSolids = 0, storedLayers = 0, spent = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
         for (int block = 0; block < _table.Blocks.Count; block++)
         {
@@ -231,7 +232,7 @@ public sealed class FullEquilibrium : IEquilibrium
                     _table.Scatter(slot, buffers.Force, _layerForce, _noMagnitudes);
                 if ((own & Wanted.LoadRate) != 0)
                     _table.Scatter(slot, buffers.LoadRate, _temperatureRate, _noMagnitudes);
-                if ((own & Wanted.Tangent) != 0 && Store(slot, _table.TransformTangent(slot, buffers.Tangent, _work, _transformed)))
+                if ((own & Wanted.Tangent) != 0 && Store(slot, _table.TransformTangent(slot, buffers.Tangent, buffers.Force, _work, _transformed)))
                     changed++;
                 byTemperature += answer.StoredByTemperature;
                 if (layer)

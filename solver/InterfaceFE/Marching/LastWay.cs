@@ -1,3 +1,5 @@
+using InterfaceFE.Model;
+
 namespace InterfaceFE.Marching;
 
 /// <summary>The way from the point before to the accepted point, in every measure that a control may continue it by.</summary>
@@ -36,6 +38,28 @@ internal sealed class LastWay
         Exists = true;
     }
 
+    /// <summary>Whether the tentative way of the equilibrium has a component against this one.</summary>
+    public bool Opposes(FullEquilibrium equilibrium)
+    {
+        ReadOnlySpan<double> now = equilibrium.Displacement, accepted = equilibrium.AcceptedDisplacement;
+        double along = 0;
+        for (int i = 0; i < _displacement.Length; i++)
+            along += _displacement[i] * (now[i] - accepted[i]);
+        return along < 0;
+    }
+
+    /// <summary>Movement of the grips along x and y: what arc length watches where no layer can soften.</summary>
+    private static List<(int, int)> Grips(UnknownMap unknowns)
+    {
+        var watched = new List<(int, int)>();
+        for (int b = 0; b < unknowns.Bodies.Count; b++)
+        {
+            IEnumerable<int> first = unknowns.Bodies[b].Rigid ? [unknowns.OfBody(b)] : unknowns.Bodies[b].Nodes.Select(unknowns.OfNode);
+            watched.AddRange(first.SelectMany(i => new[] { (i, -1), (i + 1, -1) }));
+        }
+        return watched;
+    }
+
     /// <summary>The control that goes on by a share of this way in a given measure; null where the measure did not grow on it.</summary>
     /// <param name="measure">Measure.</param>
     /// <param name="share">Share of the way; above 1 for a longer stride.</param>
@@ -50,7 +74,7 @@ internal sealed class LastWay
             case PathMeasure.Dissipation when Dissipation > 0:
                 return new DissipationControl(accepted.SpentInLayers + share * Dissipation, share * Dissipation);
             case PathMeasure.ArcLength:
-                IReadOnlyList<(int, int)> watched = equilibrium.Bonds.WatchedSeparations();
+                IReadOnlyList<(int, int)> watched = equilibrium.Model.Layers.Count > 0 ? equilibrium.Bonds.WatchedSeparations() : Grips(equilibrium.Model.Unknowns);
                 double[] way = (double[])_displacement.Clone();
                 double length = new ArcLengthControl(watched, way, 1).Length(way, []);
                 return length > 0 ? new ArcLengthControl(watched, way, share * length) : null;

@@ -56,7 +56,10 @@ internal sealed class StageMarch
 
     public int Point { get; private set; }
 
-    private bool PathCanTakeOver => _settings.Path != PathControl.None && _equilibrium.Model.Layers.Count > 0 && _way.Exists;
+    /// <summary>Softening layers and turning sheets have limit points; what neither softens nor turns has none.</summary>
+    private bool PathCanTakeOver => _settings.Path != PathControl.None && (_equilibrium.Model.Layers.Count > 0 || Turns) && _way.Exists;
+
+    private bool Turns => _equilibrium.Model.Unknowns.Turns;
 
     public static string CanStillMove(FullEquilibrium equilibrium, int unknown) =>
         $"{equilibrium.Model.Unknowns.Describe(unknown)} can still move freely: nothing holds it. Usual causes: a grip that should be fixed (x, y or rotation) in the sequence, "
@@ -204,9 +207,12 @@ internal sealed class StageMarch
         return Search(new OwnControl(1, 1 - start));
     }
 
-    /// <summary>Whether the load falls without any dissipation: unloading, which fulfils the equation of arc length as well as going on does.</summary>
+    /// <summary>
+    /// Whether nothing is dissipated while the load falls: unloading, which fulfils the equation of arc length as well as going on does. What turns may snap through and back without
+    /// dissipation: it goes back where it moves against its last way.
+    /// </summary>
     private bool GoesBack() =>
-        _equilibrium.Progress < _equilibrium.AcceptedProgress
+        (Turns ? _way.Opposes(_equilibrium) : _equilibrium.Progress < _equilibrium.AcceptedProgress)
         && _equilibrium.Energy.SpentInLayers - _accepted.SpentInLayers <= NoDissipation * Math.Max(_way.Dissipation, _accepted.SpentInLayers);
 
     private Attempt Search(IControl control)

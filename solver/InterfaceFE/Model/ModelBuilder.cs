@@ -15,12 +15,13 @@ public static class ModelBuilder
     /// <exception cref="DeckException">The deck asks for something that the mesh or the mechanics cannot give.</exception>
     public static SpecimenModel Build(Deck deck, Mesh mesh)
     {
+        bool turns = deck.Model.Rotation == RotationSetting.Finite;
         PlaneElasticity[] materials = [.. mesh.Adherends.Select(a => MaterialFactory.Create(deck, a.Material))];
-        SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature))];
+        SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature, turns))];
         LayerBlock[] layers = [.. mesh.Joints.Select(joint => Layer(deck, mesh, joint, materials))];
         LayerBlock[] openFaces = [.. mesh.Joints.Zip(layers, (joint, layer) => OpenFaces(deck, mesh, joint, layer)).Where(block => block.Count > 0)];
         (IReadOnlyList<GripBody> bodies, IReadOnlyList<Grip> grips) = GripPlanner.Plan(deck, mesh);
-        var unknowns = new UnknownMap(mesh, bodies);
+        var unknowns = new UnknownMap(mesh, bodies, turns);
         return new SpecimenModel
         {
             Mesh = mesh,

@@ -32,10 +32,10 @@ public abstract class SolidBlock : IElementBlock
     public abstract int NodesPerElement { get; }
 
     /// <inheritdoc/>
-    public int StateSize => 0;
+    public virtual int StateSize => 0;
 
     /// <inheritdoc/>
-    public TangentKind Kind => TangentKind.Constant;
+    public virtual TangentKind Kind => TangentKind.Constant;
 
     /// <inheritdoc/>
     public ReadOnlySpan<int> Nodes(int element) => Adherend.Connectivity.AsSpan(element * NodesPerElement, NodesPerElement);
@@ -56,6 +56,33 @@ public abstract class SolidBlock : IElementBlock
     /// <summary>Displacement gradients at the Gauss points: du/dx, du/dy, dv/dx, dv/dy, point after point; length 16, overwritten.</summary>
     public abstract void Gradients(int element, ReadOnlySpan<double> displacement, Span<double> gradients);
 
+    /// <summary>Rotation of the material at a displacement gradient [rad], counter-clockwise.</summary>
+    public virtual double Rotation(ReadOnlySpan<double> gradient) => 0.5 * (gradient[2] - gradient[1]);
+
+    /// <summary>
+    /// Component xx of Eshelby's energy momentum at the Gauss points with opposite sign, before deformation: traction on a section whose normal is x times d displacement/dx, less the
+    /// energy density, of the strain less the thermal strain and with its out-of-plane part.
+    /// </summary>
+    /// <param name="element">Element index.</param>
+    /// <param name="displacement">Native displacements [mm].</param>
+    /// <param name="temperature">Temperature [K].</param>
+    /// <param name="momentum">One per point [MPa]; length 4, overwritten.</param>
+    public virtual void EnergyMomentum(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> momentum)
+    {
+        Span<double> stresses = stackalloc double[16], gradients = stackalloc double[16], strain = stackalloc double[3];
+        Stresses(element, displacement, temperature, stresses);
+        Gradients(element, displacement, gradients);
+        for (int p = 0; p < 4; p++)
+        {
+            ReadOnlySpan<double> g = gradients.Slice(4 * p, 4);
+            strain[0] = g[0];
+            strain[1] = g[3];
+            strain[2] = g[1] + g[2];
+            double energy = Material(element).EnergyDensity(strain, temperature - StressFreeTemperature);
+            momentum[p] = stresses[4 * p] * g[0] + stresses[4 * p + 3] * g[2] - energy;
+        }
+    }
+
     /// <summary>Derivatives of the shape functions at the Gauss points [1/mm] (point after point, one per node) and the areas the points stand for [mm²].</summary>
     public abstract void ShapeGradients(int element, Span<double> byX, Span<double> byY, Span<double> areas);
 
@@ -65,15 +92,25 @@ public abstract class SolidBlock : IElementBlock
     /// <summary>Values at the nodes from values at the Gauss points.</summary>
     public abstract void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues);
 
+    /// <summary>Angle from the model's x axis to an element's way along its adherend [rad].</summary>
+    private protected static double AngleAlong(ReadOnlySpan<double> xy) =>
+        Math.Atan2(xy[3] + xy[5] - xy[1] - xy[7], xy[2] + xy[4] - xy[0] - xy[6]);
+
     /// <summary>Makes the block of an adherend in the mesh's kind of element.</summary>
     /// <param name="mesh">The mesh.</param>
     /// <param name="adherend">Adherend.</param>
     /// <param name="material">Material in the axes of the adherend: x along it.</param>
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
-    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature) =>
-        mesh.NodesPerSolid == Quadrilateral8.NodeCount
-            ? new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature)
-            : new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature);
+    /// <param name="turns">Whether rotations are finite.</param>
+    /// <exception cref="ArgumentException">Rotations are finite and the elements have four nodes.</exception>
+    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature, bool turns = false) =>
+        (mesh.NodesPerSolid, turns) switch
+        {
+            (Quadrilateral8.NodeCount, false) => new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature),
+            (Quadrilateral8.NodeCount, true) => new TurningBlock(mesh, adherend, material, stressFreeTemperature),
+            (_, false) => new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature),
+            _ => throw new ArgumentException("finite rotation needs eight-node elements", nameof(turns)),
+        };
 }
 
 /// <summary>The block for one kind of element.</summary>
@@ -183,7 +220,4 @@ internal sealed class SolidBlock<TElement> : SolidBlock
             sum += a[i] * b[i];
         return sum;
     }
-
-    private static double AngleAlong(ReadOnlySpan<double> xy) =>
-        Math.Atan2(xy[3] + xy[5] - xy[1] - xy[7], xy[2] + xy[4] - xy[0] - xy[6]);
 }

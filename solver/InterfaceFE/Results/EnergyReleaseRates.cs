@@ -57,8 +57,8 @@ public sealed class EnergyReleaseRates
         double j = 0;
         foreach (SolidBlock solid in (ReadOnlySpan<SolidBlock>)[_upper, _lower])
         {
-            double? behind = SectionIntegral.Mean(solid, _behindFrom, _behindTo, ux, uy, temperature, _model.StressFreeTemperature);
-            double? ahead = SectionIntegral.Mean(solid, _aheadFrom, _aheadTo, ux, uy, temperature, _model.StressFreeTemperature);
+            double? behind = SectionIntegral.Mean(solid, _behindFrom, _behindTo, ux, uy, temperature);
+            double? ahead = SectionIntegral.Mean(solid, _aheadFrom, _aheadTo, ux, uy, temperature);
             if (behind is null || ahead is null)
                 return null;
             j += (behind.Value - ahead.Value) * solid.Adherend.Width / _joint.Width;

@@ -64,7 +64,7 @@ public sealed class FieldSampler
                 solid.Stresses(e, native[..(2 * n)], equilibrium.AcceptedTemperature, gauss);
                 solid.Gradients(e, native[..(2 * n)], gradients);
                 for (int p = 0; p < 4; p++)
-                    LargestRotation = Math.Max(LargestRotation, 0.5 * Math.Abs(gradients[4 * p + 2] - gradients[4 * p + 1]));
+                    LargestRotation = Math.Max(LargestRotation, Math.Abs(solid.Rotation(gradients.Slice(4 * p, 4))));
                 solid.ExtrapolateToNodes(4, gauss, nodal[..(4 * n)]);
                 for (int i = 0; i < n; i++)
                     for (int c = 0; c < 4; c++)

@@ -163,7 +163,8 @@ public readonly struct Quadrilateral8 : IPlaneElement
     /// <param name="accepted">Accepted state, point after point, length 4·StateSize.</param>
     /// <param name="tentative">State at the end of the stride, same length, overwritten; must not alias <paramref name="accepted"/>.</param>
     /// <param name="force">Internal force [N], length 16, overwritten.</param>
-    /// <param name="tangent">Derivative of the force by the displacements [N/mm], row-major 16×16, symmetric, overwritten.</param>
+    /// <param name="tangent">Derivative of the force by the displacements [N/mm], row-major 16×16, symmetric, overwritten; empty when not wanted.</param>
+    /// <param name="byTemperature">Derivative of the force by temperature at fixed displacements [N/K], length 16, overwritten; empty when not wanted.</param>
     /// <returns>Energies of the element [mJ].</returns>
     public static PlaneEnergy Respond<TLaw>(
         ReadOnlySpan<double> coordinates,
@@ -174,15 +175,17 @@ public readonly struct Quadrilateral8 : IPlaneElement
         ReadOnlySpan<double> accepted,
         Span<double> tentative,
         Span<double> force,
-        Span<double> tangent)
+        Span<double> tangent,
+        Span<double> byTemperature = default)
         where TLaw : IPlaneLaw
     {
         Span<double> byX = stackalloc double[Points * NodeCount], byY = stackalloc double[Points * NodeCount], areas = stackalloc double[Points];
         Span<double> gradient = stackalloc double[4], strain = stackalloc double[3], stresses = stackalloc double[4 * Points], moduli = stackalloc double[9];
         ShapeGradients(coordinates, byX, byY, areas);
-        tangent = tangent[..(UnknownCount * UnknownCount)];
+        Span<double> rates = stackalloc double[4 * Points], rate = stackalloc double[3];
         tangent.Clear();
-        double stored = 0, dissipated = 0;
+        rate.Clear();
+        double stored = 0, dissipated = 0, storedByTemperature = 0;
         int state = law.StateSize;
         for (int point = 0; point < Points; point++)
         {
@@ -190,15 +193,22 @@ public readonly struct Quadrilateral8 : IPlaneElement
             PlaneKernel.Gradient(gx, gy, displacements, gradient);
             PlaneKernel.Strain(gradient, strain);
             PlaneEnergy energy = law.Update(
-                strain, temperatureChange, accepted.Slice(point * state, state), tentative.Slice(point * state, state), stresses.Slice(4 * point, 4), moduli);
+                strain, temperatureChange, accepted.Slice(point * state, state), tentative.Slice(point * state, state), stresses.Slice(4 * point, 4), moduli,
+                byTemperature.IsEmpty ? [] : rate);
             double volume = areas[point] * width;
             stored += energy.Stored * volume;
             dissipated += energy.Dissipated * volume;
-            PlaneKernel.AddStiffness(gx, gy, volume, moduli, tangent);
+            storedByTemperature += energy.StoredByTemperature * volume;
+            (rates[4 * point], rates[4 * point + 1], rates[4 * point + 3]) = (rate[0], rate[1], rate[2]);
+            if (!tangent.IsEmpty)
+                PlaneKernel.AddStiffness(gx, gy, volume, moduli, tangent);
         }
-        PlaneKernel.Mirror(UnknownCount, tangent);
+        if (!tangent.IsEmpty)
+            PlaneKernel.Mirror(UnknownCount, tangent);
         PlaneKernel.Force(NodeCount, NodeCount, byX, byY, areas, stresses, width, force);
-        return new PlaneEnergy(stored, dissipated);
+        if (!byTemperature.IsEmpty)
+            PlaneKernel.Force(NodeCount, NodeCount, byX, byY, areas, rates, width, byTemperature);
+        return new PlaneEnergy(stored, dissipated, storedByTemperature);
     }
 
     /// <inheritdoc/>

@@ -1,8 +1,9 @@
 namespace InterfaceFE.Mechanics.Materials;
 
 /// <summary>
-/// A material law at a point of a plane model: a pure function of the accepted state and the strain. Immutable and safe to share between threads; calling it
-/// twice with the same arguments gives the same bytes. Never throws on finite input; non-finite input gives a non-finite answer.
+/// A material law at a point of a plane model: a pure function of the accepted state and the strain. The strain is handed in by the kinematics, whatever its measure (small, or logarithmic
+/// or small in a frame that turns along); stress, tangent and energies belong to that measure. Immutable and safe to share between threads; calling it twice with the same
+/// arguments gives the same bytes. Never throws on finite input; non-finite input gives a non-finite answer.
 /// </summary>
 public interface IPlaneLaw
 {
@@ -16,12 +17,20 @@ public interface IPlaneLaw
     /// <param name="tentative">State at the end of the stride, same length, overwritten; must not alias <paramref name="accepted"/>.</param>
     /// <param name="stress">xx, yy, zz, xy [MPa], length 4, overwritten.</param>
     /// <param name="tangent">Derivative of the in-plane stress (xx, yy, xy) by the strain [MPa], row-major 3×3, symmetric, overwritten.</param>
+    /// <param name="byTemperature">Derivative of the in-plane stress (xx, yy, xy) by temperature at fixed strain [MPa/K], overwritten; empty when not wanted.</param>
     /// <returns>Energies per volume.</returns>
     PlaneEnergy Update(
-        ReadOnlySpan<double> strain, double temperatureChange, ReadOnlySpan<double> accepted, Span<double> tentative, Span<double> stress, Span<double> tangent);
+        ReadOnlySpan<double> strain,
+        double temperatureChange,
+        ReadOnlySpan<double> accepted,
+        Span<double> tentative,
+        Span<double> stress,
+        Span<double> tangent,
+        Span<double> byTemperature = default);
 }
 
 /// <summary>Energies of a point per volume [mJ/mm³], or of an element [mJ].</summary>
-/// <param name="Stored">Elastic energy that unloading gives back.</param>
+/// <param name="Stored">Elastic energy, and what moved yield surfaces store.</param>
 /// <param name="Dissipated">Energy dissipated since the virgin state; never falls.</param>
-public readonly record struct PlaneEnergy(double Stored, double Dissipated);
+/// <param name="StoredByTemperature">Change of the stored energy with temperature at fixed strain and plastic strain [.../K].</param>
+public readonly record struct PlaneEnergy(double Stored, double Dissipated, double StoredByTemperature = 0);

@@ -158,11 +158,27 @@ public sealed class PlaneElasticity : IPlaneLaw
 
     /// <inheritdoc/>
     public PlaneEnergy Update(
-        ReadOnlySpan<double> strain, double temperatureChange, ReadOnlySpan<double> accepted, Span<double> tentative, Span<double> stress, Span<double> tangent)
+        ReadOnlySpan<double> strain,
+        double temperatureChange,
+        ReadOnlySpan<double> accepted,
+        Span<double> tentative,
+        Span<double> stress,
+        Span<double> tangent,
+        Span<double> byTemperature = default)
     {
         Stress(strain, temperatureChange, stress);
         Stiffness.CopyTo(tangent);
-        return new PlaneEnergy(EnergyDensity(strain, temperatureChange), 0);
+        if (!byTemperature.IsEmpty)
+            StressByTemperature(byTemperature);
+        double byChange = 2 * _blockedEnergy * temperatureChange - (_expansion[0] * stress[0] + _expansion[1] * stress[1] + _expansion[2] * stress[3]);
+        return new PlaneEnergy(EnergyDensity(strain, temperatureChange), 0, byChange);
+    }
+
+    /// <summary>Change of the in-plane stress with temperature at fixed strain [MPa/K]: xx, yy, xy, length 3, overwritten.</summary>
+    internal void StressByTemperature(Span<double> byTemperature)
+    {
+        for (int i = 0; i < 3; i++)
+            byTemperature[i] = -(_stiffness[3 * i] * _expansion[0] + _stiffness[3 * i + 1] * _expansion[1] + _stiffness[3 * i + 2] * _expansion[2]);
     }
 
     private static void StrainRotation(double angle, Span<double> rotation)

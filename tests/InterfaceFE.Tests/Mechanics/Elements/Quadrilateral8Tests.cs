@@ -76,7 +76,13 @@ public sealed class Quadrilateral8Tests
         public int StateSize => 1;
 
         public PlaneEnergy Update(
-            ReadOnlySpan<double> strain, double temperatureChange, ReadOnlySpan<double> accepted, Span<double> tentative, Span<double> stress, Span<double> tangent)
+            ReadOnlySpan<double> strain,
+            double temperatureChange,
+            ReadOnlySpan<double> accepted,
+            Span<double> tentative,
+            Span<double> stress,
+            Span<double> tangent,
+            Span<double> byTemperature = default)
         {
             double q = 2 * elasticity.Update(strain, temperatureChange, [], [], stress, tangent).Stored;
             double[] linear = [stress[0], stress[1], stress[3]];

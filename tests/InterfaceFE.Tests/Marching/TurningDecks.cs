@@ -1,0 +1,82 @@
+using InterfaceFE.Decks;
+
+namespace InterfaceFE.Tests.Marching;
+
+/// <summary>Slender parts that turn by large angles, whose paths are known. Without lateral contraction and free out of plane, so that beams bend with E and ends may be clamped without disturbance.</summary>
+internal static class TurningDecks
+{
+    private static readonly GripComponent[] All = [GripComponent.X, GripComponent.Y, GripComponent.Rotation];
+
+    /// <summary>Elastica: length, thickness, width [mm] and modulus [MPa].</summary>
+    public const double Length = 200, Thickness = 1, Width = 10, Young = 70000;
+
+    /// <summary>E·I of the elastica [N·mm²].</summary>
+    public const double Bending = Young * Width * Thickness * Thickness * Thickness / 12;
+
+    /// <summary>A cantilever whose tip is loaded by a force along +y of constant direction, or by a moment.</summary>
+    /// <param name="force">Force [N]; 0 for a moment.</param>
+    /// <param name="moment">Moment [N·mm].</param>
+    /// <param name="along">Elements along.</param>
+    public static Deck Cantilever(double force, double moment = 0, int along = 60) => Make(
+        "Cantilever",
+        Width,
+        Young,
+        new AdherendDeck { Of = "stuff", Rectangle = new RectangleDeck { Corner = [0, 0], Size = [Length, Thickness] }, Elements = new ElementsDeck { Along = along, Through = 1 } },
+        new Dictionary<string, GripDeck> { ["root"] = new() { On = ["left end of beam"] }, ["tip"] = new() { On = ["right end of beam"] } },
+        new Dictionary<string, IReadOnlyList<GripComponent>> { ["root"] = All },
+        force > 0
+            ? new StageDeck { Pull = new PullDeck { Grip = "tip", Along = PullDirection.PlusY, Force = force } }
+            : new StageDeck { Turn = new TurnDeck { Moment = moment, Grips = new Dictionary<string, double> { ["tip"] = 1 } } });
+
+    /// <summary>
+    /// Half of Williams' toggle by symmetry, in inches and pounds taken as mm and N: a straight leg that rises to the middle, clamped at its foot; the middle goes down without turning.
+    /// </summary>
+    /// <param name="rise">Rise of the middle.</param>
+    /// <param name="force">Half of the force at the middle.</param>
+    public static Deck Toggle(double rise, double force)
+    {
+        const double Axial = 1.885e6, Flexural = 9270, Half = 12.943;
+        double thickness = Math.Sqrt(12 * Flexural / Axial), young = 1e7;
+        return Make(
+            "Toggle",
+            Axial / (young * thickness),
+            young,
+            new AdherendDeck { Of = "stuff", Sheet = new SheetDeck { Thickness = thickness, Line = [[0, 0], [Half, rise]] }, Elements = new ElementsDeck { Along = 24, Through = 1 } },
+            new Dictionary<string, GripDeck> { ["foot"] = new() { On = ["left end of beam"] }, ["middle"] = new() { On = ["right end of beam"] } },
+            new Dictionary<string, IReadOnlyList<GripComponent>> { ["foot"] = All, ["middle"] = [GripComponent.X, GripComponent.Rotation] },
+            new StageDeck { Pull = new PullDeck { Grip = "middle", Along = PullDirection.MinusY, Force = force } });
+    }
+
+    /// <summary>
+    /// Lee's frame: two legs of 120 at a right angle, hinged at both ends, loaded 24 from the corner on the level one. The corner is rounded by the least radius that a sheet may have.
+    /// </summary>
+    /// <param name="force">Force.</param>
+    public static Deck Frame(double force)
+    {
+        const double Leg = 120, Thick = 2, Wide = 3, Radius = 1.5;
+        return Make(
+            "Frame",
+            Wide,
+            720,
+            new AdherendDeck { Of = "stuff", Sheet = new SheetDeck { Thickness = Thick, Line = [[0, 0], [0, Leg], [Leg, Leg]], BendRadius = Radius }, Elements = new ElementsDeck { Length = 4, Through = 2 } },
+            new Dictionary<string, GripDeck>
+            {
+                ["foot"] = new() { On = ["left end of beam"], At = new EdgePoint(0.5, double.NaN) },
+                ["far end"] = new() { On = ["right end of beam"], At = new EdgePoint(0.5, double.NaN) },
+                ["load"] = new() { On = ["upper face of beam"], At = new EdgePoint(double.NaN, Leg - Radius + Math.PI / 2 * (Radius + Thick / 2) + 24 - Radius) },
+            },
+            new Dictionary<string, IReadOnlyList<GripComponent>> { ["foot"] = [GripComponent.X, GripComponent.Y], ["far end"] = [GripComponent.X, GripComponent.Y] },
+            new StageDeck { Pull = new PullDeck { Grip = "load", Along = PullDirection.MinusY, Force = force } });
+    }
+
+    private static Deck Make(
+        string title, double width, double young, AdherendDeck beam, Dictionary<string, GripDeck> grips, Dictionary<string, IReadOnlyList<GripComponent>> held, StageDeck load) => new()
+        {
+            Title = title,
+            Model = new ModelDeck { Width = width, Rotation = RotationSetting.Finite, OutOfPlane = OutOfPlane.Free },
+            Materials = new Dictionary<string, MaterialDeck> { ["stuff"] = new() { Young = new Directional(young), Poisson = new PoissonRatios(0) } },
+            Adherends = new Dictionary<string, AdherendDeck> { ["beam"] = beam },
+            Grips = grips,
+            Sequence = [new StageDeck { Fix = held }, load],
+        };
+}
