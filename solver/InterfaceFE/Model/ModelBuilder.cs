@@ -43,11 +43,21 @@ public static class ModelBuilder
         double across = deck.Model.OutOfPlane == OutOfPlane.Held ? 0
             : 0.5 * (deck.Materials[mesh.Adherends[joint.UpperAdherend].Material].Expansion.Z + deck.Materials[mesh.Adherends[joint.LowerAdherend].Material].Expansion.Z);
         double perKelvin = LayerLawFactory.Bulk(layer, deck.Model.OutOfPlane)?.FreeOpening(1, along, across) ?? 0;
-        return new LayerBlock(mesh, joint, law, layer.Thickness, Rule(deck, mesh), perKelvin, deck.StressFreeTemperature, bonded: true);
+        return new LayerBlock(mesh, joint, law, layer.Thickness, Rule(deck, mesh), perKelvin, deck.StressFreeTemperature, bonded: true, Kinematics(deck, joint));
     }
 
     private static LayerBlock OpenFaces(Deck deck, Mesh mesh, MeshedJoint joint, LayerBlock layer) =>
-        new(mesh, joint, new ClosingLaw(layer.Law.Stiffness.Contact, OnsetShare * layer.Thickness), layer.Thickness, Rule(deck, mesh), 0, deck.StressFreeTemperature, bonded: false);
+        new(mesh, joint, new ClosingLaw(layer.Law.Stiffness.Contact, OnsetShare * layer.Thickness), layer.Thickness, Rule(deck, mesh), 0, deck.StressFreeTemperature, bonded: false, Kinematics(deck, joint));
+
+    /// <summary>Null where faces lie on each other and turn little: then nothing but the jump counts.</summary>
+    private static LayerKinematics? Kinematics(Deck deck, MeshedJoint joint)
+    {
+        JointDeck drawn = deck.Joints![joint.Name];
+        bool turns = deck.Model.Rotation == RotationSetting.Finite;
+        if (!turns && drawn.Drawn == DrawnThickness.Zero)
+            return null;
+        return new LayerKinematics(drawn.Frame switch { FrameLine.UpperFace => LayerFrame.UpperFace, FrameLine.LowerFace => LayerFrame.LowerFace, _ => LayerFrame.MidLine }, turns);
+    }
 
     private static LayerRule Rule(Deck deck, Mesh mesh) => deck.Model.LayerIntegration switch
     {

@@ -69,6 +69,69 @@ internal static class TurningDecks
             new StageDeck { Pull = new PullDeck { Grip = "load", Along = PullDirection.MinusY, Force = force } });
     }
 
+    /// <summary>Width of peeled strips [mm].</summary>
+    public const double PeelWidth = 10;
+
+    /// <summary>Toughness of their layer [N/mm].</summary>
+    public const double PeelToughness = 1;
+
+    /// <summary>
+    /// A strip on a stiff base, peeled off from its left end upwards by travel, while a force of constant size pulls it along x: steady after some growth, with the vertical force that the
+    /// energy balance of peeling asks for.
+    /// </summary>
+    /// <param name="young">Modulus of the strip [MPa].</param>
+    /// <param name="thickness">Thickness of the strip [mm].</param>
+    /// <param name="alongX">Force along x [N], at most 0; it makes the angle of peel less than a right one.</param>
+    /// <param name="travel">Travel upwards [mm].</param>
+    /// <param name="layerThickness">Thickness of the layer [mm].</param>
+    /// <param name="drawn">How the layer is drawn.</param>
+    /// <param name="frame">Line of the layer's frame.</param>
+    /// <param name="length">Length of the strip [mm].</param>
+    public static Deck Peel(
+        double young, double thickness, double alongX, double travel, double layerThickness = 0.2, DrawnThickness drawn = DrawnThickness.Zero, FrameLine frame = FrameLine.MidLine, double length = 60)
+    {
+        double lift = drawn == DrawnThickness.True ? layerThickness : 0;
+        var curve = new CurveDeck { Law = CurveShape.Bilinear, Stiffness = 40, Strength = 2, Toughness = PeelToughness };
+        List<StageDeck> sequence =
+        [
+            new StageDeck { Fix = new Dictionary<string, IReadOnlyList<GripComponent>> { ["base"] = All } },
+            new StageDeck { Pull = new PullDeck { Grip = "end", Along = PullDirection.PlusY, Travel = travel } },
+        ];
+        if (alongX < 0)
+            sequence.Insert(1, new StageDeck { Pull = new PullDeck { Grip = "end", Along = PullDirection.MinusX, Force = -alongX } });
+        return new Deck
+        {
+            Title = "Peeled strip",
+            Model = new ModelDeck { Width = PeelWidth, Rotation = RotationSetting.Finite, OutOfPlane = OutOfPlane.Free },
+            Materials = new Dictionary<string, MaterialDeck>
+            {
+                ["strip"] = new() { Young = new Directional(young), Poisson = new PoissonRatios(0) },
+                ["base"] = new() { Young = new Directional(7e4), Poisson = new PoissonRatios(0) },
+            },
+            Layers = new Dictionary<string, LayerDeck> { ["glue"] = new() { Thickness = layerThickness, Peel = curve, Shear = curve, Mixing = Mixing.IndependentModes, CountedBy = EnergyCount.NetWork } },
+            Adherends = new Dictionary<string, AdherendDeck>
+            {
+                ["base"] = new() { Of = "base", Rectangle = new RectangleDeck { Corner = [0, -2], Size = [length, 2] }, Elements = new ElementsDeck { Through = 1 } },
+                ["strip"] = new() { Of = "strip", Rectangle = new RectangleDeck { Corner = [0, lift], Size = [length, thickness] }, Elements = new ElementsDeck { Through = 1 } },
+            },
+            Joints = new Dictionary<string, JointDeck>
+            {
+                ["bond"] = new()
+                {
+                    Layer = "glue",
+                    Upper = "bottom of strip",
+                    Lower = "top of base",
+                    ElementLength = 0.5,
+                    Drawn = drawn,
+                    Frame = frame,
+                    StarterCrack = new StarterCrackDeck { From = JointEnd.Start, Length = 10 },
+                },
+            },
+            Grips = new Dictionary<string, GripDeck> { ["base"] = new() { On = ["bottom of base"] }, ["end"] = new() { On = ["left end of strip"] } },
+            Sequence = sequence,
+        };
+    }
+
     private static Deck Make(
         string title, double width, double young, AdherendDeck beam, Dictionary<string, GripDeck> grips, Dictionary<string, IReadOnlyList<GripComponent>> held, StageDeck load) => new()
         {

@@ -1,3 +1,4 @@
+using InterfaceFE.Decks;
 using InterfaceFE.Geometry;
 using InterfaceFE.Marching;
 using InterfaceFE.Model;
@@ -125,5 +126,68 @@ public class TurningTests
     {
         List<(double Load, double Travel)> part = [.. path.Where(p => p.Travel >= from && p.Travel <= to)];
         return Peak.Of([.. part.Select(p => p.Travel)], [.. part.Select(p => sense * p.Load)])!;
+    }
+
+    /// <summary>Rivlin, Paint Technology 9 (1944) 215; Kendall, J. Phys. D 8 (1975) 1449-1452 (from memory): P·(1 - cos φ) + P²/(2·E·t) = toughness per width, φ from the strip to the force.</summary>
+    [Theory]
+    [InlineData(2000, 0, 25, DrawnThickness.Zero, FrameLine.MidLine)]
+    [InlineData(200, -30, 11, DrawnThickness.Zero, FrameLine.MidLine)]
+    [InlineData(2000, 0, 25, DrawnThickness.True, FrameLine.LowerFace)]
+    public void A_peeled_strip_takes_the_force_of_the_energy_balance(double young, double alongX, double travel, DrawnThickness drawn, FrameLine frame)
+    {
+        const double Thickness = 0.5;
+        Recording run = Recording.Of(TurningDecks.Peel(young, Thickness, alongX, travel, drawn: drawn, frame: frame));
+        Assert.True(run.Outcome.Status == MarchStatus.Finished, run.Outcome + string.Join("\n", run.Lines));
+        int end = run.Equilibrium.Model.Unknowns.OfBody(1);
+        double x = alongX / TurningDecks.PeelWidth, force = double.Hypot(x, run.Forces[^1][end + 1] / TurningDecks.PeelWidth);
+        Close.To(TurningDecks.PeelToughness, force + x + force * force / (2 * young * Thickness), 1e-2, 0, "energy per area");
+        Assert.True(run.Points.Max(p => p.Energy.Balance) < 1e-9);
+        Assert.True(run.Points.Max(p => p.Energy.PathError) < 1e-3);
+    }
+
+    [Theory]
+    [InlineData(DrawnThickness.Zero)]
+    [InlineData(DrawnThickness.True)]
+    public void Spinning_a_loaded_damaged_joint_by_90_degrees_changes_nothing(DrawnThickness drawn)
+    {
+        Recording run = Recording.Of(TurningDecks.Peel(2000, 0.5, 0, 12, drawn: drawn));
+        FullEquilibrium equilibrium = run.Equilibrium;
+        UnknownMap map = equilibrium.Model.Unknowns;
+        Mesh mesh = equilibrium.Model.Mesh;
+        double[] before = equilibrium.AcceptedDisplacement.ToArray(), forces = equilibrium.InternalForce.ToArray(), way = new double[before.Length];
+        EnergyState energy = equilibrium.Energy;
+        Assert.True(energy.SpentInLayers > 1, "the joint must be damaged");
+        for (int node = 0; node < mesh.NodeCount; node++)
+            if (map.BodyOfNode(node) < 0)
+                Spin(map.OfNode(node), mesh.X[node], mesh.Y[node]);
+        for (int b = 0; b < map.Bodies.Count; b++)
+        {
+            Spin(map.OfBody(b), map.Bodies[b].PinX, map.Bodies[b].PinY);
+            way[map.OfBody(b) + 2] = Math.PI / 2;
+        }
+        equilibrium.Guess(way, 0, 1);
+        equilibrium.Evaluate(Wanted.Force);
+        double largest = forces.Max(Math.Abs);
+        ReadOnlySpan<double> spun = equilibrium.InternalForce;
+        Close.To(energy.StoredInAdherends, equilibrium.Energy.StoredInAdherends, 1e-9, 0, "adherends");
+        Close.To(energy.StoredInLayers, equilibrium.Energy.StoredInLayers, 1e-9, 0, "layers");
+        Close.To(energy.SpentInLayers, equilibrium.Energy.SpentInLayers, 1e-9, 0, "spent");
+        for (int node = 0; node < mesh.NodeCount; node++)
+        {
+            if (map.BodyOfNode(node) >= 0)
+                continue;
+            int i = map.OfNode(node);
+            Close.To(-forces[i + 1], spun[i], 0, 1e-9 * largest, "x");
+            Close.To(forces[i], spun[i + 1], 0, 1e-9 * largest, "y");
+        }
+        for (int b = 0; b < map.Bodies.Count; b++)
+            Close.To(forces[map.OfBody(b) + 2], spun[map.OfBody(b) + 2], 0, 1e-9 * largest * 60, "moment");
+
+        void Spin(int i, double x, double y)
+        {
+            double atX = x + before[i] - 30, atY = y + before[i + 1];
+            way[i] = 30 - atY - x - before[i];
+            way[i + 1] = atX - y - before[i + 1];
+        }
     }
 }

@@ -21,8 +21,6 @@ internal static class DeckChecks
             GripChecks.Run(deck, grip, $"grips.{name}", context);
         if (deck.Model is { Rotation: RotationSetting.Finite, Elements: ElementKind.FourNode })
             context.Fail("model.elements", "finite rotation needs eight-node elements: leave `elements` out, or use `rotation: small`");
-        if (deck.Model is { Rotation: RotationSetting.Finite } && Entries(deck.Joints).Any())
-            context.Fail("model.rotation", "`finite` is not built yet for decks with joints: use `small`");
         SequenceChecks.Run(deck, context);
         KeepChecks.Run(deck, context);
         // In a deck with errors a name may seem unused only because of them.
