@@ -72,7 +72,7 @@ public sealed record ElementsDeck
     public int? Along { get; init; }
 
     /// <summary>Number through the thickness.</summary>
-    [Key("through", "Number of elements through the thickness; left out: chosen so that elements keep a good shape.", Example = "4", AtLeast = 1, AtMost = 1000)]
+    [Key("through", "Number of elements through the thickness; left out: chosen so that elements keep a good shape, and at least six where the material has a yield curve.", Example = "4", AtLeast = 1, AtMost = 1000)]
     public int? Through { get; init; }
 
     /// <summary>Largest element length away from joints [mm].</summary>

@@ -68,6 +68,10 @@ public enum OutOfPlane
     /// <summary>Plane stress.</summary>
     [Word("free", "plane stress: free to contract out of plane")]
     Free,
+
+    /// <summary>Generalised plane strain.</summary>
+    [Word("uniform strain", "the strain out of plane is the same throughout what joints tie together; its size leaves no force out of plane, or is given")]
+    UniformStrain,
 }
 
 /// <summary>Treatment of rotations.</summary>
@@ -112,7 +116,6 @@ public enum LayerIntegration
 
 /// <summary>Assumptions of the calculation.</summary>
 [Block("Width of the specimen and the assumptions of the calculation.")]
-[NotBuiltYet("out of plane", "uniform strain")]
 [NotBuiltYet("mirror")]
 public sealed record ModelDeck
 {
@@ -123,6 +126,10 @@ public sealed record ModelDeck
     /// <summary>Out-of-plane state.</summary>
     [Key("out of plane", "State out of plane.", Default = "held")]
     public OutOfPlane OutOfPlane { get; init; }
+
+    /// <summary>Given strain out of plane; null: the one that leaves no force.</summary>
+    [Key("strain out of plane", "Strain out of plane, reached over the first stage that loads, cools or waits; with `uniform strain` only. Left out: the strain that leaves no force out of plane.", Example = "0.001", Above = -0.1, Below = 0.1)]
+    public double? StrainOutOfPlane { get; init; }
 
     /// <summary>Rotation setting; written in every deck.</summary>
     [Key("rotation", "Whether rotations are small or finite; written in every deck, since `small` limits what the run is good for.")]

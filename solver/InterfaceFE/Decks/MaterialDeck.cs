@@ -3,10 +3,9 @@ using InterfaceFE.Units;
 namespace InterfaceFE.Decks;
 
 /// <summary>
-/// Elastic material. Isotropic when <see cref="Young"/> and <see cref="Poisson"/> hold one number, else orthotropic with axes x (along), y (through the thickness), z (out of plane).
+/// Material of an adherend. Isotropic when <see cref="Young"/> and <see cref="Poisson"/> hold one number, else orthotropic with axes x (along), y (through the thickness), z (out of plane).
 /// </summary>
-[Block("An elastic material. One number each makes it isotropic; values by direction make it orthotropic: x along, y through the thickness, z out of plane.")]
-[NotBuiltYet("yield curve")]
+[Block("A material of adherends: elastic, and with a yield curve elastic and plastic. One number each makes it isotropic; values by direction make it orthotropic: x along, y through the thickness, z out of plane.")]
 [NotBuiltYet("plies")]
 public sealed record MaterialDeck
 {
@@ -26,9 +25,38 @@ public sealed record MaterialDeck
     [Key("expansion", "Thermal expansion, one number or by direction {x, y, z}.", Dimension = Dimension.Expansion, Example = "23e-6 1/K", Default = "0 1/K", Above = -1e-3, Below = 1e-3)]
     public Directional Expansion { get; init; } = new(0);
 
+    /// <summary>Yielding; null: the material stays elastic.</summary>
+    [Key("yield curve", "Yielding by von Mises; isotropic materials in eight-node elements. Left out: the material stays elastic.")]
+    public YieldCurveDeck? YieldCurve { get; init; }
+
     /// <summary>Note on the origin of the data.</summary>
     [Key("source", "Where the data come from, free text.", Example = "invented for the demo")]
     public string? Source { get; init; }
+}
+
+/// <summary>Yield stress by plastic strain and temperature.</summary>
+[Block("Yielding by von Mises: yield stress against plastic strain of a tensile test, straight between the points and level beyond the last, and how temperature and reversed loading change it.")]
+public sealed record YieldCurveDeck
+{
+    /// <summary>Equivalent plastic strains [-].</summary>
+    [Key("plastic strain", "Plastic strains of the table, rising from 0; [0] alone with one stress yields without hardening.", Example = "[0, 0.05]", AtLeast = 0, LeastCount = 1)]
+    public required IReadOnlyList<double> PlasticStrain { get; init; }
+
+    /// <summary>Yield stresses [MPa].</summary>
+    [Key("stress", "Yield stresses of the table (true stress), not falling.", Dimension = Dimension.Stress, Example = "[180 MPa, 230 MPa]", Above = 0, LeastCount = 1)]
+    public required IReadOnlyList<double> Stress { get; init; }
+
+    /// <summary>Kinematic hardening [MPa].</summary>
+    [Key("kinematic hardening", "Slope of stress against plastic strain by which the yield surface moves instead of growing, so that reversed loading yields earlier; it adds to the table: stress in tension = table + slope · plastic strain.", Dimension = Dimension.Stress, Example = "1 GPa", Default = "0 MPa", AtLeast = 0)]
+    public double KinematicHardening { get; init; }
+
+    /// <summary>Temperatures of the shares [K].</summary>
+    [Key("temperature", "Temperatures at which `share of stress` is given, rising; they must span all temperatures of the deck.", Dimension = Dimension.Temperature, Example = "[-40 °C, 20 °C, 150 °C]", AtLeast = 0, LeastCount = 2)]
+    public IReadOnlyList<double>? Temperature { get; init; }
+
+    /// <summary>Share of the table's stresses at each temperature [-].</summary>
+    [Key("share of stress", "Share of the table's stresses that holds at each `temperature`, straight between them.", Example = "[1.05, 1, 0.85]", Above = 0, LeastCount = 2)]
+    public IReadOnlyList<double>? ShareOfStress { get; init; }
 }
 
 /// <summary>A value by direction; a single number stands for all three. Written as a number or as a map {x, y, z}.</summary>

@@ -73,7 +73,7 @@ internal sealed class JointPlanner
         foreach (Strip strip in (ReadOnlySpan<Strip>)[upper.Strip, lower.Strip])
             if (width > strip.Width * (1 + 1e-9))
                 throw new DeckException(path + ".width", Text.Of($"the bond, {width:G6} mm wide, is wider than \"{strip.Name}\", {strip.Width:G6} mm{(joint.Width == null ? "; left out, its width is the model's" : "")}"));
-        bool held = _deck.Model.OutOfPlane == OutOfPlane.Held;
+        bool held = _deck.Model.OutOfPlane != OutOfPlane.Free;
         return new JointPlan
         {
             Name = name,
@@ -105,7 +105,7 @@ internal sealed class JointPlanner
         if (!_deck.Materials.TryGetValue(strip.Deck.Of, out MaterialDeck? material))
             throw new DeckException(strip.Path + ".of", $"there is no material \"{strip.Deck.Of}\"; there are: {string.Join(", ", _deck.Materials.Keys)}");
         double modulus = material.Young.X;
-        bool isHeld = _deck.Model.OutOfPlane == OutOfPlane.Held;
+        bool isHeld = _deck.Model.OutOfPlane != OutOfPlane.Free;
         if (isHeld)
         {
             // Plane strain along x: Ex/(1 - ν_xz ν_zx) with ν_zx = ν_xz Ez/Ex.

@@ -24,6 +24,19 @@ public sealed class Mesh
     /// <summary>Number of nodes.</summary>
     public int NodeCount => X.Length;
 
+    /// <summary>Area of an adherend by the corners of its elements [mm²].</summary>
+    public double AreaOf(int adherend)
+    {
+        int[] nodes = Adherends[adherend].Connectivity;
+        double area = 0;
+        for (int e = 0; e < nodes.Length; e += NodesPerSolid)
+        {
+            (int a, int b, int c, int d) = (nodes[e], nodes[e + 1], nodes[e + 2], nodes[e + 3]);
+            area += 0.5 * ((X[c] - X[a]) * (Y[d] - Y[b]) - (X[d] - X[b]) * (Y[c] - Y[a]));
+        }
+        return area;
+    }
+
     /// <summary>Nodes of one face of a layer element: 3 (end, middle, end) or 2.</summary>
     public int NodesPerFace => NodesPerSolid == 8 ? 3 : 2;
 }

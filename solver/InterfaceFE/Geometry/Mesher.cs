@@ -39,7 +39,8 @@ public static class Mesher
         {
             Strip strip = strips[i];
             double bonded = joints.Where(j => j.Upper.Strip == strip || j.Lower.Strip == strip).Select(j => j.Wanted).DefaultIfEmpty(double.PositiveInfinity).Min();
-            double[] lines = ThroughDivision.Choose(strip, deck.Model.Elements, bonded, (ZoneAt(strip, Side.Lower, joints), ZoneAt(strip, Side.Upper, joints)), places.OnEnds[i]);
+            double[] lines = ThroughDivision.Choose(strip, deck.Model.Elements, bonded, (ZoneAt(strip, Side.Lower, joints), ZoneAt(strip, Side.Upper, joints)), places.OnEnds[i],
+                deck.Materials[strip.Deck.Of].YieldCurve is not null);
             int elementsAlong = strip.Runs.Sum(r => along[r].Length - 1);
             if (quadratic && elementsAlong == 1 && lines.Length == 2)
                 throw new DeckException(strip.Path + ".elements", $"\"{strip.Name}\" would be one single eight-node element, which can deform in a way that costs no energy: use two at least, along or through the thickness");

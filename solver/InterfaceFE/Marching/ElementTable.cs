@@ -29,13 +29,13 @@ internal sealed class ElementTable
         var local = new List<int>();
         for (int b = 0; b < Blocks.Count; b++)
         {
-            LargestNative = Math.Max(LargestNative, 2 * Blocks[b].NodesPerElement);
+            LargestNative = Math.Max(LargestNative, Blocks[b].NativeCount);
             for (int e = 0; e < Blocks[b].Count; e++)
             {
                 int slot = _blockStart[b] + e;
                 local.Clear();
                 arms.Clear();
-                _transforms[slot] = Link(model.Unknowns, model.Mesh, Blocks[b].Nodes(e), local, arms);
+                _transforms[slot] = Link(model.Unknowns, model.Mesh, Blocks[b].Nodes(e), Blocks[b].OutOfPlaneUnknown, local, arms);
                 if (model.Unknowns.Turns && arms.Count > 0)
                 {
                     _arms[slot] = [.. arms];
@@ -178,7 +178,7 @@ internal sealed class ElementTable
         return result[..(k * k)];
     }
 
-    private static double[]? Link(UnknownMap map, Geometry.Mesh mesh, ReadOnlySpan<int> nodes, List<int> unknowns, List<Arm> arms)
+    private static double[]? Link(UnknownMap map, Geometry.Mesh mesh, ReadOnlySpan<int> nodes, int outOfPlane, List<int> unknowns, List<Arm> arms)
     {
         bool plain = true;
         foreach (int node in nodes)
@@ -192,7 +192,11 @@ internal sealed class ElementTable
             unknowns.Add(map.OfNode(node) + 1);
         }
         if (plain)
+        {
+            if (outOfPlane >= 0)
+                unknowns.Add(outOfPlane);
             return null;
+        }
         foreach (int node in nodes)
         {
             int body = map.BodyOfNode(node);
@@ -201,8 +205,12 @@ internal sealed class ElementTable
             for (int i = 0; i < 3; i++)
                 unknowns.Add(map.OfBody(body) + i);
         }
-        int k = unknowns.Count;
-        var transform = new double[2 * nodes.Length * k];
+        if (outOfPlane >= 0)
+            unknowns.Add(outOfPlane);
+        int k = unknowns.Count, native = 2 * nodes.Length + (outOfPlane >= 0 ? 1 : 0);
+        var transform = new double[native * k];
+        if (outOfPlane >= 0)
+            transform[native * k - 1] = 1;
         for (int i = 0; i < nodes.Length; i++)
         {
             int body = map.BodyOfNode(nodes[i]);

@@ -15,6 +15,9 @@ public sealed class FullEquilibrium : IEquilibrium
     /// <summary>Share of the largest reference of the run below which the reference does not fall: after full unloading only rounding is left to measure by.</summary>
     private const double LeastReference = 1e-3;
 
+    /// <summary>Share of the reference above which rounding is no excuse once metal has yielded: displacements have run away, as they do at its limit load.</summary>
+    private const double LargestFloor = 1e-5;
+
     private readonly SpecimenModel _model;
     private readonly ElementTable _table;
     private readonly SparsePlan _plan;
@@ -211,12 +214,12 @@ public sealed class FullEquilibrium : IEquilibrium
         int changed = 0;
         GrowingElements = 0;
         _table.Turn(_u);
-        double storedSolids = 0, storedLayers = 0, spent = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
+        double storedSolids = 0, storedLayers = 0, spent = 0, yielding = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
         for (int block = 0; block < _table.Blocks.Count; block++)
         {
             IElementBlock elements = _table.Blocks[block];
             bool layer = block >= _table.FirstLayerBlock;
-            int n = 2 * elements.NodesPerElement;
+            int n = elements.NativeCount;
             var buffers = new ElementBuffers { Force = _force.AsSpan(0, n), Tangent = _tangent.AsSpan(0, n * n), LoadRate = _rate.AsSpan(0, n), Dissipation = _dissipation.AsSpan(0, n) };
             Span<double> native = _native.AsSpan(0, n);
             for (int e = 0; e < elements.Count; e++)
@@ -249,12 +252,15 @@ public sealed class FullEquilibrium : IEquilibrium
                     _bonds.Take(layerElement, answer);
                 }
                 else if (block < _table.SolidBlocks)
+                {
                     storedSolids += answer.Stored;
+                    yielding += answer.Dissipated;
+                }
                 else
                     storedLayers += answer.Stored;
             }
         }
-        Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature);
+        Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature) { SpentInYielding = yielding };
         LayerWorkByProgress = layersByTemperature * (_temperatureEnd - _temperatureStart);
         DissipationByProgress = dissipatedByTemperature * (_temperatureEnd - _temperatureStart);
 
@@ -286,7 +292,8 @@ public sealed class FullEquilibrium : IEquilibrium
         double largest = 0;
         foreach (double value in _rightSide)
             largest = Math.Max(largest, value);
-        return Rounding * largest;
+        double mostWhileFlowing = Energy.SpentInYielding > 0 ? LargestFloor * Math.Max(_reference, LeastReference * _largestReference) : double.PositiveInfinity;
+        return Math.Min(Rounding * largest, mostWhileFlowing);
     }
 
     /// <summary>Energy below which rounding rules [mJ]: 50 units of rounding of displacement times stiffness times displacement, magnitudes throughout.</summary>
@@ -418,6 +425,9 @@ public sealed class FullEquilibrium : IEquilibrium
         }
         return 0;
     }
+
+    /// <summary>State of an element of an adherend at the accepted point.</summary>
+    public ReadOnlySpan<double> AcceptedSolidState(int adherend, int element) => _state.Accepted(adherend, element);
 
     /// <summary>State of a layer element at the accepted point.</summary>
     public ReadOnlySpan<double> AcceptedLayerState(int joint, int element) => _state.Accepted(_table.FirstLayerBlock + joint, element);

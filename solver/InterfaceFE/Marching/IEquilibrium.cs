@@ -103,6 +103,12 @@ public interface IEquilibrium
 /// <param name="ByTemperature">d stored / d temperature at fixed displacement [mJ/K], whole model.</param>
 public readonly record struct EnergyState(double StoredInAdherends, double StoredInLayers, double SpentInLayers, double ByTemperature)
 {
+    /// <summary>Dissipated by yielding of the adherends.</summary>
+    public double SpentInYielding { get; init; }
+
+    /// <summary>Dissipated by layers and yielding.</summary>
+    public double Spent => SpentInLayers + SpentInYielding;
+
     /// <summary>Sum of all.</summary>
-    public double Total => StoredInAdherends + StoredInLayers + SpentInLayers;
+    public double Total => StoredInAdherends + StoredInLayers + Spent;
 }

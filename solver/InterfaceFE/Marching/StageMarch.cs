@@ -170,7 +170,8 @@ internal sealed class StageMarch
             return new MarchOutcome(MarchStatus.Severed, string.Create(CultureInfo.InvariantCulture,
                 $"the last {100 * share:G3} % of the bond gave way in stage {_stage.Number} at progress {_equilibrium.AcceptedProgress:G4}"));
         return Stop(string.Create(CultureInfo.InvariantCulture, $"no equilibrium was found beyond progress {_equilibrium.AcceptedProgress:G6} of stage {_stage.Number} ({_stage.Words}), however short the stride")
-            + (_settings.Path == PathControl.None ? "; a limit point needs `control: automatic`" : ""));
+            + (_settings.Path == PathControl.None ? "; a limit point needs `control: automatic`" : "")
+            + (_equilibrium.Energy.SpentInYielding > 0 ? "; an adherend has yielded: if this is its limit load, drive the grip by travel or angle instead" : ""));
     }
 
     private Attempt TryOwn(double stride)
@@ -213,7 +214,7 @@ internal sealed class StageMarch
     /// </summary>
     private bool GoesBack() =>
         (Turns ? _way.Opposes(_equilibrium) : _equilibrium.Progress < _equilibrium.AcceptedProgress)
-        && _equilibrium.Energy.SpentInLayers - _accepted.SpentInLayers <= NoDissipation * Math.Max(_way.Dissipation, _accepted.SpentInLayers);
+        && _equilibrium.Energy.Spent - _accepted.Spent <= NoDissipation * Math.Max(_way.Dissipation, _accepted.Spent);
 
     private Attempt Search(IControl control)
     {

@@ -67,7 +67,7 @@ public readonly ref struct ElementBuffers
 public readonly record struct ElementAnswer(double Stored, double Dissipated, double StoredByTemperature, double DissipatedByTemperature, double LargestDamage, double LeastDamage, bool Growing);
 
 /// <summary>
-/// Elements of one kind and one material. An element has two native unknowns (ux, uy) per node, in the order of <see cref="Nodes"/>. Pure functions of the
+/// Elements of one kind and one material. An element has two native unknowns (ux, uy) per node, in the order of <see cref="Nodes"/>, and where its group strains out of plane one more. Pure functions of the
 /// arguments: evaluating twice gives the same bytes. Safe for use by several threads on different elements.
 /// </summary>
 public interface IElementBlock
@@ -81,6 +81,12 @@ public interface IElementBlock
     /// <summary>Nodes per element.</summary>
     int NodesPerElement { get; }
 
+    /// <summary>Native unknowns of an element: two per node, and one more, last, where the element strains with its group out of plane.</summary>
+    int NativeCount => 2 * NodesPerElement;
+
+    /// <summary>Unknown of the group out of plane, the last native unknown of every element [mm]; -1 when the block has none.</summary>
+    int OutOfPlaneUnknown => -1;
+
     /// <summary>Doubles of state per element.</summary>
     int StateSize { get; }
 
@@ -93,7 +99,7 @@ public interface IElementBlock
     /// <summary>Evaluates an element.</summary>
     /// <param name="element">Element index.</param>
     /// <param name="at">Place on the path.</param>
-    /// <param name="displacement">Native displacements [mm], two per node.</param>
+    /// <param name="displacement">Native displacements [mm], <see cref="NativeCount"/> numbers.</param>
     /// <param name="accepted">State at the accepted point.</param>
     /// <param name="tentative">State that goes with the displacement; overwritten.</param>
     /// <param name="wanted">What to compute.</param>

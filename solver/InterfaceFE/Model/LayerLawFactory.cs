@@ -32,7 +32,7 @@ public static class LayerLawFactory
         if (layer.Bulk is not { } bulk)
             return null;
         LayerRestraint restraint = bulk.BetweenFaces == Confinement.Confined ? LayerRestraint.Confined
-            : outOfPlane == OutOfPlane.Held ? LayerRestraint.UnconfinedHeld : LayerRestraint.UnconfinedFree;
+            : outOfPlane == OutOfPlane.Free ? LayerRestraint.UnconfinedFree : LayerRestraint.UnconfinedHeld;
         return new ConfinedStiffness(bulk.Young, bulk.Poisson, bulk.Expansion, layer.Thickness, restraint);
     }
 

@@ -6,20 +6,39 @@ namespace InterfaceFE.Model;
 /// <summary>Materials of a deck as laws of the plane model.</summary>
 public static class MaterialFactory
 {
-    /// <summary>The law of a material in its own axes (x along the adherend).</summary>
+    /// <summary>The elastic law of a material in its own axes (x along the adherend).</summary>
     /// <exception cref="DeckException">The constants are no stable elastic material.</exception>
     public static PlaneElasticity Create(Deck deck, string name)
     {
         MaterialDeck material = deck.Materials[name];
-        OutOfPlaneState state = deck.Model.OutOfPlane == OutOfPlane.Held ? OutOfPlaneState.Held : OutOfPlaneState.Free;
+        return Guarded(name, () => material.ShearModulus is null && material.Expansion == new Directional(material.Expansion.X)
+            ? PlaneElasticity.Isotropic(material.Young.X, material.Poisson.Xy, material.Expansion.X, StateOf(deck))
+            : PlaneElasticity.Orthotropic(Constants(material), StateOf(deck)));
+    }
+
+    /// <summary>The same material as it yields; null when it does not.</summary>
+    /// <exception cref="DeckException">The constants are no material that can yield.</exception>
+    public static J2Plasticity? Yielding(Deck deck, string name)
+    {
+        MaterialDeck material = deck.Materials[name];
+        if (material.YieldCurve is not { } table)
+            return null;
+        return Guarded(name, () => new J2Plasticity(Constants(material), new YieldCurve([.. table.PlasticStrain], [.. table.Stress], [.. table.Temperature ?? []], [.. table.ShareOfStress ?? []]),
+            table.KinematicHardening, StateOf(deck), deck.StressFreeTemperature));
+    }
+
+    /// <summary>With a uniform strain the law is the held one: the strain comes on top.</summary>
+    private static OutOfPlaneState StateOf(Deck deck) => deck.Model.OutOfPlane == OutOfPlane.Free ? OutOfPlaneState.Free : OutOfPlaneState.Held;
+
+    // An isotropic material may still expand by direction, as a drawn sheet does.
+    private static OrthotropicConstants Constants(MaterialDeck material) => new(material.Young.X, material.Young.Y, material.Young.Z, material.Poisson.Xy, material.Poisson.Xz, material.Poisson.Zy,
+        material.ShearModulus?.Xy ?? material.Young.X / (2 * (1 + material.Poisson.Xy)), material.Expansion.X, material.Expansion.Y, material.Expansion.Z);
+
+    private static T Guarded<T>(string name, Func<T> make)
+    {
         try
         {
-            // An isotropic material may still expand by direction, as a drawn sheet does.
-            double shear = material.ShearModulus?.Xy ?? material.Young.X / (2 * (1 + material.Poisson.Xy));
-            if (material.ShearModulus is null && material.Expansion == new Directional(material.Expansion.X))
-                return PlaneElasticity.Isotropic(material.Young.X, material.Poisson.Xy, material.Expansion.X, state);
-            return PlaneElasticity.Orthotropic(new OrthotropicConstants(material.Young.X, material.Young.Y, material.Young.Z, material.Poisson.Xy, material.Poisson.Xz, material.Poisson.Zy,
-                shear, material.Expansion.X, material.Expansion.Y, material.Expansion.Z), state);
+            return make();
         }
         catch (ArgumentException fault)
         {

@@ -17,11 +17,13 @@ public static class ModelBuilder
     {
         bool turns = deck.Model.Rotation == RotationSetting.Finite;
         PlaneElasticity[] materials = [.. mesh.Adherends.Select(a => MaterialFactory.Create(deck, a.Material))];
-        SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature, turns))];
-        LayerBlock[] layers = [.. mesh.Joints.Select(joint => Layer(deck, mesh, joint, materials))];
-        LayerBlock[] openFaces = [.. mesh.Joints.Zip(layers, (joint, layer) => OpenFaces(deck, mesh, joint, layer)).Where(block => block.Count > 0)];
+        OutOfPlaneGroups? outOfPlane = deck.Model.OutOfPlane == OutOfPlane.UniformStrain ? new OutOfPlaneGroups(mesh, deck.Model.Width, deck.Model.StrainOutOfPlane) : null;
         (IReadOnlyList<GripBody> bodies, IReadOnlyList<Grip> grips) = GripPlanner.Plan(deck, mesh);
-        var unknowns = new UnknownMap(mesh, bodies, turns);
+        var unknowns = new UnknownMap(mesh, bodies, outOfPlane, turns);
+        SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature, MaterialFactory.Yielding(deck, a.Material), unknowns.LinkOf(i), turns))];
+        double[] across = [.. mesh.Adherends.Select((_, i) => FreeAcross(deck, mesh, outOfPlane, i))];
+        LayerBlock[] layers = [.. mesh.Joints.Select(joint => Layer(deck, mesh, joint, materials, across))];
+        LayerBlock[] openFaces = [.. mesh.Joints.Zip(layers, (joint, layer) => OpenFaces(deck, mesh, joint, layer)).Where(block => block.Count > 0)];
         return new SpecimenModel
         {
             Mesh = mesh,
@@ -35,15 +37,39 @@ public static class ModelBuilder
         };
     }
 
-    private static LayerBlock Layer(Deck deck, Mesh mesh, MeshedJoint joint, PlaneElasticity[] materials)
+    private static LayerBlock Layer(Deck deck, Mesh mesh, MeshedJoint joint, PlaneElasticity[] materials, double[] across)
     {
         LayerDeck layer = deck.Layers![joint.Layer];
         ILayerLaw law = LayerLawFactory.Create(joint.Layer, layer, deck.Model.OutOfPlane);
-        double along = 0.5 * (materials[joint.UpperAdherend].Expansion[0] + materials[joint.LowerAdherend].Expansion[0]);
-        double across = deck.Model.OutOfPlane == OutOfPlane.Held ? 0
-            : 0.5 * (deck.Materials[mesh.Adherends[joint.UpperAdherend].Material].Expansion.Z + deck.Materials[mesh.Adherends[joint.LowerAdherend].Material].Expansion.Z);
-        double perKelvin = LayerLawFactory.Bulk(layer, deck.Model.OutOfPlane)?.FreeOpening(1, along, across) ?? 0;
+        double along = 0.5 * (Along(joint.UpperAdherend) + Along(joint.LowerAdherend));
+        double out3 = 0.5 * (across[joint.UpperAdherend] + across[joint.LowerAdherend]);
+        double perKelvin = LayerLawFactory.Bulk(layer, deck.Model.OutOfPlane)?.FreeOpening(1, along, out3) ?? 0;
         return new LayerBlock(mesh, joint, law, layer.Thickness, Rule(deck, mesh), perKelvin, deck.StressFreeTemperature, bonded: true, Kinematics(deck, joint));
+
+        double Along(int adherend) => materials[adherend].Expansion[0] + (deck.Model.OutOfPlane == OutOfPlane.UniformStrain ? materials[adherend].DrivenOutOfPlane().Expansion[0] * across[adherend] : 0);
+    }
+
+    /// <summary>
+    /// Free strain out of plane of an adherend per kelvin [1/K]: held 0, free its own expansion, with a uniform strain that of its group when nothing else strains it: mean expansion by
+    /// stiffness out of plane; 0 where the strain is given.
+    /// </summary>
+    private static double FreeAcross(Deck deck, Mesh mesh, OutOfPlaneGroups? groups, int adherend)
+    {
+        if (groups is null)
+            return deck.Model.OutOfPlane == OutOfPlane.Held ? 0 : deck.Materials[mesh.Adherends[adherend].Material].Expansion.Z;
+        if (groups.Given is not null)
+            return 0;
+        double sum = 0, stiffness = 0;
+        for (int i = 0; i < mesh.Adherends.Count; i++)
+        {
+            if (groups.Of(i) != groups.Of(adherend))
+                continue;
+            MaterialDeck material = deck.Materials[mesh.Adherends[i].Material];
+            double own = material.Young.Z * mesh.Adherends[i].Width * mesh.AreaOf(i);
+            sum += own * material.Expansion.Z;
+            stiffness += own;
+        }
+        return sum / stiffness;
     }
 
     private static LayerBlock OpenFaces(Deck deck, Mesh mesh, MeshedJoint joint, LayerBlock layer) =>

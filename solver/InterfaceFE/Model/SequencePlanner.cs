@@ -18,6 +18,7 @@ public sealed class SequencePlanner
     private readonly IReadOnlyList<Grip> _grips;
     private readonly SortedSet<int> _held = [];
     private readonly SortedDictionary<int, double> _forces = [];
+    private bool _hasMarched;
 
     private SequencePlanner(Deck deck, UnknownMap unknowns, IReadOnlyList<Grip> grips)
     {
@@ -31,6 +32,7 @@ public sealed class SequencePlanner
     public static IReadOnlyList<LoadStage> Plan(Deck deck, UnknownMap unknowns, IReadOnlyList<Grip> grips)
     {
         var planner = new SequencePlanner(deck, unknowns, grips);
+        planner.HoldGivenStrain();
         return [.. deck.Sequence.Select((stage, i) => planner.Stage(stage, i + 1))];
     }
 
@@ -56,6 +58,19 @@ public sealed class SequencePlanner
         PullDirection.PlusY => (GripComponent.Y, 1),
         _ => (GripComponent.Y, -1),
     };
+
+    private void HoldGivenStrain()
+    {
+        for (int group = 0; _unknowns.OutOfPlane is { Given: not null } groups && group < groups.Count; group++)
+            _held.Add(_unknowns.FirstOutOfPlane + group);
+    }
+
+    /// <summary>A given strain out of plane is reached over the first stage that marches.</summary>
+    private void ReachGivenStrain(Dictionary<int, HeldTarget> targets)
+    {
+        for (int group = 0; _unknowns.OutOfPlane is { Given: { } strain } groups && group < groups.Count; group++)
+            targets[_unknowns.FirstOutOfPlane + group] = new HeldTarget(_unknowns.FirstOutOfPlane + group, TargetKind.MoveTo, strain * groups.Length);
+    }
 
     private LoadStage Stage(StageDeck stage, int number)
     {
@@ -96,6 +111,9 @@ public sealed class SequencePlanner
             duration = stage.Wait ?? 0;
             words = string.Create(CultureInfo.InvariantCulture, $"wait {duration:G6} s");
         }
+        if (marches && !_hasMarched)
+            ReachGivenStrain(targets);
+        _hasMarched |= marches;
         return new LoadStage
         {
             Number = number,

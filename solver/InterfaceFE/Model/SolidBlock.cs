@@ -6,7 +6,7 @@ namespace InterfaceFE.Model;
 
 /// <summary>
 /// Elements of one adherend. Linear elastic at small rotation: stiffness, thermal force and blocked thermal energy of each element are computed once, after which
-/// force = K·u + thermal force·dT, energy = ½·u·K·u + dT·(thermal force·u) + ½·c·dT².
+/// force = K·u + thermal force·dT, energy = ½·u·K·u + dT·(thermal force·u) + ½·c·dT². A material that yields is in <see cref="YieldingBlock"/>.
 /// </summary>
 public abstract class SolidBlock : IElementBlock
 {
@@ -32,10 +32,19 @@ public abstract class SolidBlock : IElementBlock
     public abstract int NodesPerElement { get; }
 
     /// <inheritdoc/>
+    public virtual int NativeCount => 2 * NodesPerElement;
+
+    /// <inheritdoc/>
+    public virtual int OutOfPlaneUnknown => -1;
+
+    /// <inheritdoc/>
     public virtual int StateSize => 0;
 
     /// <inheritdoc/>
     public virtual TangentKind Kind => TangentKind.Constant;
+
+    /// <summary>Yield stress of the material; null when it does not yield.</summary>
+    public virtual YieldCurve? YieldCurve => null;
 
     /// <inheritdoc/>
     public ReadOnlySpan<int> Nodes(int element) => Adherend.Connectivity.AsSpan(element * NodesPerElement, NodesPerElement);
@@ -48,10 +57,16 @@ public abstract class SolidBlock : IElementBlock
 
     /// <summary>Stresses at the four Gauss points of an element.</summary>
     /// <param name="element">Element index.</param>
-    /// <param name="displacement">Native displacements [mm].</param>
+    /// <param name="displacement">Native displacements [mm], <see cref="NativeCount"/> numbers.</param>
     /// <param name="temperature">Temperature [K].</param>
+    /// <param name="accepted">Accepted state that goes with the displacements.</param>
     /// <param name="stresses">Point after point xx, yy, zz, xy [MPa]; length 16, overwritten.</param>
-    public abstract void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> stresses);
+    public abstract void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, ReadOnlySpan<double> accepted, Span<double> stresses);
+
+    /// <summary>Equivalent plastic strain at the Gauss points of an element, from its accepted state.</summary>
+    /// <param name="accepted">Accepted state.</param>
+    /// <param name="strains">Length 4, overwritten.</param>
+    public virtual void PlasticStrains(ReadOnlySpan<double> accepted, Span<double> strains) => strains.Clear();
 
     /// <summary>Displacement gradients at the Gauss points: du/dx, du/dy, dv/dx, dv/dy, point after point; length 16, overwritten.</summary>
     public abstract void Gradients(int element, ReadOnlySpan<double> displacement, Span<double> gradients);
@@ -61,16 +76,17 @@ public abstract class SolidBlock : IElementBlock
 
     /// <summary>
     /// Component xx of Eshelby's energy momentum at the Gauss points with opposite sign, before deformation: traction on a section whose normal is x times d displacement/dx, less the
-    /// energy density, of the strain less the thermal strain and with its out-of-plane part.
+    /// energy density, of the strain less the thermal strain and with its out-of-plane part, for a material that has not yielded.
     /// </summary>
     /// <param name="element">Element index.</param>
     /// <param name="displacement">Native displacements [mm].</param>
     /// <param name="temperature">Temperature [K].</param>
+    /// <param name="outOfPlane">Strain out of plane.</param>
     /// <param name="momentum">One per point [MPa]; length 4, overwritten.</param>
-    public virtual void EnergyMomentum(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> momentum)
+    public virtual void EnergyMomentum(int element, ReadOnlySpan<double> displacement, double temperature, double outOfPlane, Span<double> momentum)
     {
-        Span<double> stresses = stackalloc double[16], gradients = stackalloc double[16], strain = stackalloc double[3];
-        Stresses(element, displacement, temperature, stresses);
+        Span<double> gradients = stackalloc double[16], strain = stackalloc double[3], stress = stackalloc double[4];
+        double change = temperature - StressFreeTemperature;
         Gradients(element, displacement, gradients);
         for (int p = 0; p < 4; p++)
         {
@@ -78,8 +94,8 @@ public abstract class SolidBlock : IElementBlock
             strain[0] = g[0];
             strain[1] = g[3];
             strain[2] = g[1] + g[2];
-            double energy = Material(element).EnergyDensity(strain, temperature - StressFreeTemperature);
-            momentum[p] = stresses[4 * p] * g[0] + stresses[4 * p + 3] * g[2] - energy;
+            Material(element).Stress(strain, change, stress, outOfPlane);
+            momentum[p] = stress[0] * g[0] + stress[3] * g[2] - Material(element).EnergyDensity(strain, change, outOfPlane);
         }
     }
 
@@ -101,21 +117,40 @@ public abstract class SolidBlock : IElementBlock
     /// <param name="adherend">Adherend.</param>
     /// <param name="material">Material in the axes of the adherend: x along it.</param>
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
+    /// <param name="yielding">The same material as it yields; null: it does not.</param>
+    /// <param name="outOfPlane">The unknown with which it strains out of plane; null: none.</param>
     /// <param name="turns">Whether rotations are finite.</param>
-    /// <exception cref="ArgumentException">Rotations are finite and the elements have four nodes.</exception>
-    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature, bool turns = false) =>
-        (mesh.NodesPerSolid, turns) switch
+    /// <exception cref="ArgumentException">The material yields or rotations are finite, and the elements have four nodes; or rotations are finite and there is a strain out of plane.</exception>
+    public static SolidBlock Create(
+        Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature, J2Plasticity? yielding = null, OutOfPlaneLink? outOfPlane = null, bool turns = false)
+    {
+        bool eight = mesh.NodesPerSolid == Quadrilateral8.NodeCount;
+        if (turns)
         {
-            (Quadrilateral8.NodeCount, false) => new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature),
-            (Quadrilateral8.NodeCount, true) => new TurningBlock(mesh, adherend, material, stressFreeTemperature),
-            (_, false) => new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature),
-            _ => throw new ArgumentException("finite rotation needs eight-node elements", nameof(turns)),
-        };
+            return eight && outOfPlane is null
+                ? new TurningBlock(mesh, adherend, material, yielding, stressFreeTemperature)
+                : throw new ArgumentException("finite rotation needs eight-node elements without strain out of plane", nameof(turns));
+        }
+        if (yielding is not null)
+        {
+            return eight
+                ? new YieldingBlock(mesh, adherend, material, yielding, stressFreeTemperature, outOfPlane)
+                : throw new ArgumentException("yielding needs eight-node elements", nameof(yielding));
+        }
+        if (outOfPlane is { } link)
+            return eight ? new UniformBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature, link) : new UniformBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature, link);
+        return eight ? new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature) : new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature);
+    }
 }
+
+/// <summary>The unknown with which a block strains out of plane.</summary>
+/// <param name="Unknown">Elongation of the group [mm].</param>
+/// <param name="Length">Length over which it is counted [mm]: strain = elongation over length.</param>
+public readonly record struct OutOfPlaneLink(int Unknown, double Length);
 
 /// <summary>The block for one kind of element.</summary>
 /// <typeparam name="TElement">Kind of element.</typeparam>
-internal sealed class SolidBlock<TElement> : SolidBlock
+internal class SolidBlock<TElement> : SolidBlock
     where TElement : struct, IPlaneElement
 {
     private readonly double[] _coordinates, _stiffness, _thermal, _blocked;
@@ -180,7 +215,7 @@ internal sealed class SolidBlock<TElement> : SolidBlock
 
     public override PlaneElasticity Material(int element) => _materials[element];
 
-    public override void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> stresses) =>
+    public override void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, ReadOnlySpan<double> accepted, Span<double> stresses) =>
         TElement.Stresses(Coordinates(element), _materials[element], displacement, temperature - StressFreeTemperature, stresses);
 
     public override void Gradients(int element, ReadOnlySpan<double> displacement, Span<double> gradients) =>
@@ -198,7 +233,7 @@ internal sealed class SolidBlock<TElement> : SolidBlock
     /// Displacement less a rigid movement: that of the first node and the turn of the diagonal. It strains nothing, so forces stay the same; their rounding then grows with the
     /// strain and not with the travel, which in slender arms is ten thousand times as large.
     /// </summary>
-    private void TakeRigidMovementOff(int element, ReadOnlySpan<double> displacement, Span<double> strained)
+    protected void TakeRigidMovementOff(int element, ReadOnlySpan<double> displacement, Span<double> strained)
     {
         ReadOnlySpan<double> xy = Coordinates(element);
         double x = xy[0], y = xy[1], u = displacement[0], v = displacement[1];
@@ -211,7 +246,11 @@ internal sealed class SolidBlock<TElement> : SolidBlock
         }
     }
 
-    private ReadOnlySpan<double> Coordinates(int element) => _coordinates.AsSpan(element * TElement.Unknowns, TElement.Unknowns);
+    /// <summary>Elastic stiffness of an element [N/mm], row-major.</summary>
+    protected ReadOnlySpan<double> ElasticStiffness(int element) => _stiffness.AsSpan(element * TElement.Unknowns * TElement.Unknowns, TElement.Unknowns * TElement.Unknowns);
+
+    /// <summary>Coordinates of an element's nodes.</summary>
+    protected ReadOnlySpan<double> Coordinates(int element) => _coordinates.AsSpan(element * TElement.Unknowns, TElement.Unknowns);
 
     private static double Dot(ReadOnlySpan<double> a, ReadOnlySpan<double> b)
     {

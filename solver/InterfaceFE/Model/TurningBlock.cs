@@ -12,8 +12,9 @@ internal sealed class TurningBlock : SolidBlock
     private readonly double[] _coordinates, _byX, _byY, _areas;
     private readonly PlaneElasticity[] _materials;
     private readonly IPlaneLaw[] _laws;
+    private readonly int _stateSize;
 
-    public TurningBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature)
+    public TurningBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, J2Plasticity? yielding, double stressFreeTemperature)
         : base(adherend, stressFreeTemperature)
     {
         Count = adherend.Connectivity.Length / Nodes8;
@@ -34,15 +35,22 @@ internal sealed class TurningBlock : SolidBlock
             }
             Quadrilateral8.ShapeGradients(xy, Slice(_byX, e), Slice(_byY, e), _areas.AsSpan(e * Points, Points));
             double angle = adherend.StraightAlongX ? 0 : AngleAlong(xy);
-            _laws[e] = _materials[e] = material.Rotated(angle);
+            _materials[e] = material.Rotated(angle);
+            _laws[e] = yielding is null ? _materials[e] : yielding.Rotated(angle);
         }
+        YieldCurve = yielding?.Curve;
+        _stateSize = yielding?.StateSize ?? 0;
     }
 
     public override int Count { get; }
 
     public override int NodesPerElement => Nodes8;
 
+    public override int StateSize => Points * _stateSize;
+
     public override TangentKind Kind => TangentKind.Symmetric;
+
+    public override YieldCurve? YieldCurve { get; }
 
     public override ElementAnswer Evaluate(int element, in PathPoint at, ReadOnlySpan<double> displacement, ReadOnlySpan<double> accepted, Span<double> tentative, Wanted wanted, in ElementBuffers into)
     {
@@ -55,12 +63,22 @@ internal sealed class TurningBlock : SolidBlock
 
     public override PlaneElasticity Material(int element) => _materials[element];
 
-    public override void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> stresses)
+    public override void Stresses(int element, ReadOnlySpan<double> displacement, double temperature, ReadOnlySpan<double> accepted, Span<double> stresses)
     {
-        Span<double> gradients = stackalloc double[4 * Points];
+        Span<double> gradients = stackalloc double[4 * Points], strain = stackalloc double[3], moduli = stackalloc double[9], scratch = stackalloc double[_stateSize];
         Gradients(element, displacement, gradients);
-        LawStresses(element, gradients, temperature, stresses, energies: []);
+        for (int p = 0; p < Points; p++)
+        {
+            LogarithmicStrain.Of(gradients.Slice(4 * p, 4)).Strain(strain);
+            _laws[element].Update(strain, temperature - StressFreeTemperature, accepted.Slice(p * _stateSize, _stateSize), scratch, stresses.Slice(4 * p, 4), moduli);
+        }
         TurningElement.TrueStress(gradients, stresses);
+    }
+
+    public override void PlasticStrains(ReadOnlySpan<double> accepted, Span<double> strains)
+    {
+        for (int p = 0; p < Points; p++)
+            strains[p] = _stateSize > 0 ? accepted[p * _stateSize + J2Plasticity.EquivalentStrain] : 0;
     }
 
     public override void Gradients(int element, ReadOnlySpan<double> displacement, Span<double> gradients)
@@ -84,29 +102,18 @@ internal sealed class TurningBlock : SolidBlock
     public override void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues) =>
         Quadrilateral8.ExtrapolateToNodes(components, gaussValues, nodeValues);
 
-    public override void EnergyMomentum(int element, ReadOnlySpan<double> displacement, double temperature, Span<double> momentum)
+    public override void EnergyMomentum(int element, ReadOnlySpan<double> displacement, double temperature, double outOfPlane, Span<double> momentum)
     {
-        Span<double> gradients = stackalloc double[4 * Points], stresses = stackalloc double[4 * Points], energies = stackalloc double[Points];
+        Span<double> gradients = stackalloc double[4 * Points], strain = stackalloc double[3], stress = stackalloc double[4];
+        double change = temperature - StressFreeTemperature;
         Gradients(element, displacement, gradients);
-        LawStresses(element, gradients, temperature, stresses, energies);
         for (int p = 0; p < Points; p++)
         {
             ReadOnlySpan<double> g = gradients.Slice(4 * p, 4);
-            (double alongX, double alongY) = TurningElement.NominalTraction(g, stresses.Slice(4 * p, 4));
-            momentum[p] = alongX * g[0] + alongY * g[2] - energies[p];
-        }
-    }
-
-    /// <summary>What the law answers at the Gauss points: stresses on the logarithmic strain and, where wanted, energies per volume before deformation.</summary>
-    private void LawStresses(int element, ReadOnlySpan<double> gradients, double temperature, Span<double> stresses, Span<double> energies)
-    {
-        Span<double> strain = stackalloc double[3], moduli = stackalloc double[9];
-        for (int p = 0; p < Points; p++)
-        {
-            LogarithmicStrain.Of(gradients.Slice(4 * p, 4)).Strain(strain);
-            PlaneEnergy energy = _laws[element].Update(strain, temperature - StressFreeTemperature, [], [], stresses.Slice(4 * p, 4), moduli);
-            if (!energies.IsEmpty)
-                energies[p] = energy.Stored;
+            LogarithmicStrain.Of(g).Strain(strain);
+            _materials[element].Stress(strain, change, stress, outOfPlane);
+            (double alongX, double alongY) = TurningElement.NominalTraction(g, stress);
+            momentum[p] = alongX * g[0] + alongY * g[2] - _materials[element].EnergyDensity(strain, change, outOfPlane);
         }
     }
 

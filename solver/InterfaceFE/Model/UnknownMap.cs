@@ -6,7 +6,7 @@ namespace InterfaceFE.Model;
 /// <summary>
 /// How nodal displacements follow from the unknowns. A node has unknowns of its own unless it belongs to a rigid body; then ux = Ux - θ·(y - yp) and uy = Uy + θ·(x - xp)
 /// with the body's unknowns (Ux, Uy, θ) and pin (xp, yp), or with finite rotation ux = Ux + (cos θ - 1)·(x - xp) - sin θ·(y - yp) and uy = Uy + sin θ·(x - xp) + (cos θ - 1)·(y - yp). Unknowns are grouped in vertices: the coincident nodes of a joint are one vertex, a body is one.
-/// Everything that a deck grips is a root vertex. The constructor throws <see cref="ArgumentException"/> when bodies overlap.
+/// Everything that a deck grips is a root vertex, and so is the elongation of a group of adherends out of plane, where there is one. The constructor throws <see cref="ArgumentException"/> when bodies overlap.
 /// </summary>
 public sealed class UnknownMap
 {
@@ -18,10 +18,12 @@ public sealed class UnknownMap
 
     /// <summary>Numbers the unknowns of a mesh with the given bodies.</summary>
     /// <param name="mesh">The mesh.</param>
-    /// <param name="bodies">The bodies.</param>
+    /// <param name="bodies">What grips hold.</param>
+    /// <param name="outOfPlane">Groups that strain out of plane together; null: none does.</param>
     /// <param name="turns">Whether rotations are finite.</param>
-    public UnknownMap(Mesh mesh, IReadOnlyList<GripBody> bodies, bool turns = false)
+    public UnknownMap(Mesh mesh, IReadOnlyList<GripBody> bodies, OutOfPlaneGroups? outOfPlane = null, bool turns = false)
     {
+        OutOfPlane = outOfPlane;
         _mesh = mesh;
         _bodies = bodies;
         Turns = turns;
@@ -112,6 +114,16 @@ public sealed class UnknownMap
             root.Add(true);
             changeable.Add(false);
         }
+        FirstOutOfPlane = vertexOfUnknown.Count;
+        for (int tied = 0; tied < (outOfPlane?.Count ?? 0); tied++)
+        {
+            int node = mesh.Adherends[outOfPlane!.FirstOf(tied)].FirstNode;
+            vertexOfUnknown.Add(x.Count);
+            x.Add(mesh.X[node]);
+            y.Add(mesh.Y[node]);
+            root.Add(true);
+            changeable.Add(false);
+        }
         VertexOfUnknown = [.. vertexOfUnknown];
         VertexX = [.. x];
         VertexY = [.. y];
@@ -139,6 +151,18 @@ public sealed class UnknownMap
 
     /// <summary>Whether element matrices at a vertex can change.</summary>
     public bool[] IsChangeable { get; }
+
+    /// <summary>Groups that strain out of plane together; null when none does.</summary>
+    public OutOfPlaneGroups? OutOfPlane { get; }
+
+    /// <summary>Unknown of the first group out of plane: its elongation over <see cref="OutOfPlaneGroups.Length"/> [mm]; those of further groups follow, last of all.</summary>
+    public int FirstOutOfPlane { get; }
+
+    /// <summary>The unknown with which an adherend strains out of plane; null when it does not.</summary>
+    public OutOfPlaneLink? LinkOf(int adherend) => OutOfPlane is { } groups ? new OutOfPlaneLink(FirstOutOfPlane + groups.Of(adherend), groups.Length) : null;
+
+    /// <summary>Strain out of plane of an adherend; 0 where none is unknown.</summary>
+    public double OutOfPlaneStrain(int adherend, ReadOnlySpan<double> unknowns) => OutOfPlane is { } groups ? unknowns[FirstOutOfPlane + groups.Of(adherend)] / groups.Length : 0;
 
     /// <summary>First of the three unknowns of a rigid body; -1 for a body of points.</summary>
     public int OfBody(int body) => _ofBody[body];
@@ -187,6 +211,8 @@ public sealed class UnknownMap
                 return string.Create(CultureInfo.InvariantCulture, $"the grip on {_bodies[b].Name} ({_bodies[b].PinX:G6} mm, {_bodies[b].PinY:G6} mm), {what}");
             }
         }
+        if (unknown >= FirstOutOfPlane)
+            return $"the elongation out of plane of '{_mesh.Adherends[OutOfPlane!.FirstOf(unknown - FirstOutOfPlane)].Name}' and what is bonded to it";
         int node = Array.FindIndex(_ofNode, first => first >= 0 && (first == unknown || first + 1 == unknown));
         MeshedAdherend adherend = _mesh.Adherends.First(a => node >= a.FirstNode && node < a.FirstNode + a.NodeCount);
         return string.Create(CultureInfo.InvariantCulture, $"adherend '{adherend.Name}' at ({_mesh.X[node]:G6} mm, {_mesh.Y[node]:G6} mm), along {(unknown == _ofNode[node] ? "x" : "y")}");

@@ -51,15 +51,20 @@ public sealed class EnergyReleaseRates
     public string? RotationReason { get; }
 
     /// <summary>J by path [N/mm] at the accepted point; null where not valid.</summary>
-    public double? Path(LayerSample sample, double[] ux, double[] uy, double temperature)
+    /// <param name="sample">The joint's layer.</param>
+    /// <param name="ux">Displacement of nodes along x [mm].</param>
+    /// <param name="uy">Displacement of nodes along y [mm].</param>
+    /// <param name="temperature">Temperature [K].</param>
+    /// <param name="outOfPlane">Strain out of plane of both adherends.</param>
+    public double? Path(LayerSample sample, double[] ux, double[] uy, double temperature, double outOfPlane = 0)
     {
         if (PathReason is not null || FrontIsNear)
             return null;
         double j = 0;
         foreach (SolidBlock solid in (ReadOnlySpan<SolidBlock>)[_upper, _lower])
         {
-            double? behind = SectionIntegral.Mean(solid, _behindFrom, _behindTo, ux, uy, temperature);
-            double? ahead = SectionIntegral.Mean(solid, _aheadFrom, _aheadTo, ux, uy, temperature);
+            double? behind = SectionIntegral.Mean(solid, _behindFrom, _behindTo, ux, uy, temperature, outOfPlane);
+            double? ahead = SectionIntegral.Mean(solid, _aheadFrom, _aheadTo, ux, uy, temperature, outOfPlane);
             if (behind is null || ahead is null)
                 return null;
             j += (behind.Value - ahead.Value) * solid.Adherend.Width / _joint.Width;

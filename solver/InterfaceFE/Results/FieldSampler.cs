@@ -22,6 +22,8 @@ public sealed class FieldSampler
         DisplacementX = new double[nodes];
         DisplacementY = new double[nodes];
         Equivalent = new double[nodes];
+        PlasticStrain = new double[nodes];
+        Yielding = new YieldSample[model.Solids.Count];
         for (int i = 0; i < 4; i++)
             _stress[i] = new double[nodes];
         _share = new double[nodes];
@@ -41,6 +43,12 @@ public sealed class FieldSampler
     /// <summary>Equivalent stress at each node [MPa].</summary>
     public double[] Equivalent { get; }
 
+    /// <summary>Equivalent plastic strain at each node [-].</summary>
+    public double[] PlasticStrain { get; }
+
+    /// <summary>Largest equivalent plastic strain of each adherend, at its integration points.</summary>
+    public YieldSample[] Yielding { get; }
+
     /// <summary>Largest rotation of the material at the latest sample, magnitude [rad].</summary>
     public double LargestRotation { get; private set; }
 
@@ -54,16 +62,24 @@ public sealed class FieldSampler
             (DisplacementX[node], DisplacementY[node]) = _model.Unknowns.Displacement(node, equilibrium.AcceptedDisplacement);
         foreach (double[] component in _stress)
             Array.Clear(component);
+        Array.Clear(PlasticStrain);
+        Array.Clear(Yielding);
         LargestRotation = 0;
-        Span<double> native = stackalloc double[16], gauss = stackalloc double[16], nodal = stackalloc double[32], gradients = stackalloc double[16];
-        foreach (SolidBlock solid in _model.Solids)
+        Span<double> native = stackalloc double[17], gauss = stackalloc double[16], nodal = stackalloc double[32], gradients = stackalloc double[16];
+        for (int adherend = 0; adherend < _model.Solids.Count; adherend++)
         {
+            SolidBlock solid = _model.Solids[adherend];
             int n = solid.NodesPerElement;
+            if (solid.OutOfPlaneUnknown >= 0)
+                native[2 * n] = equilibrium.AcceptedDisplacement[solid.OutOfPlaneUnknown];
             for (int e = 0; e < solid.Count; e++)
             {
                 ReadOnlySpan<int> nodes = solid.Nodes(e);
+                ReadOnlySpan<double> state = equilibrium.AcceptedSolidState(adherend, e);
+                if (solid.YieldCurve is not null)
+                    TakeYielding(adherend, e, state);
                 LayerSample.Gather(nodes, DisplacementX, DisplacementY, native);
-                solid.Stresses(e, native[..(2 * n)], equilibrium.AcceptedTemperature, gauss);
+                solid.Stresses(e, native[..solid.NativeCount], equilibrium.AcceptedTemperature, state, gauss);
                 solid.Gradients(e, native[..(2 * n)], gradients);
                 for (int p = 0; p < 4; p++)
                     LargestRotation = Math.Max(LargestRotation, Math.Abs(solid.Rotation(gradients.Slice(4 * p, 4))));
@@ -80,6 +96,33 @@ public sealed class FieldSampler
         }
     }
 
+    private void TakeYielding(int adherend, int element, ReadOnlySpan<double> state)
+    {
+        SolidBlock solid = _model.Solids[adherend];
+        ReadOnlySpan<int> nodes = solid.Nodes(element);
+        Span<double> strains = stackalloc double[4], positions = stackalloc double[8], nodal = stackalloc double[8];
+        solid.PlasticStrains(state, strains);
+        bool atGrip = true;
+        foreach (int node in nodes)
+            atGrip &= _atGrip[node];
+        YieldSample largest = Yielding[adherend];
+        for (int p = 0; p < 4; p++)
+        {
+            if (strains[p] == 0)
+                continue;
+            solid.GaussPositions(element, positions);
+            if (atGrip)
+                largest = largest with { AtGrip = true };
+            else if (strains[p] > largest.Largest)
+                largest = largest with { Largest = strains[p], X = positions[2 * p], Y = positions[2 * p + 1] };
+            largest = largest with { LargestAnywhere = Math.Max(largest.LargestAnywhere, strains[p]) };
+        }
+        Yielding[adherend] = largest;
+        solid.ExtrapolateToNodes(1, strains, nodal[..nodes.Length]);
+        for (int i = 0; i < nodes.Length; i++)
+            PlasticStrain[nodes[i]] += Math.Max(nodal[i], 0) / _share[nodes[i]];
+    }
+
     /// <summary>A copy of the fields for keeping.</summary>
     public FieldSnapshot Snapshot(MarchPoint point, IReadOnlyList<LayerSample> layers) => new()
     {
@@ -94,7 +137,7 @@ public sealed class FieldSampler
         StressZz = [.. _stress[2]],
         StressXy = [.. _stress[3]],
         EquivalentStress = [.. Equivalent],
-        PlasticStrain = new double[Equivalent.Length],
+        PlasticStrain = [.. PlasticStrain],
         Layers = [.. layers.Select((sample, joint) => Layer(sample, joint))],
     };
 

@@ -5,13 +5,15 @@ using InterfaceFE.Model;
 
 namespace InterfaceFE.Results;
 
-/// <summary>Keeps the largest values of joints and adherends over a run, and the first damage.</summary>
+/// <summary>Keeps the largest values of joints and adherends over a run, the first damage and the first yield.</summary>
 public sealed class RunMaxima
 {
     private readonly SpecimenModel _model;
     private readonly IReadOnlyList<bool> _leftOut;
     private readonly double[] _opening, _sliding, _damage, _peel, _shear, _separated, _zone, _closing, _stress, _faceAngle;
     private readonly int[] _stressNode, _stressPoint;
+    private readonly double[] _plastic, _plasticAnywhere;
+    private readonly bool[] _yieldedAtGrip;
 
     /// <summary>Starts from nothing.</summary>
     /// <param name="model">The model.</param>
@@ -33,6 +35,9 @@ public sealed class RunMaxima
         _stress = new double[adherends];
         _stressNode = new int[adherends];
         _stressPoint = new int[adherends];
+        _plastic = new double[adherends];
+        _plasticAnywhere = new double[adherends];
+        _yieldedAtGrip = new bool[adherends];
     }
 
     /// <summary>First damage; null while none.</summary>
@@ -41,6 +46,18 @@ public sealed class RunMaxima
     /// <summary>Largest angle between the faces of a joint where damage was under way [rad].</summary>
     public double FaceAngle(int joint) => _faceAngle[joint];
 
+    /// <summary>First yield away from grips; null while none.</summary>
+    public EventSummary? FirstYield { get; private set; }
+
+    /// <summary>Whether an adherend has yielded in an element that touches a grip.</summary>
+    public bool YieldedAtGrip(int adherend) => _yieldedAtGrip[adherend];
+
+    /// <summary>Whether an adherend has yielded anywhere.</summary>
+    public bool HasYielded(int adherend) => _plasticAnywhere[adherend] > 0;
+
+    /// <summary>Whether an adherend has yielded beyond the end of its yield curve.</summary>
+    public bool BeyondCurve(int adherend) => _model.Solids[adherend].YieldCurve is { IsTable: true } curve && _plasticAnywhere[adherend] > curve.End;
+
     /// <summary>Largest rotation of the material [rad].</summary>
     public double LargestRotation { get; private set; }
 
@@ -48,7 +65,7 @@ public sealed class RunMaxima
     public int UnstablePoints { get; private set; }
 
     /// <summary>Takes an accepted point in.</summary>
-    public void Take(MarchPoint point, LayerSample[] samples, BondFront[][] fronts, double[] equivalent, double rotation)
+    public void Take(MarchPoint point, LayerSample[] samples, BondFront[][] fronts, double[] equivalent, YieldSample[] yielding, double rotation)
     {
         LargestRotation = Math.Max(LargestRotation, rotation);
         if (!point.Stable)
@@ -63,6 +80,7 @@ public sealed class RunMaxima
         }
         for (int a = 0; a < _stress.Length; a++)
         {
+            TakeYielding(a, point, yielding[a]);
             MeshedAdherend adherend = _model.Mesh.Adherends[a];
             for (int node = adherend.FirstNode; node < adherend.FirstNode + adherend.NodeCount; node++)
             {
@@ -121,9 +139,18 @@ public sealed class RunMaxima
                 X = _model.Mesh.X[_stressNode[a]],
                 Y = _model.Mesh.Y[_stressNode[a]],
                 Point = _stressPoint[a],
-                LargestPlasticStrain = 0,
+                LargestPlasticStrain = _plastic[a],
             };
         }
+    }
+
+    private void TakeYielding(int a, MarchPoint point, YieldSample yielding)
+    {
+        _plastic[a] = Math.Max(_plastic[a], yielding.Largest);
+        _plasticAnywhere[a] = Math.Max(_plasticAnywhere[a], yielding.LargestAnywhere);
+        _yieldedAtGrip[a] |= yielding.AtGrip;
+        if (yielding.Largest > 0 && FirstYield is null)
+            FirstYield = new EventSummary(string.Create(System.Globalization.CultureInfo.InvariantCulture, $"adherend '{_model.Mesh.Adherends[a].Name}' at x {yielding.X:G4} mm, y {yielding.Y:G4} mm"), point.Number, point.Stage, point.Progress);
     }
 
     private void TakeJoint(int j, MarchPoint point, LayerSample sample)

@@ -22,6 +22,7 @@ public sealed class RunRecorder : IMarchObserver
     private readonly EnergyReleaseRates[][] _rates;
     private readonly int _fieldInterval;
     private readonly RunMaxima _maxima;
+    private readonly HashSet<(int Adherend, bool Beyond)> _told = [];
     private bool _temperatureChanged;
     private FieldSnapshot? _peak, _last;
     private double _largestLoad;
@@ -68,6 +69,31 @@ public sealed class RunRecorder : IMarchObserver
                     $"opening, sliding and mode mix of {_model.Layers[joint].Name} depend on the line that they are counted along (`frame`): where damage was under way its faces stood up to {_maxima.FaceAngle(joint) * 180 / Math.PI:G3} degrees apart");
         if (_temperatureChanged)
             yield return "J rotation and J under law are left empty once the temperature has changed: they hold at constant temperature only";
+        string[] yielded = [.. Named(_maxima.HasYielded)], beyond = [.. Named(_maxima.BeyondCurve)], atGrip = [.. Named(_maxima.YieldedAtGrip)];
+        if (yielded.Length > 0 && _model.Layers.Count > 0)
+            yield return $"J path and J rotation are left empty at joints of an adherend that has yielded ({string.Join(", ", yielded)}): they hold for elastic arms only";
+        if (atGrip.Length > 0)
+            yield return $"elements that touch a grip have yielded in {string.Join(", ", atGrip)}: first yield and largest plastic strain leave them out";
+        if (beyond.Length > 0)
+            yield return $"plastic strain went beyond the end of the yield curve in {string.Join(", ", beyond)}: the yield stress stays level there";
+    }
+
+    private IEnumerable<string> Named(Func<int, bool> which) => Enumerable.Range(0, _model.Solids.Count).Where(which).Select(a => $"'{_model.Solids[a].Name}'");
+
+    /// <summary>Strains out of plane of the groups that have one, in order.</summary>
+    private IEnumerable<double> OutOfPlaneStrains() =>
+        Enumerable.Range(0, _model.Unknowns.OutOfPlane?.Count ?? 0).Select(g => _model.Unknowns.OutOfPlaneStrain(_model.Unknowns.OutOfPlane!.FirstOf(g), _equilibrium.AcceptedDisplacement));
+
+    /// <summary>Says once for each adherend that it yields, and that it yields beyond its curve.</summary>
+    private void TellYielding()
+    {
+        for (int a = 0; a < _model.Solids.Count; a++)
+        {
+            if (_maxima.HasYielded(a) && _told.Add((a, false)))
+                _sink.Say($"adherend '{_model.Solids[a].Name}' begins to yield");
+            if (_maxima.BeyondCurve(a) && _told.Add((a, true)))
+                _sink.Say(string.Create(System.Globalization.CultureInfo.InvariantCulture, $"adherend '{_model.Solids[a].Name}' yields beyond plastic strain {_model.Solids[a].YieldCurve!.End}, where its yield curve ends: the yield stress stays level from there"));
+        }
     }
 
     /// <summary>Keeps the fields of the last point and of the largest load of the main grip, if fields are kept at all and these are not among them.</summary>
@@ -102,14 +128,15 @@ public sealed class RunRecorder : IMarchObserver
             LoadFactor = point.Progress,
             Stable = point.Stable,
             Grips = readings,
-            Gauges = _gauges.Read(_fields.DisplacementX, _fields.DisplacementY),
+            Gauges = [.. _gauges.Read(_fields.DisplacementX, _fields.DisplacementY), .. OutOfPlaneStrains()],
         };
         var fronts = new List<FrontRow>();
         for (int joint = 0; joint < _fronts.Length; joint++)
             for (int f = 0; f < _fronts[joint].Length; f++)
                 fronts.Add(Front(point, joint, f, readings));
         EnergyRow energy = Energy(point);
-        _maxima.Take(point, _samples, _fronts, _fields.Equivalent, _fields.LargestRotation);
+        _maxima.Take(point, _samples, _fronts, _fields.Equivalent, _fields.Yielding, _fields.LargestRotation);
+        TellYielding();
         _history.Points.Add(row);
         _history.Fronts.AddRange(fronts);
         _history.Energies.Add(energy);
@@ -172,6 +199,7 @@ public sealed class RunRecorder : IMarchObserver
         BondFront front = _fronts[joint][f];
         LayerSample sample = _samples[joint];
         front.Follow(sample, _model.Mesh, _fields.DisplacementX, _fields.DisplacementY, point.Temperature);
+        bool yielded = Yielded(_model.Layers[joint].LowerAdherend) || Yielded(_model.Layers[joint].UpperAdherend);
         double peel = 0, shear = 0;
         foreach (LayerResponse response in sample.Response)
         {
@@ -188,14 +216,16 @@ public sealed class RunRecorder : IMarchObserver
             ProcessZone = front.ZoneStart is { } start ? Math.Abs(start - front.CrackTip) : null,
             Opening = front.TipSeparation.Opening,
             Sliding = front.TipSeparation.Sliding,
-            JPath = _rates[joint][f].Path(sample, _fields.DisplacementX, _fields.DisplacementY, point.Temperature),
-            JRotation = _rates[joint][f].Rotation(readings, _fields.DisplacementX, _fields.DisplacementY, _temperatureChanged),
+            JPath = yielded ? null : _rates[joint][f].Path(sample, _fields.DisplacementX, _fields.DisplacementY, point.Temperature, _model.Unknowns.OutOfPlaneStrain(_model.Layers[joint].LowerAdherend, _equilibrium.AcceptedDisplacement)),
+            JRotation = yielded ? null : _rates[joint][f].Rotation(readings, _fields.DisplacementX, _fields.DisplacementY, _temperatureChanged),
             JUnderLaw = _temperatureChanged ? null : front.TipWork,
             ModeMixDegrees = front.ModeMixDegrees,
             LargestPeel = peel,
             LargestShear = shear,
         };
     }
+
+    private bool Yielded(int adherend) => _fields.Yielding[adherend].LargestAnywhere > 0;
 
     private static EnergyRow Energy(MarchPoint point) => new()
     {
@@ -205,7 +235,7 @@ public sealed class RunRecorder : IMarchObserver
         StoredInAdherends = point.Energy.State.StoredInAdherends,
         StoredInLayers = point.Energy.State.StoredInLayers,
         SpentInLayers = point.Energy.State.SpentInLayers,
-        SpentInYielding = 0,
+        SpentInYielding = point.Energy.State.SpentInYielding,
         SpentInFriction = 0,
         Thermal = point.Energy.Thermal,
         ReleasedInJumps = 0,

@@ -4,7 +4,7 @@ namespace InterfaceFE.Results;
 
 /// <summary>
 /// Sections, upright before deformation, through a straight adherend for J: the integral over the section of traction·du/dx - W per width, W the mechanical energy density with its
-/// out-of-plane part (Rice 1968; Eshelby's energy momentum). It is the same at every section between loads, so it is averaged over whole columns of elements.
+/// out-of-plane part (Rice 1968; Eshelby's energy momentum), for a material that has not yielded. It is the same at every section between loads, so it is averaged over whole columns of elements.
 /// </summary>
 public static class SectionIntegral
 {
@@ -17,7 +17,8 @@ public static class SectionIntegral
     /// <param name="ux">Displacement of nodes along x [mm].</param>
     /// <param name="uy">Displacement of nodes along y [mm].</param>
     /// <param name="temperature">Temperature [K].</param>
-    public static double? Mean(SolidBlock solid, double fromX, double toX, double[] ux, double[] uy, double temperature)
+    /// <param name="outOfPlane">Strain out of plane.</param>
+    public static double? Mean(SolidBlock solid, double fromX, double toX, double[] ux, double[] uy, double temperature, double outOfPlane = 0)
     {
         int n = solid.NodesPerElement;
         Span<double> native = stackalloc double[2 * n], momentum = stackalloc double[4], positions = stackalloc double[8];
@@ -30,7 +31,7 @@ public static class SectionIntegral
             if (middle < fromX || middle > toX)
                 continue;
             LayerSample.Gather(solid.Nodes(e), ux, uy, native);
-            solid.EnergyMomentum(e, native, temperature, momentum);
+            solid.EnergyMomentum(e, native, temperature, outOfPlane, momentum);
             solid.ShapeGradients(e, byX, byY, areas);
             for (int p = 0; p < 4; p++)
             {

@@ -10,6 +10,7 @@ public static class SummaryMaker
     private const double SmoothPeak = 1e-3;
     private const double GoodClosing = 0.1, PoorClosing = 0.5;
     private const double LeastElementsPerZone = 2;
+    private const int LeastThroughYielding = 4;
     private const double GoodBalance = 1e-9, PoorBalance = 1e-6;
     private const double GoodPathError = 1e-3, PoorPathError = 1e-2;
     private const double GoodJ = 0.02, PoorJ = 0.1;
@@ -23,6 +24,7 @@ public static class SummaryMaker
         summary.Joints.AddRange(recorder.Maxima.Joints());
         summary.Adherends.AddRange(recorder.Maxima.Adherends());
         summary.FirstDamage = recorder.Maxima.FirstDamage;
+        summary.FirstYield = recorder.Maxima.FirstYield;
         summary.Remarks.AddRange(recorder.Remarks());
         if (history.Points.Find(p => !p.Stable) is { } first)
             summary.Remarks.Add(string.Create(System.Globalization.CultureInfo.InvariantCulture,
@@ -107,6 +109,12 @@ public static class SummaryMaker
         }
         for (int joint = 0; joint < model.Layers.Count; joint++)
             Grade(maxima.ClosingShare(joint), GoodClosing, PoorClosing, $"joint '{model.Layers[joint].Name}' is pressed into itself, give the layer a stiffer `contact stiffness`: depth over thickness");
+        for (int adherend = 0; adherend < model.Solids.Count; adherend++)
+        {
+            int through = model.Mesh.Adherends[adherend].ElementsThrough;
+            if (maxima.HasYielded(adherend) && through < LeastThroughYielding)
+                Grade((double)LeastThroughYielding / through, 1, double.PositiveInfinity, $"'{model.Solids[adherend].Name}' yields with fewer than {LeastThroughYielding} elements through its thickness: {LeastThroughYielding} over their number");
+        }
         if (check.ElementsPerProcessZone is < LeastElementsPerZone)
             Grade(LeastElementsPerZone / check.ElementsPerProcessZone.Value, 1, double.PositiveInfinity, "fewer than two elements within a process zone: two over their number");
         if (PeakIsUnstable(history))

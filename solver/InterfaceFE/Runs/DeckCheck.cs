@@ -64,7 +64,7 @@ public static class DeckCheck
                 ["layer elements"] = layerElements,
             },
             Mesh = meshing.Notes,
-            OutOfPlane = deck.Model.OutOfPlane == OutOfPlane.Held ? "held (plane strain)" : "free (plane stress)",
+            OutOfPlane = deck.Model.OutOfPlane switch { Decks.OutOfPlane.Held => "held (plane strain)", Decks.OutOfPlane.Free => "free (plane stress)", _ => "uniform strain (generalised plane strain)" },
             Advice = OutOfPlaneAdvice.For(deck, meshing.Mesh),
             Warnings = [.. reading.Warnings.Select(w => w.ToString()), .. meshing.Warnings],
             MemoryMegabytes = Math.Ceiling(ProgramMegabytes + (BytesPerFactorEntry * equilibrium.Plan.FactorNonZeros + BytesPerElement * (elements + layerElements)) / Megabyte),

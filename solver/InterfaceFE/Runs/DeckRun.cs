@@ -98,10 +98,14 @@ public static class DeckRun
             Mesh = model.Mesh,
             Grips = grips,
             CurvesOf = curves,
-            Gauges = gauges.Gauges,
+            Gauges = [.. gauges.Gauges, .. OutOfPlane(model)],
             Stages = [.. model.Stages.Select(s => s.Words)],
         };
     }
+
+    /// <summary>Strains out of plane stand beside the gauges, one for each group of adherends.</summary>
+    private static IEnumerable<GaugeInfo> OutOfPlane(SpecimenModel model) => model.Unknowns.OutOfPlane is not { } groups ? []
+        : Enumerable.Range(0, groups.Count).Select(g => new GaugeInfo(groups.Count == 1 ? "strain out of plane" : $"strain out of plane with {model.Mesh.Adherends[groups.FirstOf(g)].Name}", "-"));
 
     private static GripInfo Info(Deck deck, SpecimenModel model, Grip grip)
     {

@@ -34,6 +34,8 @@ internal static class FreeMovement
         List<double[]> held = [];
         foreach (HeldTarget target in stage.Held)
         {
+            if (target.Unknown >= model.Unknowns.FirstOutOfPlane)
+                continue;
             (int node, double atX, double atY, int component) = Place(model, target.Unknown);
             if (!members.Any(m => Holds(m, node)))
                 continue;

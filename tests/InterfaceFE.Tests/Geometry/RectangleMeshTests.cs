@@ -119,6 +119,17 @@ public class RectangleMeshTests
     }
 
     [Fact]
+    public void A_strip_that_can_yield_gets_six_elements_through_unless_told_otherwise()
+    {
+        MaterialDeck metal = MeshDecks.Steel with { YieldCurve = new YieldCurveDeck { PlasticStrain = [0], Stress = [300] } };
+        foreach ((ElementsDeck? elements, int expected) in ((ElementsDeck?, int)[])[(null, 6), (new ElementsDeck { Through = 3 }, 3)])
+        {
+            Deck deck = Deck(new() { ["arm"] = Rectangle(0, 0, 100, 4, elements) });
+            Assert.Equal(expected, Mesher.Build(deck with { Materials = new Dictionary<string, MaterialDeck> { ["steel"] = metal } }).Mesh.Adherends[0].ElementsThrough);
+        }
+    }
+
+    [Fact]
     public void An_upright_rectangle_gets_elements_of_good_shape()
     {
         foreach (ElementKind kind in new[] { ElementKind.EightNode, ElementKind.FourNode })

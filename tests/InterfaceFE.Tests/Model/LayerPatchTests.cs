@@ -51,7 +51,7 @@ public class LayerPatchTests
             for (int e = 0; e < solid.Count; e++)
             {
                 LayerSample.Gather(solid.Nodes(e), ux, uy, native);
-                solid.Stresses(e, native.AsSpan(0, 2 * solid.NodesPerElement), equilibrium.AcceptedTemperature, stress);
+                solid.Stresses(e, native.AsSpan(0, 2 * solid.NodesPerElement), equilibrium.AcceptedTemperature, [], stress);
                 for (int p = 0; p < 4; p++)
                 {
                     Close.To(xx, stress[4 * p], 1e-9, 0, "xx");

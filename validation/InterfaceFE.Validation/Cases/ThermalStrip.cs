@@ -8,7 +8,7 @@ namespace InterfaceFE.Validation.Cases;
 /// Strips of steel and aluminium, 1 mm thick each, bonded by an elastic layer over their whole length, on one pin and one roller at the ends of the lowest face, heated by 100 K: the
 /// example worked out in the project's notes (steel 210 GPa, 0.30, 12e-6 1/K; aluminium 70 GPa, 0.33, 23e-6 1/K). Lengths in mm, stiffnesses in MPa/mm.
 /// </summary>
-/// <param name="OutOfPlane">held or free.</param>
+/// <param name="OutOfPlane">held, free or uniform strain.</param>
 /// <param name="HalfLength">Half of the length.</param>
 /// <param name="ShearStiffness">Shear stiffness of the layer.</param>
 /// <param name="PeelStiffness">Peel stiffness of the layer.</param>
@@ -17,14 +17,29 @@ public sealed record ThermalStrip(string OutOfPlane, double HalfLength, double S
     /// <summary>Heating [K].</summary>
     public const double Heating = 100;
 
-    private bool IsHeld => OutOfPlane == "held";
+    private bool IsFree => OutOfPlane == "free";
 
-    private double Steel => IsHeld ? 210000 / (1 - 0.09) : 210000;
+    private double Steel => IsFree ? 210000 : 210000 / (1 - 0.09);
 
-    private double Aluminium => IsHeld ? 70000 / (1 - 0.33 * 0.33) : 70000;
+    private double Aluminium => IsFree ? 70000 : 70000 / (1 - 0.33 * 0.33);
 
-    /// <summary>Difference of the free strains along x; held out of plane each expands by (1 + ν)·α.</summary>
-    public double Mismatch => Heating * (IsHeld ? 1.33 * 23e-6 - 1.3 * 12e-6 : 23e-6 - 12e-6);
+    /// <summary>Difference of the free strains along x; held out of plane each expands by (1 + ν)·α, and a strain e out of plane takes ν·e off.</summary>
+    /// <param name="compliance">Compliance λ that shear in the layer works against [mm/N].</param>
+    public double Mismatch(double compliance) => IsFree ? Heating * (23e-6 - 12e-6) : Heating * (1.33 * 23e-6 - 1.3 * 12e-6) - 0.03 * StrainOutOfPlane(compliance);
+
+    /// <summary>
+    /// Strain e out of plane; 0 when held. With a uniform strain no force acts out of plane: with σzz = ν·σx + E(e - α·ΔT) and the force N = mismatch/λ that shear carries from one
+    /// strip into the other, in the mean over the length times f = 1 - tanh(ωL)/(ωL), (ν_s - ν_a)·f·N + t[E_s(e - α_s·ΔT) + E_a(e - α_a·ΔT)] = 0; t = 1 mm.
+    /// </summary>
+    /// <param name="compliance">Compliance λ that shear in the layer works against [mm/N].</param>
+    public double StrainOutOfPlane(double compliance)
+    {
+        if (OutOfPlane == "held")
+            return 0;
+        double reach = Math.Sqrt(ShearStiffness * compliance) * HalfLength, carried = (1 - Math.Tanh(reach) / reach) / compliance;
+        double held = Heating * (1.33 * 23e-6 - 1.3 * 12e-6);
+        return (Heating * (210000 * 12e-6 + 70000 * 23e-6) + 0.03 * carried * held) / (210000 + 70000 + 0.03 * 0.03 * carried);
+    }
 
     /// <summary>
     /// Sum of the compliances that shear in the layer works against when the strip may bend, λ = 1/E₁t₁ + 1/E₂t₂ + (t₁ + t₂)²/(4(D₁ + D₂)) [mm/N]; t = 1 mm.
@@ -35,7 +50,7 @@ public sealed record ThermalStrip(string OutOfPlane, double HalfLength, double S
     public double StretchCompliance => 1 / Steel + 1 / Aluminium;
 
     /// <summary>Timoshenko's curvature, J. Opt. Soc. Am. 11 (1925) 233-255, in the form (t₁ + t₂)·mismatch/(2(D₁ + D₂)·λ) [1/mm].</summary>
-    public double Timoshenko => 2 * Mismatch / (2 * (Steel + Aluminium) / 12 * BendingCompliance);
+    public double Timoshenko => 2 * Mismatch(BendingCompliance) / (2 * (Steel + Aluminium) / 12 * BendingCompliance);
 
     /// <summary>Deck of two layers, aluminium on steel.</summary>
     public string TwoLayers() => $$"""

@@ -11,7 +11,10 @@ public interface IPlaneLaw
     int StateSize { get; }
 
     /// <summary>Answer at a strain, and the state that goes with it.</summary>
-    /// <param name="strain">Total in-plane strain at the end of the stride: xx, yy, xy (engineering), length 3.</param>
+    /// <param name="strain">
+    /// Total strain at the end of the stride: xx, yy, xy (engineering), length 3; a law that is held out of plane also takes a fourth, zz, and then answers with four rows and columns
+    /// in <paramref name="tangent"/> and <paramref name="byTemperature"/>.
+    /// </param>
     /// <param name="temperatureChange">Temperature change from the stress-free state [K].</param>
     /// <param name="accepted">State at the last accepted point, length <see cref="StateSize"/>.</param>
     /// <param name="tentative">State at the end of the stride, same length, overwritten; must not alias <paramref name="accepted"/>.</param>

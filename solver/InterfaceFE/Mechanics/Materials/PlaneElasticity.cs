@@ -20,9 +20,10 @@ public sealed class PlaneElasticity : IPlaneLaw
     private readonly double[] _outOfPlaneByStress;
     private readonly double _outOfPlaneByTemperature;
     private readonly double _blockedEnergy;
+    private readonly double _youngZ;
 
     private PlaneElasticity(
-        OutOfPlaneState state, double[] stiffness, double[] expansion, double[] outOfPlaneByStress, double outOfPlaneByTemperature, double blockedEnergy)
+        OutOfPlaneState state, double[] stiffness, double[] expansion, double[] outOfPlaneByStress, double outOfPlaneByTemperature, double blockedEnergy, double youngZ)
     {
         State = state;
         _stiffness = stiffness;
@@ -30,6 +31,7 @@ public sealed class PlaneElasticity : IPlaneLaw
         _outOfPlaneByStress = outOfPlaneByStress;
         _outOfPlaneByTemperature = outOfPlaneByTemperature;
         _blockedEnergy = blockedEnergy;
+        _youngZ = youngZ;
         (YoungAlongX, ShearModulus) = BeamModuli(stiffness);
     }
 
@@ -92,8 +94,16 @@ public sealed class PlaneElasticity : IPlaneLaw
             [constants.ExpansionX + zx * constants.ExpansionZ, constants.ExpansionY + zy * constants.ExpansionZ, 0],
             [zx, zy, 0],
             -blocked,
-            0.5 * blocked * constants.ExpansionZ);
+            0.5 * blocked * constants.ExpansionZ,
+            held ? constants.YoungZ : 0);
     }
+
+    /// <summary>
+    /// This held material as it answers to a strain out of plane e instead of a temperature change: the same stiffness with "expansion" -nu_z and szz = nu_z·stress + E_z·e. All that is
+    /// computed for a temperature change (force, energy at no displacement) then holds for e.
+    /// </summary>
+    internal PlaneElasticity DrivenOutOfPlane() =>
+        new(State, _stiffness, [-_outOfPlaneByStress[0], -_outOfPlaneByStress[1], -_outOfPlaneByStress[2]], _outOfPlaneByStress, _youngZ, 0.5 * _youngZ, _youngZ);
 
     /// <summary>
     /// The same material with its axes turned about z. With c = cos, s = sin the strain in the material's axes is T·strain, T = [c² s² cs; s² c² -cs; -2cs
@@ -120,24 +130,25 @@ public sealed class PlaneElasticity : IPlaneLaw
                 stiffness[3 * i + j] = stiffness[3 * j + i] = sum;
             }
         // The out-of-plane row multiplies stresses, so it turns as a strain does.
-        return new PlaneElasticity(State, stiffness, Turned(back, _expansion), Turned(back, _outOfPlaneByStress), _outOfPlaneByTemperature, _blockedEnergy);
+        return new PlaneElasticity(State, stiffness, Turned(back, _expansion), Turned(back, _outOfPlaneByStress), _outOfPlaneByTemperature, _blockedEnergy, _youngZ);
     }
 
     /// <summary>Stress at a strain. Never throws; non-finite input gives a non-finite result.</summary>
     /// <param name="strain">Total in-plane strain: xx, yy, xy (engineering), length 3.</param>
     /// <param name="temperatureChange">Temperature change from the stress-free state [K].</param>
     /// <param name="stress">xx, yy, zz, xy [MPa], length 4, overwritten.</param>
-    public void Stress(ReadOnlySpan<double> strain, double temperatureChange, Span<double> stress)
+    /// <param name="outOfPlane">Total strain out of plane; of no effect when free.</param>
+    public void Stress(ReadOnlySpan<double> strain, double temperatureChange, Span<double> stress, double outOfPlane = 0)
     {
-        double xx = strain[0] - _expansion[0] * temperatureChange;
-        double yy = strain[1] - _expansion[1] * temperatureChange;
-        double xy = strain[2] - _expansion[2] * temperatureChange;
+        double xx = strain[0] - _expansion[0] * temperatureChange + _outOfPlaneByStress[0] * outOfPlane;
+        double yy = strain[1] - _expansion[1] * temperatureChange + _outOfPlaneByStress[1] * outOfPlane;
+        double xy = strain[2] - _expansion[2] * temperatureChange + _outOfPlaneByStress[2] * outOfPlane;
         double[] d = _stiffness;
         stress[0] = d[0] * xx + d[1] * yy + d[2] * xy;
         stress[1] = d[3] * xx + d[4] * yy + d[5] * xy;
         stress[3] = d[6] * xx + d[7] * yy + d[8] * xy;
         stress[2] = _outOfPlaneByStress[0] * stress[0] + _outOfPlaneByStress[1] * stress[1] + _outOfPlaneByStress[2] * stress[3]
-            + _outOfPlaneByTemperature * temperatureChange;
+            + _outOfPlaneByTemperature * temperatureChange + _youngZ * outOfPlane;
     }
 
     /// <summary>
@@ -146,14 +157,15 @@ public sealed class PlaneElasticity : IPlaneLaw
     /// </summary>
     /// <param name="strain">Total in-plane strain: xx, yy, xy (engineering), length 3.</param>
     /// <param name="temperatureChange">Temperature change from the stress-free state [K].</param>
-    public double EnergyDensity(ReadOnlySpan<double> strain, double temperatureChange)
+    /// <param name="outOfPlane">Total strain out of plane; of no effect when free.</param>
+    public double EnergyDensity(ReadOnlySpan<double> strain, double temperatureChange, double outOfPlane = 0)
     {
-        double xx = strain[0] - _expansion[0] * temperatureChange;
-        double yy = strain[1] - _expansion[1] * temperatureChange;
-        double xy = strain[2] - _expansion[2] * temperatureChange;
+        double xx = strain[0] - _expansion[0] * temperatureChange + _outOfPlaneByStress[0] * outOfPlane;
+        double yy = strain[1] - _expansion[1] * temperatureChange + _outOfPlaneByStress[1] * outOfPlane;
+        double xy = strain[2] - _expansion[2] * temperatureChange + _outOfPlaneByStress[2] * outOfPlane;
         double[] d = _stiffness;
         double inPlane = xx * (d[0] * xx + d[1] * yy + d[2] * xy) + yy * (d[3] * xx + d[4] * yy + d[5] * xy) + xy * (d[6] * xx + d[7] * yy + d[8] * xy);
-        return 0.5 * inPlane + _blockedEnergy * temperatureChange * temperatureChange;
+        return 0.5 * inPlane + _blockedEnergy * temperatureChange * temperatureChange + (_outOfPlaneByTemperature * temperatureChange + 0.5 * _youngZ * outOfPlane) * outOfPlane;
     }
 
     /// <inheritdoc/>
@@ -166,19 +178,45 @@ public sealed class PlaneElasticity : IPlaneLaw
         Span<double> tangent,
         Span<double> byTemperature = default)
     {
-        Stress(strain, temperatureChange, stress);
-        Stiffness.CopyTo(tangent);
+        double outOfPlane = strain.Length > 3 ? strain[3] : 0;
+        Stress(strain, temperatureChange, stress, outOfPlane);
+        Tangent(strain.Length, tangent);
         if (!byTemperature.IsEmpty)
             StressByTemperature(byTemperature);
-        double byChange = 2 * _blockedEnergy * temperatureChange - (_expansion[0] * stress[0] + _expansion[1] * stress[1] + _expansion[2] * stress[3]);
-        return new PlaneEnergy(EnergyDensity(strain, temperatureChange), 0, byChange);
+        double byChange = 2 * _blockedEnergy * temperatureChange + _outOfPlaneByTemperature * outOfPlane - (_expansion[0] * stress[0] + _expansion[1] * stress[1] + _expansion[2] * stress[3]);
+        return new PlaneEnergy(EnergyDensity(strain, temperatureChange, outOfPlane), 0, byChange);
     }
 
-    /// <summary>Change of the in-plane stress with temperature at fixed strain [MPa/K]: xx, yy, xy, length 3, overwritten.</summary>
+    /// <summary>Stiffness over xx, yy, xy, or over xx, yy, xy, zz where four are wanted (held).</summary>
+    internal void Tangent(int size, Span<double> tangent)
+    {
+        if (size == 3)
+        {
+            Stiffness.CopyTo(tangent);
+            return;
+        }
+        double zz = _youngZ;
+        for (int i = 0; i < 3; i++)
+        {
+            double coupled = 0;
+            for (int j = 0; j < 3; j++)
+            {
+                tangent[4 * i + j] = _stiffness[3 * i + j];
+                coupled += _stiffness[3 * i + j] * _outOfPlaneByStress[j];
+            }
+            tangent[4 * i + 3] = tangent[12 + i] = coupled;
+            zz += _outOfPlaneByStress[i] * coupled;
+        }
+        tangent[15] = zz;
+    }
+
+    /// <summary>Change of stress with temperature at fixed strain [MPa/K]: xx, yy, xy, and zz where the length is 4; overwritten.</summary>
     internal void StressByTemperature(Span<double> byTemperature)
     {
         for (int i = 0; i < 3; i++)
             byTemperature[i] = -(_stiffness[3 * i] * _expansion[0] + _stiffness[3 * i + 1] * _expansion[1] + _stiffness[3 * i + 2] * _expansion[2]);
+        if (byTemperature.Length > 3)
+            byTemperature[3] = _outOfPlaneByStress[0] * byTemperature[0] + _outOfPlaneByStress[1] * byTemperature[1] + _outOfPlaneByStress[2] * byTemperature[2] + _outOfPlaneByTemperature;
     }
 
     private static void StrainRotation(double angle, Span<double> rotation)

@@ -76,12 +76,7 @@ public sealed class Quadrilateral8Tests
         public int StateSize => 1;
 
         public PlaneEnergy Update(
-            ReadOnlySpan<double> strain,
-            double temperatureChange,
-            ReadOnlySpan<double> accepted,
-            Span<double> tentative,
-            Span<double> stress,
-            Span<double> tangent,
+            ReadOnlySpan<double> strain, double temperatureChange, ReadOnlySpan<double> accepted, Span<double> tentative, Span<double> stress, Span<double> tangent,
             Span<double> byTemperature = default)
         {
             double q = 2 * elasticity.Update(strain, temperatureChange, [], [], stress, tangent).Stored;

@@ -125,6 +125,44 @@ public sealed class TurningElementTests
             Close.To(Young * Math.Log(stretch) / (stretch * across), stresses[4 * p], 1e-12, 0, "true stress");
     }
 
+    /// <summary>The law is asked in a measure that turns along: the plastic state of a turned element is the same, its force turned, its tangent the derivative of the force.</summary>
+    [Theory]
+    [InlineData(11, OutOfPlaneState.Held)]
+    [InlineData(12, OutOfPlaneState.Free)]
+    public void A_yielding_material_turns_along(int seed, OutOfPlaneState state)
+    {
+        const double Angle = 2.1, Step = 1e-6;
+        var constants = new OrthotropicConstants(70000, 70000, 70000, 0.33, 0.33, 0.33, 70000 / 2.66);
+        var law = new J2Plasticity(constants, new YieldCurve([0, 0.1], [200, 260], [], []), 500, state, 293.15);
+        double[] coordinates = Samples.Distorted<Quadrilateral8>(seed, curved: true), byX = new double[32], byY = new double[32], areas = new double[4];
+        Quadrilateral8.ShapeGradients(coordinates, byX, byY, areas);
+        int size = 4 * law.StateSize;
+        double[] virgin = new double[size], here = new double[size], there = new double[size], force = new double[16], forceThere = new double[16], tangent = new double[256], up = new double[16], down = new double[16];
+        double[] u = Moved(coordinates, seed, 0, 0.15), turned = Turned(coordinates, u, Angle);
+        PlaneEnergy energy = Respond(u, here, force, new double[256]), energyThere = Respond(turned, there, forceThere, tangent);
+        Assert.True(energy.Dissipated > 10, "it must yield");
+        Close.To(energy.Dissipated, energyThere.Dissipated, 1e-10, 0, "dissipated");
+        for (int i = 0; i < size; i++)
+            Close.To(here[i], there[i], 1e-10, 1e-13, $"state {i}");
+        (double sine, double cosine) = Math.SinCos(Angle);
+        for (int i = 0; i < 16; i += 2)
+            Close.To(cosine * force[i] - sine * force[i + 1], forceThere[i], 0, 1e-10 * force.Max(Math.Abs), $"force {i}");
+        for (int j = 0; j < 16; j++)
+        {
+            double kept = turned[j];
+            turned[j] = kept + Step;
+            Respond(turned, there, up, new double[256]);
+            turned[j] = kept - Step;
+            Respond(turned, there, down, new double[256]);
+            turned[j] = kept;
+            for (int i = 0; i < 16; i++)
+                Close.To((up[i] - down[i]) / (2 * Step), tangent[16 * i + j], 0, 1e-6 * tangent.Max(Math.Abs), $"tangent {i}, {j}");
+        }
+
+        PlaneEnergy Respond(double[] displacements, double[] tentative, double[] intoForce, double[] intoTangent) =>
+            TurningElement.Respond(byX, byY, areas, law, Width, displacements, 0, virgin, tentative, intoForce, intoTangent, []);
+    }
+
     private static double[] Moved(double[] coordinates, int seed, double angle, double size)
     {
         Random random = new(seed);

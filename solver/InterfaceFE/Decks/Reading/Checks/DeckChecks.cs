@@ -10,7 +10,11 @@ internal static class DeckChecks
     public static void Run(Deck deck, ReadContext context)
     {
         foreach ((string name, MaterialDeck material) in Entries(deck.Materials))
+        {
             MaterialChecks.Run(material, $"materials.{name}", context);
+            if (material.YieldCurve is { } curve)
+                YieldChecks.Run(deck, name, material, curve, context);
+        }
         foreach ((string name, LayerDeck layer) in Entries(deck.Layers))
             LayerChecks.Run(layer, $"layers.{name}", context);
         foreach ((string name, AdherendDeck adherend) in Entries(deck.Adherends))
@@ -21,6 +25,10 @@ internal static class DeckChecks
             GripChecks.Run(deck, grip, $"grips.{name}", context);
         if (deck.Model is { Rotation: RotationSetting.Finite, Elements: ElementKind.FourNode })
             context.Fail("model.elements", "finite rotation needs eight-node elements: leave `elements` out, or use `rotation: small`");
+        if (deck.Model is { Rotation: RotationSetting.Finite, OutOfPlane: OutOfPlane.UniformStrain })
+            context.Fail("model.out of plane", "is built for small rotation only: with `rotation: finite` use `held` or `free`");
+        if (deck.Model is { StrainOutOfPlane: not null, OutOfPlane: not OutOfPlane.UniformStrain } && context.IsSound("model.strain out of plane"))
+            context.Fail("model.strain out of plane", "applies to `out of plane: uniform strain` only");
         SequenceChecks.Run(deck, context);
         KeepChecks.Run(deck, context);
         // In a deck with errors a name may seem unused only because of them.
