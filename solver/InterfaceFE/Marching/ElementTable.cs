@@ -57,7 +57,8 @@ internal sealed class ElementTable
             SlotStart = start,
             SlotUnknowns = [.. unknowns],
         };
-        FirstLayerBlock = model.Solids.Count + model.OpenFaces.Count;
+        FirstPressureBlock = model.Solids.Count + model.OpenFaces.Count;
+        FirstLayerBlock = FirstPressureBlock + model.Pressures.Count;
         SolidBlocks = model.Solids.Count;
     }
 
@@ -66,6 +67,8 @@ internal sealed class ElementTable
     public SlotPattern Pattern { get; }
 
     public int FirstLayerBlock { get; }
+
+    public int FirstPressureBlock { get; }
 
     public int SolidBlocks { get; }
 

@@ -24,7 +24,7 @@ public sealed class FullEquilibrium : IEquilibrium
     private readonly WorkingFactor _symmetric;
     private GeneralFactor? _general;
     private readonly StateStore _state;
-    private readonly double[] _u, _accepted, _internal, _layerForce, _dissipationGradient, _magnitudes, _temperatureRate, _external, _externalRate, _held, _heldRate;
+    private readonly double[] _u, _accepted, _internal, _layerForce, _dissipationGradient, _magnitudes, _temperatureRate, _external, _externalRate, _held, _heldRate, _pressure, _pressureRate;
     private readonly double[] _rightSide, _solution, _tangentSolution, _gradient, _base, _noMagnitudes = [];
     private readonly BondDamage _bonds;
     private readonly double[][] _slotTangents;
@@ -62,6 +62,8 @@ public sealed class FullEquilibrium : IEquilibrium
         _externalEnd = new double[n];
         _held = new double[n];
         _heldRate = new double[n];
+        _pressure = new double[n];
+        _pressureRate = new double[n];
         _rightSide = new double[n];
         _solution = new double[n];
         _tangentSolution = new double[n];
@@ -135,7 +137,7 @@ public sealed class FullEquilibrium : IEquilibrium
             double potential = Energy.Total;
             for (int i = 0; i < _u.Length; i++)
                 if (!_isHeld[i])
-                    potential -= _external[i] * _u[i];
+                    potential -= (_external[i] - _pressure[i]) * _u[i];
             return potential;
         }
     }
@@ -150,7 +152,10 @@ public sealed class FullEquilibrium : IEquilibrium
     public ReadOnlySpan<int> HeldUnknowns => _heldUnknowns;
 
     /// <summary>External force on an unknown at the tentative progress: the reaction where it is held, else the applied force [N or N·mm].</summary>
-    public double ExternalForce(int unknown) => _isHeld[unknown] ? _internal[unknown] : _external[unknown];
+    public double ExternalForce(int unknown) => _isHeld[unknown] ? _internal[unknown] + _pressure[unknown] : _external[unknown];
+
+    /// <summary>External force on an unknown and what pressures put on it: all that does work from outside [N or N·mm].</summary>
+    public double OutsideForce(int unknown) => _isHeld[unknown] ? _internal[unknown] : _external[unknown] - _pressure[unknown];
 
     /// <summary>Begins a stage from the accepted point: values held, forces from where they are, temperature.</summary>
     public void StartStage(LoadStage stage)
@@ -159,7 +164,7 @@ public sealed class FullEquilibrium : IEquilibrium
         Array.Copy(_accepted, _u, _u.Length);
         for (int i = 0; i < _externalStart.Length; i++)
         {
-            _externalStart[i] = _isHeld[i] ? _internal[i] : _external[i];
+            _externalStart[i] = ExternalForce(i);
             _externalEnd[i] = _isHeld[i] ? 0 : _external[i];
         }
         Array.Clear(_isHeld);
@@ -209,6 +214,8 @@ public sealed class FullEquilibrium : IEquilibrium
         Array.Clear(_layerForce);
         Array.Clear(_magnitudes);
         Array.Clear(_temperatureRate);
+        Array.Clear(_pressure);
+        Array.Clear(_pressureRate);
         Array.Clear(_dissipationGradient);
         wanted |= Wanted.Force | Wanted.Energy;
         int changed = 0;
@@ -218,7 +225,7 @@ public sealed class FullEquilibrium : IEquilibrium
         for (int block = 0; block < _table.Blocks.Count; block++)
         {
             IElementBlock elements = _table.Blocks[block];
-            bool layer = block >= _table.FirstLayerBlock;
+            bool layer = block >= _table.FirstLayerBlock, pressure = !layer && block >= _table.FirstPressureBlock;
             int n = elements.NativeCount;
             var buffers = new ElementBuffers { Force = _force.AsSpan(0, n), Tangent = _tangent.AsSpan(0, n * n), LoadRate = _rate.AsSpan(0, n), Dissipation = _dissipation.AsSpan(0, n) };
             Span<double> native = _native.AsSpan(0, n);
@@ -230,11 +237,11 @@ public sealed class FullEquilibrium : IEquilibrium
                     own &= ~Wanted.Tangent;
                 _table.Gather(slot, _u, native);
                 ElementAnswer answer = elements.Evaluate(e, at, native, _state.Accepted(block, e), _state.Tentative(block, e), own, buffers);
-                _table.Scatter(slot, buffers.Force, _internal, _magnitudes);
+                _table.Scatter(slot, buffers.Force, pressure ? _pressure : _internal, _magnitudes);
                 if (layer)
                     _table.Scatter(slot, buffers.Force, _layerForce, _noMagnitudes);
                 if ((own & Wanted.LoadRate) != 0)
-                    _table.Scatter(slot, buffers.LoadRate, _temperatureRate, _noMagnitudes);
+                    _table.Scatter(slot, buffers.LoadRate, pressure ? _pressureRate : _temperatureRate, _noMagnitudes);
                 if ((own & Wanted.Tangent) != 0 && Store(slot, _table.TransformTangent(slot, buffers.Tangent, buffers.Force, _work, _transformed)))
                     changed++;
                 byTemperature += answer.StoredByTemperature;
@@ -268,7 +275,7 @@ public sealed class FullEquilibrium : IEquilibrium
         bool finite = true;
         for (int i = 0; i < _internal.Length; i++)
         {
-            double difference = _isHeld[i] ? 0 : _external[i] - _internal[i], way = _u[i] - _accepted[i];
+            double difference = _isHeld[i] ? 0 : _external[i] - _pressure[i] - _internal[i], way = _u[i] - _accepted[i];
             finite &= double.IsFinite(_internal[i]);
             workOut += difference * way;
             workAll += Math.Abs(_internal[i] * way);
@@ -312,7 +319,7 @@ public sealed class FullEquilibrium : IEquilibrium
         FactorIfNeeded();
         for (int i = 0; i < _rightSide.Length; i++)
         {
-            _rightSide[i] = _external[i] - _internal[i];
+            _rightSide[i] = _external[i] - _pressure[i] - _internal[i];
             _solution[i] = _isHeld[i] ? _held[i] - _u[i] : 0;
         }
         SolveWith(_rightSide, _solution);
@@ -323,7 +330,7 @@ public sealed class FullEquilibrium : IEquilibrium
             double temperatureRate = _temperatureEnd - _temperatureStart;
             for (int i = 0; i < _rightSide.Length; i++)
             {
-                _rightSide[i] = _externalRate[i] - _temperatureRate[i] * temperatureRate;
+                _rightSide[i] = _externalRate[i] - _pressureRate[i] - _temperatureRate[i] * temperatureRate;
                 _tangentSolution[i] = _isHeld[i] ? _heldRate[i] : 0;
             }
             SolveWith(_rightSide, _tangentSolution);
@@ -356,7 +363,7 @@ public sealed class FullEquilibrium : IEquilibrium
         double work = 0;
         for (int i = 0; i < _solution.Length; i++)
             if (!_isHeld[i])
-                work += _solution[i] * (_external[i] - _internal[i]);
+                work += _solution[i] * (_external[i] - _pressure[i] - _internal[i]);
         return work;
     }
 

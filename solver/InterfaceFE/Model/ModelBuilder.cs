@@ -30,6 +30,7 @@ public static class ModelBuilder
             Unknowns = unknowns,
             Solids = solids,
             OpenFaces = openFaces,
+            Pressures = PressurePlanner.Plan(deck, mesh),
             Layers = layers,
             Grips = grips,
             Stages = SequencePlanner.Plan(deck, unknowns, grips),

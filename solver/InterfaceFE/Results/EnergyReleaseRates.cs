@@ -184,6 +184,8 @@ public sealed class EnergyReleaseRates
         behind = ahead = tip;
         if (!_upper.Adherend.StraightAlongX || !_lower.Adherend.StraightAlongX)
             return "an adherend is bent";
+        if (IsPressed)
+            return "pressure acts on an adherend";
         double left = Math.Max(Extent(_upper, mesh).From, Extent(_lower, mesh).From), right = Math.Min(Extent(_upper, mesh).To, Extent(_lower, mesh).To);
         double offset = mesh.X[_joint.LowerNodes[0]] - _joint.Position[0];
         double end = _front.StretchEnd + offset;
@@ -228,6 +230,8 @@ public sealed class EnergyReleaseRates
             return "the formula holds for a single joint";
         if (!_upper.Adherend.StraightAlongX || !_lower.Adherend.StraightAlongX)
             return "an adherend is bent";
+        if (IsPressed)
+            return "pressure acts on an adherend";
         if (_model.Solids.Count != 2)
             return "there are further adherends";
         if (_model.Unknowns.Bodies.Any(body => Spans(body, tip)))
@@ -236,6 +240,8 @@ public sealed class EnergyReleaseRates
             return "a rigid grip lies behind the front, and rotations are finite";
         return Math.Abs(_front.StarterTip - (_front.Sense > 0 ? _joint.Position[0] : _joint.Position[^1])) > 0 || PathReason is null ? null : $"no crack lies behind the front at x = {tip.ToString("G6", System.Globalization.CultureInfo.InvariantCulture)} mm";
     }
+
+    private bool IsPressed => _model.Pressures.Any(p => p.Adherend == _joint.UpperAdherend || p.Adherend == _joint.LowerAdherend);
 
     private bool Spans(GripBody body, double tip) => body.Rigid && body.Nodes.Min(n => _model.Mesh.X[n]) < tip && body.Nodes.Max(n => _model.Mesh.X[n]) > tip;
 

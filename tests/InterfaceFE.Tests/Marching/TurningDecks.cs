@@ -132,6 +132,40 @@ internal static class TurningDecks
         };
     }
 
+    /// <summary>Length, thickness [mm] and modulus [MPa] of a strip that pressure bulges.</summary>
+    public const double BulgeLength = 200, BulgeThickness = 0.5, BulgeYoung = 2000;
+
+    /// <summary>A thin strip between two pins, bulged by pressure on its lower face.</summary>
+    /// <param name="pressure">Pressure [MPa].</param>
+    public static Deck Bulge(double pressure) => Make(
+        "Bulge",
+        Width,
+        BulgeYoung,
+        new AdherendDeck { Of = "stuff", Rectangle = new RectangleDeck { Corner = [0, 0], Size = [BulgeLength, BulgeThickness] }, Elements = new ElementsDeck { Along = 100, Through = 1 } },
+        new Dictionary<string, GripDeck> { ["left"] = new() { On = ["left end of beam"] }, ["right"] = new() { On = ["right end of beam"] } },
+        new Dictionary<string, IReadOnlyList<GripComponent>> { ["left"] = [GripComponent.X, GripComponent.Y], ["right"] = [GripComponent.X, GripComponent.Y] },
+        new StageDeck { Press = new PressDeck { On = ["bottom of beam"], Pressure = pressure } });
+
+    /// <summary>
+    /// Rise of that strip as a membrane: a circular arc of half angle α whose force T = p·R stretches it by ε, so that sin α/α = 1/(1 + ε). T = E·t·ln(1 + ε)/(1 + ε) by the logarithmic
+    /// strain. Bending takes p·E·I/T² off the rise, near the pins.
+    /// </summary>
+    /// <param name="pressure">Pressure [MPa].</param>
+    public static double BulgeRise(double pressure)
+    {
+        double low = 1e-6, high = 1.5;
+        for (int i = 0; i < 200; i++)
+        {
+            double angle = 0.5 * (low + high), stretch = angle / Math.Sin(angle), radius = BulgeLength / (2 * Math.Sin(angle));
+            if (BulgeYoung * BulgeThickness * Math.Log(stretch) / stretch < pressure * radius)
+                low = angle;
+            else
+                high = angle;
+        }
+        double arc = BulgeLength / (2 * Math.Sin(low)), force = pressure * arc;
+        return arc * (1 - Math.Cos(low)) - pressure * BulgeYoung * Math.Pow(BulgeThickness, 3) / 12 / (force * force);
+    }
+
     private static Deck Make(
         string title, double width, double young, AdherendDeck beam, Dictionary<string, GripDeck> grips, Dictionary<string, IReadOnlyList<GripComponent>> held, StageDeck load) => new()
         {

@@ -5,7 +5,7 @@ using InterfaceFE.Validation.Framework;
 
 namespace InterfaceFE.Validation.Cases;
 
-/// <summary>Slender parts through large rotations: elastica by end force and end moment, and two structures through their limits, against elastica solutions.</summary>
+/// <summary>Slender parts through large rotations: elastica by end force and end moment, two structures through their limits, a strip bulged by pressure, against elastica and membrane solutions.</summary>
 public sealed class TurningBeamCase : ICase
 {
     private const double Tolerance = 3e-3;
@@ -20,7 +20,7 @@ public sealed class TurningBeamCase : ICase
     public bool Quick => true;
 
     /// <inheritdoc/>
-    public IEnumerable<CaseLine> Run(CaseContext context) => [.. EndForce(context), .. EndMoment(context), .. Toggle(context), .. Frame(context)];
+    public IEnumerable<CaseLine> Run(CaseContext context) => [.. EndForce(context), .. EndMoment(context), .. Toggle(context), .. Frame(context), .. Bulge(context)];
 
     private static IEnumerable<CaseLine> EndForce(CaseContext context)
     {
@@ -80,6 +80,19 @@ public sealed class TurningBeamCase : ICase
         yield return CaseLine.Reported("frame: travel there, going down", lower.At, "", Source, 58.2);
         yield return new CaseLine("frame: travel at which it turns back", 61.00, path.Take(back + 20).Max(p => p.Travel), 1e-2, "", Source);
         yield return new CaseLine("frame: travel at which it turns on again", 50.75, path.Skip(back).Min(p => p.Travel), 1e-2, "", Source);
+    }
+
+    private static IEnumerable<CaseLine> Bulge(CaseContext context)
+    {
+        foreach (double pressure in (double[])[0.01, 0.02])
+        {
+            RunResult run = context.Run($"strip between pins under {pressure} MPa", TurningDecks.Bulge(pressure));
+            FieldSnapshot last = run.History.Snapshots[^1];
+            var mesh = run.Equilibrium.Model.Mesh;
+            int middle = Enumerable.Range(0, mesh.NodeCount).MinBy(i => double.Hypot(mesh.X[i] - TurningDecks.BulgeLength / 2, mesh.Y[i]));
+            yield return new CaseLine($"strip between pins, follower pressure of {pressure} MPa: rise", TurningDecks.BulgeRise(pressure), last.DisplacementY[middle], Tolerance, "mm",
+                "closed form: circular arc of a membrane, T = p·R, less the share of bending p·EI/T²");
+        }
     }
 
     /// <summary>Movement of the tip: of the point half way up its end.</summary>
