@@ -145,6 +145,14 @@ public sealed record JointDeck
     [Key("width", "Width of the bond; left out: the model's.", Dimension = Dimension.Length, Example = "15 mm", Above = 0)]
     public double? Width { get; init; }
 
+    /// <summary>How the layer is drawn.</summary>
+    [Key("drawn", "Whether the two edges lie on each other or the layer's thickness apart.", Default = "zero thickness")]
+    public DrawnThickness Drawn { get; init; }
+
+    /// <summary>Line that gives the frame of opening and sliding.</summary>
+    [Key("frame", "Line along which sliding is counted, and across which opening; matters where the faces turn against each other.", Default = "mid-line")]
+    public FrameLine Frame { get; init; }
+
     /// <summary>Starter crack.</summary>
     [Key("starter crack", "A stretch at one end that is not bonded from the start.")]
     public StarterCrackDeck? StarterCrack { get; init; }
@@ -156,6 +164,34 @@ public sealed record JointDeck
     /// <summary>Element length along the joint [mm]; null: by formula.</summary>
     [Key("element length", "Element length along the joint; left out: half the length that gives 1 % error, from layer and adherends.", Dimension = Dimension.Length, Example = "0.5 mm", Above = 0)]
     public double? ElementLength { get; init; }
+}
+
+/// <summary>How a layer is drawn.</summary>
+public enum DrawnThickness
+{
+    /// <summary>The edges lie on each other.</summary>
+    [Word("zero thickness", "the two edges lie on each other; the thickness counts by the law alone")]
+    Zero,
+
+    /// <summary>The edges lie the layer's thickness apart.</summary>
+    [Word("true thickness", "the two edges lie the layer's thickness apart, and turning of the layer slides it")]
+    True,
+}
+
+/// <summary>Line that gives the frame of a layer.</summary>
+public enum FrameLine
+{
+    /// <summary>Half way between the faces.</summary>
+    [Word("mid-line", "half way between the two edges")]
+    MidLine,
+
+    /// <summary>The upper face.</summary>
+    [Word("upper face", "the edge above the layer")]
+    UpperFace,
+
+    /// <summary>The lower face.</summary>
+    [Word("lower face", "the edge below the layer")]
+    LowerFace,
 }
 
 /// <summary>End of a joint.</summary>

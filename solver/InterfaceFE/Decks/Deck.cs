@@ -80,6 +80,10 @@ public enum RotationSetting
     /// <summary>Small displacements and rotations.</summary>
     [Word("small", "displacements and rotations are small: equilibrium on the undeformed shape")]
     Small,
+
+    /// <summary>Finite displacements and rotations.</summary>
+    [Word("finite", "displacements and rotations are as large as they come: equilibrium on the deformed shape, logarithmic strain; eight-node elements")]
+    Finite,
 }
 
 /// <summary>Kind of solid element.</summary>
@@ -112,7 +116,6 @@ public enum LayerIntegration
 
 /// <summary>Assumptions of the calculation.</summary>
 [Block("Width of the specimen and the assumptions of the calculation.")]
-[NotBuiltYet("rotation", "finite")]
 [NotBuiltYet("mirror")]
 public sealed record ModelDeck
 {
@@ -133,7 +136,7 @@ public sealed record ModelDeck
     public PullDirection? Gravity { get; init; }
 
     /// <summary>Rotation setting; written in every deck.</summary>
-    [Key("rotation", "Whether rotations are small; written in every deck, since it limits what the run is good for.")]
+    [Key("rotation", "Whether rotations are small or finite; written in every deck, since `small` limits what the run is good for.")]
     public required RotationSetting Rotation { get; init; }
 
     /// <summary>Kind of solid element.</summary>

@@ -102,8 +102,7 @@ public enum CountedFrom
 }
 
 /// <summary>One stage of a sequence; exactly one of its verbs is set (a temperature verb may stand with no other).</summary>
-[Block("One stage. It has one verb: fix, let go, pull, push, turn, cool to, heat to or wait.")]
-[NotBuiltYet("press")]
+[Block("One stage. It has one verb: fix, let go, pull, push, turn, press, cool to, heat to or wait.")]
 [NotBuiltYet("jump")]
 public sealed record StageDeck
 {
@@ -127,6 +126,10 @@ public sealed record StageDeck
     [Key("turn", "Turn grips, by angle or by moment.")]
     public TurnDeck? Turn { get; init; }
 
+    /// <summary>Press on faces.</summary>
+    [Key("press", "Bring faces under pressure; it stays on until another stage changes it.")]
+    public PressDeck? Press { get; init; }
+
     /// <summary>Temperature to cool to [K].</summary>
     [Key("cool to", "Temperature to cool the whole model to.", Dimension = Dimension.Temperature, Example = "-40 °C", AtLeast = 0)]
     public double? CoolTo { get; init; }
@@ -140,7 +143,7 @@ public sealed record StageDeck
     public double? Wait { get; init; }
 
     /// <summary>Duration of a temperature stage or a stage by force [s].</summary>
-    [Key("over", "Duration of a stage of cooling, heating, force or moment; left out: 60 s.", Dimension = Dimension.Time, Example = "6 h", Above = 0)]
+    [Key("over", "Duration of a stage of cooling, heating, force, moment or pressure; left out: 60 s.", Dimension = Dimension.Time, Example = "6 h", Above = 0)]
     public double? Over { get; init; }
 }
 
@@ -192,6 +195,19 @@ public sealed record TurnDeck
     /// <summary>Angular speed [rad/s].</summary>
     [Key("speed", "Angular speed; left out: 1 deg/min.", Dimension = Dimension.AngularSpeed, Example = "2 deg/min", Above = 0)]
     public double? Speed { get; init; }
+}
+
+/// <summary>Pressure on faces.</summary>
+[Block("Pressure on faces, beyond the ambient one. With `rotation: finite` it follows them: it stays normal to the deformed face and acts on its deformed length; with `small` it acts on the shape before deformation.")]
+public sealed record PressDeck
+{
+    /// <summary>Edges under pressure.</summary>
+    [Key("on", "Edge as `EDGE of ADHEREND`, or a list of edges; the whole edge is pressed, over the adherend's width.", Example = "top of panel", LeastCount = 1)]
+    public required IReadOnlyList<string> On { get; init; }
+
+    /// <summary>Pressure at the end of the stage [MPa].</summary>
+    [Key("pressure", "Pressure to reach, positive towards the body, negative for suction; 0 takes it off.", Dimension = Dimension.Stress, Example = "5 kPa")]
+    public required double Pressure { get; init; }
 }
 
 /// <summary>Kind of a gauge.</summary>

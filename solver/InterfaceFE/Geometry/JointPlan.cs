@@ -39,6 +39,9 @@ internal sealed class JointPlan
 
     public required double Tolerance { get; init; }
 
+    /// <summary>Distance of the faces [mm]; 0 where they lie on each other.</summary>
+    public required double DrawnThickness { get; init; }
+
     /// <summary>Stretches without bond, ascending, not touching each other.</summary>
     public required IReadOnlyList<Span> Unbonded { get; init; }
 

@@ -84,6 +84,7 @@ internal sealed class JointPlanner
             Start = start,
             End = end,
             Tolerance = tolerance,
+            DrawnThickness = joint.Drawn == DrawnThickness.True ? layer.Thickness : 0,
             Unbonded = unbonded,
             Bonded = bonded,
             Length = JointLength.Choose(CurveNumbers.OfPeel(joint.Layer, layer, held), CurveNumbers.OfShear(joint.Layer, layer), ArmOf(upper.Strip), ArmOf(lower.Strip),
@@ -152,17 +153,21 @@ internal sealed class JointPlanner
 
     private void CheckTouch(string path, JointDeck joint, JointFace upper, JointFace lower, double start, double end, double tolerance)
     {
-        double gap = upper.Y - lower.Y;
+        double gap = upper.Y - lower.Y, apart = 0;
+        double thickness = _deck.Layers != null && _deck.Layers.TryGetValue(joint.Layer, out LayerDeck? layer) ? layer.Thickness : double.NaN;
+        if (joint.Drawn == DrawnThickness.True)
+            apart = thickness;
         if (end - start <= tolerance)
             throw new DeckException(path, Text.Of($"the edges do not overlap along x: \"{joint.Upper}\" lies from {upper.Low:G7} to {upper.High:G7} mm, \"{joint.Lower}\" from {lower.Low:G7} to {lower.High:G7} mm, with {start - end:G6} mm between them along x and {gap:G6} mm along y"));
-        if (Math.Abs(gap) <= tolerance)
+        if (Math.Abs(gap - apart) <= tolerance || double.IsNaN(apart))
             return;
         string where = Text.Of($"\"{joint.Upper}\" lies at y = {upper.Y:G9} mm, \"{joint.Lower}\" at y = {lower.Y:G9} mm");
         if (gap < 0)
             throw new DeckException(path, where + Text.Of($": the upper edge lies {-gap:G6} mm below the lower one; move \"{upper.Strip.Name}\" up by that, or exchange the edges"));
-        double thickness = _deck.Layers != null && _deck.Layers.TryGetValue(joint.Layer, out LayerDeck? layer) ? layer.Thickness : double.NaN;
-        string drawn = Math.Abs(gap - thickness) <= 1e-3 * thickness ? "the faces are drawn the layer's thickness apart; " : "";
-        throw new DeckException(path, where + Text.Of($": {drawn}faces of a joint must coincide in this version (the layer's thickness counts by its law): move \"{upper.Strip.Name}\" down by {gap:G6} mm"));
+        if (apart > 0)
+            throw new DeckException(path, where + Text.Of($": with `drawn: true thickness` they must lie the thickness of \"{joint.Layer}\" apart, {apart:G6} mm; move \"{upper.Strip.Name}\" {(gap > apart ? "down" : "up")} by {Math.Abs(gap - apart):G6} mm"));
+        string drawn = Math.Abs(gap - thickness) <= 1e-3 * thickness ? "they lie the layer's thickness apart: use `drawn: true thickness`, or " : "faces must coincide (the layer's thickness counts by its law), or lie its thickness apart with `drawn: true thickness`: ";
+        throw new DeckException(path, where + Text.Of($": {drawn}move \"{upper.Strip.Name}\" down by {gap:G6} mm"));
     }
 
     private static List<Span> Unbonded(string path, JointDeck joint, double start, double end, double tolerance)

@@ -1,8 +1,8 @@
 namespace InterfaceFE.Geometry;
 
 /// <summary>
-/// A plane mesh of adherends and the zero-thickness layers between them. Nodes of different adherends are never shared: facing faces of a joint have
-/// coincident nodes of their own. Coordinates in mm, zero-based indices, counter-clockwise elements.
+/// A plane mesh of adherends and the layers between them. Nodes of different adherends are never shared: facing faces of a joint have nodes of their own, coincident
+/// or the layer's drawn thickness apart. Coordinates in mm, zero-based indices, counter-clockwise elements.
 /// </summary>
 public sealed class Mesh
 {

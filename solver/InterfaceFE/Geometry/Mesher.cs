@@ -90,9 +90,9 @@ public static class Mesher
         (int[] upper, double[] atUpper) = grids[joint.Upper.Strip.Index].FaceBetween(joint.Upper, ends);
         if (!at.AsSpan().SequenceEqual(atUpper) || at.Length < 2)
             throw new InvalidOperationException($"The faces of joint {joint.Name} were divided unequally: {at.Length} and {atUpper.Length} lines.");
-        // Faces may lie a millionth of a thickness apart: the upper one is laid on the lower one.
+        // Faces may lie a millionth of a thickness off: the upper one is laid on the lower one, or the layer's drawn thickness above it.
         for (int i = 0; i < lower.Length; i++)
-            (x[upper[i]], y[upper[i]]) = (x[lower[i]], y[lower[i]]);
+            (x[upper[i]], y[upper[i]]) = (x[lower[i]], y[lower[i]] + joint.DrawnThickness);
         int elements = at.Length - 1;
         bool[] bonded = new bool[elements];
         for (int i = 0; i < elements; i++)

@@ -70,7 +70,7 @@ internal static class ElementFault
                 return Text($"joint '{layer.Name}', {along:G6} mm along it (x = {x:G6} mm, y = {y:G6} mm): {Wrong(responses[point])} is not finite at an opening of {separations[point].Opening:G6} mm and a sliding of {separations[point].Sliding:G6} mm");
             case SolidBlock solid:
                 Span<double> stresses = stackalloc double[16], positions = stackalloc double[8];
-                solid.Stresses(e, native, at.Temperature, stresses);
+                solid.Stresses(e, native, at.Temperature, accepted, stresses);
                 solid.GaussPositions(e, positions);
                 for (int p = 0; p < 4; p++)
                     if (!Finite(stresses.Slice(4 * p, 4)))

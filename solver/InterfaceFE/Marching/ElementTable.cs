@@ -5,12 +5,14 @@ namespace InterfaceFE.Marching;
 
 /// <summary>
 /// All elements of a model in one numbering of slots: solids first, then layers. Holds each slot's unknowns and, for elements that touch a rigid grip, the matrix that
-/// turns the slot's unknowns into native displacements.
+/// turns the slot's unknowns into native displacements; with finite rotation the matrix is that at the angles last told, and belongs to changes.
 /// </summary>
 internal sealed class ElementTable
 {
     private readonly int[] _blockStart;
     private readonly double[]?[] _transforms;
+    private readonly Arm[]?[] _arms;
+    private readonly List<int> _turning = [];
 
     public ElementTable(SpecimenModel model)
     {
@@ -20,6 +22,8 @@ internal sealed class ElementTable
             _blockStart[b + 1] = _blockStart[b] + Blocks[b].Count;
         int slots = _blockStart[^1];
         _transforms = new double[slots][];
+        _arms = new Arm[slots][];
+        var arms = new List<Arm>();
         var start = new int[slots + 1];
         var unknowns = new List<int>();
         var local = new List<int>();
@@ -30,7 +34,13 @@ internal sealed class ElementTable
             {
                 int slot = _blockStart[b] + e;
                 local.Clear();
-                _transforms[slot] = Link(model.Unknowns, model.Mesh, Blocks[b].Nodes(e), Blocks[b].OutOfPlaneUnknown, local);
+                arms.Clear();
+                _transforms[slot] = Link(model.Unknowns, model.Mesh, Blocks[b].Nodes(e), Blocks[b].OutOfPlaneUnknown, local, arms);
+                if (model.Unknowns.Turns && arms.Count > 0)
+                {
+                    _arms[slot] = [.. arms];
+                    _turning.Add(slot);
+                }
                 unknowns.AddRange(local);
                 start[slot + 1] = unknowns.Count;
                 LargestSlot = Math.Max(LargestSlot, local.Count);
@@ -47,7 +57,8 @@ internal sealed class ElementTable
             SlotStart = start,
             SlotUnknowns = [.. unknowns],
         };
-        FirstLayerBlock = model.Solids.Count + model.OpenFaces.Count;
+        FirstPressureBlock = model.Solids.Count + model.OpenFaces.Count;
+        FirstLayerBlock = FirstPressureBlock + model.Pressures.Count;
         SolidBlocks = model.Solids.Count;
     }
 
@@ -56,6 +67,8 @@ internal sealed class ElementTable
     public SlotPattern Pattern { get; }
 
     public int FirstLayerBlock { get; }
+
+    public int FirstPressureBlock { get; }
 
     public int SolidBlocks { get; }
 
@@ -85,6 +98,30 @@ internal sealed class ElementTable
                 sum += transform[i * ids.Length + j] * unknowns[ids[j]];
             native[i] = sum;
         }
+        // The matrix belongs to changes: what it gives for the angle itself is replaced by the finite movement.
+        foreach (Arm arm in _arms[slot] ?? [])
+        {
+            double angle = unknowns[ids[arm.Column]];
+            (double x, double y) = UnknownMap.Turned(arm.X, arm.Y, angle);
+            native[arm.Row] = unknowns[ids[arm.Column - 2]] + x;
+            native[arm.Row + 1] = unknowns[ids[arm.Column - 1]] + y;
+        }
+    }
+
+    /// <summary>Takes the angles of rigid grips from the unknowns, where rotations are finite.</summary>
+    public void Turn(ReadOnlySpan<double> unknowns)
+    {
+        foreach (int slot in _turning)
+        {
+            ReadOnlySpan<int> ids = Pattern.Unknowns(slot);
+            double[] transform = _transforms[slot]!;
+            foreach (Arm arm in _arms[slot]!)
+            {
+                (double sine, double cosine) = Math.SinCos(unknowns[ids[arm.Column]]);
+                transform[arm.Row * ids.Length + arm.Column] = -(sine * arm.X + cosine * arm.Y);
+                transform[(arm.Row + 1) * ids.Length + arm.Column] = cosine * arm.X - sine * arm.Y;
+            }
+        }
     }
 
     /// <summary>Adds a native force of a slot to a vector over the unknowns, and its magnitudes to another.</summary>
@@ -106,8 +143,11 @@ internal sealed class ElementTable
         }
     }
 
-    /// <summary>Turns a native tangent (n×n) into that of the slot's unknowns (k×k); returns the span that holds it.</summary>
-    public ReadOnlySpan<double> TransformTangent(int slot, ReadOnlySpan<double> native, Span<double> work, Span<double> result)
+    /// <summary>
+    /// Turns a native tangent (n×n) into that of the slot's unknowns (k×k); returns the span that holds it. With finite rotation the native force works on the second derivative of the
+    /// nodes' movement by the angle, which points from the node to the pin.
+    /// </summary>
+    public ReadOnlySpan<double> TransformTangent(int slot, ReadOnlySpan<double> native, ReadOnlySpan<double> force, Span<double> work, Span<double> result)
     {
         double[]? t = _transforms[slot];
         if (t is null)
@@ -133,10 +173,15 @@ internal sealed class ElementTable
                 result[i * k + j] = sum;
             }
         }
+        foreach (Arm arm in _arms[slot] ?? [])
+        {
+            double turnedX = t[(arm.Row + 1) * k + arm.Column], turnedY = -t[arm.Row * k + arm.Column];
+            result[arm.Column * k + arm.Column] -= force[arm.Row] * turnedX + force[arm.Row + 1] * turnedY;
+        }
         return result[..(k * k)];
     }
 
-    private static double[]? Link(UnknownMap map, Geometry.Mesh mesh, ReadOnlySpan<int> nodes, int outOfPlane, List<int> unknowns)
+    private static double[]? Link(UnknownMap map, Geometry.Mesh mesh, ReadOnlySpan<int> nodes, int outOfPlane, List<int> unknowns, List<Arm> arms)
     {
         bool plain = true;
         foreach (int node in nodes)
@@ -181,11 +226,16 @@ internal sealed class ElementTable
                 continue;
             }
             int first = unknowns.IndexOf(map.OfBody(body));
+            var arm = new Arm(2 * i, first + 2, mesh.X[nodes[i]] - map.Bodies[body].PinX, mesh.Y[nodes[i]] - map.Bodies[body].PinY);
+            arms.Add(arm);
             transform[rowX + first] = 1;
-            transform[rowX + first + 2] = -(mesh.Y[nodes[i]] - map.Bodies[body].PinY);
+            transform[rowX + first + 2] = -arm.Y;
             transform[rowY + first + 1] = 1;
-            transform[rowY + first + 2] = mesh.X[nodes[i]] - map.Bodies[body].PinX;
+            transform[rowY + first + 2] = arm.X;
         }
         return transform;
     }
+
+    /// <summary>A node on a rigid grip: row of its native ux, column of the grip's angle (x and y come before it), and its place from the pin before deformation [mm].</summary>
+    private readonly record struct Arm(int Row, int Column, double X, double Y);
 }

@@ -34,7 +34,7 @@ public sealed class EnergyLedger
         _internal = equilibrium.InternalForce.ToArray();
         _external = new double[_internal.Length];
         for (int i = 0; i < _external.Length; i++)
-            _external[i] = equilibrium.ExternalForce(i);
+            _external[i] = equilibrium.OutsideForce(i);
         _energy = equilibrium.Energy;
         _temperature = equilibrium.AcceptedTemperature;
     }
@@ -65,7 +65,7 @@ public sealed class EnergyLedger
         u.CopyTo(_displacement);
         _equilibrium.InternalForce.CopyTo(_internal);
         for (int i = 0; i < _external.Length; i++)
-            _external[i] = _equilibrium.ExternalForce(i);
+            _external[i] = _equilibrium.OutsideForce(i);
         _energy = _equilibrium.Energy;
         _temperature = _equilibrium.Temperature;
         return Account();
@@ -93,7 +93,7 @@ public sealed class EnergyLedger
         for (int i = 0; i < _displacement.Length; i++)
         {
             double way = u[i] - _displacement[i];
-            putIn += 0.5 * (_external[i] + _equilibrium.ExternalForce(i)) * way;
+            putIn += 0.5 * (_external[i] + _equilibrium.OutsideForce(i)) * way;
             double work = 0.5 * (_internal[i] + f[i]) * way;
             internalWork += work;
             magnitude += Math.Abs(work);

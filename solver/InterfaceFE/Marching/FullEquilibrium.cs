@@ -20,7 +20,7 @@ public sealed class FullEquilibrium : IEquilibrium
     private readonly ElementTable _table;
     private readonly TangentFactor _factor;
     private readonly StateStore _state;
-    private readonly double[] _u, _accepted, _internal, _layerForce, _dissipationGradient, _magnitudes, _temperatureRate, _external, _externalRate, _held, _heldRate;
+    private readonly double[] _u, _accepted, _internal, _layerForce, _dissipationGradient, _magnitudes, _temperatureRate, _external, _externalRate, _held, _heldRate, _pressure, _pressureRate;
     private readonly double[] _rightSide, _solution, _progressRate, _gradient, _base, _noMagnitudes = [];
     private readonly BondDamage _bonds;
     private readonly bool[] _isHeld;
@@ -54,6 +54,8 @@ public sealed class FullEquilibrium : IEquilibrium
         _weightEnd = new double[n];
         _held = new double[n];
         _heldRate = new double[n];
+        _pressure = new double[n];
+        _pressureRate = new double[n];
         _rightSide = new double[n];
         _solution = new double[n];
         _progressRate = new double[n];
@@ -125,7 +127,7 @@ public sealed class FullEquilibrium : IEquilibrium
             double potential = Energy.Total;
             for (int i = 0; i < _u.Length; i++)
                 if (!_isHeld[i])
-                    potential -= _external[i] * _u[i];
+                    potential -= (_external[i] - _pressure[i]) * _u[i];
             return potential;
         }
     }
@@ -152,7 +154,10 @@ public sealed class FullEquilibrium : IEquilibrium
     public ReadOnlySpan<int> HeldUnknowns => _heldUnknowns;
 
     /// <summary>External force on an unknown at the tentative progress: the reaction where it is held, else the applied force [N or N·mm].</summary>
-    public double ExternalForce(int unknown) => _isHeld[unknown] ? _internal[unknown] : _external[unknown];
+    public double ExternalForce(int unknown) => _isHeld[unknown] ? _internal[unknown] + _pressure[unknown] : _external[unknown];
+
+    /// <summary>External force on an unknown and what pressures put on it: all that does work from outside [N or N·mm].</summary>
+    public double OutsideForce(int unknown) => _isHeld[unknown] ? _internal[unknown] : _external[unknown] - _pressure[unknown];
 
     /// <summary>Force of a grip on an unknown: the external force without the weight that acts there [N or N·mm].</summary>
     public double GripForce(int unknown) => ExternalForce(unknown) - _weightStart[unknown] - Progress * (_weightEnd[unknown] - _weightStart[unknown]);
@@ -168,7 +173,7 @@ public sealed class FullEquilibrium : IEquilibrium
             _weightEnd[weight.Unknown] = weight.Value;
         for (int i = 0; i < _externalStart.Length; i++)
         {
-            _externalStart[i] = _isHeld[i] ? _internal[i] : _external[i];
+            _externalStart[i] = ExternalForce(i);
             _externalEnd[i] = (_isHeld[i] ? 0 : _external[i] - _weightStart[i]) + _weightEnd[i];
         }
         Array.Clear(_isHeld);
@@ -220,15 +225,18 @@ public sealed class FullEquilibrium : IEquilibrium
         Array.Clear(_layerForce);
         Array.Clear(_magnitudes);
         Array.Clear(_temperatureRate);
+        Array.Clear(_pressure);
+        Array.Clear(_pressureRate);
         Array.Clear(_dissipationGradient);
         wanted |= Wanted.Force | Wanted.Energy;
         int changed = 0;
         GrowingElements = 0;
+        _table.Turn(_u);
         double storedSolids = 0, storedLayers = 0, spent = 0, yielding = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
         for (int block = 0; block < _table.Blocks.Count; block++)
         {
             IElementBlock elements = _table.Blocks[block];
-            bool layer = block >= _table.FirstLayerBlock;
+            bool layer = block >= _table.FirstLayerBlock, pressure = !layer && block >= _table.FirstPressureBlock;
             int n = elements.NativeCount;
             var buffers = new ElementBuffers { Force = _force.AsSpan(0, n), Tangent = _tangent.AsSpan(0, n * n), LoadRate = _rate.AsSpan(0, n), Dissipation = _dissipation.AsSpan(0, n) };
             Span<double> native = _native.AsSpan(0, n);
@@ -240,15 +248,15 @@ public sealed class FullEquilibrium : IEquilibrium
                     own &= ~Wanted.Tangent;
                 _table.Gather(slot, _u, native);
                 ElementAnswer answer = elements.Evaluate(e, at, native, _state.Accepted(block, e), _state.Tentative(block, e), own, buffers);
-                _table.Scatter(slot, buffers.Force, _internal, _magnitudes);
+                _table.Scatter(slot, buffers.Force, pressure ? _pressure : _internal, _magnitudes);
                 if (layer)
                     _table.Scatter(slot, buffers.Force, _layerForce, _noMagnitudes);
                 if ((own & Wanted.LoadRate) != 0)
-                    _table.Scatter(slot, buffers.LoadRate, _temperatureRate, _noMagnitudes);
+                    _table.Scatter(slot, buffers.LoadRate, pressure ? _pressureRate : _temperatureRate, _noMagnitudes);
                 if ((own & Wanted.Tangent) != 0)
                 {
                     finite &= IsFinite(buffers.Tangent);
-                    if (_factor.Store(slot, _table.TransformTangent(slot, buffers.Tangent, _work, _transformed)))
+                    if (_factor.Store(slot, _table.TransformTangent(slot, buffers.Tangent, buffers.Force, _work, _transformed)))
                         changed++;
                 }
                 byTemperature += answer.StoredByTemperature;
@@ -282,7 +290,7 @@ public sealed class FullEquilibrium : IEquilibrium
         finite &= double.IsFinite(Energy.Total);
         for (int i = 0; i < _internal.Length; i++)
         {
-            double difference = _isHeld[i] ? 0 : _external[i] - _internal[i], way = _u[i] - _accepted[i];
+            double difference = _isHeld[i] ? 0 : _external[i] - _pressure[i] - _internal[i], way = _u[i] - _accepted[i];
             finite &= double.IsFinite(_internal[i]);
             workOut += difference * way;
             workAll += Math.Abs(_internal[i] * way);
@@ -331,7 +339,7 @@ public sealed class FullEquilibrium : IEquilibrium
             return new Correction(double.PositiveInfinity, 0, 0, -1, false);
         for (int i = 0; i < _rightSide.Length; i++)
         {
-            _rightSide[i] = _external[i] - _internal[i];
+            _rightSide[i] = _external[i] - _pressure[i] - _internal[i];
             _solution[i] = _isHeld[i] ? _held[i] - _u[i] : 0;
         }
         double equation = control.Equation(this, _gradient, out double byProgress);
@@ -355,7 +363,7 @@ public sealed class FullEquilibrium : IEquilibrium
         double work = 0;
         for (int i = 0; i < _solution.Length; i++)
             if (!_isHeld[i])
-                work += _solution[i] * (_external[i] - _internal[i]);
+                work += _solution[i] * (_external[i] - _pressure[i] - _internal[i]);
         return work;
     }
 
@@ -503,7 +511,7 @@ public sealed class FullEquilibrium : IEquilibrium
         }
         double temperatureRate = _temperatureEnd - _temperatureStart;
         for (int i = 0; i < _progressRate.Length; i++)
-            _progressRate[i] = _externalRate[i] - _temperatureRate[i] * temperatureRate;
+            _progressRate[i] = _externalRate[i] - _pressureRate[i] - _temperatureRate[i] * temperatureRate;
         _correctionProgress = _factor.SolveControlled(_rightSide, _progressRate, _gradient, byProgress, -equation, _solution, _heldUnknowns, _heldRate);
     }
 

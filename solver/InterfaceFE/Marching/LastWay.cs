@@ -1,3 +1,5 @@
+using InterfaceFE.Model;
+
 namespace InterfaceFE.Marching;
 
 /// <summary>The way from the point before to the accepted point, in every measure that a control may continue it by.</summary>
@@ -36,6 +38,28 @@ internal sealed class LastWay
         Exists = true;
     }
 
+    /// <summary>Whether the tentative way of the equilibrium has a component against this one.</summary>
+    public bool Opposes(FullEquilibrium equilibrium)
+    {
+        ReadOnlySpan<double> now = equilibrium.Displacement, accepted = equilibrium.AcceptedDisplacement;
+        double along = 0;
+        for (int i = 0; i < _displacement.Length; i++)
+            along += _displacement[i] * (now[i] - accepted[i]);
+        return along < 0;
+    }
+
+    /// <summary>Movement of the grips along x and y: what arc length watches where no layer can soften.</summary>
+    private static List<(int, int)> Grips(UnknownMap unknowns)
+    {
+        var watched = new List<(int, int)>();
+        for (int b = 0; b < unknowns.Bodies.Count; b++)
+        {
+            IEnumerable<int> first = unknowns.Bodies[b].Rigid ? [unknowns.OfBody(b)] : unknowns.Bodies[b].Nodes.Select(unknowns.OfNode);
+            watched.AddRange(first.SelectMany(i => new[] { (i, -1), (i + 1, -1) }));
+        }
+        return watched;
+    }
+
     /// <summary>The control that goes on by a share of this way in a given measure; null where the measure did not grow on it.</summary>
     /// <param name="measure">Measure.</param>
     /// <param name="share">Share of the way; above 1 for a longer stride.</param>
@@ -47,7 +71,7 @@ internal sealed class LastWay
         {
             PathMeasure.LayerWork => LayerWork,
             PathMeasure.Dissipation => Dissipation,
-            _ => new ArcLengthControl(equilibrium.Bonds.WatchedSeparations(), _displacement, 1).Length(_displacement, []),
+            _ => new ArcLengthControl(Watched(equilibrium), _displacement, 1).Length(_displacement, []),
         };
         return stride > 0 ? Control(measure, stride, equilibrium, accepted) : null;
     }
@@ -61,8 +85,12 @@ internal sealed class LastWay
     {
         PathMeasure.LayerWork => new LayerWorkControl(accepted.StoredInLayers + accepted.SpentInLayers + stride, stride),
         PathMeasure.Dissipation => new DissipationControl(accepted.SpentInLayers + stride, stride),
-        _ => new ArcLengthControl(equilibrium.Bonds.WatchedSeparations(), (double[])_displacement.Clone(), stride),
+        _ => new ArcLengthControl(Watched(equilibrium), (double[])_displacement.Clone(), stride),
     };
+
+    /// <summary>What arc length watches: separations, or the grips where nothing is bonded.</summary>
+    private static IReadOnlyList<(int Unknown, int Other)> Watched(FullEquilibrium equilibrium) =>
+        equilibrium.Model.Layers.Count > 0 ? equilibrium.Bonds.WatchedSeparations() : Grips(equilibrium.Model.Unknowns);
 }
 
 /// <summary>By what a stride is measured where the path may turn back.</summary>

@@ -40,7 +40,10 @@ internal sealed class StageMarch
         _ownStride = Math.Min(settings.FirstStride, settings.LargestStride);
     }
 
-    private bool PathCanTakeOver => _settings.Path != PathControl.None && _equilibrium.Model.Layers.Count > 0 && _way.Exists;
+    /// <summary>Softening layers and turning sheets have limit points; what neither softens nor turns has none.</summary>
+    private bool PathCanTakeOver => _settings.Path != PathControl.None && (_equilibrium.Model.Layers.Count > 0 || Turns) && _way.Exists;
+
+    private bool Turns => _equilibrium.Model.Unknowns.Turns;
 
     public MarchOutcome Run(CancellationToken cancellation)
     {
@@ -172,9 +175,12 @@ internal sealed class StageMarch
         return Search(new OwnControl(1, 1 - start), between);
     }
 
-    /// <summary>Whether the load falls without any dissipation: unloading, which fulfils the equation of arc length as well as going on does.</summary>
+    /// <summary>
+    /// Whether nothing is dissipated while the load falls: unloading, which fulfils the equation of arc length as well as going on does. What turns may snap through and back without
+    /// dissipation: it goes back where it moves against its last way.
+    /// </summary>
     private bool GoesBack() =>
-        _equilibrium.Progress < _equilibrium.AcceptedProgress
+        (Turns ? _way.Opposes(_equilibrium) : _equilibrium.Progress < _equilibrium.AcceptedProgress)
         && _equilibrium.Energy.Spent - _points.Accepted.Spent <= NoDissipation * Math.Max(_way.Dissipation, _points.Accepted.Spent);
 
     private Attempt Search(IControl control, double guess)

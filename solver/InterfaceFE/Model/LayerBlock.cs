@@ -8,6 +8,7 @@ public sealed class LayerBlock : IElementBlock
 {
     private readonly MeshedJoint _joint;
     private readonly LayerRule _rule;
+    private readonly LayerKinematics? _kinematics;
     private readonly double _freeOpeningPerKelvin, _stressFreeTemperature;
     private readonly int[] _jointElement, _nodes;
     private readonly double[] _coordinates;
@@ -21,8 +22,19 @@ public sealed class LayerBlock : IElementBlock
     /// <param name="freeOpeningPerKelvin">Stress-free opening per change of temperature [mm/K].</param>
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
     /// <param name="bonded">Whether the block takes the bonded elements or the others.</param>
-    public LayerBlock(Mesh mesh, MeshedJoint joint, ILayerLaw law, double thickness, LayerRule rule, double freeOpeningPerKelvin, double stressFreeTemperature, bool bonded)
+    /// <param name="kinematics">How separations follow from displacements; null: small rotation of faces that lie on each other.</param>
+    public LayerBlock(
+        Mesh mesh,
+        MeshedJoint joint,
+        ILayerLaw law,
+        double thickness,
+        LayerRule rule,
+        double freeOpeningPerKelvin,
+        double stressFreeTemperature,
+        bool bonded,
+        LayerKinematics? kinematics = null)
     {
+        _kinematics = kinematics;
         _joint = joint;
         Law = law;
         Thickness = thickness;
@@ -107,12 +119,15 @@ public sealed class LayerBlock : IElementBlock
     {
         ReadOnlySpan<double> xy = Coordinates(element);
         bool tangent = (wanted & Wanted.Tangent) != 0, rate = (wanted & Wanted.LoadRate) != 0, dissipation = (wanted & Wanted.Dissipation) != 0;
-        LayerElementSums sums = LayerElement.Evaluate(_rule, xy, displacement, _joint.Width, FreeOpening(at.Temperature), Law, new LawPoint(at.Temperature, at.TimeStride), accepted, tentative,
-            into.Force, tangent ? into.Tangent : [], dissipation ? into.Dissipation : [], rate ? into.LoadRate : []);
+        var conditions = new LawPoint(at.Temperature, at.TimeStride);
+        Span<double> intoTangent = tangent ? into.Tangent : [], intoDissipation = dissipation ? into.Dissipation : [], intoRate = rate ? into.LoadRate : [];
+        LayerElementSums sums = _kinematics is { } kinematics
+            ? TurningLayerElement.Evaluate(kinematics, _rule, xy, displacement, _joint.Width, FreeOpening(at.Temperature), Law, conditions, accepted, tentative, into.Force, intoTangent, intoDissipation, intoRate)
+            : LayerElement.Evaluate(_rule, xy, displacement, _joint.Width, FreeOpening(at.Temperature), Law, conditions, accepted, tentative, into.Force, intoTangent, intoDissipation, intoRate);
         if (rate)
             for (int i = 0; i < into.LoadRate.Length; i++)
                 into.LoadRate[i] *= _freeOpeningPerKelvin;
-        return new ElementAnswer(sums.Stored, sums.Dissipated, -_freeOpeningPerKelvin * PeelResultant(xy, into.Force), _freeOpeningPerKelvin * sums.DissipatedByFreeOpening, sums.LargestDamage, sums.LeastDamage, sums.Growing);
+        return new ElementAnswer(sums.Stored, sums.Dissipated, -_freeOpeningPerKelvin * (_kinematics is null ? PeelResultant(xy, into.Force) : sums.PeelResultant), _freeOpeningPerKelvin * sums.DissipatedByFreeOpening, sums.LargestDamage, sums.LeastDamage, sums.Growing);
     }
 
     /// <summary>The law's answer and the separation (free opening taken off) at each integration point of an element, without changing any state.</summary>
@@ -128,14 +143,22 @@ public sealed class LayerBlock : IElementBlock
         Span<double> scratch = stackalloc double[Law.StateSize];
         for (int p = 0; p < _rule.Count; p++)
         {
-            separations[p] = LayerElement.SeparationAt(Stations, xy, displacement, FreeOpening(at.Temperature), _rule.Positions[p]);
+            separations[p] = SeparationAt(xy, displacement, FreeOpening(at.Temperature), _rule.Positions[p]);
             responses[p] = Law.Update(separations[p], new LawPoint(at.Temperature, 0), accepted.Slice(p * Law.StateSize, Law.StateSize), scratch);
         }
     }
 
     /// <summary>Jump at a station, free opening included [mm].</summary>
     public Separation AtStation(int element, int station, ReadOnlySpan<double> displacement) =>
-        LayerElement.SeparationAt(Stations, Coordinates(element), displacement, 0, 2.0 * station / (Stations - 1) - 1);
+        SeparationAt(Coordinates(element), displacement, 0, 2.0 * station / (Stations - 1) - 1);
+
+    /// <summary>How the layer stands at an integration point; null where only the jump counts (small rotation, zero thickness).</summary>
+    public LayerStance? Stance(int element, int point, ReadOnlySpan<double> displacement) =>
+        _kinematics is { } kinematics ? TurningLayerElement.At(kinematics, Coordinates(element), displacement, 0, _rule.Positions[point]) : null;
+
+    private Separation SeparationAt(ReadOnlySpan<double> xy, ReadOnlySpan<double> displacement, double freeOpening, double xi) => _kinematics is { } kinematics
+        ? TurningLayerElement.At(kinematics, xy, displacement, freeOpening, xi).Separation
+        : LayerElement.SeparationAt(Stations, xy, displacement, freeOpening, xi);
 
     private ReadOnlySpan<double> Coordinates(int element) => _coordinates.AsSpan(element * 2 * NodesPerElement, 2 * NodesPerElement);
 

@@ -15,12 +15,13 @@ public static class ModelBuilder
     /// <exception cref="DeckException">The deck asks for something that the mesh or the mechanics cannot give.</exception>
     public static SpecimenModel Build(Deck deck, Mesh mesh)
     {
+        bool turns = deck.Model.Rotation == RotationSetting.Finite;
         PlaneElasticity[][] materials = [.. mesh.Adherends.Select(a => MaterialFactory.Rows(deck, a))];
         OutOfPlaneGroups? outOfPlane = deck.Model.OutOfPlane == OutOfPlane.UniformStrain ? new OutOfPlaneGroups(mesh, deck.Model.Width, deck.Model.StrainOutOfPlane) : null;
         (IReadOnlyList<GripBody> bodies, IReadOnlyList<Grip> grips) = GripPlanner.Plan(deck, mesh);
-        var unknowns = new UnknownMap(mesh, bodies, outOfPlane);
+        var unknowns = new UnknownMap(mesh, bodies, outOfPlane, turns);
         SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature,
-            a.PlyOfRow.Count == 0 ? MaterialFactory.Yielding(deck, a.Material) : null, unknowns.LinkOf(i)))];
+            a.PlyOfRow.Count == 0 ? MaterialFactory.Yielding(deck, a.Material) : null, unknowns.LinkOf(i), turns))];
         double[] across = [.. mesh.Adherends.Select((_, i) => FreeAcross(deck, mesh, materials, outOfPlane, i))];
         LayerBlock[] layers = [.. mesh.Joints.Select(joint => Layer(deck, mesh, joint, materials, across))];
         LayerBlock[] openFaces = [.. mesh.Joints.Zip(layers, (joint, layer) => OpenFaces(deck, mesh, joint, layer)).Where(block => block.Count > 0)];
@@ -30,6 +31,7 @@ public static class ModelBuilder
             Unknowns = unknowns,
             Solids = solids,
             OpenFaces = openFaces,
+            Pressures = PressurePlanner.Plan(deck, mesh),
             Layers = layers,
             Grips = grips,
             Stages = SequencePlanner.Plan(deck, unknowns, grips, WeightPlanner.Plan(deck, mesh, unknowns, solids)),
@@ -44,7 +46,7 @@ public static class ModelBuilder
         double along = 0.5 * (Along(joint.UpperAdherend) + Along(joint.LowerAdherend));
         double out3 = 0.5 * (across[joint.UpperAdherend] + across[joint.LowerAdherend]);
         double perKelvin = LayerLawFactory.Bulk(layer, deck.Model.OutOfPlane)?.FreeOpening(1, along, out3) ?? 0;
-        return new LayerBlock(mesh, joint, law, layer.Thickness, Rule(deck, mesh), perKelvin, deck.StressFreeTemperature, bonded: true);
+        return new LayerBlock(mesh, joint, law, layer.Thickness, Rule(deck, mesh), perKelvin, deck.StressFreeTemperature, bonded: true, Kinematics(deck, joint));
 
         double Along(int adherend) => Mean(mesh, adherend, materials[adherend], m => m.YoungAlongX,
             m => m.Expansion[0] + (deck.Model.OutOfPlane == OutOfPlane.UniformStrain ? m.DrivenOutOfPlane().Expansion[0] * across[adherend] : 0));
@@ -102,7 +104,17 @@ public static class ModelBuilder
     }
 
     private static LayerBlock OpenFaces(Deck deck, Mesh mesh, MeshedJoint joint, LayerBlock layer) =>
-        new(mesh, joint, new ClosingLaw(layer.Law.Stiffness.Contact, OnsetShare * layer.Thickness), layer.Thickness, Rule(deck, mesh), 0, deck.StressFreeTemperature, bonded: false);
+        new(mesh, joint, new ClosingLaw(layer.Law.Stiffness.Contact, OnsetShare * layer.Thickness), layer.Thickness, Rule(deck, mesh), 0, deck.StressFreeTemperature, bonded: false, Kinematics(deck, joint));
+
+    /// <summary>Null where faces lie on each other and turn little: then nothing but the jump counts.</summary>
+    private static LayerKinematics? Kinematics(Deck deck, MeshedJoint joint)
+    {
+        JointDeck drawn = deck.Joints![joint.Name];
+        bool turns = deck.Model.Rotation == RotationSetting.Finite;
+        if (!turns && drawn.Drawn == DrawnThickness.Zero)
+            return null;
+        return new LayerKinematics(drawn.Frame switch { FrameLine.UpperFace => LayerFrame.UpperFace, FrameLine.LowerFace => LayerFrame.LowerFace, _ => LayerFrame.MidLine }, turns);
+    }
 
     private static LayerRule Rule(Deck deck, Mesh mesh) => deck.Model.LayerIntegration switch
     {

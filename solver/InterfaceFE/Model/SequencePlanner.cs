@@ -107,6 +107,8 @@ public sealed class SequencePlanner
             words = Pull(pull, stage.Pull is null ? "push" : "pull", path, targets, stage.Over, ref duration);
         else if (stage.Turn is { } turn)
             words = Turn(turn, path, targets, stage.Over, ref duration);
+        else if (stage.Press is { } press)
+            words = string.Create(CultureInfo.InvariantCulture, $"press {string.Join(", ", press.On)} with {press.Pressure:G6} MPa");
         else if ((stage.CoolTo ?? stage.HeatTo) is { } target)
         {
             temperature = target;

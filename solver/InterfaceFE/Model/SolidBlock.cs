@@ -71,17 +71,64 @@ public abstract class SolidBlock : IElementBlock
     /// <summary>Displacement gradients at the Gauss points: du/dx, du/dy, dv/dx, dv/dy, point after point; length 16, overwritten.</summary>
     public abstract void Gradients(int element, ReadOnlySpan<double> displacement, Span<double> gradients);
 
+    /// <summary>Rotation of the material at a displacement gradient [rad], counter-clockwise.</summary>
+    public virtual double Rotation(ReadOnlySpan<double> gradient) => 0.5 * (gradient[2] - gradient[1]);
+
+    /// <summary>
+    /// Component xx of Eshelby's energy momentum at the Gauss points with opposite sign, before deformation: traction on a section whose normal is x times d displacement/dx, less the
+    /// energy density, of the strain less the thermal strain and with its out-of-plane part, for a material that has not yielded.
+    /// </summary>
+    /// <param name="element">Element index.</param>
+    /// <param name="displacement">Native displacements [mm].</param>
+    /// <param name="temperature">Temperature [K].</param>
+    /// <param name="outOfPlane">Strain out of plane.</param>
+    /// <param name="momentum">One per point [MPa]; length 4, overwritten.</param>
+    public virtual void EnergyMomentum(int element, ReadOnlySpan<double> displacement, double temperature, double outOfPlane, Span<double> momentum)
+    {
+        Span<double> gradients = stackalloc double[16], strain = stackalloc double[3], stress = stackalloc double[4];
+        double change = temperature - StressFreeTemperature;
+        Gradients(element, displacement, gradients);
+        for (int p = 0; p < 4; p++)
+        {
+            ReadOnlySpan<double> g = gradients.Slice(4 * p, 4);
+            strain[0] = g[0];
+            strain[1] = g[3];
+            strain[2] = g[1] + g[2];
+            Material(element).Stress(strain, change, stress, outOfPlane);
+            momentum[p] = stress[0] * g[0] + stress[3] * g[2] - Material(element).EnergyDensity(strain, change, outOfPlane);
+        }
+    }
+
     /// <summary>Derivatives of the shape functions at the Gauss points [1/mm] (point after point, one per node) and the areas the points stand for [mm²].</summary>
     public abstract void ShapeGradients(int element, Span<double> byX, Span<double> byY, Span<double> areas);
 
     /// <summary>Volume of an element that each of its nodes stands for: integral of its shape function [mm³]; one per node, overwritten.</summary>
-    public abstract void VolumeShares(int element, Span<double> volumes);
+    public void VolumeShares(int element, Span<double> volumes)
+    {
+        int nodes = NodesPerElement;
+        Span<double> byX = stackalloc double[GaussPoints.Count * nodes], byY = stackalloc double[GaussPoints.Count * nodes], areas = stackalloc double[GaussPoints.Count], shape = stackalloc double[nodes];
+        ShapeGradients(element, byX, byY, areas);
+        volumes.Clear();
+        for (int point = 0; point < GaussPoints.Count; point++)
+        {
+            if (nodes == Quadrilateral8.NodeCount)
+                Quadrilateral8.ShapeFunctions(GaussPoints.Xi(point), GaussPoints.Eta(point), shape);
+            else
+                Quadrilateral4.ShapeFunctions(GaussPoints.Xi(point), GaussPoints.Eta(point), shape);
+            for (int i = 0; i < nodes; i++)
+                volumes[i] += shape[i] * areas[point] * Adherend.Width;
+        }
+    }
 
     /// <summary>Positions of the Gauss points x, y [mm], point after point; length 8, overwritten.</summary>
     public abstract void GaussPositions(int element, Span<double> positions);
 
     /// <summary>Values at the nodes from values at the Gauss points.</summary>
     public abstract void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues);
+
+    /// <summary>Angle from the model's x axis to an element's way along its adherend [rad].</summary>
+    private protected static double AngleAlong(ReadOnlySpan<double> xy) =>
+        Math.Atan2(xy[3] + xy[5] - xy[1] - xy[7], xy[2] + xy[4] - xy[0] - xy[6]);
 
     /// <summary>Makes the block of an adherend in the mesh's kind of element.</summary>
     /// <param name="mesh">The mesh.</param>
@@ -90,10 +137,18 @@ public abstract class SolidBlock : IElementBlock
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
     /// <param name="yielding">The same material as it yields; null: it does not.</param>
     /// <param name="outOfPlane">The unknown with which it strains out of plane; null: none.</param>
-    /// <exception cref="ArgumentException">The material yields and the elements have four nodes.</exception>
-    public static SolidBlock Create(Mesh mesh, MeshedAdherend adherend, PlaneElasticity[] materials, double stressFreeTemperature, J2Plasticity? yielding = null, OutOfPlaneLink? outOfPlane = null)
+    /// <param name="turns">Whether rotations are finite.</param>
+    /// <exception cref="ArgumentException">The material yields or rotations are finite, and the elements have four nodes; or rotations are finite and there is a strain out of plane.</exception>
+    public static SolidBlock Create(
+        Mesh mesh, MeshedAdherend adherend, PlaneElasticity[] materials, double stressFreeTemperature, J2Plasticity? yielding = null, OutOfPlaneLink? outOfPlane = null, bool turns = false)
     {
         bool eight = mesh.NodesPerSolid == Quadrilateral8.NodeCount;
+        if (turns)
+        {
+            return eight && outOfPlane is null
+                ? new TurningBlock(mesh, adherend, materials, yielding, stressFreeTemperature)
+                : throw new ArgumentException("finite rotation needs eight-node elements without strain out of plane", nameof(turns));
+        }
         if (yielding is not null)
         {
             return eight
@@ -190,19 +245,6 @@ internal class SolidBlock<TElement> : SolidBlock
 
     public override void GaussPositions(int element, Span<double> positions) => TElement.GaussPositions(Coordinates(element), positions);
 
-    public override void VolumeShares(int element, Span<double> volumes)
-    {
-        Span<double> byX = stackalloc double[4 * TElement.Nodes], byY = stackalloc double[4 * TElement.Nodes], areas = stackalloc double[GaussPoints.Count], shape = stackalloc double[TElement.Nodes];
-        TElement.ShapeGradients(Coordinates(element), byX, byY, areas);
-        volumes.Clear();
-        for (int point = 0; point < GaussPoints.Count; point++)
-        {
-            TElement.ShapeFunctions(GaussPoints.Xi(point), GaussPoints.Eta(point), shape);
-            for (int i = 0; i < shape.Length; i++)
-                volumes[i] += shape[i] * areas[point] * Adherend.Width;
-        }
-    }
-
     public override void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues) =>
         TElement.ExtrapolateToNodes(components, gaussValues, nodeValues);
 
@@ -236,8 +278,4 @@ internal class SolidBlock<TElement> : SolidBlock
             sum += a[i] * b[i];
         return sum;
     }
-
-    /// <summary>Angle from the model's x axis to an element's way along its adherend [rad].</summary>
-    protected static double AngleAlong(ReadOnlySpan<double> xy) =>
-        Math.Atan2(xy[3] + xy[5] - xy[1] - xy[7], xy[2] + xy[4] - xy[0] - xy[6]);
 }

@@ -17,6 +17,9 @@ public sealed class SpecimenModel
     /// <summary>Unbonded stretches of the joints, which can close; joints without any are left out.</summary>
     public required IReadOnlyList<LayerBlock> OpenFaces { get; init; }
 
+    /// <summary>Pressures on edges.</summary>
+    public IReadOnlyList<PressureBlock> Pressures { get; init; } = [];
+
     /// <summary>Bonded parts of the joints, in order.</summary>
     public required IReadOnlyList<LayerBlock> Layers { get; init; }
 
@@ -29,6 +32,6 @@ public sealed class SpecimenModel
     /// <summary>Stress-free temperature [K].</summary>
     public required double StressFreeTemperature { get; init; }
 
-    /// <summary>All blocks: solids, open faces, layers.</summary>
-    public IReadOnlyList<IElementBlock> Blocks => [.. Solids, .. OpenFaces, .. Layers];
+    /// <summary>All blocks: solids, open faces, pressures, layers.</summary>
+    public IReadOnlyList<IElementBlock> Blocks => [.. Solids, .. OpenFaces, .. Pressures, .. Layers];
 }

@@ -5,7 +5,7 @@ namespace InterfaceFE.Model;
 
 /// <summary>
 /// How nodal displacements follow from the unknowns. A node has unknowns of its own unless it belongs to a rigid body; then ux = Ux - θ·(y - yp) and uy = Uy + θ·(x - xp)
-/// with the body's unknowns (Ux, Uy, θ) and pin (xp, yp). Unknowns are grouped in vertices: the coincident nodes of a joint are one vertex, a body is one.
+/// with the body's unknowns (Ux, Uy, θ) and pin (xp, yp), or with finite rotation ux = Ux + (cos θ - 1)·(x - xp) - sin θ·(y - yp) and uy = Uy + sin θ·(x - xp) + (cos θ - 1)·(y - yp). Unknowns are grouped in vertices: the coincident nodes of a joint are one vertex, a body is one.
 /// Everything that a deck grips is a root vertex, and so is the elongation of a group of adherends out of plane, where there is one. The constructor throws <see cref="ArgumentException"/> when bodies overlap.
 /// </summary>
 public sealed class UnknownMap
@@ -20,11 +20,13 @@ public sealed class UnknownMap
     /// <param name="mesh">The mesh.</param>
     /// <param name="bodies">What grips hold.</param>
     /// <param name="outOfPlane">Groups that strain out of plane together; null: none does.</param>
-    public UnknownMap(Mesh mesh, IReadOnlyList<GripBody> bodies, OutOfPlaneGroups? outOfPlane = null)
+    /// <param name="turns">Whether rotations are finite.</param>
+    public UnknownMap(Mesh mesh, IReadOnlyList<GripBody> bodies, OutOfPlaneGroups? outOfPlane = null, bool turns = false)
     {
         OutOfPlane = outOfPlane;
         _mesh = mesh;
         _bodies = bodies;
+        Turns = turns;
         _ofNode = new int[mesh.NodeCount];
         _bodyOfNode = new int[mesh.NodeCount];
         _ofBody = new int[bodies.Count];
@@ -129,6 +131,9 @@ public sealed class UnknownMap
         IsChangeable = [.. changeable];
     }
 
+    /// <summary>Whether rotations of rigid bodies are finite.</summary>
+    public bool Turns { get; }
+
     /// <summary>Number of unknowns.</summary>
     public int Count => VertexOfUnknown.Length;
 
@@ -178,8 +183,21 @@ public sealed class UnknownMap
         if (body < 0)
             return (unknowns[_ofNode[node]], unknowns[_ofNode[node] + 1]);
         int first = _ofBody[body];
-        double rotation = unknowns[first + 2];
-        return (unknowns[first] - rotation * (_mesh.Y[node] - _bodies[body].PinY), unknowns[first + 1] + rotation * (_mesh.X[node] - _bodies[body].PinX));
+        double rotation = unknowns[first + 2], armX = _mesh.X[node] - _bodies[body].PinX, armY = _mesh.Y[node] - _bodies[body].PinY;
+        if (!Turns)
+            return (unknowns[first] - rotation * armY, unknowns[first + 1] + rotation * armX);
+        (double x, double y) = Turned(armX, armY, rotation);
+        return (unknowns[first] + x, unknowns[first + 1] + y);
+    }
+
+    /// <summary>Displacement of the end of an arm that turns about its start by a finite angle [mm].</summary>
+    /// <param name="armX">Arm along x [mm].</param>
+    /// <param name="armY">Arm along y [mm].</param>
+    /// <param name="angle">Angle, counter-clockwise [rad].</param>
+    internal static (double X, double Y) Turned(double armX, double armY, double angle)
+    {
+        double sine = Math.Sin(angle), half = Math.Sin(0.5 * angle), less = 2 * half * half;
+        return (-less * armX - sine * armY, sine * armX - less * armY);
     }
 
     /// <summary>Says in words what an unknown is, for messages: adherend, place, direction.</summary>

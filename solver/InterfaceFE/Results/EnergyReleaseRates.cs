@@ -9,11 +9,12 @@ namespace InterfaceFE.Results;
 /// <summary>
 /// Energy release rate of a front in two independent ways besides the law's own work, each null where it is not valid, with the reason.
 /// <para>
-/// By path (Rice 1968): sections through both adherends behind and ahead of the front, and the law's energy density where the section ahead cuts the bond, so that it is the
+/// By path (Rice 1968; with finite rotation in Eshelby's form, over sections before deformation): sections through both adherends behind and ahead of the front, and the law's energy density where the section ahead cuts the bond, so that it is the
 /// whole J at the starter tip. Valid where both adherends are straight rectangles along x, no grip and no other joint touches them between the sections.
 /// </para>
 /// <para>
-/// By rotation (Paris and Paris 1988; Olsson and Stigh 1989): J = -(1/b)·sum of Fy·θ over all grips, in the linear kinematics of small rotation. A rigid grip behind the
+/// By rotation (Paris and Paris 1988; Olsson and Stigh 1989): J = -(1/b)·sum of Fy·θ over all grips, in the linear kinematics of small rotation; with finite rotation
+/// J = (1/b)·sum of Fx·(1 - cos θ) - Fy·sin θ, and no value with a rigid grip behind the front. At small rotation a rigid grip behind the
 /// front is cut off with a piece of its arm as long as the arm is thick: θ is that of the section there, and a beam's M²/(2·b·E'I) + 2·V²/(5·b·G·A) of its moment and shear force
 /// is added. Valid with one joint of straight adherends at constant temperature.
 /// </para>
@@ -63,8 +64,8 @@ public sealed class EnergyReleaseRates
         double j = 0;
         foreach (SolidBlock solid in (ReadOnlySpan<SolidBlock>)[_upper, _lower])
         {
-            double? behind = SectionIntegral.Mean(solid, _behindFrom, _behindTo, ux, uy, temperature, _model.StressFreeTemperature, outOfPlane);
-            double? ahead = SectionIntegral.Mean(solid, _aheadFrom, _aheadTo, ux, uy, temperature, _model.StressFreeTemperature, outOfPlane);
+            double? behind = SectionIntegral.Mean(solid, _behindFrom, _behindTo, ux, uy, temperature, outOfPlane);
+            double? ahead = SectionIntegral.Mean(solid, _aheadFrom, _aheadTo, ux, uy, temperature, outOfPlane);
             if (behind is null || ahead is null)
                 return null;
             j += (behind.Value - ahead.Value) * solid.Adherend.Width / _joint.Width;
@@ -81,7 +82,7 @@ public sealed class EnergyReleaseRates
         for (int g = 0; g < _model.Grips.Count; g++)
         {
             GripBody body = _model.Unknowns.Bodies[_model.Grips[g].Bodies[0]];
-            if (body.Rigid && IsBehind(body))
+            if (body.Rigid && IsBehind(body) && !_model.Unknowns.Turns)
             {
                 sum += CutBehind(body, readings[g], ux);
                 continue;
@@ -91,7 +92,13 @@ public sealed class EnergyReleaseRates
                 double? slope = readings[g].Rotation ?? Slope(body, ux, uy);
                 if (slope is null)
                     return null;
-                sum -= readings[g].ForceY * slope.Value;
+                sum -= readings[g].ForceY * (_model.Unknowns.Turns ? Math.Sin(slope.Value) : slope.Value);
+            }
+            if (_model.Unknowns.Turns && Math.Abs(readings[g].ForceX) > 0)
+            {
+                if ((readings[g].Rotation ?? Slope(body, ux, uy)) is not { } slope)
+                    return null;
+                sum += readings[g].ForceX * (1 - Math.Cos(slope));
             }
             if (readings[g].Moment is { } moment && IsEndFace(body))
                 sum -= _front.Sense * moment * moment / (2 * Bending(BlockOf(body.Nodes[0])));
@@ -166,7 +173,7 @@ public sealed class EnergyReleaseRates
             if (x < _aheadFrom || x > _aheadTo)
                 continue;
             LayerResponse r = sample.Response[i];
-            sum += sample.Length[i] * (r.Stored + r.Dissipated);
+            sum += sample.Length[i] * (r.Stored + r.Dissipated - sample.CoupleFlow[i]);
             length += sample.Length[i];
         }
         return length > 0 ? sum / length : 0;
@@ -178,6 +185,8 @@ public sealed class EnergyReleaseRates
         behind = ahead = tip;
         if (!_upper.Adherend.StraightAlongX || !_lower.Adherend.StraightAlongX)
             return "an adherend is bent";
+        if (IsPressed)
+            return "pressure acts on an adherend";
         double left = Math.Max(Extent(_upper, mesh).From, Extent(_lower, mesh).From), right = Math.Min(Extent(_upper, mesh).To, Extent(_lower, mesh).To);
         double offset = mesh.X[_joint.LowerNodes[0]] - _joint.Position[0];
         double end = _front.StretchEnd + offset;
@@ -224,12 +233,18 @@ public sealed class EnergyReleaseRates
             return "an adherend is bent";
         if (_upper.Adherend.PlyOfRow.Count > 0 || _lower.Adherend.PlyOfRow.Count > 0)
             return "an adherend has plies";
+        if (IsPressed)
+            return "pressure acts on an adherend";
         if (_model.Solids.Count != 2)
             return "there are further adherends";
         if (_model.Unknowns.Bodies.Any(body => Spans(body, tip)))
             return "a rigid grip reaches over the front";
+        if (_model.Unknowns.Turns && _model.Unknowns.Bodies.Any(body => body.Rigid && IsBehind(body) && !IsEndFace(body)))
+            return "a rigid grip lies behind the front, and rotations are finite";
         return Math.Abs(_front.StarterTip - (_front.Sense > 0 ? _joint.Position[0] : _joint.Position[^1])) > 0 || PathReason is null ? null : $"no crack lies behind the front at x = {tip.ToString("G6", System.Globalization.CultureInfo.InvariantCulture)} mm";
     }
+
+    private bool IsPressed => _model.Pressures.Any(p => p.Adherend == _joint.UpperAdherend || p.Adherend == _joint.LowerAdherend);
 
     private bool Spans(GripBody body, double tip) => body.Rigid && body.Nodes.Min(n => _model.Mesh.X[n]) < tip && body.Nodes.Max(n => _model.Mesh.X[n]) > tip;
 
@@ -249,10 +264,14 @@ public sealed class EnergyReleaseRates
             int before = edge.Nodes[at - reach], after = edge.Nodes[at + reach];
             if (Math.Abs(mesh.X[after] - mesh.X[before]) < Math.Abs(mesh.Y[after] - mesh.Y[before]))
                 continue;
-            return (uy[after] - uy[before]) / (mesh.X[after] - mesh.X[before]);
+            return _model.Unknowns.Turns
+                ? Angle(mesh.X[after] - mesh.X[before], mesh.Y[after] - mesh.Y[before], ux[after] - ux[before], uy[after] - uy[before])
+                : (uy[after] - uy[before]) / (mesh.X[after] - mesh.X[before]);
         }
         return null;
     }
+
+    private static double Angle(double x, double y, double moveX, double moveY) => Math.Atan2(x * (y + moveY) - y * (x + moveX), x * (x + moveX) + y * (y + moveY));
 
     private SolidBlock BlockOf(int node) => _model.Solids.First(s => Belongs(s, node));
 

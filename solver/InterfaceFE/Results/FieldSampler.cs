@@ -12,6 +12,7 @@ public sealed class FieldSampler
     private readonly double[] _share;
     private readonly double[][] _stress = new double[4][];
     private readonly bool[] _atGrip;
+    private readonly LayerBlock?[] _openFaces;
 
     /// <summary>Prepares the averaging at nodes.</summary>
     public FieldSampler(SpecimenModel model)
@@ -30,6 +31,7 @@ public sealed class FieldSampler
             foreach (int node in solid.Adherend.Connectivity)
                 _share[node]++;
         _atGrip = NearGrips(model);
+        _openFaces = [.. model.Layers.Select(layer => model.OpenFaces.FirstOrDefault(faces => faces.Name == layer.Name))];
     }
 
     /// <summary>Displacement of each node along x [mm].</summary>
@@ -80,7 +82,7 @@ public sealed class FieldSampler
                 solid.Stresses(e, native[..solid.NativeCount], equilibrium.AcceptedTemperature, state, gauss);
                 solid.Gradients(e, native[..(2 * n)], gradients);
                 for (int p = 0; p < 4; p++)
-                    LargestRotation = Math.Max(LargestRotation, 0.5 * Math.Abs(gradients[4 * p + 2] - gradients[4 * p + 1]));
+                    LargestRotation = Math.Max(LargestRotation, Math.Abs(solid.Rotation(gradients.Slice(4 * p, 4))));
                 solid.ExtrapolateToNodes(4, gauss, nodal[..(4 * n)]);
                 for (int i = 0; i < n; i++)
                     for (int c = 0; c < 4; c++)
@@ -154,19 +156,18 @@ public sealed class FieldSampler
             Damage = new double[count],
         };
         Array.Fill(field.Damage, 1);
+        Span<double> native = stackalloc double[4 * stations];
         for (int e = 0, bonded = 0; e < mesh.ElementCount; e++)
         {
-            int start = mesh.LowerNodes[e * stations], end = mesh.LowerNodes[(e + 1) * stations - 1];
-            double length = mesh.Position[e + 1] - mesh.Position[e];
-            double tangentX = (_model.Mesh.X[end] - _model.Mesh.X[start]) / length, tangentY = (_model.Mesh.Y[end] - _model.Mesh.Y[start]) / length;
+            LayerBlock block = mesh.Bonded[e] ? sample.Layer : _openFaces[joint]!;
+            int own = mesh.Bonded[e] ? bonded : e - bonded;
+            LayerSample.Gather(block.Nodes(own), DisplacementX, DisplacementY, native);
             for (int s = 0; s < stations; s++)
             {
                 int i = e * stations + s;
                 field.Position[i] = mesh.Position[e] + (mesh.Position[e + 1] - mesh.Position[e]) * s / (stations - 1);
-                int lower = mesh.LowerNodes[i], upper = mesh.UpperNodes[i];
-                double jumpX = DisplacementX[upper] - DisplacementX[lower], jumpY = DisplacementY[upper] - DisplacementY[lower];
-                field.Opening[i] = jumpY * tangentX - jumpX * tangentY;
-                field.Sliding[i] = jumpX * tangentX + jumpY * tangentY;
+                Separation jump = block.AtStation(own, s, native);
+                (field.Opening[i], field.Sliding[i]) = (jump.Opening, jump.Sliding);
             }
             if (!mesh.Bonded[e])
                 continue;

@@ -3,10 +3,14 @@ using InterfaceFE.Geometry;
 
 namespace InterfaceFE.Results;
 
-/// <summary>Reads the virtual gauges of a deck. Small rotation: a clip gauge reads the change of distance along the line of its undeformed points.</summary>
+/// <summary>
+/// Reads the virtual gauges of a deck. At small rotation a clip gauge reads the change of distance along the line of its undeformed points; with finite rotation the change of the
+/// distance itself, and an inclinometer the angle.
+/// </summary>
 public sealed class GaugeReader
 {
     private readonly Mesh _mesh;
+    private readonly bool _turns;
     private readonly List<(GaugeKind Kind, int A, int B)> _gauges = [];
 
     /// <summary>Finds the nodes of the gauges.</summary>
@@ -14,6 +18,7 @@ public sealed class GaugeReader
     public GaugeReader(Deck deck, Mesh mesh)
     {
         _mesh = mesh;
+        _turns = deck.Model.Rotation == RotationSetting.Finite;
         var finder = new EdgeFinder(mesh);
         var infos = new List<GaugeInfo>();
         foreach ((string name, GaugeDeck gauge) in deck.Keep?.Gauges ?? new Dictionary<string, GaugeDeck>())
@@ -50,6 +55,13 @@ public sealed class GaugeReader
             (GaugeKind kind, int a, int b) = _gauges[i];
             double dx = _mesh.X[b] - _mesh.X[a], dy = _mesh.Y[b] - _mesh.Y[a], length = Math.Sqrt(dx * dx + dy * dy);
             double along, across;
+            if (_turns)
+            {
+                double nowX = dx + ux[b] - ux[a], nowY = dy + uy[b] - uy[a];
+                along = Math.Sqrt(nowX * nowX + nowY * nowY) - length;
+                readings[i] = kind switch { GaugeKind.ClipGauge => along, GaugeKind.Inclinometer => Math.Atan2(dx * nowY - dy * nowX, dx * nowX + dy * nowY), _ => along / length };
+                continue;
+            }
             if (length > 0)
             {
                 along = ((ux[b] - ux[a]) * dx + (uy[b] - uy[a]) * dy) / length;

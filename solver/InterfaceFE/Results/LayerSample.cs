@@ -24,6 +24,7 @@ public sealed class LayerSample
         Length = new double[Position.Length];
         Separation = new Separation[Position.Length];
         Response = new LayerResponse[Position.Length];
+        CoupleFlow = new double[Position.Length];
         var at = new PathPoint(equilibrium.AcceptedProgress, equilibrium.AcceptedTemperature, 0, 0);
         Span<double> native = stackalloc double[2 * layer.NodesPerElement];
         for (int e = 0; e < layer.Count; e++)
@@ -34,6 +35,11 @@ public sealed class LayerSample
             {
                 Position[e * points + p] = layer.Position(e, p);
                 Length[e * points + p] = layer.PointLength(e, p);
+                if (layer.Stance(e, p, native) is not { } stance)
+                    continue;
+                CoupleFlow[e * points + p] = stance.CoupleFlow(Response[e * points + p]);
+                if (Response[e * points + p].Damage is > 0 and < 1)
+                    LargestFaceAngle = Math.Max(LargestFaceAngle, Math.Abs(stance.FaceAngle));
             }
         }
     }
@@ -52,6 +58,12 @@ public sealed class LayerSample
 
     /// <summary>Answer of the law.</summary>
     public LayerResponse[] Response { get; }
+
+    /// <summary>Flow of energy by the layer's couple through a cut at each point [N/mm]; 0 at small rotation and zero thickness.</summary>
+    public double[] CoupleFlow { get; }
+
+    /// <summary>Largest angle between the two faces where damage is under way [rad]; 0 at small rotation and zero thickness.</summary>
+    public double LargestFaceAngle { get; }
 
     /// <summary>Magnitude of the traction, closing not counted [MPa].</summary>
     public double Traction(int point) => Math.Sqrt(Math.Pow(Math.Max(Response[point].Peel, 0), 2) + Math.Pow(Response[point].Shear, 2));

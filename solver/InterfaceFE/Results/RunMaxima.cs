@@ -10,7 +10,7 @@ public sealed class RunMaxima
 {
     private readonly SpecimenModel _model;
     private readonly IReadOnlyList<bool> _leftOut;
-    private readonly double[] _opening, _sliding, _damage, _peel, _shear, _separated, _zone, _closing, _stress;
+    private readonly double[] _opening, _sliding, _damage, _peel, _shear, _separated, _zone, _closing, _stress, _faceAngle;
     private readonly int[] _stressNode, _stressPoint;
     private readonly double[] _plastic, _plasticAnywhere;
     private readonly bool[] _yieldedAtGrip;
@@ -31,6 +31,7 @@ public sealed class RunMaxima
         _separated = new double[joints];
         _zone = new double[joints];
         _closing = new double[joints];
+        _faceAngle = new double[joints];
         _stress = new double[adherends];
         _stressNode = new int[adherends];
         _stressPoint = new int[adherends];
@@ -41,6 +42,9 @@ public sealed class RunMaxima
 
     /// <summary>First damage; null while none.</summary>
     public EventSummary? FirstDamage { get; private set; }
+
+    /// <summary>Largest angle between the faces of a joint where damage was under way [rad].</summary>
+    public double FaceAngle(int joint) => _faceAngle[joint];
 
     /// <summary>First yield away from grips; null while none.</summary>
     public EventSummary? FirstYield { get; private set; }
@@ -69,6 +73,7 @@ public sealed class RunMaxima
         for (int j = 0; j < samples.Length; j++)
         {
             TakeJoint(j, point, samples[j]);
+            _faceAngle[j] = Math.Max(_faceAngle[j], samples[j].LargestFaceAngle);
             foreach (BondFront front in fronts[j])
                 if (front.ZoneStart is { } start && front.CrackTip != front.StarterTip && !front.RunThrough)
                     _zone[j] = Math.Max(_zone[j], Math.Abs(start - front.CrackTip));

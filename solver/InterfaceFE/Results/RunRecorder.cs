@@ -8,6 +8,9 @@ namespace InterfaceFE.Results;
 /// <summary>Watches a march and makes its records: points, fronts, energies, iterations, fields, maxima.</summary>
 public sealed class RunRecorder : IMarchObserver
 {
+    /// <summary>Angle between faces from which the choice of the frame is worth a remark: 3 degrees, a mode mix of some 3 % of a shear traction.</summary>
+    private const double NoticeableFaceAngle = 0.05;
+
     private readonly SpecimenModel _model;
     private readonly FullEquilibrium _equilibrium;
     private readonly RunHistory _history;
@@ -60,6 +63,10 @@ public sealed class RunRecorder : IMarchObserver
                 yield return $"no {what} at {string.Join(", ", group.Select(f => f.Where))}: {group.Key}";
         }
         yield return "J path is left empty once the process zone has come within two thicknesses of the section ahead of it";
+        for (int joint = 0; joint < _model.Layers.Count; joint++)
+            if (_maxima.FaceAngle(joint) > NoticeableFaceAngle)
+                yield return string.Create(System.Globalization.CultureInfo.InvariantCulture,
+                    $"opening, sliding and mode mix of {_model.Layers[joint].Name} depend on the line that they are counted along (`frame`): where damage was under way its faces stood up to {_maxima.FaceAngle(joint) * 180 / Math.PI:G3} degrees apart");
         if (_temperatureChanged)
             yield return "J rotation and J under law are left empty once the temperature has changed: they hold at constant temperature only";
         string[] yielded = [.. Named(_maxima.HasYielded)], beyond = [.. Named(_maxima.BeyondCurve)], atGrip = [.. Named(_maxima.YieldedAtGrip)];

@@ -95,7 +95,8 @@ public static class SummaryMaker
         var verdict = Verdict.NumbersHold;
         Grade(check.Balance, GoodBalance, PoorBalance, "forces are not in balance: balance");
         Grade(check.PathError, GoodPathError, PoorPathError, "strides are long for the path: path error");
-        Grade(check.LargestRotationDegrees, GoodRotation, PoorRotation, "rotations are large for `rotation: small`: largest rotation in degrees");
+        if (!model.Unknowns.Turns)
+            Grade(check.LargestRotationDegrees, GoodRotation, PoorRotation, "rotations are large for `rotation: small`: largest rotation in degrees");
         if (check.JDisagreement is { } j)
             Grade(j, GoodJ, PoorJ, "energy release rates by independent formulas disagree: relative difference");
         foreach (MeshedJoint joint in model.Mesh.Joints)

@@ -202,11 +202,26 @@ public class JointMeshTests
     public void Faces_apart_are_refused_with_the_gap_and_the_layer_thickness_is_recognised()
     {
         Deck Apart(double gap) => Deck(new() { ["a"] = Rectangle(0, 0, 100, 4), ["b"] = Rectangle(0, 4 + gap, 100, 4) }, new() { ["j"] = Joint("bottom of b", "top of a") });
-        MeshFacts.Refused(Apart(1.1), "joints.j", "the layer's thickness apart", "must coincide in this version", "down by 1.1 mm");
+        MeshFacts.Refused(Apart(1.1), "joints.j", "the layer's thickness apart", "`drawn: true thickness`", "down by 1.1 mm");
         MeshFacts.Refused(Apart(0.3), "joints.j", "must coincide", "down by 0.3 mm");
         MeshFacts.Refused(Apart(-1), "joints.j", "1 mm below");
         MeshFacts.Check(Apart(1e-6));
         MeshFacts.Refused(Apart(1e-5), "joints.j", "must coincide");
+    }
+
+    [Fact]
+    public void A_layer_drawn_at_true_thickness_keeps_its_faces_that_far_apart()
+    {
+        Deck Apart(double gap) => Deck(new() { ["a"] = Rectangle(0, 0, 100, 4), ["b"] = Rectangle(0, 4 + gap, 100, 4) },
+            new() { ["j"] = Joint("bottom of b", "top of a") with { Drawn = DrawnThickness.True } });
+        Mesh mesh = Mesher.Build(Apart(1.1)).Mesh;
+        for (int i = 0; i < mesh.Joints[0].LowerNodes.Length; i++)
+        {
+            Assert.Equal(mesh.X[mesh.Joints[0].LowerNodes[i]], mesh.X[mesh.Joints[0].UpperNodes[i]]);
+            Assert.Equal(1.1, mesh.Y[mesh.Joints[0].UpperNodes[i]] - mesh.Y[mesh.Joints[0].LowerNodes[i]], 12);
+        }
+        MeshFacts.Refused(Apart(0), "joints.j", "1.1 mm", "up by 1.1 mm");
+        MeshFacts.Refused(Apart(1.3), "joints.j", "1.1 mm", "down by 0.2 mm");
     }
 
     [Fact]

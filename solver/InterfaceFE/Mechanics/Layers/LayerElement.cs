@@ -35,6 +35,9 @@ public enum LayerBranches
 /// <param name="Branches">Branches met; the tangent is the virgin one when this is <see cref="LayerBranches.Elastic"/> alone.</param>
 public readonly record struct LayerElementSums(double Stored, double Dissipated, double DissipatedByFreeOpening, double LargestDamage, double LeastDamage, LayerBranches Branches)
 {
+    /// <summary>Integral of the peel traction [N]; told by <see cref="TurningLayerElement"/> alone.</summary>
+    public double PeelResultant { get; init; }
+
     /// <summary>Whether damage grows at some point.</summary>
     public bool Growing => (Branches & (LayerBranches.Growing | LayerBranches.Releasing)) != 0;
 

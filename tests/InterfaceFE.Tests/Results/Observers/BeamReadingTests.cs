@@ -176,6 +176,6 @@ public class BeamReadingTests
 
     private sealed record FullSample(SolidBlock Solid, Mesh Mesh, double[] Ux, double[] Uy, double Temperature)
     {
-        public double? Section(double from, double to) => SectionIntegral.Mean(Solid, from, to, Ux, Uy, Temperature, 293.15);
+        public double? Section(double from, double to) => SectionIntegral.Mean(Solid, from, to, Ux, Uy, Temperature);
     }
 }

@@ -23,6 +23,10 @@ internal static class DeckChecks
             JointChecks.Run(deck, joint, $"joints.{name}", context);
         foreach ((string name, GripDeck grip) in Entries(deck.Grips))
             GripChecks.Run(deck, grip, $"grips.{name}", context);
+        if (deck.Model is { Rotation: RotationSetting.Finite, Elements: ElementKind.FourNode })
+            context.Fail("model.elements", "finite rotation needs eight-node elements: leave `elements` out, or use `rotation: small`");
+        if (deck.Model is { Rotation: RotationSetting.Finite, OutOfPlane: OutOfPlane.UniformStrain })
+            context.Fail("model.out of plane", "is built for small rotation only: with `rotation: finite` use `held` or `free`");
         if (deck.Model is { StrainOutOfPlane: not null, OutOfPlane: not OutOfPlane.UniformStrain } && context.IsSound("model.strain out of plane"))
             context.Fail("model.strain out of plane", "applies to `out of plane: uniform strain` only");
         SequenceChecks.Run(deck, context);

@@ -17,6 +17,8 @@ internal static class JointChecks
         CheckEnd(lower, path + ".lower", context);
         CheckWidth(deck, joint, upper, path, context);
         CheckWidth(deck, joint, lower, path, context);
+        if (joint.Frame != FrameLine.MidLine && joint.Drawn == DrawnThickness.Zero && deck.Model is { Rotation: RotationSetting.Small })
+            context.Fail(path + ".frame", "has no effect on a layer of zero thickness at small rotation: leave it out, or use `rotation: finite`");
         if (joint.Unbonded is not { } stretches)
             return;
         for (int i = 0; i < stretches.Count; i++)

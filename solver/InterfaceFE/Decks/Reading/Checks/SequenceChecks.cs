@@ -5,7 +5,7 @@ namespace InterfaceFE.Decks.Reading.Checks;
 /// <summary>The sequence: one verb a stage, what goes with it, names of grips, temperatures that really change, and grips that are held when they are let go.</summary>
 internal sealed class SequenceChecks
 {
-    private static readonly string[] Verbs = ["fix", "let go", "pull", "push", "turn", "cool to", "heat to", "wait"];
+    private static readonly string[] Verbs = ["fix", "let go", "pull", "push", "turn", "press", "cool to", "heat to", "wait"];
     private readonly Deck _deck;
     private readonly ReadContext _context;
     private readonly HashSet<string> _held = new(StringComparer.Ordinal);
@@ -41,14 +41,15 @@ internal sealed class SequenceChecks
         CheckPull(stage.Pull, path + ".pull");
         CheckPull(stage.Push, path + ".push");
         CheckTurn(stage.Turn, path + ".turn");
+        CheckPress(stage.Press, path + ".press");
         CheckTemperature(stage, path);
-        bool byTime = stage.CoolTo is not null || stage.HeatTo is not null || (stage.Pull ?? stage.Push)?.Force is not null || stage.Turn?.Moment is not null;
+        bool byTime = stage.CoolTo is not null || stage.HeatTo is not null || (stage.Pull ?? stage.Push)?.Force is not null || stage.Turn?.Moment is not null || stage.Press is not null;
         if (_context.IsGiven(path + ".over") && !byTime && given.Count > 0)
             _context.Fail(path + ".over", stage switch
             {
                 { Wait: not null } => "does not apply: `wait` itself says how long",
                 { Pull: not null } or { Push: not null } or { Turn: not null } => "does not apply to a movement; its `speed` says how long it takes",
-                _ => $"does not apply to `{given[0]}`; it goes with cooling, heating, a force or a moment",
+                _ => $"does not apply to `{given[0]}`; it goes with cooling, heating, a force, a moment or a pressure",
             });
     }
 
@@ -112,6 +113,14 @@ internal sealed class SequenceChecks
             if (share == 0)
                 _context.Fail(at, "a share of 0 turns nothing; leave the grip out");
         }
+    }
+
+    private void CheckPress(PressDeck? press, string path)
+    {
+        if (press?.On is not { } edges)
+            return;
+        for (int i = 0; i < edges.Count; i++)
+            DeckChecks.Edge(edges[i], _deck, _context.IsGiven(ReadContext.Join(path + ".on", i + 1)) ? ReadContext.Join(path + ".on", i + 1) : path + ".on", _context);
     }
 
     /// <summary>The grip, when it exists and can be moved; it counts as held from then on.</summary>
