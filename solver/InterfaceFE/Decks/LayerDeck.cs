@@ -93,6 +93,10 @@ public enum CurveShape
     [Word("exponential", "linear rise, exponential fall that ends at the final separation; needs stiffness, strength, toughness, final separation")]
     Exponential,
 
+    /// <summary>Linear rise, parabolic fall.</summary>
+    [Word("linear-parabolic", "linear rise to the strength, then a parabola that starts level at the strength and ends at zero; needs stiffness, strength, toughness")]
+    LinearParabolic,
+
     /// <summary>Points joined by straight lines.</summary>
     [Word("table", "points joined by straight lines, from [0, 0] to traction 0; needs opening or sliding, and traction")]
     Table,
@@ -100,7 +104,6 @@ public enum CurveShape
 
 /// <summary>A curve of traction against separation of one mode.</summary>
 [Block("A curve of traction against separation of one mode.")]
-[NotBuiltYet("law", "linear-parabolic")]
 public sealed record CurveDeck
 {
     /// <summary>Shape.</summary>

@@ -52,6 +52,8 @@ public readonly record struct CurveNumbers(double Strength, double Toughness, do
             // Area strength/2·(final + plateau end - elastic limit); without a plateau end that end is two thirds of the final separation.
             CurveShape.Trapezoid when curve.PlateauUntil is { } plateau => 2 * toughness / strength - plateau + elastic,
             CurveShape.Trapezoid => 0.6 * (2 * toughness / strength + elastic),
+            // Area of the rise and of the parabola with its top at the strength: strength·elastic limit/2 + 2/3·strength·(final - elastic limit).
+            CurveShape.LinearParabolic => 1.5 * toughness / strength + 0.25 * elastic,
             _ => curve.FinalSeparation ?? throw Missing(path, "final separation", curve),
         };
         if (!(final > elastic) || !double.IsFinite(final))

@@ -49,6 +49,7 @@ public static class LayerLawFactory
             {
                 CurveShape.Bilinear => new BilinearCurve(stiffness, strength, toughness),
                 CurveShape.Trapezoid => new TrapezoidCurve(stiffness, strength, toughness, curve.PlateauUntil ?? double.NaN, curve.FinalSeparation ?? double.NaN),
+                CurveShape.LinearParabolic => new LinearParabolicCurve(stiffness, strength, toughness),
                 _ => new ExponentialCurve(stiffness, strength, toughness, curve.FinalSeparation ?? throw new DeckException($"{path}.final separation", "is needed by an exponential curve")),
             };
         }

@@ -83,17 +83,19 @@ internal static class Laws
     public static readonly BilinearCurve ShearLine = new(8, 4, 2.2);
     public static readonly TrapezoidCurve Plateau = new(1.5, 0.45, 2.0);
     public static readonly ExponentialCurve Decaying = new(10, 2, 1.1, 3);
+    public static readonly LinearParabolicCurve Parabola = new(6, 1.5, 1.4);
     public static readonly TableCurve Tape = new([0, 0.3, 4, 7], [0, 0.42, 0.5, 0]);
 
     public static IEnumerable<ITractionCurve> Curves =>
     [
-        PeelLine, ShearLine, Plateau, Decaying, new ExponentialCurve(10, 2, 3.9, 3), new ExponentialCurve(10, 2, 3.0, 3), Tape,
+        PeelLine, ShearLine, Plateau, Decaying, Parabola, new ExponentialCurve(10, 2, 3.9, 3), new ExponentialCurve(10, 2, 3.0, 3), Tape,
         new TrapezoidCurve(2.5, 0.5, 2, 3.2, 5), new TableCurve([0, 0.1, 0.2, 0.5, 3], [0, 1, 2, 1, 0]),
     ];
 
     public static IEnumerable<IndependentModesLaw> Independent =>
     [
         new(PeelLine, ShearLine, 30), new(PeelLine, ShearLine, 30, 0.1, EnergyCounting.NetWork), new(Tape, Plateau, 2), new(Decaying, Tape, 10, 0.02, EnergyCounting.NetWork), new(Decaying, PeelLine, 10, 0.01),
+        new(Parabola, Plateau, 6, 0.05, EnergyCounting.NetWork),
     ];
 
     public static IEnumerable<BenzeggaghKenaneLaw> OneDamage => [new(PeelLine, ShearLine, 2.1, 30), new(PeelLine, ShearLine, 0.6, 30), new(ShearLine, PeelLine, 1, 5)];

@@ -39,10 +39,11 @@ public sealed class PureModeTests
     {
         foreach (ILayerLaw law in Laws.All)
         {
-            foreach (double size in new[] { 1.0000001, 10, 1e8, 1e150, 1e300 })
+            // A curve that falls ever steeper gives way a little beyond its final separation, by less than the release length times its last share of length.
+            foreach (double size in new[] { 1.001, 10, 1e8, 1e150, 1e300 })
             {
-                Close.To(law.PeelToughness, new LawWalk(law).To(size * law.FinalOpening, 0).Answer.Dissipated, 1e-12, 0, law.GetType().Name);
-                Close.To(law.ShearToughness, new LawWalk(law).To(0, -size * law.FinalSliding).Answer.Dissipated, 1e-12, 0, law.GetType().Name);
+                Close.To(law.PeelToughness, new LawWalk(law).To(size * law.FinalOpening, 0).Answer.Dissipated, 1e-12, 0, $"{law.GetType().Name} {size}");
+                Close.To(law.ShearToughness, new LawWalk(law).To(0, -size * law.FinalSliding).Answer.Dissipated, 1e-12, 0, $"{law.GetType().Name} {size}");
             }
         }
     }

@@ -30,6 +30,7 @@ internal sealed class CurveChecks(CurveDeck curve, LayerDeck layer, string layer
         {
             CurveShape.Bilinear => CheckBilinear(s, g, limit, stiffness),
             CurveShape.Trapezoid => CheckTrapezoid(s, g, limit, stiffness),
+            CurveShape.LinearParabolic => CheckParabola(s, g, limit, stiffness),
             _ => CheckExponential(s, g, limit, stiffness, final ?? double.NaN),
         };
     }
@@ -94,6 +95,15 @@ internal sealed class CurveChecks(CurveDeck curve, LayerDeck layer, string layer
         double final = 2 * toughness / strength;
         if (final <= limit * (1 + RoundOff))
             FailShape($"the final separation 2·toughness/strength = {Length(final)} must exceed the elastic limit strength/stiffness = {Length(limit)}; raise toughness or stiffness, or lower strength");
+        return new CurveFigures(stiffness, strength, toughness, limit, limit, final, 0.5 * strength * limit);
+    }
+
+    private CurveFigures CheckParabola(double strength, double toughness, double limit, double stiffness)
+    {
+        // Area of the rise and of the parabola: strength·limit/2 + 2/3·strength·(final - limit).
+        double final = 1.5 * toughness / strength + 0.25 * limit;
+        if (final <= limit * (1 + RoundOff))
+            FailShape($"is no more than the area {Energy(0.5 * strength * limit)} of the linear rise, strength²/(2·stiffness): nothing is left for the parabola; raise toughness or stiffness, or lower strength");
         return new CurveFigures(stiffness, strength, toughness, limit, limit, final, 0.5 * strength * limit);
     }
 
