@@ -12,6 +12,10 @@ public enum Mixing
     /// <summary>One damage variable, toughness by Benzeggagh and Kenane 1996.</summary>
     [Word("benzeggagh-kenane", "one damage variable; toughness rises from peel to shear with the given exponent; bilinear curves only")]
     BenzeggaghKenane,
+
+    /// <summary>One damage variable, toughness by the power law of the energy shares.</summary>
+    [Word("power law", "one damage variable; fracture where (G_I/toughness_I)^exponent + (G_II/toughness_II)^exponent = 1; bilinear curves only")]
+    PowerLaw,
 }
 
 /// <summary>How the energy share of a mode is counted in the energy criterion.</summary>
@@ -28,7 +32,6 @@ public enum EnergyCount
 
 /// <summary>A bonding layer.</summary>
 [Block("A bonding layer: thickness, one curve of traction against separation for peel and one for shear, and how they mix.")]
-[NotBuiltYet("mixing", "power law")]
 [NotBuiltYet("mixing", "coupled potential")]
 [NotBuiltYet("relaxation")]
 public sealed record LayerDeck
@@ -49,8 +52,8 @@ public sealed record LayerDeck
     [Key("mixing", "How peel and shear share the fracture.")]
     public required Mixing Mixing { get; init; }
 
-    /// <summary>Exponent of Benzeggagh and Kenane.</summary>
-    [Key("exponent", "Exponent of Benzeggagh and Kenane; needed with that mixing.", Example = "2.1", AtLeast = 0.1, AtMost = 20)]
+    /// <summary>Exponent of Benzeggagh and Kenane or of the power law.</summary>
+    [Key("exponent", "Exponent of Benzeggagh and Kenane or of the power law (there at least 0.5); needed with these.", Example = "2.1", AtLeast = 0.1, AtMost = 20)]
     public double? Exponent { get; init; }
 
     /// <summary>Energy count of the criterion.</summary>

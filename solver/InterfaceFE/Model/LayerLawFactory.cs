@@ -16,15 +16,20 @@ public static class LayerLawFactory
         double contact = layer.ContactStiffness ?? peel.Stiffness;
         try
         {
-            return layer.Mixing == Mixing.BenzeggaghKenane
-                ? new BenzeggaghKenaneLaw((BilinearCurve)peel, (BilinearCurve)shear, layer.Exponent ?? throw new DeckException($"layers.{name}.exponent", "is needed with benzeggagh-kenane"), contact)
-                : new IndependentModesLaw(peel, shear, contact, layer.ReleaseLength, layer.CountedBy == EnergyCount.NetWork ? EnergyCounting.NetWork : EnergyCounting.LargestSeparation);
+            return layer.Mixing switch
+            {
+                Mixing.BenzeggaghKenane => new BenzeggaghKenaneLaw((BilinearCurve)peel, (BilinearCurve)shear, Exponent(name, layer), contact),
+                Mixing.PowerLaw => new PowerLaw((BilinearCurve)peel, (BilinearCurve)shear, Exponent(name, layer), contact),
+                _ => new IndependentModesLaw(peel, shear, contact, layer.ReleaseLength, layer.CountedBy == EnergyCount.NetWork ? EnergyCounting.NetWork : EnergyCounting.LargestSeparation),
+            };
         }
         catch (ArgumentException fault)
         {
             throw new DeckException($"layers.{name}", fault.Message);
         }
     }
+
+    private static double Exponent(string name, LayerDeck layer) => layer.Exponent ?? throw new DeckException($"layers.{name}.exponent", "is needed with this mixing");
 
     /// <summary>Stiffness and free opening of a layer from its bulk properties; null when none are given.</summary>
     public static ConfinedStiffness? Bulk(LayerDeck layer, OutOfPlane outOfPlane)

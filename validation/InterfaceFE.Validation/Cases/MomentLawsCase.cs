@@ -33,6 +33,13 @@ public sealed class MomentLawsCase : ICase
                 shear: {law: linear-parabolic, stiffness: 4000 MPa/mm, strength: 30 MPa, toughness: 1.5 kJ/m^2}
                 mixing: independent modes
                 """),
+            ("power law", 0.6, """
+                thickness: 0.25 mm
+                peel: {law: bilinear, stiffness: 12000 MPa/mm, strength: 38 MPa, toughness: 0.6 kJ/m^2}
+                shear: {law: bilinear, stiffness: 4000 MPa/mm, strength: 30 MPa, toughness: 1.5 kJ/m^2}
+                mixing: power law
+                exponent: 1.4
+                """),
         ];
         foreach ((string name, double toughness, string layer) in laws)
         {

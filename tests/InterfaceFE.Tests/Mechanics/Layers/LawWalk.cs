@@ -98,7 +98,14 @@ internal static class Laws
         new(Parabola, Plateau, 6, 0.05, EnergyCounting.NetWork),
     ];
 
-    public static IEnumerable<BenzeggaghKenaneLaw> OneDamage => [new(PeelLine, ShearLine, 2.1, 30), new(PeelLine, ShearLine, 0.6, 30), new(ShearLine, PeelLine, 1, 5)];
+    public static IEnumerable<OneDamageLaw> OneDamage =>
+    [
+        new BenzeggaghKenaneLaw(PeelLine, ShearLine, 2.1, 30), new BenzeggaghKenaneLaw(PeelLine, ShearLine, 0.6, 30), new BenzeggaghKenaneLaw(ShearLine, PeelLine, 1, 5),
+        new PowerLaw(PeelLine, ShearLine, 1, 30), new PowerLaw(ShearLine, PeelLine, 1.7, 5), new PowerLaw(PeelLine, ShearLine, 0.7, 30),
+    ];
+
+    /// <summary>Whether surfaces of equal damage of a law are not convex, by its place in <see cref="All"/>.</summary>
+    public static bool HasBentSurfaces(int index) => index == Independent.Count() + 1;
 
     public static IEnumerable<ILayerLaw> All => [.. Independent, .. OneDamage];
 }

@@ -64,7 +64,7 @@ public sealed class PureModeTests
                 Close.To(curve.Traction(end), once.Peel, 1e-14);
             }
         }
-        foreach (BenzeggaghKenaneLaw law in Laws.OneDamage)
+        foreach (OneDamageLaw law in Laws.OneDamage)
         {
             BilinearCurve peel = new(law.Stiffness.Peel, Strength(law), law.PeelToughness);
             for (int i = 0; i < 200; i++)
@@ -76,7 +76,7 @@ public sealed class PureModeTests
             }
         }
 
-        static double Strength(BenzeggaghKenaneLaw law) => 2 * law.PeelToughness / law.FinalOpening;
+        static double Strength(OneDamageLaw law) => 2 * law.PeelToughness / law.FinalOpening;
     }
 
     [Fact]

@@ -32,7 +32,7 @@ public sealed class TangentTests
             }
             TestContext.Current.TestOutputHelper?.WriteLine($"{law.GetType().Name}: {tried} points, {crossing} crossing strides, {string.Join(", ", met)}");
             Assert.True(met.GetValueOrDefault(LawBranch.Growing) > 50 && met.GetValueOrDefault(LawBranch.Separated) > 20);
-            Assert.True(law is BenzeggaghKenaneLaw || (crossing > 20 && met[LawBranch.Releasing] > 20));
+            Assert.True(law is OneDamageLaw || (crossing > 20 && met[LawBranch.Releasing] > 20));
         }
     }
 

@@ -6,6 +6,8 @@ namespace InterfaceFE.Decks.Reading.Checks;
 /// <summary>A layer: its two curves, how they mix, and whether its numbers are plausible.</summary>
 internal static class LayerChecks
 {
+    private const double LeastPower = 0.5;
+
     /// <summary>Peel stiffness of a layer of this bulk [MPa/mm]: confined E(1-nu)/((1+nu)(1-2nu))/t, unconfined E/t.</summary>
     public static double PeelStiffness(BulkDeck bulk, double thickness)
     {
@@ -35,7 +37,7 @@ internal static class LayerChecks
     private static void CheckIndependentModes(LayerDeck layer, CurveFigures peel, CurveFigures shear, string path, ReadContext context)
     {
         if (context.IsGiven(path + ".exponent"))
-            context.Fail(path + ".exponent", "does not apply to independent modes; it belongs to benzeggagh-kenane");
+            context.Fail(path + ".exponent", "does not apply to independent modes; it belongs to benzeggagh-kenane and the power law");
         CheckRelease(layer, peel, "peel", path, context);
         CheckRelease(layer, shear, "shear", path, context);
     }
@@ -55,13 +57,16 @@ internal static class LayerChecks
 
     private static void CheckSingleDamage(LayerDeck layer, string path, ReadContext context)
     {
+        string word = DeckShape.WordsOf(typeof(Mixing)).First(w => w.Value.Equals(layer.Mixing)).Text;
         if (!context.IsGiven(path + ".exponent"))
-            context.FailAt(context.Find(path, out _).Key, path + ".exponent", "is missing; benzeggagh-kenane needs it, for example exponent: 2.1");
+            context.FailAt(context.Find(path, out _).Key, path + ".exponent", $"is missing; {word} needs it, for example exponent: {(layer.Mixing == Mixing.PowerLaw ? "1" : "2.1")}");
+        else if (layer.Mixing == Mixing.PowerLaw && layer.Exponent < LeastPower)
+            context.Fail(path + ".exponent", string.Create(CultureInfo.InvariantCulture, $"must be at least {LeastPower} with the power law: below, tractions would change at an infinite rate next to pure peel and pure shear"));
         foreach ((CurveDeck? curve, string mode) in ((CurveDeck?, string)[])[(layer.Peel, ".peel"), (layer.Shear, ".shear")])
             if (curve is not null && context.IsSound(path + mode + ".law") && curve.Law != CurveShape.Bilinear)
-                context.Fail(path + mode + ".law", "must be bilinear with the mixing benzeggagh-kenane");
+                context.Fail(path + mode + ".law", $"must be bilinear with the mixing {word}");
         foreach (string key in (string[])["counted by", "release length"])
             if (context.IsGiven(ReadContext.Join(path, key)))
-                context.Fail(ReadContext.Join(path, key), "does not apply to benzeggagh-kenane; it belongs to independent modes");
+                context.Fail(ReadContext.Join(path, key), $"does not apply to {word}; it belongs to independent modes");
     }
 }
