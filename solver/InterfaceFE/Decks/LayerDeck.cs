@@ -16,6 +16,10 @@ public enum Mixing
     /// <summary>One damage variable, toughness by the power law of the energy shares.</summary>
     [Word("power law", "one damage variable; fracture where (G_I/toughness_I)^exponent + (G_II/toughness_II)^exponent = 1; bilinear curves only")]
     PowerLaw,
+
+    /// <summary>Potential of Park, Paulino and Roesler 2009.</summary>
+    [Word("coupled potential", "tractions from one potential of both separations (Park, Paulino and Roesler 2009); curves of the law `potential` only")]
+    CoupledPotential,
 }
 
 /// <summary>How the energy share of a mode is counted in the energy criterion.</summary>
@@ -32,7 +36,6 @@ public enum EnergyCount
 
 /// <summary>A bonding layer.</summary>
 [Block("A bonding layer: thickness, one curve of traction against separation for peel and one for shear, and how they mix.")]
-[NotBuiltYet("mixing", "coupled potential")]
 [NotBuiltYet("relaxation")]
 public sealed record LayerDeck
 {
@@ -100,6 +103,10 @@ public enum CurveShape
     [Word("linear-parabolic", "linear rise to the strength, then a parabola that starts level at the strength and ends at zero; needs stiffness, strength, toughness")]
     LinearParabolic,
 
+    /// <summary>One mode of the coupled potential.</summary>
+    [Word("potential", "one mode of the coupled potential; needs strength, toughness, exponent, initial slope")]
+    Potential,
+
     /// <summary>Points joined by straight lines.</summary>
     [Word("table", "points joined by straight lines, from [0, 0] to traction 0; needs opening or sliding, and traction")]
     Table,
@@ -132,6 +139,14 @@ public sealed record CurveDeck
     /// <summary>Separation at which the traction is gone [mm].</summary>
     [Key("final separation", "Separation at which the traction is gone; needed by `exponential`, and another way than `plateau until` to set the shape of a trapezoid.", Dimension = Dimension.Length, Example = "5 mm", Above = 0)]
     public double? FinalSeparation { get; init; }
+
+    /// <summary>Exponent of a mode of the coupled potential.</summary>
+    [Key("exponent", "Exponent of a mode of the coupled potential: 2 falls almost straight, above 2 hollow, below 2 bulging.", Example = "3", Above = 1, AtMost = 20)]
+    public double? Exponent { get; init; }
+
+    /// <summary>Initial slope indicator of a mode of the coupled potential.</summary>
+    [Key("initial slope", "Initial slope indicator of a mode of the coupled potential: separation at the strength over the final separation; the smaller, the stiffer.", Example = "0.02", Above = 0, Below = 1)]
+    public double? InitialSlope { get; init; }
 
     /// <summary>Openings of a table [mm].</summary>
     [Key("opening", "Openings of a peel table, rising from 0 mm.", Dimension = Dimension.Length, Example = "[0 mm, 0.3 mm, 4 mm, 7 mm]", AtLeast = 0)]

@@ -44,6 +44,8 @@ public readonly record struct CurveNumbers(double Strength, double Toughness, do
             return OfTable(path, curve, separations, separationKey);
         double strength = curve.Strength ?? throw Missing(path, "strength", curve);
         double toughness = curve.Toughness ?? throw Missing(path, "toughness", curve);
+        if (curve.Law == CurveShape.Potential)
+            return OfPotential(path, curve, strength, toughness);
         double stiffness = curve.Stiffness ?? bulkStiffness() ?? throw Missing(path, "stiffness", curve);
         double elastic = strength / stiffness;
         double final = curve.Law switch
@@ -59,6 +61,13 @@ public readonly record struct CurveNumbers(double Strength, double Toughness, do
         if (!(final > elastic) || !double.IsFinite(final))
             throw new DeckException(path, Text.Of($"the final separation, {final:G4} mm, must lie beyond the elastic limit, {elastic:G4} mm (strength over stiffness): raise stiffness or toughness, or lower the strength"));
         return new CurveNumbers(strength, toughness, stiffness, elastic, final);
+    }
+
+    private static CurveNumbers OfPotential(string path, CurveDeck curve, double strength, double toughness)
+    {
+        double exponent = curve.Exponent ?? throw Missing(path, "exponent", curve);
+        PotentialFigures figures = PotentialFigures.Of(strength, toughness, exponent, curve.InitialSlope ?? throw Missing(path, "initial slope", curve));
+        return new CurveNumbers(strength, toughness, figures.Stiffness, strength / figures.Stiffness, figures.Final);
     }
 
     private static CurveNumbers OfTable(string path, CurveDeck curve, IReadOnlyList<double>? separations, string separationKey)

@@ -10,6 +10,8 @@ public static class LayerLawFactory
     /// <exception cref="DeckException">The numbers do not make a law.</exception>
     public static ILayerLaw Create(string name, LayerDeck layer, OutOfPlane outOfPlane)
     {
+        if (layer.Mixing == Mixing.CoupledPotential)
+            return Potential(name, layer);
         ConfinedStiffness? bulk = Bulk(layer, outOfPlane);
         ITractionCurve peel = Curve(layer.Peel, layer.Peel.Opening, bulk?.Peel, $"layers.{name}.peel");
         ITractionCurve shear = Curve(layer.Shear, layer.Shear.Sliding, bulk?.Shear, $"layers.{name}.shear");
@@ -26,6 +28,26 @@ public static class LayerLawFactory
         catch (ArgumentException fault)
         {
             throw new DeckException($"layers.{name}", fault.Message);
+        }
+    }
+
+    private static CoupledPotentialLaw Potential(string name, LayerDeck layer)
+    {
+        PotentialMode peel = Mode(layer.Peel, $"layers.{name}.peel");
+        return new CoupledPotentialLaw(peel, Mode(layer.Shear, $"layers.{name}.shear"), layer.ContactStiffness ?? peel.Stiffness);
+
+        static PotentialMode Mode(CurveDeck curve, string path)
+        {
+            try
+            {
+                return new PotentialMode(Value(curve.Strength, "strength"), Value(curve.Toughness, "toughness"), Value(curve.Exponent, "exponent"), Value(curve.InitialSlope, "initial slope"));
+            }
+            catch (ArgumentException fault)
+            {
+                throw new DeckException(path, fault.Message);
+            }
+
+            double Value(double? value, string key) => value ?? throw new DeckException($"{path}.{key}", "is needed by the law potential");
         }
     }
 

@@ -48,7 +48,7 @@ public class RandomMeshTests
                 random.Next(2) == 0 ? [new StretchDeck { From = Value(25), To = Value(30) }] : null,
                 random.Next(3) == 0 ? Value(1) : null),
         };
-        LayerDeck layer = Layer((CurveShape)random.Next(5), Value(10), Value(5), Value(2), 1);
+        LayerDeck layer = Layer((CurveShape)random.Next(4), Value(10), Value(5), Value(2), 1);
         Dictionary<string, GripDeck> grips = new()
         {
             ["g"] = new GripDeck { On = [random.Next(9) == 0 ? "nowhere" : "left end of a"], At = random.Next(2) == 0 ? new EdgePoint(double.NaN, Value(1)) : null },

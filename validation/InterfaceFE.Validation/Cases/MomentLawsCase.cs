@@ -40,6 +40,12 @@ public sealed class MomentLawsCase : ICase
                 mixing: power law
                 exponent: 1.4
                 """),
+            ("coupled potential", 0.6, """
+                thickness: 0.25 mm
+                peel: {law: potential, strength: 38 MPa, toughness: 0.6 kJ/m^2, exponent: 3, initial slope: 0.05}
+                shear: {law: potential, strength: 30 MPa, toughness: 1.5 kJ/m^2, exponent: 2.5, initial slope: 0.05}
+                mixing: coupled potential
+                """),
         ];
         foreach ((string name, double toughness, string layer) in laws)
         {

@@ -104,8 +104,13 @@ internal static class Laws
         new PowerLaw(PeelLine, ShearLine, 1, 30), new PowerLaw(ShearLine, PeelLine, 1.7, 5), new PowerLaw(PeelLine, ShearLine, 0.7, 30),
     ];
 
+    public static readonly PotentialMode HollowPeel = new(3, 0.9, 3.4, 0.05);
+    public static readonly PotentialMode BulgingShear = new(4, 2.2, 1.6, 0.12);
+
+    public static IEnumerable<CoupledPotentialLaw> Potentials => [new(HollowPeel, BulgingShear, 30), new(BulgingShear, HollowPeel, 30), new(HollowPeel, new PotentialMode(2, 0.9, 2, 0.01), 30)];
+
     /// <summary>Whether surfaces of equal damage of a law are not convex, by its place in <see cref="All"/>.</summary>
     public static bool HasBentSurfaces(int index) => index == Independent.Count() + 1;
 
-    public static IEnumerable<ILayerLaw> All => [.. Independent, .. OneDamage];
+    public static IEnumerable<ILayerLaw> All => [.. Independent, .. OneDamage, .. Potentials];
 }

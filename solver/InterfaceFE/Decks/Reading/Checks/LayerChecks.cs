@@ -26,7 +26,9 @@ internal static class LayerChecks
         CurveFigures shear = layer.Shear is null ? CurveFigures.Unknown : new CurveChecks(layer.Shear, layer, path, false, context).Run();
         if (context.IsSound(path + ".mixing"))
         {
-            if (layer.Mixing == Mixing.IndependentModes)
+            if (layer.Mixing == Mixing.CoupledPotential)
+                CheckPotential(layer, path, context);
+            else if (layer.Mixing == Mixing.IndependentModes)
                 CheckIndependentModes(layer, peel, shear, path, context);
             else
                 CheckSingleDamage(layer, path, context);
@@ -38,6 +40,9 @@ internal static class LayerChecks
     {
         if (context.IsGiven(path + ".exponent"))
             context.Fail(path + ".exponent", "does not apply to independent modes; it belongs to benzeggagh-kenane and the power law");
+        foreach ((CurveDeck? curve, string mode) in ((CurveDeck?, string)[])[(layer.Peel, ".peel"), (layer.Shear, ".shear")])
+            if (curve is { Law: CurveShape.Potential } && context.IsSound(path + mode + ".law"))
+                context.Fail(path + mode + ".law", "belongs to the mixing coupled potential; independent modes take every other law");
         CheckRelease(layer, peel, "peel", path, context);
         CheckRelease(layer, shear, "shear", path, context);
     }
@@ -65,6 +70,21 @@ internal static class LayerChecks
         foreach ((CurveDeck? curve, string mode) in ((CurveDeck?, string)[])[(layer.Peel, ".peel"), (layer.Shear, ".shear")])
             if (curve is not null && context.IsSound(path + mode + ".law") && curve.Law != CurveShape.Bilinear)
                 context.Fail(path + mode + ".law", $"must be bilinear with the mixing {word}");
+        RefuseCriterionKeys(word, path, context);
+    }
+
+    private static void CheckPotential(LayerDeck layer, string path, ReadContext context)
+    {
+        foreach ((CurveDeck? curve, string mode) in ((CurveDeck?, string)[])[(layer.Peel, ".peel"), (layer.Shear, ".shear")])
+            if (curve is not null && context.IsSound(path + mode + ".law") && curve.Law != CurveShape.Potential)
+                context.Fail(path + mode + ".law", "must be potential with the mixing coupled potential");
+        if (context.IsGiven(path + ".exponent"))
+            context.Fail(path + ".exponent", "does not apply to coupled potential; there each of `peel` and `shear` has its own `exponent`");
+        RefuseCriterionKeys("coupled potential", path, context);
+    }
+
+    private static void RefuseCriterionKeys(string word, string path, ReadContext context)
+    {
         foreach (string key in (string[])["counted by", "release length"])
             if (context.IsGiven(ReadContext.Join(path, key)))
                 context.Fail(ReadContext.Join(path, key), $"does not apply to {word}; it belongs to independent modes");
