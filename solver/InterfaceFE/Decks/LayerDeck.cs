@@ -148,6 +148,10 @@ public sealed record CurveDeck
     [Key("initial slope", "Initial slope indicator of a mode of the coupled potential: separation at the strength over the final separation; the smaller, the stiffer.", Example = "0.02", Above = 0, Below = 1)]
     public double? InitialSlope { get; init; }
 
+    /// <summary>Plastic share of unloading.</summary>
+    [Key("plastic share", "Share of plastic separation on unloading (independent modes): 0 (left out) unloads to the origin, 1 with the initial stiffness. In shear the layer then yields in both senses; closing below a plastic opening meets no resistance until the faces touch.", Example = "0.3", AtLeast = 0, AtMost = 1)]
+    public double? PlasticShare { get; init; }
+
     /// <summary>Openings of a table [mm].</summary>
     [Key("opening", "Openings of a peel table, rising from 0 mm.", Dimension = Dimension.Length, Example = "[0 mm, 0.3 mm, 4 mm, 7 mm]", AtLeast = 0)]
     public IReadOnlyList<double>? Opening { get; init; }

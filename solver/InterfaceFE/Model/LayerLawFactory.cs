@@ -22,7 +22,8 @@ public static class LayerLawFactory
             {
                 Mixing.BenzeggaghKenane => new BenzeggaghKenaneLaw((BilinearCurve)peel, (BilinearCurve)shear, Exponent(name, layer), contact),
                 Mixing.PowerLaw => new PowerLaw((BilinearCurve)peel, (BilinearCurve)shear, Exponent(name, layer), contact),
-                _ => new IndependentModesLaw(peel, shear, contact, layer.ReleaseLength, layer.CountedBy == EnergyCount.NetWork ? EnergyCounting.NetWork : EnergyCounting.LargestSeparation),
+                _ => new IndependentModesLaw(peel, shear, contact, layer.ReleaseLength, layer.CountedBy == EnergyCount.NetWork ? EnergyCounting.NetWork : EnergyCounting.LargestSeparation,
+                    layer.Peel.PlasticShare ?? 0, layer.Shear.PlasticShare ?? 0),
             };
         }
         catch (ArgumentException fault)

@@ -27,9 +27,9 @@ public sealed class MomentLawsCase : ICase
         var coupon = new MomentCoupon { Young = 210_000, Thickness = 6, Length = 110, Crack = 30, Layer = "", Fix = "{lower: [x, y]}", Turn = "{grips: {upper: -1, lower: 1}, angle: 2.2 deg}" };
         (string Name, double Toughness, string Layer)[] laws =
         [
-            ("linear-parabolic", 0.6, """
+            ("linear-parabolic with a plastic share", 0.6, """
                 thickness: 0.25 mm
-                peel: {law: linear-parabolic, stiffness: 12000 MPa/mm, strength: 38 MPa, toughness: 0.6 kJ/m^2}
+                peel: {law: linear-parabolic, stiffness: 12000 MPa/mm, strength: 38 MPa, toughness: 0.6 kJ/m^2, plastic share: 0.4}
                 shear: {law: linear-parabolic, stiffness: 4000 MPa/mm, strength: 30 MPa, toughness: 1.5 kJ/m^2}
                 mixing: independent modes
                 """),

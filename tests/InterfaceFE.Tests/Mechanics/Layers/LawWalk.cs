@@ -98,6 +98,12 @@ internal static class Laws
         new(Parabola, Plateau, 6, 0.05, EnergyCounting.NetWork),
     ];
 
+    public static IEnumerable<IndependentModesLaw> Plastic =>
+    [
+        new(Tape, Decaying, 6, 0.05, EnergyCounting.LargestSeparation, 0.4, 0.7), new(Parabola, PeelLine, 6, 0.05, EnergyCounting.NetWork, 1, 0.25),
+        new(PeelLine, Plateau, 6, 0.02, EnergyCounting.NetWork, 0, 0.999), new(Plateau, ShearLine, 6, 0.05, EnergyCounting.LargestSeparation, 0.6, 0),
+    ];
+
     public static IEnumerable<OneDamageLaw> OneDamage =>
     [
         new BenzeggaghKenaneLaw(PeelLine, ShearLine, 2.1, 30), new BenzeggaghKenaneLaw(PeelLine, ShearLine, 0.6, 30), new BenzeggaghKenaneLaw(ShearLine, PeelLine, 1, 5),
@@ -112,5 +118,8 @@ internal static class Laws
     /// <summary>Whether surfaces of equal damage of a law are not convex, by its place in <see cref="All"/>.</summary>
     public static bool HasBentSurfaces(int index) => index == Independent.Count() + 1;
 
-    public static IEnumerable<ILayerLaw> All => [.. Independent, .. OneDamage, .. Potentials];
+    /// <summary>Laws that unload to the origin.</summary>
+    public static IEnumerable<ILayerLaw> Secant => [.. Independent, .. OneDamage, .. Potentials];
+
+    public static IEnumerable<ILayerLaw> All => [.. Secant, .. Plastic];
 }

@@ -59,7 +59,7 @@ internal sealed class CurveChecks(CurveDeck curve, LayerDeck layer, string layer
 
     private bool Takes(string key) => key switch
     {
-        "law" or "toughness" => true,
+        "law" or "toughness" or "plastic share" => true,
         "stiffness" => curve.Law is not (CurveShape.Table or CurveShape.Potential),
         "strength" => curve.Law != CurveShape.Table,
         "exponent" or "initial slope" => curve.Law == CurveShape.Potential,

@@ -85,6 +85,9 @@ internal static class LayerChecks
 
     private static void RefuseCriterionKeys(string word, string path, ReadContext context)
     {
+        foreach (string mode in (string[])[".peel", ".shear"])
+            if (context.IsGiven(path + mode + ".plastic share"))
+                context.Fail(path + mode + ".plastic share", $"does not apply to {word}, which unloads to the origin; it belongs to independent modes");
         foreach (string key in (string[])["counted by", "release length"])
             if (context.IsGiven(ReadContext.Join(path, key)))
                 context.Fail(ReadContext.Join(path, key), $"does not apply to {word}; it belongs to independent modes");
