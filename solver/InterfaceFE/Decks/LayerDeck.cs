@@ -75,6 +75,10 @@ public sealed record LayerDeck
     [Key("bulk", "Properties of the layer's material, for stiffness and free opening by temperature.")]
     public BulkDeck? Bulk { get; init; }
 
+    /// <summary>Cavities that ambient pressure cannot reach.</summary>
+    [Key("cavities", "Area share of unvented cavities against opening; ambient pressure other than that of `measured at` then adds to the peel curve (independent modes).")]
+    public CavitiesDeck? Cavities { get; init; }
+
     /// <summary>Conditions of the test behind the curves.</summary>
     [Key("measured at", "Conditions under which the curves were measured; stated in the summary.")]
     public MeasuredAtDeck? MeasuredAt { get; init; }
@@ -196,6 +200,19 @@ public sealed record BulkDeck
     /// <summary>Confinement.</summary>
     [Key("between faces", "Whether the layer is held along itself by stiff faces.", Default = "confined")]
     public Confinement BetweenFaces { get; init; }
+}
+
+/// <summary>Cavities in a layer that opens.</summary>
+[Block("Area share of unvented cavities in the opening layer: the peel traction is that of the test plus (ambient pressure - pressure of the test) times this share.")]
+public sealed record CavitiesDeck
+{
+    /// <summary>Openings [mm].</summary>
+    [Key("opening", "Openings, rising; the first where cavities begin, the last where they are vented, at most the final separation.", Dimension = Dimension.Length, Example = "[0.3 mm, 0.8 mm, 3 mm, 4 mm]", AtLeast = 0, LeastCount = 3)]
+    public required IReadOnlyList<double> Opening { get; init; }
+
+    /// <summary>Shares.</summary>
+    [Key("share", "Area share of unvented cavities at each opening, 0 first and last.", Example = "[0, 0.6, 0.6, 0]", AtLeast = 0, AtMost = 1, LeastCount = 3)]
+    public required IReadOnlyList<double> Share { get; init; }
 }
 
 /// <summary>Conditions of the test behind a law.</summary>

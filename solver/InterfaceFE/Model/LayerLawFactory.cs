@@ -7,13 +7,17 @@ namespace InterfaceFE.Model;
 public static class LayerLawFactory
 {
     /// <summary>The law of a layer.</summary>
+    /// <param name="name">Name of the layer.</param>
+    /// <param name="layer">The layer.</param>
+    /// <param name="outOfPlane">State out of plane.</param>
+    /// <param name="ambientPressure">Ambient pressure of the run [MPa]; null: that of the layer's test.</param>
     /// <exception cref="DeckException">The numbers do not make a law.</exception>
-    public static ILayerLaw Create(string name, LayerDeck layer, OutOfPlane outOfPlane)
+    public static ILayerLaw Create(string name, LayerDeck layer, OutOfPlane outOfPlane, double? ambientPressure)
     {
         if (layer.Mixing == Mixing.CoupledPotential)
             return Potential(name, layer);
         ConfinedStiffness? bulk = Bulk(layer, outOfPlane);
-        ITractionCurve peel = Curve(layer.Peel, layer.Peel.Opening, bulk?.Peel, $"layers.{name}.peel");
+        ITractionCurve peel = UnderPressure(name, layer, Curve(layer.Peel, layer.Peel.Opening, bulk?.Peel, $"layers.{name}.peel"), ambientPressure);
         ITractionCurve shear = Curve(layer.Shear, layer.Shear.Sliding, bulk?.Shear, $"layers.{name}.shear");
         double contact = layer.ContactStiffness ?? peel.Stiffness;
         try
@@ -29,6 +33,21 @@ public static class LayerLawFactory
         catch (ArgumentException fault)
         {
             throw new DeckException($"layers.{name}", fault.Message);
+        }
+    }
+
+    private static ITractionCurve UnderPressure(string name, LayerDeck layer, ITractionCurve peel, double? ambientPressure)
+    {
+        if (layer.Cavities is not { } cavities || ambientPressure is not { } pressure)
+            return peel;
+        double measured = layer.MeasuredAt?.Pressure ?? throw new DeckException($"layers.{name}.measured at.pressure", "is needed with `cavities`");
+        try
+        {
+            return new CavityCurve(peel, [.. cavities.Opening], [.. cavities.Share], pressure - measured);
+        }
+        catch (ArgumentException fault)
+        {
+            throw new DeckException($"layers.{name}.cavities", fault.Message);
         }
     }
 

@@ -37,7 +37,7 @@ public static class ModelBuilder
     private static LayerBlock Layer(Deck deck, Mesh mesh, MeshedJoint joint, PlaneElasticity[] materials)
     {
         LayerDeck layer = deck.Layers![joint.Layer];
-        ILayerLaw law = LayerLawFactory.Create(joint.Layer, layer, deck.Model.OutOfPlane);
+        ILayerLaw law = LayerLawFactory.Create(joint.Layer, layer, deck.Model.OutOfPlane, deck.Model.AmbientPressure);
         double along = 0.5 * (materials[joint.UpperAdherend].Expansion[0] + materials[joint.LowerAdherend].Expansion[0]);
         double across = deck.Model.OutOfPlane == OutOfPlane.Held ? 0
             : 0.5 * (deck.Materials[mesh.Adherends[joint.UpperAdherend].Material].Expansion.Z + deck.Materials[mesh.Adherends[joint.LowerAdherend].Material].Expansion.Z);

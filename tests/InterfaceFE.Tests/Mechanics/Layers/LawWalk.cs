@@ -90,6 +90,7 @@ internal static class Laws
     [
         PeelLine, ShearLine, Plateau, Decaying, Parabola, new ExponentialCurve(10, 2, 3.9, 3), new ExponentialCurve(10, 2, 3.0, 3), Tape,
         new TrapezoidCurve(2.5, 0.5, 2, 3.2, 5), new TableCurve([0, 0.1, 0.2, 0.5, 3], [0, 1, 2, 1, 0]),
+        new CavityCurve(Plateau, [0.3, 0.9, 3, 4], [0, 0.6, 0.7, 0], -0.07), new CavityCurve(Parabola, [0.3, 0.8, 1, 1.4], [0, 0.4, 0.4, 0], 0.3),
     ];
 
     public static IEnumerable<IndependentModesLaw> Independent =>

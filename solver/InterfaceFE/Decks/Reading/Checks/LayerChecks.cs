@@ -33,6 +33,8 @@ internal static class LayerChecks
             else
                 CheckSingleDamage(layer, path, context);
         }
+        if (layer.Cavities is { } cavities)
+            CheckCavities(layer, cavities, peel, path, context);
         LayerRanges.Run(layer, peel, shear, path, context);
     }
 
@@ -58,6 +60,32 @@ internal static class LayerChecks
         string at = context.IsGiven(path + ".release length") ? path + ".release length" : $"{path}.{mode}";
         double largest = (1 - atOnce) * curve.Toughness * 2 / (curve.Strength * curve.Final);
         context.Fail(at, string.Create(CultureInfo.InvariantCulture, $"with a release length of {layer.ReleaseLength} the layer would let go before the {mode} curve reaches its strength (energy criterion {NumberText.Rounded(criterion, 4)} there, must be below 1); this curve needs a release length below {NumberText.Rounded(largest, 3)}"));
+    }
+
+    private static void CheckCavities(LayerDeck layer, CavitiesDeck cavities, CurveFigures peel, string path, ReadContext context)
+    {
+        string at = path + ".cavities";
+        if (context.IsSound(path + ".mixing") && layer.Mixing != Mixing.IndependentModes)
+            context.Fail(at, "belongs to the mixing independent modes: the other mixings have no peel curve of their own that pressure could change");
+        if (layer.MeasuredAt?.Pressure is null && !context.IsGiven(path + ".measured at.pressure"))
+            context.FailAt(context.Find(at, out _).Key, path + ".measured at.pressure", "is missing; `cavities` needs the pressure at which the peel curve was measured, for example measured at: {pressure: 1.013 bar}");
+        if (cavities.Opening is not { } w || cavities.Share is not { } share || w.Any(double.IsNaN) || share.Any(double.IsNaN))
+            return;
+        if (w.Count != share.Count)
+        {
+            context.Fail(at + ".share", string.Create(CultureInfo.InvariantCulture, $"has {share.Count} entries, but `opening` has {w.Count}; each opening needs its share"));
+            return;
+        }
+        for (int i = 1; i < w.Count; i++)
+            if (w[i] <= w[i - 1])
+                context.Fail(ReadContext.Join(at + ".opening", i + 1), "must be greater than the entry before it");
+        foreach (int end in (int[])[0, share.Count - 1])
+            if (share[end] != 0)
+                context.Fail(ReadContext.Join(at + ".share", end + 1), "must be 0: the first point is where cavities begin, the last where they are vented");
+        if (w[0] <= 0)
+            context.Fail(ReadContext.Join(at + ".opening", 1), "must be greater than 0 mm: cavities begin in a layer that has opened");
+        if (w[^1] > peel.Final)
+            context.Fail(ReadContext.Join(at + ".opening", w.Count), string.Create(CultureInfo.InvariantCulture, $"lies beyond the final separation of the peel curve, {NumberText.Rounded(peel.Final, 4)} mm: by then all cavities are vented"));
     }
 
     private static void CheckSingleDamage(LayerDeck layer, string path, ReadContext context)
