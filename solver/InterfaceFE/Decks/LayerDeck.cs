@@ -36,7 +36,6 @@ public enum EnergyCount
 
 /// <summary>A bonding layer.</summary>
 [Block("A bonding layer: thickness, one curve of traction against separation for peel and one for shear, and how they mix.")]
-[NotBuiltYet("relaxation")]
 public sealed record LayerDeck
 {
     /// <summary>Thickness [mm].</summary>
@@ -78,6 +77,10 @@ public sealed record LayerDeck
     /// <summary>Cavities that ambient pressure cannot reach.</summary>
     [Key("cavities", "Area share of unvented cavities against opening; ambient pressure other than that of `measured at` then adds to the peel curve (independent modes).")]
     public CavitiesDeck? Cavities { get; init; }
+
+    /// <summary>Relaxation of the tractions.</summary>
+    [Key("relaxation", "Relaxation of the tractions with time and temperature; the curves are then those of a sudden load. Laws that unload to the origin only.")]
+    public RelaxationDeck? Relaxation { get; init; }
 
     /// <summary>Conditions of the test behind the curves.</summary>
     [Key("measured at", "Conditions under which the curves were measured; stated in the summary.")]
@@ -213,6 +216,55 @@ public sealed record CavitiesDeck
     /// <summary>Shares.</summary>
     [Key("share", "Area share of unvented cavities at each opening, 0 first and last.", Example = "[0, 0.6, 0.6, 0]", AtLeast = 0, AtMost = 1, LeastCount = 3)]
     public required IReadOnlyList<double> Share { get; init; }
+}
+
+/// <summary>How relaxation times move with temperature.</summary>
+public enum ShiftLaw
+{
+    /// <summary>Not at all.</summary>
+    [Word("none", "the same times at every temperature")]
+    None,
+
+    /// <summary>Williams, Landel and Ferry 1955.</summary>
+    [Word("wlf", "Williams, Landel and Ferry: log10 of the factor = -c1·(T - reference)/(c2 + T - reference); nothing relaxes at and below reference - c2")]
+    Wlf,
+
+    /// <summary>Arrhenius.</summary>
+    [Word("arrhenius", "Arrhenius: ln of the factor = activation·(1/T - 1/reference)")]
+    Arrhenius,
+}
+
+/// <summary>Relaxation of a layer by a Prony series.</summary>
+[Block("Relaxation of a layer's tractions by a Prony series: under a sudden separation that is then held, each share of the traction fades with its own time; the rest lasts. Damage follows the separation.")]
+public sealed record RelaxationDeck
+{
+    /// <summary>Shares.</summary>
+    [Key("share", "Share of the traction that fades with each time; at most 1 in sum.", Example = "[0.3, 0.2]", Above = 0, AtMost = 1, LeastCount = 1, MostCount = 16)]
+    public required IReadOnlyList<double> Share { get; init; }
+
+    /// <summary>Times [s].</summary>
+    [Key("time", "Relaxation times at the reference temperature.", Dimension = Dimension.Time, Example = "[10 s, 1 h]", Above = 0, LeastCount = 1, MostCount = 16)]
+    public required IReadOnlyList<double> Time { get; init; }
+
+    /// <summary>Shift with temperature.</summary>
+    [Key("shift", "How the times move with temperature.", Default = "none")]
+    public ShiftLaw Shift { get; init; }
+
+    /// <summary>Reference temperature [K].</summary>
+    [Key("reference", "Temperature at which the times hold; needed with a shift.", Dimension = Dimension.Temperature, Example = "23 °C", Above = 0)]
+    public double? Reference { get; init; }
+
+    /// <summary>c1 of WLF.</summary>
+    [Key("c1", "First constant of `wlf`.", Example = "17.4", Above = 0)]
+    public double? C1 { get; init; }
+
+    /// <summary>c2 of WLF [K].</summary>
+    [Key("c2", "Second constant of `wlf`.", Dimension = Dimension.TemperatureDifference, Example = "51.6 K", Above = 0)]
+    public double? C2 { get; init; }
+
+    /// <summary>Activation energy over the gas constant [K].</summary>
+    [Key("activation", "Activation energy over the gas constant, for `arrhenius`.", Dimension = Dimension.TemperatureDifference, Example = "9600 K", Above = 0)]
+    public double? Activation { get; init; }
 }
 
 /// <summary>Conditions of the test behind a law.</summary>

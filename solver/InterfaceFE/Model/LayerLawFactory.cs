@@ -14,6 +14,29 @@ public static class LayerLawFactory
     /// <exception cref="DeckException">The numbers do not make a law.</exception>
     public static ILayerLaw Create(string name, LayerDeck layer, OutOfPlane outOfPlane, double? ambientPressure)
     {
+        ILayerLaw law = WithoutRelaxation(name, layer, outOfPlane, ambientPressure);
+        if (layer.Relaxation is not { } relaxation)
+            return law;
+        string path = $"layers.{name}.relaxation";
+        try
+        {
+            return new RelaxingLaw(law, [.. relaxation.Share], [.. relaxation.Time], relaxation.Shift switch
+            {
+                ShiftLaw.Wlf => TimeShift.Wlf(Value(relaxation.Reference, "reference"), Value(relaxation.C1, "c1"), Value(relaxation.C2, "c2")),
+                ShiftLaw.Arrhenius => TimeShift.Arrhenius(Value(relaxation.Reference, "reference"), Value(relaxation.Activation, "activation")),
+                _ => TimeShift.None,
+            });
+        }
+        catch (ArgumentException fault)
+        {
+            throw new DeckException(path, fault.Message);
+        }
+
+        double Value(double? value, string key) => value ?? throw new DeckException($"{path}.{key}", "is needed by this shift");
+    }
+
+    private static ILayerLaw WithoutRelaxation(string name, LayerDeck layer, OutOfPlane outOfPlane, double? ambientPressure)
+    {
         if (layer.Mixing == Mixing.CoupledPotential)
             return Potential(name, layer);
         ConfinedStiffness? bulk = Bulk(layer, outOfPlane);

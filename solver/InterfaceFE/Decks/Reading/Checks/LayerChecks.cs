@@ -35,6 +35,8 @@ internal static class LayerChecks
         }
         if (layer.Cavities is { } cavities)
             CheckCavities(layer, cavities, peel, path, context);
+        if (layer.Relaxation is { } relaxation)
+            RelaxationChecks.Run(layer, relaxation, path, context);
         LayerRanges.Run(layer, peel, shear, path, context);
     }
 
