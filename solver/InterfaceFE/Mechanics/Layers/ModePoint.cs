@@ -8,6 +8,8 @@ namespace InterfaceFE.Mechanics.Layers;
 /// </summary>
 internal readonly struct ModePoint
 {
+    private const double RoundOff = 1e-14;
+
     /// <summary>Point of a curve.</summary>
     /// <param name="curve">Curve of the mode.</param>
     /// <param name="plasticShare">p, 0 to 1.</param>
@@ -16,8 +18,9 @@ internal readonly struct ModePoint
     public ModePoint(ITractionCurve curve, double plasticShare, double distance, double largestBefore)
     {
         double reachBefore = ReachOf(curve, plasticShare, largestBefore);
-        AtLargest = distance >= reachBefore;
-        Largest = !AtLargest ? largestBefore : plasticShare == 0 ? distance : largestBefore + (distance - reachBefore);
+        // A distance that has been there before comes back with a last digit of the plastic separation's sum.
+        AtLargest = distance >= reachBefore - (plasticShare == 0 ? 0 : RoundOff * largestBefore);
+        Largest = !AtLargest ? largestBefore : plasticShare == 0 ? distance : largestBefore + Math.Max(0, distance - reachBefore);
         Growing = AtLargest && Largest >= curve.ElasticLimit;
         Damaged = Largest > curve.ElasticLimit;
         LargestTraction = curve.Traction(Largest);

@@ -15,6 +15,9 @@ public sealed class RelaxingLaw : ILayerLaw
 {
     private const int Opening = 0, Sliding = 1, Temperature = 2, PeelLess = 3, ShearLess = 4, StoredLess = 5, Lost = 6, LostWithout = 7, Own = 8, MostTerms = 16;
 
+    /// <summary>Share of the final separation below which secants are taken at that share.</summary>
+    private const double Nearly = 1e-9;
+
     private readonly ILayerLaw _inner;
     private readonly double[] _shares;
     private readonly double[] _times;
@@ -57,6 +60,9 @@ public sealed class RelaxingLaw : ILayerLaw
     public bool HasSymmetricTangent => false;
 
     /// <inheritdoc/>
+    public bool DependsOnTime => true;
+
+    /// <inheritdoc/>
     public LayerStiffness Stiffness => _inner.Stiffness;
 
     /// <inheritdoc/>
@@ -79,20 +85,20 @@ public sealed class RelaxingLaw : ILayerLaw
         Span<double> state = tentative.Slice(size, Own), peelAfter = tentative.Slice(size + Own, _shares.Length), shearAfter = tentative.Slice(size + Own + _shares.Length, _shares.Length);
         bool open = !(separation.Opening < 0);
         double w = open ? separation.Opening : 0, v = separation.Sliding;
-        double peelSecant = 0;
-        if (!open)
-        {
-            LayerResponse shut = _inner.Update(new Separation(0, v), at, accepted[..size], tentative[..size]);
-            peelSecant = shut.PeelByOpening;
-        }
+        // Secants and their derivatives, at separations next to zero where there is none: pressed together the elastic parts still pull.
+        double leastOpening = Nearly * FinalOpening, leastSliding = Math.CopySign(Nearly * FinalSliding, v);
+        bool touches = !(w >= leastOpening), still = !(Math.Abs(v) >= Math.Abs(leastSliding));
+        double x = touches ? leastOpening : w, y = still ? leastSliding : v;
+        LayerResponse opened = touches ? _inner.Update(new Separation(x, v), at, accepted[..size], tentative[..size]) : default;
+        LayerResponse slid = still ? _inner.Update(new Separation(separation.Opening, y), at, accepted[..size], tentative[..size]) : default;
         LayerResponse answer = _inner.Update(separation, at, accepted[..size], tentative[..size]);
-        double peelIn = open ? answer.Peel : 0, shearIn = answer.Shear;
-        if (open)
-            peelSecant = w != 0 ? peelIn / w : answer.PeelByOpening;
-        double shearSecant = v != 0 ? shearIn / v : answer.ShearBySliding;
-        // Derivatives of the secants.
-        double peelByW = open && w != 0 ? (answer.PeelByOpening - peelSecant) / w : 0, peelByV = open && w != 0 ? answer.PeelBySliding / w : 0;
-        double shearByW = v != 0 ? answer.ShearByOpening / v : 0, shearByV = v != 0 ? (answer.ShearBySliding - shearSecant) / v : 0;
+        if (!touches)
+            opened = answer;
+        if (!still)
+            slid = answer;
+        double peelIn = open ? answer.Peel : 0, shearIn = answer.Shear, peelSecant = opened.Peel / x, shearSecant = slid.Shear / y;
+        double peelByW = touches ? 0 : (opened.PeelByOpening - peelSecant) / x, peelByV = opened.PeelBySliding / x;
+        double shearByW = slid.ShearByOpening / y, shearByV = still ? 0 : (slid.ShearBySliding - shearSecant) / y;
 
         double first = before[Temperature] > 0 ? before[Temperature] : at.Temperature;
         double reduced = at.TimeStride > 0 ? at.TimeStride * 0.5 * (_shift.Speed(first) + _shift.Speed(at.Temperature)) : 0;
