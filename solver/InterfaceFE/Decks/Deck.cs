@@ -139,6 +139,10 @@ public sealed record ModelDeck
     [Key("rotation", "Whether rotations are small or finite; written in every deck, since `small` limits what the run is good for.")]
     public required RotationSetting Rotation { get; init; }
 
+    /// <summary>Ambient pressure [MPa]; null: that of each layer's test.</summary>
+    [Key("ambient pressure", "Ambient pressure, absolute, the same all along the run; it changes layers with `cavities` alone. Left out: the pressure at which each was measured.", Dimension = Dimension.Stress, Example = "0.7 bar", AtLeast = 0)]
+    public double? AmbientPressure { get; init; }
+
     /// <summary>Kind of solid element.</summary>
     [Key("elements", "Kind of solid element.", Default = "eight-node")]
     public ElementKind Elements { get; init; }

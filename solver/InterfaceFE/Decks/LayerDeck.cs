@@ -12,6 +12,14 @@ public enum Mixing
     /// <summary>One damage variable, toughness by Benzeggagh and Kenane 1996.</summary>
     [Word("benzeggagh-kenane", "one damage variable; toughness rises from peel to shear with the given exponent; bilinear curves only")]
     BenzeggaghKenane,
+
+    /// <summary>One damage variable, toughness by the power law of the energy shares.</summary>
+    [Word("power law", "one damage variable; fracture where (G_I/toughness_I)^exponent + (G_II/toughness_II)^exponent = 1; bilinear curves only")]
+    PowerLaw,
+
+    /// <summary>Potential of Park, Paulino and Roesler 2009.</summary>
+    [Word("coupled potential", "tractions from one potential of both separations (Park, Paulino and Roesler 2009); curves of the law `potential` only")]
+    CoupledPotential,
 }
 
 /// <summary>How the energy share of a mode is counted in the energy criterion.</summary>
@@ -28,9 +36,6 @@ public enum EnergyCount
 
 /// <summary>A bonding layer.</summary>
 [Block("A bonding layer: thickness, one curve of traction against separation for peel and one for shear, and how they mix.")]
-[NotBuiltYet("mixing", "power law")]
-[NotBuiltYet("mixing", "coupled potential")]
-[NotBuiltYet("relaxation")]
 public sealed record LayerDeck
 {
     /// <summary>Thickness [mm].</summary>
@@ -49,8 +54,8 @@ public sealed record LayerDeck
     [Key("mixing", "How peel and shear share the fracture.")]
     public required Mixing Mixing { get; init; }
 
-    /// <summary>Exponent of Benzeggagh and Kenane.</summary>
-    [Key("exponent", "Exponent of Benzeggagh and Kenane; needed with that mixing.", Example = "2.1", AtLeast = 0.1, AtMost = 20)]
+    /// <summary>Exponent of Benzeggagh and Kenane or of the power law.</summary>
+    [Key("exponent", "Exponent of Benzeggagh and Kenane or of the power law (there at least 0.5); needed with these.", Example = "2.1", AtLeast = 0.1, AtMost = 20)]
     public double? Exponent { get; init; }
 
     /// <summary>Energy count of the criterion.</summary>
@@ -68,6 +73,14 @@ public sealed record LayerDeck
     /// <summary>Bulk properties of the layer's material.</summary>
     [Key("bulk", "Properties of the layer's material, for stiffness and free opening by temperature.")]
     public BulkDeck? Bulk { get; init; }
+
+    /// <summary>Cavities that ambient pressure cannot reach.</summary>
+    [Key("cavities", "Area share of unvented cavities against opening; ambient pressure other than that of `measured at` then adds to the peel curve (independent modes).")]
+    public CavitiesDeck? Cavities { get; init; }
+
+    /// <summary>Relaxation of the tractions.</summary>
+    [Key("relaxation", "Relaxation of the tractions with time and temperature; the curves are then those of a sudden load. Laws that unload to the origin only.")]
+    public RelaxationDeck? Relaxation { get; init; }
 
     /// <summary>Conditions of the test behind the curves.</summary>
     [Key("measured at", "Conditions under which the curves were measured; stated in the summary.")]
@@ -93,6 +106,14 @@ public enum CurveShape
     [Word("exponential", "linear rise, exponential fall that ends at the final separation; needs stiffness, strength, toughness, final separation")]
     Exponential,
 
+    /// <summary>Linear rise, parabolic fall.</summary>
+    [Word("linear-parabolic", "linear rise to the strength, then a parabola that starts level at the strength and ends at zero; needs stiffness, strength, toughness")]
+    LinearParabolic,
+
+    /// <summary>One mode of the coupled potential.</summary>
+    [Word("potential", "one mode of the coupled potential; needs strength, toughness, exponent, initial slope")]
+    Potential,
+
     /// <summary>Points joined by straight lines.</summary>
     [Word("table", "points joined by straight lines, from [0, 0] to traction 0; needs opening or sliding, and traction")]
     Table,
@@ -100,7 +121,6 @@ public enum CurveShape
 
 /// <summary>A curve of traction against separation of one mode.</summary>
 [Block("A curve of traction against separation of one mode.")]
-[NotBuiltYet("law", "linear-parabolic")]
 public sealed record CurveDeck
 {
     /// <summary>Shape.</summary>
@@ -126,6 +146,18 @@ public sealed record CurveDeck
     /// <summary>Separation at which the traction is gone [mm].</summary>
     [Key("final separation", "Separation at which the traction is gone; needed by `exponential`, and another way than `plateau until` to set the shape of a trapezoid.", Dimension = Dimension.Length, Example = "5 mm", Above = 0)]
     public double? FinalSeparation { get; init; }
+
+    /// <summary>Exponent of a mode of the coupled potential.</summary>
+    [Key("exponent", "Exponent of a mode of the coupled potential: 2 falls almost straight, above 2 hollow, below 2 bulging.", Example = "3", Above = 1, AtMost = 20)]
+    public double? Exponent { get; init; }
+
+    /// <summary>Initial slope indicator of a mode of the coupled potential.</summary>
+    [Key("initial slope", "Initial slope indicator of a mode of the coupled potential: separation at the strength over the final separation; the smaller, the stiffer.", Example = "0.02", Above = 0, Below = 1)]
+    public double? InitialSlope { get; init; }
+
+    /// <summary>Plastic share of unloading.</summary>
+    [Key("plastic share", "Share of plastic separation on unloading (independent modes): 0 (left out) unloads to the origin, 1 with the initial stiffness. In shear the layer then yields in both senses; closing below a plastic opening meets no resistance until the faces touch.", Example = "0.3", AtLeast = 0, AtMost = 1)]
+    public double? PlasticShare { get; init; }
 
     /// <summary>Openings of a table [mm].</summary>
     [Key("opening", "Openings of a peel table, rising from 0 mm.", Dimension = Dimension.Length, Example = "[0 mm, 0.3 mm, 4 mm, 7 mm]", AtLeast = 0)]
@@ -171,6 +203,68 @@ public sealed record BulkDeck
     /// <summary>Confinement.</summary>
     [Key("between faces", "Whether the layer is held along itself by stiff faces.", Default = "confined")]
     public Confinement BetweenFaces { get; init; }
+}
+
+/// <summary>Cavities in a layer that opens.</summary>
+[Block("Area share of unvented cavities in the opening layer: the peel traction is that of the test plus (ambient pressure - pressure of the test) times this share.")]
+public sealed record CavitiesDeck
+{
+    /// <summary>Openings [mm].</summary>
+    [Key("opening", "Openings, rising; the first where cavities begin, the last where they are vented, at most the final separation.", Dimension = Dimension.Length, Example = "[0.3 mm, 0.8 mm, 3 mm, 4 mm]", AtLeast = 0, LeastCount = 3)]
+    public required IReadOnlyList<double> Opening { get; init; }
+
+    /// <summary>Shares.</summary>
+    [Key("share", "Area share of unvented cavities at each opening, 0 first and last.", Example = "[0, 0.6, 0.6, 0]", AtLeast = 0, AtMost = 1, LeastCount = 3)]
+    public required IReadOnlyList<double> Share { get; init; }
+}
+
+/// <summary>How relaxation times move with temperature.</summary>
+public enum ShiftLaw
+{
+    /// <summary>Not at all.</summary>
+    [Word("none", "the same times at every temperature")]
+    None,
+
+    /// <summary>Williams, Landel and Ferry 1955.</summary>
+    [Word("wlf", "Williams, Landel and Ferry: log10 of the factor = -c1·(T - reference)/(c2 + T - reference); nothing relaxes at and below reference - c2")]
+    Wlf,
+
+    /// <summary>Arrhenius.</summary>
+    [Word("arrhenius", "Arrhenius: ln of the factor = activation·(1/T - 1/reference)")]
+    Arrhenius,
+}
+
+/// <summary>Relaxation of a layer by a Prony series.</summary>
+[Block("Relaxation of a layer's tractions by a Prony series: under a sudden separation that is then held, each share of the traction fades with its own time; the rest lasts. Damage follows the separation.")]
+public sealed record RelaxationDeck
+{
+    /// <summary>Shares.</summary>
+    [Key("share", "Share of the traction that fades with each time; at most 1 in sum.", Example = "[0.3, 0.2]", Above = 0, AtMost = 1, LeastCount = 1, MostCount = 16)]
+    public required IReadOnlyList<double> Share { get; init; }
+
+    /// <summary>Times [s].</summary>
+    [Key("time", "Relaxation times at the reference temperature.", Dimension = Dimension.Time, Example = "[10 s, 1 h]", Above = 0, LeastCount = 1, MostCount = 16)]
+    public required IReadOnlyList<double> Time { get; init; }
+
+    /// <summary>Shift with temperature.</summary>
+    [Key("shift", "How the times move with temperature.", Default = "none")]
+    public ShiftLaw Shift { get; init; }
+
+    /// <summary>Reference temperature [K].</summary>
+    [Key("reference", "Temperature at which the times hold; needed with a shift.", Dimension = Dimension.Temperature, Example = "23 °C", Above = 0)]
+    public double? Reference { get; init; }
+
+    /// <summary>c1 of WLF.</summary>
+    [Key("c1", "First constant of `wlf`.", Example = "17.4", Above = 0)]
+    public double? C1 { get; init; }
+
+    /// <summary>c2 of WLF [K].</summary>
+    [Key("c2", "Second constant of `wlf`.", Dimension = Dimension.TemperatureDifference, Example = "51.6 K", Above = 0)]
+    public double? C2 { get; init; }
+
+    /// <summary>Activation energy over the gas constant [K].</summary>
+    [Key("activation", "Activation energy over the gas constant, for `arrhenius`.", Dimension = Dimension.TemperatureDifference, Example = "9600 K", Above = 0)]
+    public double? Activation { get; init; }
 }
 
 /// <summary>Conditions of the test behind a law.</summary>

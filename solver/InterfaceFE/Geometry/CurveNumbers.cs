@@ -44,6 +44,8 @@ public readonly record struct CurveNumbers(double Strength, double Toughness, do
             return OfTable(path, curve, separations, separationKey);
         double strength = curve.Strength ?? throw Missing(path, "strength", curve);
         double toughness = curve.Toughness ?? throw Missing(path, "toughness", curve);
+        if (curve.Law == CurveShape.Potential)
+            return OfPotential(path, curve, strength, toughness);
         double stiffness = curve.Stiffness ?? bulkStiffness() ?? throw Missing(path, "stiffness", curve);
         double elastic = strength / stiffness;
         double final = curve.Law switch
@@ -52,11 +54,20 @@ public readonly record struct CurveNumbers(double Strength, double Toughness, do
             // Area strength/2·(final + plateau end - elastic limit); without a plateau end that end is two thirds of the final separation.
             CurveShape.Trapezoid when curve.PlateauUntil is { } plateau => 2 * toughness / strength - plateau + elastic,
             CurveShape.Trapezoid => 0.6 * (2 * toughness / strength + elastic),
+            // Area of the rise and of the parabola with its top at the strength: strength·elastic limit/2 + 2/3·strength·(final - elastic limit).
+            CurveShape.LinearParabolic => 1.5 * toughness / strength + 0.25 * elastic,
             _ => curve.FinalSeparation ?? throw Missing(path, "final separation", curve),
         };
         if (!(final > elastic) || !double.IsFinite(final))
             throw new DeckException(path, Text.Of($"the final separation, {final:G4} mm, must lie beyond the elastic limit, {elastic:G4} mm (strength over stiffness): raise stiffness or toughness, or lower the strength"));
         return new CurveNumbers(strength, toughness, stiffness, elastic, final);
+    }
+
+    private static CurveNumbers OfPotential(string path, CurveDeck curve, double strength, double toughness)
+    {
+        double exponent = curve.Exponent ?? throw Missing(path, "exponent", curve);
+        PotentialFigures figures = PotentialFigures.Of(strength, toughness, exponent, curve.InitialSlope ?? throw Missing(path, "initial slope", curve));
+        return new CurveNumbers(strength, toughness, figures.Stiffness, strength / figures.Stiffness, figures.Final);
     }
 
     private static CurveNumbers OfTable(string path, CurveDeck curve, IReadOnlyList<double>? separations, string separationKey)

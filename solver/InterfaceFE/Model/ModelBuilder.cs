@@ -42,7 +42,7 @@ public static class ModelBuilder
     private static LayerBlock Layer(Deck deck, Mesh mesh, MeshedJoint joint, PlaneElasticity[][] materials, double[] across)
     {
         LayerDeck layer = deck.Layers![joint.Layer];
-        ILayerLaw law = LayerLawFactory.Create(joint.Layer, layer, deck.Model.OutOfPlane);
+        ILayerLaw law = LayerLawFactory.Create(joint.Layer, layer, deck.Model.OutOfPlane, deck.Model.AmbientPressure);
         double along = 0.5 * (Along(joint.UpperAdherend) + Along(joint.LowerAdherend));
         double out3 = 0.5 * (across[joint.UpperAdherend] + across[joint.LowerAdherend]);
         double perKelvin = LayerLawFactory.Bulk(layer, deck.Model.OutOfPlane)?.FreeOpening(1, along, out3) ?? 0;

@@ -150,7 +150,8 @@ public static class SummaryMaker
         {
             ILayerLaw law = model.Layers.First(l => l.Name == row.Joint).Law;
             double floor = 0.02 * Math.Min(law.PeelToughness, law.ShearToughness);
-            double[] values = [.. new[] { row.JPath, row.JRotation, row.JUnderLaw }.Where(v => v is not null).Select(v => v!.Value)];
+            // With relaxation the integral over time at the starter tip is another quantity than those over space.
+            double[] values = [.. new[] { row.JPath, row.JRotation, law.DependsOnTime ? null : row.JUnderLaw }.Where(v => v is not null).Select(v => v!.Value)];
             if (values.Length < 2 || values.Max() < floor)
                 continue;
             worst = Math.Max(worst ?? 0, (values.Max() - values.Min()) / values.Max());

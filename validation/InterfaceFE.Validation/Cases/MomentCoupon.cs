@@ -42,6 +42,9 @@ internal sealed record MomentCoupon
     /// <summary>What holds the specimen.</summary>
     public required string Fix { get; init; }
 
+    /// <summary>Further keys of the model, each led by a comma.</summary>
+    public string ModelKeys { get; init; } = "";
+
     /// <summary>Further blocks of the deck.</summary>
     public string More { get; init; } = "";
 
@@ -60,7 +63,7 @@ internal sealed record MomentCoupon
         string elements = ElementLength is { } length ? string.Create(CultureInfo.InvariantCulture, $", element length: {length} mm") : "";
         return string.Create(CultureInfo.InvariantCulture, $$"""
             title: Double cantilever beam turned by couples
-            model: {width: {{ArmWidth}} mm, out of plane: {{(Held ? "held" : "free")}}, rotation: small}
+            model: {width: {{ArmWidth}} mm, out of plane: {{(Held ? "held" : "free")}}, rotation: small{{ModelKeys}}}
             materials:
               metal: {young: {{Young}} MPa, poisson: {{Poisson}}}
             layers:

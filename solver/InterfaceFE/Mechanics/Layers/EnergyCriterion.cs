@@ -11,9 +11,13 @@ internal sealed class EnergyCriterion
     private readonly ITractionCurve _shear;
     private readonly EnergyCounting _counting;
     private readonly double _largestDue;
+    private readonly double _peelPlastic;
+    private readonly double _shearPlastic;
 
-    public EnergyCriterion(ITractionCurve peel, ITractionCurve shear, double releaseShare, EnergyCounting counting)
+    public EnergyCriterion(ITractionCurve peel, ITractionCurve shear, double releaseShare, EnergyCounting counting, double peelPlasticShare, double shearPlasticShare)
     {
+        _peelPlastic = peelPlasticShare;
+        _shearPlastic = shearPlasticShare;
         _peel = peel;
         _shear = shear;
         _counting = counting;
@@ -32,9 +36,9 @@ internal sealed class EnergyCriterion
     public double Counted(ITractionCurve curve, in ModePoint mode)
     {
         double area = curve.Area(mode.Largest);
-        if (_counting == EnergyCounting.LargestSeparation || mode.Separation >= mode.Largest)
+        if (_counting == EnergyCounting.LargestSeparation || mode.AtLargest)
             return area;
-        return mode.Damaged ? area - 0.5 * mode.LargestTraction * mode.Largest + mode.Stored : mode.Stored;
+        return mode.Damaged ? area - 0.5 * mode.LargestTraction * mode.Reach + mode.Stored : mode.Stored;
     }
 
     /// <summary>Energy still due R at a point [-].</summary>
@@ -52,16 +56,16 @@ internal sealed class EnergyCriterion
     public double ShearSlope(in ModePoint mode) => Slope(mode, ShearRelease, _shear.Toughness);
 
     /// <summary>
-    /// Where on the straight way f first reaches 1: seen at sixteen samples up to the end (or to the final separation of a mode, where f is at least 1), then found to rounding.
+    /// Where on the straight way, counted from the plastic separations, f first reaches 1: seen at sixteen samples up to the end (or to the final separation of a mode, where f is at least 1), then found to rounding.
     /// </summary>
     /// <returns>False when f stays below 1.</returns>
     public bool TryFindStart(in Stride stride, double largestOpening, double largestSliding, out double progress)
     {
         progress = 1;
-        double openingMost = Math.Max(largestOpening, stride.To.Opening), slidingMost = Math.Max(largestSliding, Math.Abs(stride.To.Sliding));
+        double openingMost = Most(_peel, _peelPlastic, Math.Max(0, stride.To.Opening), largestOpening), slidingMost = Most(_shear, _shearPlastic, Math.Abs(stride.To.Sliding), largestSliding);
         if (_peel.Area(openingMost) / _peel.Toughness + _shear.Area(slidingMost) / _shear.Toughness + _largestDue < 1)
             return false;
-        double end = Math.Min(stride.ReachesOpening(_peel.FinalSeparation), stride.ReachesSliding(_shear.FinalSeparation));
+        double end = Math.Min(stride.ReachesOpening(Last(_peel, _peelPlastic, largestOpening)), stride.ReachesSliding(Last(_shear, _shearPlastic, largestSliding)));
         bool certain = end <= 1;
         end = Math.Min(end, 1);
         double low = 0;
@@ -77,6 +81,14 @@ internal sealed class EnergyCriterion
         }
         return false;
     }
+
+    /// <summary>Largest separation at a distance from the plastic separation.</summary>
+    private static double Most(ITractionCurve curve, double plasticShare, double distance, double largest) =>
+        plasticShare == 0 ? Math.Max(largest, distance) : largest + Math.Max(0, distance - ModePoint.ReachOf(curve, plasticShare, largest));
+
+    /// <summary>Distance from the plastic separation at which the final separation is reached.</summary>
+    private static double Last(ITractionCurve curve, double plasticShare, double largest) =>
+        plasticShare == 0 ? curve.FinalSeparation : ModePoint.ReachOf(curve, plasticShare, largest) + (curve.FinalSeparation - largest);
 
     /// <summary>Newton's method within a bracket that is halved whenever it shrinks too slowly.</summary>
     private double Root(in Stride stride, double low, double high, double largestOpening, double largestSliding)
@@ -112,14 +124,14 @@ internal sealed class EnergyCriterion
     private double Excess(in Stride stride, double progress, double largestOpening, double largestSliding, out double slope)
     {
         Separation z = stride.At(progress);
-        ModePoint peel = new(_peel, Math.Max(z.Opening, 0), largestOpening), shear = new(_shear, Math.Abs(z.Sliding), largestSliding);
+        ModePoint peel = new(_peel, _peelPlastic, Math.Max(z.Opening, 0), largestOpening), shear = new(_shear, _shearPlastic, Math.Abs(z.Sliding), largestSliding);
         slope = (z.Opening >= 0 ? PeelSlope(peel) * stride.OpeningChange : 0) + ShearSlope(shear) * Math.CopySign(stride.SlidingChange, stride.SlidingChange * z.Sliding);
         return Value(peel, shear) - 1;
     }
 
     private double Slope(in ModePoint mode, double release, double toughness)
     {
-        bool counts = mode.Separation >= mode.Largest || _counting == EnergyCounting.NetWork;
+        bool counts = mode.AtLargest || _counting == EnergyCounting.NetWork;
         return ((counts ? mode.Traction : 0) + 0.5 * release * mode.Slope) / toughness;
     }
 }

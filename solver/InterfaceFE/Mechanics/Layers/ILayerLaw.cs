@@ -90,6 +90,9 @@ public interface ILayerLaw
     /// <summary>Whether the tangent is symmetric on every branch.</summary>
     bool HasSymmetricTangent { get; }
 
+    /// <summary>Whether the tractions depend on time: the work under the law at one place is then not the energy release rate of the whole.</summary>
+    bool DependsOnTime => false;
+
     /// <summary>Stiffness of virgin peel and shear, and of contact [MPa/mm].</summary>
     LayerStiffness Stiffness { get; }
 

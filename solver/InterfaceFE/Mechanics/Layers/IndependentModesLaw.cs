@@ -6,7 +6,8 @@ namespace InterfaceFE.Mechanics.Layers;
 /// on it first reaches 1, both tractions then fall to 0 together, and the sum is exactly 1 at the end on any path.
 /// </summary>
 /// <remarks>
-/// Unloading by the secant to the origin. Pressed together: contact stiffness at any damage, its energy counts as stored and in no criterion; sliding keeps its own state.
+/// Unloading by the secant to the origin, or with a plastic share of a mode to its plastic separation (<see cref="ModePoint"/>). Closing below a plastic opening meets no resistance until the
+/// faces touch; the release branch counts from the plastic separations at its start. Pressed together: contact stiffness at any damage, its energy counts as stored and in no criterion; sliding keeps its own state.
 /// Damage before release: sum of dissipated_i/Γ_i, the share of the fracture energy already spent for good; from its value D0 at the start it runs as D0 + (1 - D0)·(1 - s) to 1.
 /// Energies are exact for straight strides of any length, on the release branch too. At a separation equal to the largest one so far the growing tangent is given.
 /// Where a mode's carrier grows on its flat part while the other unloads faster, the tangent is the derivative of that (0), not the secant.
@@ -14,13 +15,15 @@ namespace InterfaceFE.Mechanics.Layers;
 public sealed class IndependentModesLaw : ILayerLaw
 {
     private const int Opening = 0, Sliding = 1, LargestOpening = 2, LargestSliding = 3, Phase = 4, PeelLimit = 5, PeelHeld = 6, ShearLimit = 7, ShearHeld = 8,
-        Due = 9, Spent = 10, MostSpent = 11, Dissipated = 12, StartDamage = 13, EnergyPeel = 14, EnergyShear = 15;
+        Due = 9, Spent = 10, MostSpent = 11, Dissipated = 12, StartDamage = 13, EnergyPeel = 14, EnergyShear = 15, PeelPlastic = 16, ShearPlastic = 17;
 
     private const double OnCurves = 0, OnRelease = 1, Apart = 2;
 
     private readonly ITractionCurve _peel;
     private readonly ITractionCurve _shear;
     private readonly double _contact;
+    private readonly double _peelPlasticShare;
+    private readonly double _shearPlasticShare;
     private readonly EnergyCriterion _criterion;
 
     /// <summary>Law from two curves.</summary>
@@ -29,9 +32,12 @@ public sealed class IndependentModesLaw : ILayerLaw
     /// <param name="contactStiffness">Stiffness when pressed together [MPa/mm], > 0.</param>
     /// <param name="releaseShare">Release length as a share of each mode's final separation, above 0, at most 0.5; small enough that the criterion is below 1 at each curve's strength.</param>
     /// <param name="counting">How G_i is counted.</param>
+    /// <param name="peelPlasticShare">Plastic share of peel, 0 (secant to the origin) to 1 (initial stiffness).</param>
+    /// <param name="shearPlasticShare">Plastic share of shear.</param>
     /// <exception cref="ArgumentNullException">A curve is missing.</exception>
     /// <exception cref="ArgumentOutOfRangeException">A number is outside its range.</exception>
-    public IndependentModesLaw(ITractionCurve peel, ITractionCurve shear, double contactStiffness, double releaseShare = 0.05, EnergyCounting counting = EnergyCounting.LargestSeparation)
+    public IndependentModesLaw(ITractionCurve peel, ITractionCurve shear, double contactStiffness, double releaseShare = 0.05, EnergyCounting counting = EnergyCounting.LargestSeparation,
+        double peelPlasticShare = 0, double shearPlasticShare = 0)
     {
         ArgumentNullException.ThrowIfNull(peel);
         ArgumentNullException.ThrowIfNull(shear);
@@ -44,11 +50,13 @@ public sealed class IndependentModesLaw : ILayerLaw
         Admissible.Within(releaseShare, 0, 0.5, nameof(releaseShare));
         CheckRelease(peel, releaseShare, "peel");
         CheckRelease(shear, releaseShare, "shear");
-        _criterion = new EnergyCriterion(peel, shear, releaseShare, counting);
+        _peelPlasticShare = Admissible.Within(peelPlasticShare, 0, 1, nameof(peelPlasticShare));
+        _shearPlasticShare = Admissible.Within(shearPlasticShare, 0, 1, nameof(shearPlasticShare));
+        _criterion = new EnergyCriterion(peel, shear, releaseShare, counting, peelPlasticShare, shearPlasticShare);
     }
 
     /// <inheritdoc/>
-    public int StateSize => 16;
+    public int StateSize => 18;
 
     /// <inheritdoc/>
     public bool HasSymmetricTangent => false;
@@ -89,7 +97,7 @@ public sealed class IndependentModesLaw : ILayerLaw
         LayerResponse answer = accepted[Phase] switch
         {
             OnCurves => FollowCurves(stride, accepted, tentative),
-            OnRelease => FollowRelease(AcceptedBranch(accepted), stride, 0, tentative),
+            OnRelease => FollowRelease(AcceptedBranch(accepted), stride.CountedFrom(accepted[PeelPlastic], accepted[ShearPlastic]), 0, tentative),
             _ => AnswerApart(tentative),
         };
         if (separation.Opening < 0)
@@ -101,20 +109,23 @@ public sealed class IndependentModesLaw : ILayerLaw
         return answer;
     }
 
-    private LayerResponse FollowCurves(in Stride stride, ReadOnlySpan<double> accepted, Span<double> tentative)
+    private LayerResponse FollowCurves(in Stride way, ReadOnlySpan<double> accepted, Span<double> tentative)
     {
+        Stride stride = way.CountedFrom(accepted[PeelPlastic], accepted[ShearPlastic]);
         double largestOpening = accepted[LargestOpening], largestSliding = accepted[LargestSliding];
         if (_criterion.TryFindStart(stride, largestOpening, largestSliding, out double start))
         {
             ReleaseBranch branch = StartRelease(stride, start, tentative);
-            return branch.Due > 0 ? FollowRelease(branch, stride, start, tentative) : AnswerApart(tentative);
+            return branch.Due > 0 ? FollowRelease(branch, way.CountedFrom(tentative[PeelPlastic], tentative[ShearPlastic]), start, tentative) : AnswerApart(tentative);
         }
         bool open = stride.To.Opening >= 0;
         double sense = stride.To.Sliding < 0 ? -1 : 1;
-        ModePoint peel = new(_peel, open ? stride.To.Opening : 0, largestOpening), shear = new(_shear, Math.Abs(stride.To.Sliding), largestSliding);
+        ModePoint peel = new(_peel, _peelPlasticShare, open ? stride.To.Opening : 0, largestOpening), shear = new(_shear, _shearPlasticShare, Math.Abs(stride.To.Sliding), largestSliding);
         double peelLoss = peel.Dissipated(_peel), shearLoss = shear.Dissipated(_shear);
         tentative[LargestOpening] = peel.Largest;
         tentative[LargestSliding] = shear.Largest;
+        tentative[PeelPlastic] += peel.PlasticGrowth;
+        tentative[ShearPlastic] += sense * shear.PlasticGrowth;
         tentative[Dissipated] = Math.Max(accepted[Dissipated], peelLoss + shearLoss);
         tentative[StartDamage] = Math.Max(accepted[StartDamage], peelLoss / _peel.Toughness + shearLoss / _shear.Toughness);
         return new LayerResponse
@@ -139,14 +150,18 @@ public sealed class IndependentModesLaw : ILayerLaw
     {
         Separation z = stride.At(start);
         double sense = z.Sliding < 0 ? -1 : 1;
-        ModePoint peel = new(_peel, Math.Max(z.Opening, 0), state[LargestOpening]), shear = new(_shear, Math.Abs(z.Sliding), state[LargestSliding]);
+        ModePoint peel = new(_peel, _peelPlasticShare, Math.Max(z.Opening, 0), state[LargestOpening]);
+        ModePoint shear = new(_shear, _shearPlasticShare, Math.Abs(z.Sliding), state[LargestSliding]);
         double peelLoss = peel.Dissipated(_peel), shearLoss = shear.Dissipated(_shear);
-        state[LargestOpening] = peel.Largest;
-        state[LargestSliding] = shear.Largest;
-        state[PeelLimit] = Math.Max(peel.Largest, _peel.ElasticLimit);
-        state[ShearLimit] = Math.Max(shear.Largest, _shear.ElasticLimit);
-        state[PeelHeld] = _peel.Traction(state[PeelLimit]);
-        state[ShearHeld] = _shear.Traction(state[ShearLimit]);
+        // From here on distances count from the plastic separations.
+        state[LargestOpening] = peel.Reach;
+        state[LargestSliding] = shear.Reach;
+        state[PeelPlastic] += peel.PlasticGrowth;
+        state[ShearPlastic] += sense * shear.PlasticGrowth;
+        state[PeelLimit] = peel.Damaged ? peel.Reach : _peel.ElasticLimit;
+        state[ShearLimit] = shear.Damaged ? shear.Reach : _shear.ElasticLimit;
+        state[PeelHeld] = _peel.Traction(Math.Max(peel.Largest, _peel.ElasticLimit));
+        state[ShearHeld] = _shear.Traction(Math.Max(shear.Largest, _shear.ElasticLimit));
         state[Due] = _criterion.Due(peel, shear);
         state[Dissipated] = Math.Max(state[Dissipated], peelLoss + shearLoss);
         state[StartDamage] = Math.Clamp(peelLoss / _peel.Toughness + shearLoss / _shear.Toughness, state[StartDamage], 1);
@@ -164,8 +179,8 @@ public sealed class IndependentModesLaw : ILayerLaw
         return new StartMotion
         {
             Moves = start > 0,
-            Opening = new ModeStart(peel.Separation, peel.Traction, peel.Growing ? peel.Slope : 0, 0.5 * _criterion.PeelRelease / _peel.Toughness * peel.Slope),
-            Sliding = new ModeStart(shear.Separation, shear.Traction, shear.Growing ? shear.Slope : 0, 0.5 * _criterion.ShearRelease / _shear.Toughness * shear.Slope),
+            Opening = new ModeStart(peel.Separation, peel.Traction, peel.Growing ? peel.Slope : 0, 0.5 * _criterion.PeelRelease / _peel.Toughness * peel.Slope, peel.PlasticSlope),
+            Sliding = new ModeStart(shear.Separation, shear.Traction, shear.Growing ? shear.Slope : 0, 0.5 * _criterion.ShearRelease / _shear.Toughness * shear.Slope, shear.PlasticSlope),
             Sense = sense,
             OpeningByOpening = open ? start * (1 - w * gw) : 0,
             OpeningBySliding = open ? -start * w * gv : 0,
@@ -207,6 +222,13 @@ public sealed class IndependentModesLaw : ILayerLaw
             // Dissipated = work - change of stored; the work's gradient is the traction plus what the skew tangent leaves along the way.
             answer.DissipatedByOpening = 0.5 * (answer.Peel - opening * answer.PeelByOpening - sliding * answer.ShearByOpening) - stride.SlidingChange * path.SkewMoment;
             answer.DissipatedBySliding = 0.5 * (answer.Shear - opening * answer.PeelBySliding - sliding * answer.ShearBySliding) + stride.OpeningChange * path.SkewMoment;
+        }
+        if (grew && branch.Motion.Moves)
+        {
+            // The plastic separations, from which stored energy counts, move with the start.
+            double byOpening = 0.5 * answer.Peel * branch.Motion.Opening.PlasticSlope, bySliding = 0.5 * answer.Shear * branch.Motion.Sliding.PlasticSlope;
+            answer.DissipatedByOpening += byOpening * branch.Motion.OpeningByOpening + bySliding * branch.Motion.SlidingByOpening;
+            answer.DissipatedBySliding += byOpening * branch.Motion.OpeningBySliding + bySliding * branch.Motion.SlidingBySliding;
         }
         double share = path.Separated ? 0 : branch.Share(path.MostSpent);
         answer.Damage = state[StartDamage] + (1 - state[StartDamage]) * (1 - share);

@@ -110,7 +110,8 @@ internal readonly struct ReleaseBranch
 /// <param name="Traction">t [MPa].</param>
 /// <param name="HeldSlope">d c_M/dx: slope of the curve while growing, else 0 [MPa/mm].</param>
 /// <param name="DueSlope">dR/dx [1/mm].</param>
-internal readonly record struct ModeStart(double Separation, double Traction, double HeldSlope, double DueSlope);
+/// <param name="PlasticSlope">d(plastic separation)/dx.</param>
+internal readonly record struct ModeStart(double Separation, double Traction, double HeldSlope, double DueSlope, double PlasticSlope);
 
 /// <summary>
 /// Motion of the start with the end of a crossing stride: start = from + λ·Δ with f(start) = 1, so d start = λ·(1 - Δ⊗g/(g·Δ))·d end, g = df/d start.

@@ -14,6 +14,9 @@ internal readonly record struct Stride(Separation From, Separation To)
     /// <summary>Separation at a progress from 0 to 1; the ends are met exactly.</summary>
     public Separation At(double progress) => progress == 1 ? To : new(From.Opening + progress * OpeningChange, From.Sliding + progress * SlidingChange);
 
+    /// <summary>The same way counted from another origin.</summary>
+    public Stride CountedFrom(double opening, double sliding) => new(new Separation(From.Opening - opening, From.Sliding - sliding), new Separation(To.Opening - opening, To.Sliding - sliding));
+
     /// <summary>Progress at which a growing opening meets a value; infinite when it does not.</summary>
     public double ReachesOpening(double value) => To.Opening >= value && OpeningChange > 0 ? Math.Max(0, (value - From.Opening) / OpeningChange) : double.PositiveInfinity;
 

@@ -46,7 +46,7 @@ public sealed class LawPropertyTests
         // The trapezoids' own error. A single stride of the one-variable law takes the damage of its end alone: where the surfaces of equal damage are not convex
         // (exponent below 1) the way between may have met more, and the loop may seem to gain that little.
         Assert.InRange(fine, -1e-4, 0.1);
-        Assert.InRange(single, index == 6 ? -1e-2 : -1e-4, 0.1);
+        Assert.InRange(single, Laws.HasBentSurfaces(index) ? -1e-2 : -1e-4, 0.1);
     }
 
     private static double LeastLoop(ILayerLaw law, Func<LawWalk, double, double, double> workTo)
@@ -91,7 +91,7 @@ public sealed class LawPropertyTests
     [Fact]
     public void One_damage_variable_spends_its_toughness_of_the_mix_on_proportional_ways()
     {
-        foreach (BenzeggaghKenaneLaw law in Laws.OneDamage)
+        foreach (OneDamageLaw law in Laws.OneDamage)
         {
             Gen.Select(Gen.Double[0, Math.PI], Gen.Double[0.01, 0.5]).Sample(
                 (angle, stride) =>
@@ -106,9 +106,11 @@ public sealed class LawPropertyTests
                         if (stride < 0.1)
                             walk.To(0.4 * at * dw, 0.4 * at * dv);
                     }
-                    Close.To(law.Toughness(mix), walk.Answer.Dissipated, 1e-12);
-                    Close.To(mix * law.Toughness(mix), walk.Answer.EnergyShear, 1e-12, 1e-12);
-                    Close.To((1 - mix) * law.Toughness(mix), walk.Answer.EnergyPeel, 1e-12, 1e-12);
+                    // With an exponent below 1 the toughness hangs on the last digits of a mix next to pure shear.
+                    double rounding = law is PowerLaw ? 1e-10 : 1e-12;
+                    Close.To(law.Toughness(mix), walk.Answer.Dissipated, rounding);
+                    Close.To(mix * law.Toughness(mix), walk.Answer.EnergyShear, rounding, 1e-12);
+                    Close.To((1 - mix) * law.Toughness(mix), walk.Answer.EnergyPeel, rounding, 1e-12);
                 },
                 iter: 500);
         }
@@ -117,7 +119,7 @@ public sealed class LawPropertyTests
     [Fact]
     public void One_damage_variable_books_its_work_at_second_order_while_the_mix_changes()
     {
-        foreach (BenzeggaghKenaneLaw law in Laws.OneDamage)
+        foreach (OneDamageLaw law in Laws.OneDamage)
         {
             double coarse = Error(law, 4), fine = Error(law, 32), order = Math.Log2(coarse / fine) / 3;
             TestContext.Current.TestOutputHelper?.WriteLine(string.Create(CultureInfo.InvariantCulture, $"books of one damage variable: errors {coarse:e2} to {fine:e2}, order {order:f2}"));
@@ -126,7 +128,7 @@ public sealed class LawPropertyTests
         }
 
         // Strides that begin to grow midway add a scatter of second order.
-        static double Error(BenzeggaghKenaneLaw law, int strides)
+        static double Error(OneDamageLaw law, int strides)
         {
             double sum = 0;
             for (int k = 0; k < 20; k++)
@@ -149,7 +151,7 @@ public sealed class LawPropertyTests
     {
         double least = double.PositiveInfinity, most = 0;
         Random random = new(2);
-        BenzeggaghKenaneLaw law = Laws.OneDamage.First();
+        OneDamageLaw law = Laws.OneDamage.First();
         for (int trial = 0; trial < 400; trial++)
         {
             LawWalk walk = new(law);

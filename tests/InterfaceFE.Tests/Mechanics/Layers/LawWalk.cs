@@ -83,20 +83,44 @@ internal static class Laws
     public static readonly BilinearCurve ShearLine = new(8, 4, 2.2);
     public static readonly TrapezoidCurve Plateau = new(1.5, 0.45, 2.0);
     public static readonly ExponentialCurve Decaying = new(10, 2, 1.1, 3);
+    public static readonly LinearParabolicCurve Parabola = new(6, 1.5, 1.4);
     public static readonly TableCurve Tape = new([0, 0.3, 4, 7], [0, 0.42, 0.5, 0]);
 
     public static IEnumerable<ITractionCurve> Curves =>
     [
-        PeelLine, ShearLine, Plateau, Decaying, new ExponentialCurve(10, 2, 3.9, 3), new ExponentialCurve(10, 2, 3.0, 3), Tape,
+        PeelLine, ShearLine, Plateau, Decaying, Parabola, new ExponentialCurve(10, 2, 3.9, 3), new ExponentialCurve(10, 2, 3.0, 3), Tape,
         new TrapezoidCurve(2.5, 0.5, 2, 3.2, 5), new TableCurve([0, 0.1, 0.2, 0.5, 3], [0, 1, 2, 1, 0]),
+        new CavityCurve(Plateau, [0.3, 0.9, 3, 4], [0, 0.6, 0.7, 0], -0.07), new CavityCurve(Parabola, [0.3, 0.8, 1, 1.4], [0, 0.4, 0.4, 0], 0.3),
     ];
 
     public static IEnumerable<IndependentModesLaw> Independent =>
     [
         new(PeelLine, ShearLine, 30), new(PeelLine, ShearLine, 30, 0.1, EnergyCounting.NetWork), new(Tape, Plateau, 2), new(Decaying, Tape, 10, 0.02, EnergyCounting.NetWork), new(Decaying, PeelLine, 10, 0.01),
+        new(Parabola, Plateau, 6, 0.05, EnergyCounting.NetWork),
     ];
 
-    public static IEnumerable<BenzeggaghKenaneLaw> OneDamage => [new(PeelLine, ShearLine, 2.1, 30), new(PeelLine, ShearLine, 0.6, 30), new(ShearLine, PeelLine, 1, 5)];
+    public static IEnumerable<IndependentModesLaw> Plastic =>
+    [
+        new(Tape, Decaying, 6, 0.05, EnergyCounting.LargestSeparation, 0.4, 0.7), new(Parabola, PeelLine, 6, 0.05, EnergyCounting.NetWork, 1, 0.25),
+        new(PeelLine, Plateau, 6, 0.02, EnergyCounting.NetWork, 0, 0.999), new(Plateau, ShearLine, 6, 0.05, EnergyCounting.LargestSeparation, 0.6, 0),
+    ];
 
-    public static IEnumerable<ILayerLaw> All => [.. Independent, .. OneDamage];
+    public static IEnumerable<OneDamageLaw> OneDamage =>
+    [
+        new BenzeggaghKenaneLaw(PeelLine, ShearLine, 2.1, 30), new BenzeggaghKenaneLaw(PeelLine, ShearLine, 0.6, 30), new BenzeggaghKenaneLaw(ShearLine, PeelLine, 1, 5),
+        new PowerLaw(PeelLine, ShearLine, 1, 30), new PowerLaw(ShearLine, PeelLine, 1.7, 5), new PowerLaw(PeelLine, ShearLine, 0.7, 30),
+    ];
+
+    public static readonly PotentialMode HollowPeel = new(3, 0.9, 3.4, 0.05);
+    public static readonly PotentialMode BulgingShear = new(4, 2.2, 1.6, 0.12);
+
+    public static IEnumerable<CoupledPotentialLaw> Potentials => [new(HollowPeel, BulgingShear, 30), new(BulgingShear, HollowPeel, 30), new(HollowPeel, new PotentialMode(2, 0.9, 2, 0.01), 30)];
+
+    /// <summary>Whether surfaces of equal damage of a law are not convex, by its place in <see cref="All"/>.</summary>
+    public static bool HasBentSurfaces(int index) => index == Independent.Count() + 1;
+
+    /// <summary>Laws that unload to the origin.</summary>
+    public static IEnumerable<ILayerLaw> Secant => [.. Independent, .. OneDamage, .. Potentials];
+
+    public static IEnumerable<ILayerLaw> All => [.. Secant, .. Plastic];
 }

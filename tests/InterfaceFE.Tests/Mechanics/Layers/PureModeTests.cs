@@ -39,10 +39,11 @@ public sealed class PureModeTests
     {
         foreach (ILayerLaw law in Laws.All)
         {
-            foreach (double size in new[] { 1.0000001, 10, 1e8, 1e150, 1e300 })
+            // A curve that falls ever steeper gives way a little beyond its final separation, by less than the release length times its last share of length.
+            foreach (double size in new[] { 1.001, 10, 1e8, 1e150, 1e300 })
             {
-                Close.To(law.PeelToughness, new LawWalk(law).To(size * law.FinalOpening, 0).Answer.Dissipated, 1e-12, 0, law.GetType().Name);
-                Close.To(law.ShearToughness, new LawWalk(law).To(0, -size * law.FinalSliding).Answer.Dissipated, 1e-12, 0, law.GetType().Name);
+                Close.To(law.PeelToughness, new LawWalk(law).To(size * law.FinalOpening, 0).Answer.Dissipated, 1e-12, 0, $"{law.GetType().Name} {size}");
+                Close.To(law.ShearToughness, new LawWalk(law).To(0, -size * law.FinalSliding).Answer.Dissipated, 1e-12, 0, $"{law.GetType().Name} {size}");
             }
         }
     }
@@ -63,7 +64,7 @@ public sealed class PureModeTests
                 Close.To(curve.Traction(end), once.Peel, 1e-14);
             }
         }
-        foreach (BenzeggaghKenaneLaw law in Laws.OneDamage)
+        foreach (OneDamageLaw law in Laws.OneDamage)
         {
             BilinearCurve peel = new(law.Stiffness.Peel, Strength(law), law.PeelToughness);
             for (int i = 0; i < 200; i++)
@@ -75,7 +76,7 @@ public sealed class PureModeTests
             }
         }
 
-        static double Strength(BenzeggaghKenaneLaw law) => 2 * law.PeelToughness / law.FinalOpening;
+        static double Strength(OneDamageLaw law) => 2 * law.PeelToughness / law.FinalOpening;
     }
 
     [Fact]
@@ -103,7 +104,7 @@ public sealed class PureModeTests
     [Fact]
     public void Unloading_returns_to_the_origin_and_pressing_meets_the_contact_stiffness_at_any_damage()
     {
-        foreach (ILayerLaw law in Laws.All)
+        foreach (ILayerLaw law in Laws.Secant)
         {
             foreach (double share in new[] { 0, 0.01, 0.3, 0.8, 0.99, 2 })
             {

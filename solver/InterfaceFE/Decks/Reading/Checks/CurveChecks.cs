@@ -19,6 +19,8 @@ internal sealed class CurveChecks(CurveDeck curve, LayerDeck layer, string layer
         RefuseOtherKeys();
         if (curve.Law == CurveShape.Table)
             return CheckTable();
+        if (curve.Law == CurveShape.Potential)
+            return CheckPotential();
         double? strength = Needed("strength", curve.Strength);
         double? toughness = Needed("toughness", curve.Toughness);
         double? final = curve.Law == CurveShape.Exponential ? Needed("final separation", curve.FinalSeparation) : null;
@@ -30,6 +32,7 @@ internal sealed class CurveChecks(CurveDeck curve, LayerDeck layer, string layer
         {
             CurveShape.Bilinear => CheckBilinear(s, g, limit, stiffness),
             CurveShape.Trapezoid => CheckTrapezoid(s, g, limit, stiffness),
+            CurveShape.LinearParabolic => CheckParabola(s, g, limit, stiffness),
             _ => CheckExponential(s, g, limit, stiffness, final ?? double.NaN),
         };
     }
@@ -46,6 +49,7 @@ internal sealed class CurveChecks(CurveDeck curve, LayerDeck layer, string layer
             {
                 "opening" when curve.Law == CurveShape.Table => "does not apply to shear; a shear table has `sliding`",
                 "sliding" when curve.Law == CurveShape.Table => "does not apply to peel; a peel table has `opening`",
+                "stiffness" when curve.Law == CurveShape.Potential => "does not apply to the law potential: it follows from the other values, `initial slope` sets it",
                 "final separation" => $"does not apply to the law {word}: it follows from the other values",
                 "stiffness" or "strength" => $"does not apply to the law {word}: the points say it",
                 _ => $"does not apply to the law {word}",
@@ -55,8 +59,10 @@ internal sealed class CurveChecks(CurveDeck curve, LayerDeck layer, string layer
 
     private bool Takes(string key) => key switch
     {
-        "law" or "toughness" => true,
-        "stiffness" or "strength" => curve.Law != CurveShape.Table,
+        "law" or "toughness" or "plastic share" => true,
+        "stiffness" => curve.Law is not (CurveShape.Table or CurveShape.Potential),
+        "strength" => curve.Law != CurveShape.Table,
+        "exponent" or "initial slope" => curve.Law == CurveShape.Potential,
         "plateau until" => curve.Law == CurveShape.Trapezoid,
         "final separation" => curve.Law is CurveShape.Exponential or CurveShape.Trapezoid,
         "opening" => curve.Law == CurveShape.Table && isPeel,
@@ -97,6 +103,15 @@ internal sealed class CurveChecks(CurveDeck curve, LayerDeck layer, string layer
         return new CurveFigures(stiffness, strength, toughness, limit, limit, final, 0.5 * strength * limit);
     }
 
+    private CurveFigures CheckParabola(double strength, double toughness, double limit, double stiffness)
+    {
+        // Area of the rise and of the parabola: strength·limit/2 + 2/3·strength·(final - limit).
+        double final = 1.5 * toughness / strength + 0.25 * limit;
+        if (final <= limit * (1 + RoundOff))
+            FailShape($"is no more than the area {Energy(0.5 * strength * limit)} of the linear rise, strength²/(2·stiffness): nothing is left for the parabola; raise toughness or stiffness, or lower strength");
+        return new CurveFigures(stiffness, strength, toughness, limit, limit, final, 0.5 * strength * limit);
+    }
+
     private CurveFigures CheckTrapezoid(double strength, double toughness, double limit, double stiffness)
     {
         // Area of the trapezoid: strength/2·(final + plateau end - elastic limit); with both left out the plateau ends at two thirds of the final separation.
@@ -126,6 +141,21 @@ internal sealed class CurveChecks(CurveDeck curve, LayerDeck layer, string layer
         else if (share > 0.5)
             context.Warn(_path + ".toughness", $"is more than {Energy(rise + 0.5 * fall)}, the area under a straight fall: the exponential then bulges outwards; a trapezoid may be meant");
         return new CurveFigures(stiffness, strength, toughness, limit, limit, final, rise);
+    }
+
+    private CurveFigures CheckPotential()
+    {
+        double? strength = Needed("strength", curve.Strength), toughness = Needed("toughness", curve.Toughness), exponent = Needed("exponent", curve.Exponent), slope = Needed("initial slope", curve.InitialSlope);
+        if (strength is not { } s || toughness is not { } g || exponent is not { } alpha || slope is not { } lambda)
+            return CurveFigures.Unknown;
+        double largest = PotentialFigures.LargestInitialSlope(alpha);
+        if (lambda > largest)
+        {
+            context.Fail(_path + ".initial slope", string.Create(CultureInfo.InvariantCulture, $"must be at most 1/√(2·exponent - 1) = {NumberText.Rounded(largest, 4)} with this exponent: above, traction over separation would rise at first and damage would heal"));
+            return CurveFigures.Unknown;
+        }
+        PotentialFigures figures = PotentialFigures.Of(s, g, alpha, lambda);
+        return new CurveFigures(figures.Stiffness, s, g, s / figures.Stiffness, lambda * figures.Final, figures.Final, figures.AreaToPeak);
     }
 
     private CurveFigures CheckTable()
