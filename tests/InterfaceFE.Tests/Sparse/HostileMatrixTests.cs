@@ -236,6 +236,21 @@ public class HostileMatrixTests
     }
 
     [Fact]
+    public void A_matrix_that_is_not_symmetric_counts_by_its_mean_and_leaves_no_trace()
+    {
+        var model = new SparseModel();
+        int a = model.Vertex(0, 0, 1), b = model.Vertex(1, 0, 1);
+        int link = model.Slot([a, b], [0, 2, 2, 0]);
+        MultifrontalFactor sound = Checks.Factored(model), factor = Checks.Loaded(model);
+        factor.Replace(link, [0, 1, 3, 0]);
+        factor.Factor();
+        // The mean stays; what the rows of the first matrix said of the unknowns' scales does not.
+        factor.Replace(link, model.Matrices[link]);
+        Assert.Equal(sound.Factor(), factor.Factor());
+        Checks.SameBytes(sound, factor, [], new Random(1));
+    }
+
+    [Fact]
     public void A_pattern_without_vertices_has_an_empty_factor()
     {
         var model = new SparseModel();
