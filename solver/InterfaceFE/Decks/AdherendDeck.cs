@@ -5,11 +5,10 @@ namespace InterfaceFE.Decks;
 /// <summary>An adherend: a material and a shape.</summary>
 [Block("A body that is bonded: a rectangle, or a sheet bent along a line.")]
 [NotBuiltYet("curved")]
-[NotBuiltYet("plies")]
 public sealed record AdherendDeck
 {
     /// <summary>Material name.</summary>
-    [Key("of", "Name of the material.", Example = "aluminium")]
+    [Key("of", "Name of the material; with `plies`, of those that name none of their own.", Example = "aluminium")]
     public required string Of { get; init; }
 
     /// <summary>Rectangular shape.</summary>
@@ -20,6 +19,10 @@ public sealed record AdherendDeck
     [Key("sheet", "A sheet of even thickness along a line; edges `upper face`, `lower face`, `left end`, `right end` and named stretches.")]
     public SheetDeck? Sheet { get; init; }
 
+    /// <summary>Plies from the bottom or lower face up; null: one material throughout.</summary>
+    [Key("plies", "Plies from the bottom (lower face) up; their thicknesses add up to that of the adherend.", Example = "[{thickness: 0.5 mm, angle: 0 deg}, {thickness: 0.5 mm, angle: 90 deg}]", LeastCount = 1, MostCount = 500)]
+    public IReadOnlyList<PlyDeck>? Plies { get; init; }
+
     /// <summary>Width [mm]; null: the model's.</summary>
     [Key("width", "Width out of plane; left out: the model's.", Dimension = Dimension.Length, Example = "25 mm", Above = 0)]
     public double? Width { get; init; }
@@ -27,6 +30,23 @@ public sealed record AdherendDeck
     /// <summary>Division into elements.</summary>
     [Key("elements", "Division into elements; left out: as fine as the joints need.")]
     public ElementsDeck? Elements { get; init; }
+}
+
+/// <summary>A ply.</summary>
+[Block("A ply of a laminate.")]
+public sealed record PlyDeck
+{
+    /// <summary>Thickness [mm].</summary>
+    [Key("thickness", "Thickness of the ply.", Dimension = Dimension.Length, Example = "0.25 mm", Above = 0)]
+    public required double Thickness { get; init; }
+
+    /// <summary>Angle about the thickness axis [rad].</summary>
+    [Key("angle", "Turn of the material about the thickness axis, from x along the adherend towards z out of plane.", Dimension = Dimension.Angle, Example = "45 deg", Default = "0 deg")]
+    public double Angle { get; init; }
+
+    /// <summary>Material name; null: the adherend's.</summary>
+    [Key("of", "Name of the material; left out: that of the adherend.", Example = "carbon")]
+    public string? Of { get; init; }
 }
 
 /// <summary>A rectangle.</summary>

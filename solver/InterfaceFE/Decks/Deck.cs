@@ -131,6 +131,10 @@ public sealed record ModelDeck
     [Key("strain out of plane", "Strain out of plane, reached over the first stage that loads, cools or waits; with `uniform strain` only. Left out: the strain that leaves no force out of plane.", Example = "0.001", Above = -0.1, Below = 0.1)]
     public double? StrainOutOfPlane { get; init; }
 
+    /// <summary>Direction of weight; null: none.</summary>
+    [Key("gravity", "Direction in which the weight of the adherends acts, with 9.80665 m/s²; it comes on over the first stage that loads, cools or waits, and stays. Left out: no weight.", Example = "-y")]
+    public PullDirection? Gravity { get; init; }
+
     /// <summary>Rotation setting; written in every deck.</summary>
     [Key("rotation", "Whether rotations are small or finite; written in every deck, since `small` limits what the run is good for.")]
     public required RotationSetting Rotation { get; init; }

@@ -6,7 +6,6 @@ namespace InterfaceFE.Decks;
 /// Material of an adherend. Isotropic when <see cref="Young"/> and <see cref="Poisson"/> hold one number, else orthotropic with axes x (along), y (through the thickness), z (out of plane).
 /// </summary>
 [Block("A material of adherends: elastic, and with a yield curve elastic and plastic. One number each makes it isotropic; values by direction make it orthotropic: x along, y through the thickness, z out of plane.")]
-[NotBuiltYet("plies")]
 public sealed record MaterialDeck
 {
     /// <summary>Young's modulus or moduli [MPa].</summary>
@@ -24,6 +23,10 @@ public sealed record MaterialDeck
     /// <summary>Thermal expansion [1/K].</summary>
     [Key("expansion", "Thermal expansion, one number or by direction {x, y, z}.", Dimension = Dimension.Expansion, Example = "23e-6 1/K", Default = "0 1/K", Above = -1e-3, Below = 1e-3)]
     public Directional Expansion { get; init; } = new(0);
+
+    /// <summary>Density [t/mm³]; null: not known.</summary>
+    [Key("density", "Density; needed where the model has `gravity`.", Dimension = Dimension.Density, Example = "2700 kg/m^3", Above = 0)]
+    public double? Density { get; init; }
 
     /// <summary>Yielding; null: the material stays elastic.</summary>
     [Key("yield curve", "Yielding by von Mises; isotropic materials in eight-node elements. Left out: the material stays elastic.")]
@@ -90,4 +93,12 @@ public sealed record ShearModuli
     /// <summary>Shear modulus in the plane of the model [MPa].</summary>
     [Key("xy", "Shear modulus in the plane of the model.", Dimension = Dimension.Stress, Example = "3.6 GPa", Above = 0)]
     public required double Xy { get; init; }
+
+    /// <summary>Shear modulus along and out of plane [MPa].</summary>
+    [Key("xz", "Shear modulus in the plane of a sheet; needed by plies that are turned.", Dimension = Dimension.Stress, Example = "4.1 GPa", Above = 0)]
+    public double? Xz { get; init; }
+
+    /// <summary>Shear modulus through the thickness and out of plane [MPa].</summary>
+    [Key("zy", "Shear modulus through the thickness and out of plane; needed by plies that are turned.", Dimension = Dimension.Stress, Example = "3.6 GPa", Above = 0)]
+    public double? Zy { get; init; }
 }

@@ -112,6 +112,8 @@ internal sealed class JointPlanner
             double held = 1 - material.Poisson.Xz * material.Poisson.Xz * material.Young.Z / material.Young.X;
             modulus = held > 0 ? modulus / held : modulus;
         }
+        if (strip.Deck.Plies is not null)
+            modulus = PlyStack.BendingModulus(strip, _deck.Materials);
         return new Arm(modulus, strip.Thickness, strip.Width) { Tip = CrackTipModulus.Of(material, isHeld) };
     }
 

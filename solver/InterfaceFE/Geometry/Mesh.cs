@@ -24,14 +24,18 @@ public sealed class Mesh
     /// <summary>Number of nodes.</summary>
     public int NodeCount => X.Length;
 
-    /// <summary>Area of an adherend by the corners of its elements [mm²].</summary>
-    public double AreaOf(int adherend)
+    /// <summary>Area of an adherend, or of one row of its elements, by the corners of the elements [mm²].</summary>
+    /// <param name="adherend">Index of the adherend.</param>
+    /// <param name="row">Row from the bottom up; -1: all.</param>
+    public double AreaOf(int adherend, int row = -1)
     {
         int[] nodes = Adherends[adherend].Connectivity;
         double area = 0;
-        for (int e = 0; e < nodes.Length; e += NodesPerSolid)
+        for (int e = 0; e < nodes.Length / NodesPerSolid; e++)
         {
-            (int a, int b, int c, int d) = (nodes[e], nodes[e + 1], nodes[e + 2], nodes[e + 3]);
+            if (row >= 0 && e % Adherends[adherend].ElementsThrough != row)
+                continue;
+            (int a, int b, int c, int d) = (nodes[e * NodesPerSolid], nodes[e * NodesPerSolid + 1], nodes[e * NodesPerSolid + 2], nodes[e * NodesPerSolid + 3]);
             area += 0.5 * ((X[c] - X[a]) * (Y[d] - Y[b]) - (X[d] - X[b]) * (Y[c] - Y[a]));
         }
         return area;
@@ -70,6 +74,9 @@ public sealed class MeshedAdherend
 
     /// <summary>Elements through the thickness.</summary>
     public required int ElementsThrough { get; init; }
+
+    /// <summary>The ply, from the bottom up, in which each row of elements lies; empty for one material throughout.</summary>
+    public IReadOnlyList<int> PlyOfRow { get; init; } = [];
 
     /// <summary>Edges by name (top, bottom, left end, right end; or upper face, lower face, and stretches).</summary>
     public required IReadOnlyDictionary<string, MeshedEdge> Edges { get; init; }

@@ -74,6 +74,7 @@ public static class Mesher
                 NodeCount = grid.NodeCount,
                 ElementsAlong = grid.ElementsAlong,
                 ElementsThrough = grid.ElementsThrough,
+                PlyOfRow = PlyStack.Rows(grid.Strip, grid.Lines),
                 Edges = grid.Edges(),
                 StraightAlongX = grid.Strip.StraightAlongX,
             });

@@ -40,6 +40,9 @@ internal sealed class StripGrid
 
     public int ElementsAlong => _corners.Count - 1;
 
+    /// <summary>Shares of the thickness at the lines between rows of elements.</summary>
+    public ReadOnlySpan<double> Lines => _lines;
+
     public int ElementsThrough => _lines.Length - 1;
 
     /// <summary>Nodes of a strip.</summary>

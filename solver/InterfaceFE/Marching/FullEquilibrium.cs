@@ -33,7 +33,7 @@ public sealed class FullEquilibrium : IEquilibrium
     private readonly double[] _native, _force, _rate, _dissipation, _tangent, _work, _transformed;
     private int[] _heldUnknowns = [];
     private double[] _heldStart = [], _heldEnd = [];
-    private readonly double[] _externalStart, _externalEnd;
+    private readonly double[] _externalStart, _externalEnd, _weightStart, _weightEnd;
     private double _temperatureStart, _temperatureEnd, _baseProgress, _correctionProgress, _reference, _largestReference;
     private int _skewCount;
     private bool _factored, _generalFactored;
@@ -60,6 +60,8 @@ public sealed class FullEquilibrium : IEquilibrium
         _externalRate = new double[n];
         _externalStart = new double[n];
         _externalEnd = new double[n];
+        _weightStart = new double[n];
+        _weightEnd = new double[n];
         _held = new double[n];
         _heldRate = new double[n];
         _pressure = new double[n];
@@ -157,15 +159,22 @@ public sealed class FullEquilibrium : IEquilibrium
     /// <summary>External force on an unknown and what pressures put on it: all that does work from outside [N or N·mm].</summary>
     public double OutsideForce(int unknown) => _isHeld[unknown] ? _internal[unknown] : _external[unknown] - _pressure[unknown];
 
+    /// <summary>Force of a grip on an unknown: the external force without the weight that acts there [N or N·mm].</summary>
+    public double GripForce(int unknown) => ExternalForce(unknown) - _weightStart[unknown] - Progress * (_weightEnd[unknown] - _weightStart[unknown]);
+
     /// <summary>Begins a stage from the accepted point: values held, forces from where they are, temperature.</summary>
     public void StartStage(LoadStage stage)
     {
         _stage = stage;
         Array.Copy(_accepted, _u, _u.Length);
+        Array.Copy(_weightEnd, _weightStart, _weightEnd.Length);
+        Array.Clear(_weightEnd);
+        foreach (ForceTarget weight in stage.Weights)
+            _weightEnd[weight.Unknown] = weight.Value;
         for (int i = 0; i < _externalStart.Length; i++)
         {
             _externalStart[i] = ExternalForce(i);
-            _externalEnd[i] = _isHeld[i] ? 0 : _external[i];
+            _externalEnd[i] = (_isHeld[i] ? 0 : _external[i] - _weightStart[i]) + _weightEnd[i];
         }
         Array.Clear(_isHeld);
         _heldUnknowns = [.. stage.Held.Select(h => h.Unknown)];
@@ -184,7 +193,7 @@ public sealed class FullEquilibrium : IEquilibrium
             };
         }
         foreach (ForceTarget force in stage.Forces)
-            _externalEnd[force.Unknown] = force.Value;
+            _externalEnd[force.Unknown] = force.Value + _weightEnd[force.Unknown];
         for (int i = 0; i < _externalRate.Length; i++)
         {
             if (_isHeld[i])

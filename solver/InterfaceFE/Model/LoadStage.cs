@@ -39,6 +39,9 @@ public sealed class LoadStage
     /// <summary>Force targets of unknowns that are not held.</summary>
     public required IReadOnlyList<ForceTarget> Forces { get; init; }
 
+    /// <summary>Weight at the end, on any unknown; it goes linearly from that of the stage before.</summary>
+    public IReadOnlyList<ForceTarget> Weights { get; init; } = [];
+
     /// <summary>Temperature at the end [K]; null: unchanged.</summary>
     public required double? Temperature { get; init; }
 

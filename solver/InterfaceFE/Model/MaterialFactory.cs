@@ -1,4 +1,5 @@
 using InterfaceFE.Decks;
+using InterfaceFE.Geometry;
 using InterfaceFE.Mechanics.Materials;
 
 namespace InterfaceFE.Model;
@@ -14,6 +15,25 @@ public static class MaterialFactory
         return Guarded(name, () => material.ShearModulus is null && material.Expansion == new Directional(material.Expansion.X)
             ? PlaneElasticity.Isotropic(material.Young.X, material.Poisson.Xy, material.Expansion.X, StateOf(deck))
             : PlaneElasticity.Orthotropic(Constants(material), StateOf(deck)));
+    }
+
+    /// <summary>The elastic laws of an adherend in its own axes: one, or one for each row of elements where it has plies.</summary>
+    /// <exception cref="DeckException">The constants are no stable elastic material.</exception>
+    public static PlaneElasticity[] Rows(Deck deck, MeshedAdherend adherend)
+    {
+        if (deck.Adherends[adherend.Name].Plies is not { } plies)
+            return [Create(deck, adherend.Material)];
+        PlaneElasticity[] ofPly = [.. plies.Select(ply => Ply(deck, ply.Of ?? adherend.Material, ply.Angle))];
+        return [.. adherend.PlyOfRow.Select(ply => ofPly[ply])];
+    }
+
+    private static PlaneElasticity Ply(Deck deck, string name, double angle)
+    {
+        MaterialDeck material = deck.Materials[name];
+        if (Math.Abs(Math.Sin(angle)) <= 1e-12)
+            return Create(deck, name);
+        OrthotropicConstants constants = Constants(material);
+        return Guarded(name, () => TurnedPly.Of(constants, material.ShearModulus?.Xz ?? constants.ShearXy, material.ShearModulus?.Zy ?? constants.ShearXy, angle, StateOf(deck)));
     }
 
     /// <summary>The same material as it yields; null when it does not.</summary>

@@ -16,12 +16,13 @@ public static class ModelBuilder
     public static SpecimenModel Build(Deck deck, Mesh mesh)
     {
         bool turns = deck.Model.Rotation == RotationSetting.Finite;
-        PlaneElasticity[] materials = [.. mesh.Adherends.Select(a => MaterialFactory.Create(deck, a.Material))];
+        PlaneElasticity[][] materials = [.. mesh.Adherends.Select(a => MaterialFactory.Rows(deck, a))];
         OutOfPlaneGroups? outOfPlane = deck.Model.OutOfPlane == OutOfPlane.UniformStrain ? new OutOfPlaneGroups(mesh, deck.Model.Width, deck.Model.StrainOutOfPlane) : null;
         (IReadOnlyList<GripBody> bodies, IReadOnlyList<Grip> grips) = GripPlanner.Plan(deck, mesh);
         var unknowns = new UnknownMap(mesh, bodies, outOfPlane, turns);
-        SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature, MaterialFactory.Yielding(deck, a.Material), unknowns.LinkOf(i), turns))];
-        double[] across = [.. mesh.Adherends.Select((_, i) => FreeAcross(deck, mesh, outOfPlane, i))];
+        SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature,
+            a.PlyOfRow.Count == 0 ? MaterialFactory.Yielding(deck, a.Material) : null, unknowns.LinkOf(i), turns))];
+        double[] across = [.. mesh.Adherends.Select((_, i) => FreeAcross(deck, mesh, materials, outOfPlane, i))];
         LayerBlock[] layers = [.. mesh.Joints.Select(joint => Layer(deck, mesh, joint, materials, across))];
         LayerBlock[] openFaces = [.. mesh.Joints.Zip(layers, (joint, layer) => OpenFaces(deck, mesh, joint, layer)).Where(block => block.Count > 0)];
         return new SpecimenModel
@@ -33,12 +34,12 @@ public static class ModelBuilder
             Pressures = PressurePlanner.Plan(deck, mesh),
             Layers = layers,
             Grips = grips,
-            Stages = SequencePlanner.Plan(deck, unknowns, grips),
+            Stages = SequencePlanner.Plan(deck, unknowns, grips, WeightPlanner.Plan(deck, mesh, unknowns, solids)),
             StressFreeTemperature = deck.StressFreeTemperature,
         };
     }
 
-    private static LayerBlock Layer(Deck deck, Mesh mesh, MeshedJoint joint, PlaneElasticity[] materials, double[] across)
+    private static LayerBlock Layer(Deck deck, Mesh mesh, MeshedJoint joint, PlaneElasticity[][] materials, double[] across)
     {
         LayerDeck layer = deck.Layers![joint.Layer];
         ILayerLaw law = LayerLawFactory.Create(joint.Layer, layer, deck.Model.OutOfPlane);
@@ -47,17 +48,18 @@ public static class ModelBuilder
         double perKelvin = LayerLawFactory.Bulk(layer, deck.Model.OutOfPlane)?.FreeOpening(1, along, out3) ?? 0;
         return new LayerBlock(mesh, joint, law, layer.Thickness, Rule(deck, mesh), perKelvin, deck.StressFreeTemperature, bonded: true, Kinematics(deck, joint));
 
-        double Along(int adherend) => materials[adherend].Expansion[0] + (deck.Model.OutOfPlane == OutOfPlane.UniformStrain ? materials[adherend].DrivenOutOfPlane().Expansion[0] * across[adherend] : 0);
+        double Along(int adherend) => Mean(mesh, adherend, materials[adherend], m => m.YoungAlongX,
+            m => m.Expansion[0] + (deck.Model.OutOfPlane == OutOfPlane.UniformStrain ? m.DrivenOutOfPlane().Expansion[0] * across[adherend] : 0));
     }
 
     /// <summary>
     /// Free strain out of plane of an adherend per kelvin [1/K]: held 0, free its own expansion, with a uniform strain that of its group when nothing else strains it: mean expansion by
     /// stiffness out of plane; 0 where the strain is given.
     /// </summary>
-    private static double FreeAcross(Deck deck, Mesh mesh, OutOfPlaneGroups? groups, int adherend)
+    private static double FreeAcross(Deck deck, Mesh mesh, PlaneElasticity[][] materials, OutOfPlaneGroups? groups, int adherend)
     {
         if (groups is null)
-            return deck.Model.OutOfPlane == OutOfPlane.Held ? 0 : deck.Materials[mesh.Adherends[adherend].Material].Expansion.Z;
+            return deck.Model.OutOfPlane == OutOfPlane.Held ? 0 : FreeExpansionAcross(deck, mesh.Adherends[adherend]);
         if (groups.Given is not null)
             return 0;
         double sum = 0, stiffness = 0;
@@ -65,12 +67,40 @@ public static class ModelBuilder
         {
             if (groups.Of(i) != groups.Of(adherend))
                 continue;
-            MaterialDeck material = deck.Materials[mesh.Adherends[i].Material];
-            double own = material.Young.Z * mesh.Adherends[i].Width * mesh.AreaOf(i);
-            sum += own * material.Expansion.Z;
+            double own = mesh.Adherends[i].Width * mesh.AreaOf(i) * Mean(mesh, i, materials[i], _ => 1, m => m.YoungOutOfPlane);
+            sum += own * Mean(mesh, i, materials[i], m => m.YoungOutOfPlane, m => m.ExpansionOutOfPlane);
             stiffness += own;
         }
         return sum / stiffness;
+    }
+
+    /// <summary>Expansion out of plane [1/K]; of plies the mean by thickness.</summary>
+    private static double FreeExpansionAcross(Deck deck, MeshedAdherend adherend)
+    {
+        if (deck.Adherends[adherend.Name].Plies is not { } plies)
+            return deck.Materials[adherend.Material].Expansion.Z;
+        double sum = 0;
+        foreach (PlyDeck ply in plies)
+        {
+            Directional own = deck.Materials[ply.Of ?? adherend.Material].Expansion;
+            sum += ply.Thickness * (own.Z + (own.X - own.Z) * Math.Pow(Math.Sin(ply.Angle), 2));
+        }
+        return sum / plies.Sum(p => p.Thickness);
+    }
+
+    /// <summary>Mean of a value over the rows of elements of an adherend, by their height and a weight.</summary>
+    private static double Mean(Mesh mesh, int adherend, PlaneElasticity[] rows, Func<PlaneElasticity, double> weight, Func<PlaneElasticity, double> value)
+    {
+        if (rows.Length == 1)
+            return value(rows[0]);
+        double sum = 0, weights = 0;
+        for (int row = 0; row < rows.Length; row++)
+        {
+            double own = weight(rows[row]) * mesh.AreaOf(adherend, row);
+            sum += own * value(rows[row]);
+            weights += own;
+        }
+        return sum / weights;
     }
 
     private static LayerBlock OpenFaces(Deck deck, Mesh mesh, MeshedJoint joint, LayerBlock layer) =>

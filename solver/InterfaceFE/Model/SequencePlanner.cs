@@ -16,22 +16,28 @@ public sealed class SequencePlanner
     private readonly Deck _deck;
     private readonly UnknownMap _unknowns;
     private readonly IReadOnlyList<Grip> _grips;
+    private readonly IReadOnlyList<ForceTarget> _weights;
     private readonly SortedSet<int> _held = [];
     private readonly SortedDictionary<int, double> _forces = [];
     private bool _hasMarched;
 
-    private SequencePlanner(Deck deck, UnknownMap unknowns, IReadOnlyList<Grip> grips)
+    private SequencePlanner(Deck deck, UnknownMap unknowns, IReadOnlyList<Grip> grips, IReadOnlyList<ForceTarget> weights)
     {
+        _weights = weights;
         _deck = deck;
         _unknowns = unknowns;
         _grips = grips;
     }
 
     /// <summary>Plans the stages.</summary>
+    /// <param name="deck">The deck.</param>
+    /// <param name="unknowns">Unknowns.</param>
+    /// <param name="grips">Grips.</param>
+    /// <param name="weights">Weight, which comes on over the first stage that marches.</param>
     /// <exception cref="DeckException">A stage asks of a grip what it cannot do.</exception>
-    public static IReadOnlyList<LoadStage> Plan(Deck deck, UnknownMap unknowns, IReadOnlyList<Grip> grips)
+    public static IReadOnlyList<LoadStage> Plan(Deck deck, UnknownMap unknowns, IReadOnlyList<Grip> grips, IReadOnlyList<ForceTarget> weights)
     {
-        var planner = new SequencePlanner(deck, unknowns, grips);
+        var planner = new SequencePlanner(deck, unknowns, grips, weights);
         planner.HoldGivenStrain();
         return [.. deck.Sequence.Select((stage, i) => planner.Stage(stage, i + 1))];
     }
@@ -122,6 +128,7 @@ public sealed class SequencePlanner
             Words = words,
             Held = [.. _held.Select(u => targets.TryGetValue(u, out HeldTarget t) ? t : new HeldTarget(u, TargetKind.Stay, 0))],
             Forces = [.. _forces.Select(f => new ForceTarget(f.Key, f.Value))],
+            Weights = _hasMarched ? _weights : [],
             Temperature = temperature,
             Duration = duration,
             Marches = marches,

@@ -102,6 +102,9 @@ public abstract class SolidBlock : IElementBlock
     /// <summary>Derivatives of the shape functions at the Gauss points [1/mm] (point after point, one per node) and the areas the points stand for [mm²].</summary>
     public abstract void ShapeGradients(int element, Span<double> byX, Span<double> byY, Span<double> areas);
 
+    /// <summary>Volume of an element that each of its nodes stands for: integral of its shape function [mm³]; one per node, overwritten.</summary>
+    public abstract void VolumeShares(int element, Span<double> volumes);
+
     /// <summary>Positions of the Gauss points x, y [mm], point after point; length 8, overwritten.</summary>
     public abstract void GaussPositions(int element, Span<double> positions);
 
@@ -115,31 +118,31 @@ public abstract class SolidBlock : IElementBlock
     /// <summary>Makes the block of an adherend in the mesh's kind of element.</summary>
     /// <param name="mesh">The mesh.</param>
     /// <param name="adherend">Adherend.</param>
-    /// <param name="material">Material in the axes of the adherend: x along it.</param>
+    /// <param name="materials">Material in the axes of the adherend, x along it: one, or one for each row of elements from the bottom up.</param>
     /// <param name="stressFreeTemperature">Temperature without thermal stress [K].</param>
     /// <param name="yielding">The same material as it yields; null: it does not.</param>
     /// <param name="outOfPlane">The unknown with which it strains out of plane; null: none.</param>
     /// <param name="turns">Whether rotations are finite.</param>
     /// <exception cref="ArgumentException">The material yields or rotations are finite, and the elements have four nodes; or rotations are finite and there is a strain out of plane.</exception>
     public static SolidBlock Create(
-        Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature, J2Plasticity? yielding = null, OutOfPlaneLink? outOfPlane = null, bool turns = false)
+        Mesh mesh, MeshedAdherend adherend, PlaneElasticity[] materials, double stressFreeTemperature, J2Plasticity? yielding = null, OutOfPlaneLink? outOfPlane = null, bool turns = false)
     {
         bool eight = mesh.NodesPerSolid == Quadrilateral8.NodeCount;
         if (turns)
         {
             return eight && outOfPlane is null
-                ? new TurningBlock(mesh, adherend, material, yielding, stressFreeTemperature)
+                ? new TurningBlock(mesh, adherend, materials, yielding, stressFreeTemperature)
                 : throw new ArgumentException("finite rotation needs eight-node elements without strain out of plane", nameof(turns));
         }
         if (yielding is not null)
         {
             return eight
-                ? new YieldingBlock(mesh, adherend, material, yielding, stressFreeTemperature, outOfPlane)
+                ? new YieldingBlock(mesh, adherend, materials, yielding, stressFreeTemperature, outOfPlane)
                 : throw new ArgumentException("yielding needs eight-node elements", nameof(yielding));
         }
         if (outOfPlane is { } link)
-            return eight ? new UniformBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature, link) : new UniformBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature, link);
-        return eight ? new SolidBlock<Quadrilateral8>(mesh, adherend, material, stressFreeTemperature) : new SolidBlock<Quadrilateral4>(mesh, adherend, material, stressFreeTemperature);
+            return eight ? new UniformBlock<Quadrilateral8>(mesh, adherend, materials, stressFreeTemperature, link) : new UniformBlock<Quadrilateral4>(mesh, adherend, materials, stressFreeTemperature, link);
+        return eight ? new SolidBlock<Quadrilateral8>(mesh, adherend, materials, stressFreeTemperature) : new SolidBlock<Quadrilateral4>(mesh, adherend, materials, stressFreeTemperature);
     }
 }
 
@@ -156,7 +159,7 @@ internal class SolidBlock<TElement> : SolidBlock
     private readonly double[] _coordinates, _stiffness, _thermal, _blocked;
     private readonly PlaneElasticity[] _materials;
 
-    public SolidBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature)
+    public SolidBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity[] materials, double stressFreeTemperature)
         : base(adherend, stressFreeTemperature)
     {
         int n = TElement.Unknowns;
@@ -176,6 +179,7 @@ internal class SolidBlock<TElement> : SolidBlock
                 xy[2 * i] = mesh.X[nodes[i]];
                 xy[2 * i + 1] = mesh.Y[nodes[i]];
             }
+            PlaneElasticity material = materials[e % materials.Length];
             _materials[e] = adherend.StraightAlongX ? material : material.Rotated(AngleAlong(xy));
             TElement.Stiffness(xy, _materials[e], adherend.Width, _stiffness.AsSpan(e * n * n, n * n));
             TElement.ThermalForce(xy, _materials[e], adherend.Width, _thermal.AsSpan(e * n, n));
@@ -225,6 +229,19 @@ internal class SolidBlock<TElement> : SolidBlock
         TElement.ShapeGradients(Coordinates(element), byX, byY, areas);
 
     public override void GaussPositions(int element, Span<double> positions) => TElement.GaussPositions(Coordinates(element), positions);
+
+    public override void VolumeShares(int element, Span<double> volumes)
+    {
+        Span<double> byX = stackalloc double[4 * TElement.Nodes], byY = stackalloc double[4 * TElement.Nodes], areas = stackalloc double[GaussPoints.Count], shape = stackalloc double[TElement.Nodes];
+        TElement.ShapeGradients(Coordinates(element), byX, byY, areas);
+        volumes.Clear();
+        for (int point = 0; point < GaussPoints.Count; point++)
+        {
+            TElement.ShapeFunctions(GaussPoints.Xi(point), GaussPoints.Eta(point), shape);
+            for (int i = 0; i < shape.Length; i++)
+                volumes[i] += shape[i] * areas[point] * Adherend.Width;
+        }
+    }
 
     public override void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues) =>
         TElement.ExtrapolateToNodes(components, gaussValues, nodeValues);

@@ -14,7 +14,7 @@ internal sealed class TurningBlock : SolidBlock
     private readonly IPlaneLaw[] _laws;
     private readonly int _stateSize;
 
-    public TurningBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, J2Plasticity? yielding, double stressFreeTemperature)
+    public TurningBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity[] materials, J2Plasticity? yielding, double stressFreeTemperature)
         : base(adherend, stressFreeTemperature)
     {
         Count = adherend.Connectivity.Length / Nodes8;
@@ -35,7 +35,7 @@ internal sealed class TurningBlock : SolidBlock
             }
             Quadrilateral8.ShapeGradients(xy, Slice(_byX, e), Slice(_byY, e), _areas.AsSpan(e * Points, Points));
             double angle = adherend.StraightAlongX ? 0 : AngleAlong(xy);
-            _materials[e] = material.Rotated(angle);
+            _materials[e] = materials[e % materials.Length].Rotated(angle);
             _laws[e] = yielding is null ? _materials[e] : yielding.Rotated(angle);
         }
         YieldCurve = yielding?.Curve;
@@ -98,6 +98,18 @@ internal sealed class TurningBlock : SolidBlock
     }
 
     public override void GaussPositions(int element, Span<double> positions) => Quadrilateral8.GaussPositions(Coordinates(element), positions);
+
+    public override void VolumeShares(int element, Span<double> volumes)
+    {
+        Span<double> shape = stackalloc double[Nodes8];
+        volumes[..Nodes8].Clear();
+        for (int p = 0; p < Points; p++)
+        {
+            Quadrilateral8.ShapeFunctions(GaussPoints.Xi(p), GaussPoints.Eta(p), shape);
+            for (int i = 0; i < Nodes8; i++)
+                volumes[i] += shape[i] * _areas[element * Points + p] * Adherend.Width;
+        }
+    }
 
     public override void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues) =>
         Quadrilateral8.ExtrapolateToNodes(components, gaussValues, nodeValues);

@@ -14,8 +14,8 @@ internal sealed class UniformBlock<TElement> : SolidBlock<TElement>
     private readonly double[] _force, _stiffness, _mixed;
     private readonly OutOfPlaneLink _link;
 
-    public UniformBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, double stressFreeTemperature, OutOfPlaneLink link)
-        : base(mesh, adherend, material, stressFreeTemperature)
+    public UniformBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity[] materials, double stressFreeTemperature, OutOfPlaneLink link)
+        : base(mesh, adherend, materials, stressFreeTemperature)
     {
         int n = TElement.Unknowns;
         _link = link;

@@ -10,8 +10,8 @@ internal sealed class YieldingBlock : SolidBlock<Quadrilateral8>
     private readonly J2Plasticity[] _laws;
     private readonly OutOfPlaneLink? _link;
 
-    public YieldingBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity material, J2Plasticity yielding, double stressFreeTemperature, OutOfPlaneLink? link)
-        : base(mesh, adherend, material, stressFreeTemperature)
+    public YieldingBlock(Mesh mesh, MeshedAdherend adherend, PlaneElasticity[] materials, J2Plasticity yielding, double stressFreeTemperature, OutOfPlaneLink? link)
+        : base(mesh, adherend, materials, stressFreeTemperature)
     {
         _link = link;
         _laws = new J2Plasticity[Count];

@@ -36,12 +36,13 @@ public sealed class EnergyReleaseRates
         _upper = model.Solids[_joint.UpperAdherend];
         _lower = model.Solids[_joint.LowerAdherend];
         double tip = model.Mesh.X[front.TipNode];
-        PathReason = Place(tip, out double behind, out double ahead);
+        bool isHeavy = model.Stages.Any(stage => stage.Weights.Count > 0);
+        PathReason = Place(tip, out double behind, out double ahead) ?? (isHeavy ? "weight acts on the arms" : null);
         _behindFrom = Math.Min(tip + 0.3 * (behind - tip), tip + 0.7 * (behind - tip));
         _behindTo = Math.Max(tip + 0.3 * (behind - tip), tip + 0.7 * (behind - tip));
         _aheadFrom = Math.Min(tip + 0.85 * (ahead - tip), tip + 0.95 * (ahead - tip));
         _aheadTo = Math.Max(tip + 0.85 * (ahead - tip), tip + 0.95 * (ahead - tip));
-        RotationReason = CheckRotation(tip);
+        RotationReason = CheckRotation(tip) ?? (isHeavy ? "weight acts on the arms" : null);
     }
 
     /// <summary>Why J by path has no value; null when it has.</summary>
@@ -232,6 +233,8 @@ public sealed class EnergyReleaseRates
             return "an adherend is bent";
         if (IsPressed)
             return "pressure acts on an adherend";
+        if (_upper.Adherend.PlyOfRow.Count > 0 || _lower.Adherend.PlyOfRow.Count > 0)
+            return "an adherend has plies";
         if (_model.Solids.Count != 2)
             return "there are further adherends";
         if (_model.Unknowns.Bodies.Any(body => Spans(body, tip)))

@@ -32,12 +32,12 @@ public sealed class GripReader(SpecimenModel model, IReadOnlyList<GripInfo> grip
                 x += equilibrium.AcceptedDisplacement[first];
                 y += equilibrium.AcceptedDisplacement[first + 1];
                 points++;
-                forceX += equilibrium.ExternalForce(first);
-                forceY += equilibrium.ExternalForce(first + 1);
+                forceX += equilibrium.GripForce(first);
+                forceY += equilibrium.GripForce(first + 1);
                 if (grip.Bodies.Count == 1)
                 {
                     rotation = equilibrium.AcceptedDisplacement[first + 2];
-                    moment = equilibrium.ExternalForce(first + 2);
+                    moment = equilibrium.GripForce(first + 2);
                 }
                 continue;
             }
@@ -47,8 +47,8 @@ public sealed class GripReader(SpecimenModel model, IReadOnlyList<GripInfo> grip
                 x += equilibrium.AcceptedDisplacement[first];
                 y += equilibrium.AcceptedDisplacement[first + 1];
                 points++;
-                forceX += equilibrium.ExternalForce(first);
-                forceY += equilibrium.ExternalForce(first + 1);
+                forceX += equilibrium.GripForce(first);
+                forceY += equilibrium.GripForce(first + 1);
             }
         }
         return new GripReading((x * info.DirectionX + y * info.DirectionY) / points, forceX * info.DirectionX + forceY * info.DirectionY, rotation, moment, forceX, forceY);

@@ -24,7 +24,7 @@ internal static class OutOfPlaneAdvice
             MaterialDeck material = deck.Materials[arm.Material];
             double poisson = material.Poisson.Xy;
             bool isIsotropic = material.ShearModulus is null && material.Young == new Directional(material.Young.X) && material.Poisson == new PoissonRatios(poisson);
-            if (!isIsotropic || poisson == 0 || arm.Width >= Narrow * arm.Thickness || !mesh.Joints.Any(j => j.UpperAdherend == i || j.LowerAdherend == i))
+            if (!isIsotropic || arm.PlyOfRow.Count > 0 || poisson == 0 || arm.Width >= Narrow * arm.Thickness || !mesh.Joints.Any(j => j.UpperAdherend == i || j.LowerAdherend == i))
                 continue;
             advice.Add(Text.Of($"{arm.Name} is {arm.Width:G4} mm wide and {arm.Thickness:G4} mm thick. If the part ends at this width, as in a coupon, `out of plane: free` suits it: held, it bends {100 * (1 / (1 - poisson * poisson) - 1):0.#} % stiffer, and toughness from load and modulus comes out {100 * poisson * poisson:0.#} % lower. Leave it held for a slice of a long joint"));
         }

@@ -44,4 +44,7 @@ public enum Dimension
 
     /// <summary>Angular speed, internal unit rad/s.</summary>
     AngularSpeed,
+
+    /// <summary>Mass per volume, internal unit t/mm³ (N·s²/mm⁴).</summary>
+    Density,
 }

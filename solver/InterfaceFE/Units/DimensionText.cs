@@ -19,6 +19,7 @@ public static class DimensionText
         new(Dimension.Time, "a time", "s", "6 h", new(0, 0, 1, 0, 0)),
         new(Dimension.Speed, "a speed", "mm/s", "2 mm/min", new(1, 0, -1, 0, 0)),
         new(Dimension.AngularSpeed, "an angular speed", "rad/s", "2 deg/min", new(0, 0, -1, 0, 1)),
+        new(Dimension.Density, "a density (mass per volume)", "t/mm^3", "2700 kg/m^3", new(-4, 1, 2, 0, 0)),
     ];
 
     /// <summary>The dimension in words, with its article: "a length".</summary>

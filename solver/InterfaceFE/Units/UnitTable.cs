@@ -10,6 +10,7 @@ internal static class UnitTable
     private static readonly UnitPowers Stress = new(-2, 1, 0, 0, 0);
     private static readonly UnitPowers Time = new(0, 0, 1, 0, 0);
     private static readonly UnitPowers Energy = new(1, 1, 0, 0, 0);
+    private static readonly UnitPowers Mass = new(-1, 1, 2, 0, 0);
     private static readonly UnitPowers Angle = new(0, 0, 0, 0, 1);
 
     private static readonly Dictionary<string, KnownUnit> Units = new(StringComparer.Ordinal)
@@ -44,6 +45,8 @@ internal static class UnitTable
         ["J"] = new(1000, 1, Energy),
         ["kJ"] = new(1e6, 1, Energy),
         ["mJ"] = new(1, 1, Energy),
+        ["t"] = new(1, 1, Mass),
+        ["kg"] = new(1, 1000, Mass),
         ["%"] = new(1, 100, default),
     };
 

@@ -109,7 +109,7 @@ public class LayerPatchTests
         {
             Mesh = mesh,
             Unknowns = unknowns,
-            Solids = [.. mesh.Adherends.Select(a => SolidBlock.Create(mesh, a, material, 293.15))],
+            Solids = [.. mesh.Adherends.Select(a => SolidBlock.Create(mesh, a, [material], 293.15))],
             OpenFaces = [],
             Layers = [new LayerBlock(mesh, mesh.Joints[0], law, 0.1, LayerRule.SubIntervals(mesh.NodesPerFace), 0, 293.15, bonded: true)],
             Grips = [new Grip("outline", [0])],

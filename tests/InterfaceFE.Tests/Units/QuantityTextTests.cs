@@ -8,6 +8,8 @@ public class QuantityTextTests
 {
     [Theory]
     [InlineData("1.1 mm", Dimension.Length, 1.1)]
+    [InlineData("2700 kg/m^3", Dimension.Density, 2.7e-9)]
+    [InlineData("2.7 t/m^3", Dimension.Density, 2.7e-9)]
     [InlineData("35 µm", Dimension.Length, 0.035)]
     [InlineData("35 μm", Dimension.Length, 0.035)]
     [InlineData("1.5m", Dimension.Length, 1500)]

@@ -98,6 +98,24 @@ public sealed class PlaneElasticity : IPlaneLaw
             held ? constants.YoungZ : 0);
     }
 
+    /// <summary>A material from its parts in the model's axes; see <see cref="TurnedPly"/>.</summary>
+    /// <param name="state">State out of plane.</param>
+    /// <param name="stiffness">Plane stiffness, 3×3.</param>
+    /// <param name="expansion">Free in-plane strain per kelvin.</param>
+    /// <param name="outOfPlaneByStress">szz by in-plane stress.</param>
+    /// <param name="outOfPlaneByTemperature">szz by temperature at no in-plane stress [MPa/K].</param>
+    /// <param name="blockedEnergy">Energy per kelvin² at no in-plane stress [MPa/K²].</param>
+    /// <param name="youngZ">szz by strain out of plane at no in-plane stress [MPa]; 0 when free.</param>
+    internal static PlaneElasticity FromParts(
+        OutOfPlaneState state, double[] stiffness, double[] expansion, double[] outOfPlaneByStress, double outOfPlaneByTemperature, double blockedEnergy, double youngZ) =>
+        new(state, stiffness, expansion, outOfPlaneByStress, outOfPlaneByTemperature, blockedEnergy, youngZ);
+
+    /// <summary>Modulus out of plane at no in-plane stress [MPa]; held, else 0.</summary>
+    internal double YoungOutOfPlane => _youngZ;
+
+    /// <summary>Free strain out of plane per kelvin [1/K]; held.</summary>
+    internal double ExpansionOutOfPlane => -_outOfPlaneByTemperature / _youngZ;
+
     /// <summary>
     /// This held material as it answers to a strain out of plane e instead of a temperature change: the same stiffness with "expansion" -nu_z and szz = nu_z·stress + E_z·e. All that is
     /// computed for a temperature change (force, energy at no displacement) then holds for e.

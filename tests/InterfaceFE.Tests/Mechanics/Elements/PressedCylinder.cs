@@ -66,7 +66,7 @@ internal sealed class PressedCylinder : IMarchObserver
         {
             Mesh = mesh,
             Unknowns = unknowns,
-            Solids = [SolidBlock.Create(mesh, mesh.Adherends[0], elasticity, StressFree, yielding)],
+            Solids = [SolidBlock.Create(mesh, mesh.Adherends[0], [elasticity], StressFree, yielding)],
             OpenFaces = [],
             Layers = [],
             Grips = [new Grip("edges", [0, 1, 2])],

@@ -20,6 +20,12 @@ internal static class AdherendChecks
             context.FailAt(context.Find(path, out _).Key, path, "has no shape; give `rectangle` or `sheet`, for example rectangle: {corner: [0 mm, 0 mm], size: [300 mm, 4 mm]}");
         if (adherend.Sheet is { } drawn)
             CheckSheet(drawn, path + ".sheet", context);
+        if (deck.Model?.Gravity is not null)
+            foreach (string name in (adherend.Plies?.Select(ply => ply?.Of ?? adherend.Of) ?? [adherend.Of]).OfType<string>().Distinct())
+                if (deck.Materials?.GetValueOrDefault(name) is { Density: null } && !context.IsGiven($"materials.{name}.density"))
+                    context.Fail("model.gravity", $"needs the density of {name}, of which {path["adherends.".Length..]} is made, for example density: 2700 kg/m^3");
+        if (adherend.Plies is { } plies)
+            PlyChecks.Run(deck, adherend, plies, path, context);
         if (adherend.Elements?.Finer is { } finer)
             for (int i = 0; i < finer.Count; i++)
                 if (finer[i] is { } place)

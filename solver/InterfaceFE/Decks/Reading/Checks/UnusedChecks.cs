@@ -7,6 +7,8 @@ internal static class UnusedChecks
     public static void Run(Deck deck, ReadContext context)
     {
         HashSet<string?> materials = [.. DeckChecks.Entries(deck.Adherends).Select(a => a.Value.Of)];
+        foreach ((_, AdherendDeck adherend) in DeckChecks.Entries(deck.Adherends))
+            materials.UnionWith(adherend.Plies?.Select(ply => ply?.Of) ?? []);
         HashSet<string?> layers = [.. DeckChecks.Entries(deck.Joints).Select(j => j.Value.Layer)];
         Warn(deck.Materials?.Keys, materials, "materials", "no adherend is made of it", context);
         Warn(deck.Layers?.Keys, layers, "layers", "no joint uses it", context);
