@@ -34,4 +34,23 @@ public class YieldingCylinderTests(ITestOutputHelper output)
         Assert.Equal(MarchStatus.StoppedEarly, cylinder.Outcome.Status);
         Close.To(1, 1.02 * cylinder.Reached, 1e-5);
     }
+
+    [Fact]
+    public void Corrections_converge_quadratically_while_metal_yields()
+    {
+        PressedCylinder cylinder = new(4, 8, 0.3, 0.999 * PressedCylinder.Pressure(PressedCylinder.Outer));
+        List<double> orders = [];
+        foreach (IGrouping<int, MarchIteration> point in cylinder.Iterations.GroupBy(i => i.Point))
+        {
+            double[] relative = [.. point.Select(i => i.Newton.Relative)];
+            // The last three forces out of balance, once they are small and before rounding rules.
+            for (int i = 2; i < relative.Length; i++)
+                if (relative[i - 2] < 1e-2 && relative[i] > 1e-12 && relative[i] < relative[i - 1] && relative[i - 1] < relative[i - 2] && i == relative.Length - 1)
+                    orders.Add(Math.Log(relative[i] / relative[i - 1]) / Math.Log(relative[i - 1] / relative[i - 2]));
+        }
+        orders.Sort();
+        output.WriteLine("orders of the last correction: " + string.Join(", ", orders.Select(o => o.ToString("F2", CultureInfo.InvariantCulture))));
+        Assert.NotEmpty(orders);
+        Assert.True(orders[orders.Count / 2] > 1.7, "median order");
+    }
 }
