@@ -3,7 +3,7 @@ using InterfaceFE.Geometry;
 
 namespace InterfaceFE.Model;
 
-/// <summary>Weight of the adherends as forces on the unknowns. What sits on a rigid grip acts on it with its lever about the pin.</summary>
+/// <summary>Weight of the adherends as forces on the unknowns. What sits on a rigid grip acts on it with its lever about the pin, before deformation also where rotations are finite.</summary>
 internal static class WeightPlanner
 {
     /// <summary>Conventional acceleration of free fall [mm/s²] (ISO 80000-3).</summary>
