@@ -83,5 +83,5 @@ internal readonly struct ModePoint
     public double Dissipated(ITractionCurve curve) => Damaged ? Math.Max(0, curve.Area(Largest) - 0.5 * LargestTraction * Reach) : 0;
 
     /// <summary>d dissipated / dx = T - ½·(T'·reach + T·reach') while growing, else 0 [MPa].</summary>
-    public double DissipatedSlope => Growing ? Traction - 0.5 * (Traction * ReachSlope + Slope * Reach) : 0;
+    public double DissipatedSlope => Growing ? 0.5 * ((2 - ReachSlope) * Traction - Slope * Reach) : 0;
 }
