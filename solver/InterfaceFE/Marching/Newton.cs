@@ -25,6 +25,9 @@ public enum NewtonStatus
 /// <param name="Relative">Last force out of balance over the reference.</param>
 public readonly record struct NewtonOutcome(NewtonStatus Status, int Iterations, int Singular, double Relative)
 {
+    /// <summary>Element and place that had no finite answer on the way, in words; null when all had. A shorter correction may have got by.</summary>
+    public string? Fault { get; init; }
+
     /// <summary>Whether the point may be used.</summary>
     public bool Usable => Status is NewtonStatus.Converged or NewtonStatus.AtFloor;
 }
@@ -87,6 +90,7 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
         ResidualReport residual = equilibrium.Evaluate(Everything);
         double correction = 0, previous = double.PositiveInfinity, potential = double.PositiveInfinity;
         int singular = -1, slow = 0, polishing = 0;
+        string? fault = null;
         bool shortens = false;
         for (int iteration = 0; ; iteration++)
         {
@@ -123,7 +127,7 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             if (exhausted)
             {
                 report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, "stalled"));
-                return new NewtonOutcome(NewtonStatus.Stalled, iteration, singular, residual.Relative);
+                return new NewtonOutcome(NewtonStatus.Stalled, iteration, singular, residual.Relative) { Fault = fault };
             }
             report(new NewtonIteration(iteration, residual.OutOfBalance, residual.Relative, correction, residual.ChangedElements, iteration == 0 ? "predicted" : "corrected"));
             previous = residual.OutOfBalance;
@@ -135,12 +139,12 @@ public sealed class Newton(double tolerance, double controlTolerance = 1e-7, int
             double work = shortens ? equilibrium.WorkAlongCorrection() : 0;
             equilibrium.Move(1);
             residual = equilibrium.Evaluate(Everything);
-            if (!residual.Finite && equilibrium.Fault() is not null)
-                continue;
+            if (!residual.Finite)
+                fault ??= equilibrium.Fault();
             if (shortens)
                 residual = Shorten(equilibrium, residual, work);
             // Within tolerance what grows is rounding: a correction for the control's sake would be shortened by chance.
-            else if (iteration > 0 && previous > 0 && !(residual.OutOfBalance <= 1.5 * previous) && !(residual.Relative <= tolerance))
+            else if ((iteration > 0 || !residual.Finite) && previous > 0 && !(residual.OutOfBalance <= 1.5 * previous) && !(residual.Relative <= tolerance))
                 residual = Backtrack(equilibrium, residual);
         }
     }

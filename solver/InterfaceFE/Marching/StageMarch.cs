@@ -12,6 +12,9 @@ internal sealed class StageMarch
     private const int OwnTries = 2;
     private const int TriesOfMeasure = 4;
     private const int Rounds = 3;
+    /// <summary>Progress from a place where an element had no answer within which the march is stopped by it.</summary>
+    private const double NearFault = 0.02;
+
     private const double LeastStride = 1e-9;
     private const double Shorter = 0.4;
     private const double ShorterRound = 0.03;
@@ -26,7 +29,8 @@ internal sealed class StageMarch
     private readonly LastWay _way;
     private readonly MarchSettings _settings;
     private readonly IMarchObserver _observer;
-    private double _ownStride, _share = 1;
+    private double _ownStride, _share = 1, _faultProgress;
+    private string? _fault;
     private bool _onPath;
     private int _calmPoints, _calmNeeded = CalmAtFirst, _retry;
 
@@ -96,9 +100,8 @@ internal sealed class StageMarch
                         Accept(attempt);
                         return null;
                     }
-                    if (attempt.Fault is { } fault)
-                        return Stop(fault);
                     failure = attempt.Failure;
+                    Note(attempt.Fault);
                     _retry++;
                 }
                 if (!PathCanTakeOver)
@@ -121,9 +124,8 @@ internal sealed class StageMarch
                         Accept(attempt);
                         return null;
                     }
-                    if (attempt.Fault is { } fault)
-                        return Stop(fault);
                     failure = attempt.Failure;
+                    Note(attempt.Fault);
                     _retry++;
                     // Too long for the energy account: another measure would be as long.
                     if (attempt.Error > 0)
@@ -137,12 +139,21 @@ internal sealed class StageMarch
     private MarchOutcome GiveUp(string failure)
     {
         _equilibrium.RollBack();
+        if (_fault is { } fault && Math.Abs(_faultProgress - _equilibrium.AcceptedProgress) <= NearFault)
+            return Stop(fault);
         if (_points.LastOfTheBond() is { } severed)
             return severed;
         return Stop(string.Create(CultureInfo.InvariantCulture, $"no equilibrium was found beyond progress {_equilibrium.AcceptedProgress:G6} of stage {_points.Stage.Number} ({_points.Stage.Words}), however short the stride")
             + (failure.StartsWith(StagePoints.Overflow, StringComparison.Ordinal) ? ": " + failure : "")
             + (_settings.Path == PathControl.None ? "; a limit point needs `control: automatic`" : "")
             + (_equilibrium.Energy.SpentInYielding > 0 ? "; an adherend has yielded: if this is its limit load, drive the grip by travel or angle instead" : ""));
+    }
+
+    /// <summary>Keeps where an element had no answer: shorter strides may lead up to that place, but not past it.</summary>
+    private void Note(string? fault)
+    {
+        if (fault is not null)
+            (_fault, _faultProgress) = (fault, _equilibrium.AcceptedProgress);
     }
 
     private Attempt TryOwn(double stride)

@@ -98,6 +98,7 @@ internal sealed class StagePoints
     /// <param name="recorded">End of the search that is replayed; null: none is.</param>
     public NewtonOutcome Search(IControl control, double guess, int retry, RecordedEnd? recorded = null)
     {
+        Fault = null;
         NewtonOutcome outcome = _newton.Search(Equilibrium, control, iteration =>
         {
             Tell();
@@ -106,6 +107,8 @@ internal sealed class StagePoints
         if (!outcome.Usable)
             Tell();
         Failure = outcome.Usable ? "" : outcome.Status == NewtonStatus.NotFinite ? Beyond() : "no convergence";
+        if (!outcome.Usable && outcome.Fault is { } fault)
+            Fault ??= InWords(fault);
         return outcome;
     }
 
@@ -176,7 +179,7 @@ internal sealed class StagePoints
     private string Beyond()
     {
         if (Equilibrium.Fault() is { } fault)
-            return Fault = FormattableString.Invariant($"an element has no answer in stage {Stage.Number}, at progress {Equilibrium.Progress:G4}: {fault}");
+            return Fault = InWords(fault);
         ReadOnlySpan<double> u = Equilibrium.Displacement;
         int furthest = 0;
         for (int i = 1; i < u.Length; i++)
@@ -184,6 +187,8 @@ internal sealed class StagePoints
                 furthest = i;
         return FormattableString.Invariant($"{Overflow}: {Equilibrium.Model.Unknowns.Describe(furthest)}, would move by {Math.Abs(u[furthest]):G3} (mm or rad); look for a load beyond all measure, or for a part that next to nothing holds");
     }
+
+    private string InWords(string fault) => FormattableString.Invariant($"an element has no answer in stage {Stage.Number}, at progress {Equilibrium.Progress:G4}: {fault}");
 
     private void Tell()
     {

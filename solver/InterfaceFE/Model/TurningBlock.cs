@@ -99,18 +99,6 @@ internal sealed class TurningBlock : SolidBlock
 
     public override void GaussPositions(int element, Span<double> positions) => Quadrilateral8.GaussPositions(Coordinates(element), positions);
 
-    public override void VolumeShares(int element, Span<double> volumes)
-    {
-        Span<double> shape = stackalloc double[Nodes8];
-        volumes[..Nodes8].Clear();
-        for (int p = 0; p < Points; p++)
-        {
-            Quadrilateral8.ShapeFunctions(GaussPoints.Xi(p), GaussPoints.Eta(p), shape);
-            for (int i = 0; i < Nodes8; i++)
-                volumes[i] += shape[i] * _areas[element * Points + p] * Adherend.Width;
-        }
-    }
-
     public override void ExtrapolateToNodes(int components, ReadOnlySpan<double> gaussValues, Span<double> nodeValues) =>
         Quadrilateral8.ExtrapolateToNodes(components, gaussValues, nodeValues);
 
