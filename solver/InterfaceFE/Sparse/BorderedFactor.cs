@@ -37,6 +37,7 @@ public sealed unsafe class BorderedFactor
     private DenseRoot? _generalRoot;
     private DenseRoot? _root;
     private int _capacity;
+    private long _generation;
 
     /// <summary>An empty border of a factor.</summary>
     public BorderedFactor(WorkingFactor factor)
@@ -153,6 +154,7 @@ public sealed unsafe class BorderedFactor
     public void Factor(ReadOnlySpan<int> heldRootUnknowns)
     {
         _factor.MarkHeld(heldRootUnknowns, _isHeld);
+        _generation = _factor.Generation;
         _vectors.Forward();
         bool isSymmetric = IsSymmetric();
         FillBlock(isSymmetric);
@@ -168,11 +170,11 @@ public sealed unsafe class BorderedFactor
     /// <param name="g">Right side of the border.</param>
     /// <param name="x">On entry values of held root unknowns, to which held moves are added; on return all values.</param>
     /// <param name="y">Values of the border's unknowns.</param>
-    /// <exception cref="InvalidOperationException"><see cref="Factor"/> was not called since rows were added.</exception>
+    /// <exception cref="InvalidOperationException"><see cref="Factor"/> was not called since the border or its factor changed.</exception>
     public void Solve(ReadOnlySpan<double> b, ReadOnlySpan<double> g, Span<double> x, Span<double> y)
     {
-        if (_root is null)
-            throw new InvalidOperationException("The border has not been factored.");
+        if (_root is null || _generation != _factor.Generation)
+            throw new InvalidOperationException("The border has not been factored since it or its factor changed: call Factor first.");
         MakeRoom();
         SolveOnce(b, g, x, y);
         BackwardError = double.NaN;

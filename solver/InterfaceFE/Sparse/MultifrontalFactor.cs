@@ -81,6 +81,9 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     /// <summary>Floating-point operations of the last <see cref="Factor"/>, root block not included (a multiply-add counts as two; a general factor does twice as many).</summary>
     public double LastFlops { get; private set; }
 
+    /// <summary>Number of factorisations so far; tells whether what was derived from the factor is still true.</summary>
+    internal long Generation { get; private set; }
+
     /// <summary>The fronts.</summary>
     internal FrontFactor Fronts => _fronts;
 
@@ -133,6 +136,7 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         }
         _isFactored = true;
         _isStale = false;
+        Generation++;
         return Outcome();
     }
 

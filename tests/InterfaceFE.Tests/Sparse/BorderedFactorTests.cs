@@ -207,6 +207,21 @@ public class BorderedFactorTests
         Assert.Equal(factor.Inertia([]), border.Inertia);
     }
 
+    [Fact]
+    public void A_border_of_a_factor_that_has_changed_is_refused()
+    {
+        var strip = new StripModel(10, 2);
+        WorkingFactor factor = Factored(strip.Model);
+        var border = new BorderedFactor(factor);
+        double[] b = new double[factor.Size], x = new double[factor.Size];
+        Assert.Throws<InvalidOperationException>(() => border.Solve(b, [], x, []));
+        border.Factor([]);
+        border.Solve(b, [], x, []);
+        factor.Replace(strip.LayerSlots[3], strip.LayerMatrix(7));
+        factor.Factor();
+        Assert.Throws<InvalidOperationException>(() => border.Solve(b, [], x, []));
+    }
+
     private static WorkingFactor Factored(SparseModel model)
     {
         var factor = new WorkingFactor(SparsePlan.Analyze(model.Pattern));
