@@ -30,7 +30,9 @@ internal sealed class ElementTable
             {
                 int slot = _blockStart[b] + e;
                 local.Clear();
-                _transforms[slot] = Link(model.Unknowns, model.Mesh, Blocks[b].Nodes(e), local);
+                local.AddRange(Blocks[b].OwnUnknowns(e));
+                if (local.Count == 0)
+                    _transforms[slot] = Link(model.Unknowns, model.Mesh, Blocks[b].Nodes(e), local);
                 unknowns.AddRange(local);
                 start[slot + 1] = unknowns.Count;
                 LargestSlot = Math.Max(LargestSlot, local.Count);
@@ -47,7 +49,7 @@ internal sealed class ElementTable
             SlotStart = start,
             SlotUnknowns = [.. unknowns],
         };
-        FirstLayerBlock = model.Solids.Count + model.OpenFaces.Count;
+        FirstLayerBlock = Blocks.Count - model.Layers.Count;
         SolidBlocks = model.Solids.Count;
     }
 

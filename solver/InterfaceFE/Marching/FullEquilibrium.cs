@@ -212,7 +212,7 @@ public sealed class FullEquilibrium : IEquilibrium
         wanted |= Wanted.Force | Wanted.Energy;
         int changed = 0;
         GrowingElements = 0;
-        double storedSolids = 0, storedLayers = 0, spent = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
+        double storedSolids = 0, storedTrains = 0, friction = 0, storedLayers = 0, spent = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
         for (int block = 0; block < _table.Blocks.Count; block++)
         {
             IElementBlock elements = _table.Blocks[block];
@@ -240,6 +240,7 @@ public sealed class FullEquilibrium : IEquilibrium
                         changed++;
                 }
                 byTemperature += answer.StoredByTemperature;
+                friction += answer.SpentInFriction;
                 if (layer)
                 {
                     storedLayers += answer.Stored;
@@ -255,11 +256,13 @@ public sealed class FullEquilibrium : IEquilibrium
                 }
                 else if (block < _table.SolidBlocks)
                     storedSolids += answer.Stored;
+                else if (elements is LoadTrainBlock)
+                    storedTrains += answer.Stored;
                 else
                     storedLayers += answer.Stored;
             }
         }
-        Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature);
+        Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature) { StoredInLoadTrains = storedTrains, SpentInFriction = friction };
         LayerWorkByProgress = layersByTemperature * (_temperatureEnd - _temperatureStart);
         DissipationByProgress = dissipatedByTemperature * (_temperatureEnd - _temperatureStart);
 

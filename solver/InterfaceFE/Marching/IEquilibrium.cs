@@ -109,6 +109,12 @@ public interface IEquilibrium
 /// <param name="ByTemperature">d stored / d temperature at fixed displacement [mJ/K], whole model.</param>
 public readonly record struct EnergyState(double StoredInAdherends, double StoredInLayers, double SpentInLayers, double ByTemperature)
 {
+    /// <summary>Elastic energy of the load trains.</summary>
+    public double StoredInLoadTrains { get; init; }
+
+    /// <summary>Spent in friction of the layers' faces.</summary>
+    public double SpentInFriction { get; init; }
+
     /// <summary>Sum of all.</summary>
-    public double Total => StoredInAdherends + StoredInLayers + SpentInLayers;
+    public double Total => StoredInAdherends + StoredInLayers + SpentInLayers + StoredInLoadTrains + SpentInFriction;
 }

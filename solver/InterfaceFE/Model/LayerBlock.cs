@@ -112,7 +112,10 @@ public sealed class LayerBlock : IElementBlock
         if (rate)
             for (int i = 0; i < into.LoadRate.Length; i++)
                 into.LoadRate[i] *= _freeOpeningPerKelvin;
-        return new ElementAnswer(sums.Stored, sums.Dissipated, -_freeOpeningPerKelvin * PeelResultant(xy, into.Force), _freeOpeningPerKelvin * sums.DissipatedByFreeOpening, sums.LargestDamage, sums.LeastDamage, sums.Growing);
+        return new ElementAnswer(sums.Stored, sums.Dissipated, -_freeOpeningPerKelvin * PeelResultant(xy, into.Force), _freeOpeningPerKelvin * sums.DissipatedByFreeOpening, sums.LargestDamage, sums.LeastDamage, sums.Growing)
+        {
+            SpentInFriction = sums.SpentInFriction,
+        };
     }
 
     /// <summary>The law's answer and the separation (free opening taken off) at each integration point of an element, without changing any state.</summary>

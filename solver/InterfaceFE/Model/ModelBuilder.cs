@@ -20,12 +20,13 @@ public static class ModelBuilder
         LayerBlock[] layers = [.. mesh.Joints.Select(joint => Layer(deck, mesh, joint, materials))];
         LayerBlock[] openFaces = [.. mesh.Joints.Zip(layers, (joint, layer) => OpenFaces(deck, mesh, joint, layer)).Where(block => block.Count > 0)];
         (IReadOnlyList<GripBody> bodies, IReadOnlyList<Grip> grips) = GripPlanner.Plan(deck, mesh);
-        var unknowns = new UnknownMap(mesh, bodies);
+        var unknowns = new UnknownMap(mesh, bodies, [.. grips.SelectMany(g => g.LoadTrains)]);
         return new SpecimenModel
         {
             Mesh = mesh,
             Unknowns = unknowns,
             Solids = solids,
+            LoadTrains = unknowns.LoadTrains.Count > 0 ? [new LoadTrainBlock(unknowns)] : [],
             OpenFaces = openFaces,
             Layers = layers,
             Grips = grips,
@@ -38,6 +39,8 @@ public static class ModelBuilder
     {
         LayerDeck layer = deck.Layers![joint.Layer];
         ILayerLaw law = LayerLawFactory.Create(joint.Layer, layer, deck.Model.OutOfPlane);
+        if (layer.Friction is { } friction)
+            law = new FrictionLaw(law, friction, neverBonded: false);
         double along = 0.5 * (materials[joint.UpperAdherend].Expansion[0] + materials[joint.LowerAdherend].Expansion[0]);
         double across = deck.Model.OutOfPlane == OutOfPlane.Held ? 0
             : 0.5 * (deck.Materials[mesh.Adherends[joint.UpperAdherend].Material].Expansion.Z + deck.Materials[mesh.Adherends[joint.LowerAdherend].Material].Expansion.Z);
@@ -45,8 +48,13 @@ public static class ModelBuilder
         return new LayerBlock(mesh, joint, law, layer.Thickness, Rule(deck, mesh), perKelvin, deck.StressFreeTemperature, bonded: true);
     }
 
-    private static LayerBlock OpenFaces(Deck deck, Mesh mesh, MeshedJoint joint, LayerBlock layer) =>
-        new(mesh, joint, new ClosingLaw(layer.Law.Stiffness.Contact, OnsetShare * layer.Thickness), layer.Thickness, Rule(deck, mesh), 0, deck.StressFreeTemperature, bonded: false);
+    private static LayerBlock OpenFaces(Deck deck, Mesh mesh, MeshedJoint joint, LayerBlock layer)
+    {
+        ILayerLaw law = new ClosingLaw(layer.Law.Stiffness.Contact, OnsetShare * layer.Thickness);
+        if (deck.Layers![joint.Layer].Friction is { } friction)
+            law = new FrictionLaw(law, friction, neverBonded: true);
+        return new LayerBlock(mesh, joint, law, layer.Thickness, Rule(deck, mesh), 0, deck.StressFreeTemperature, bonded: false);
+    }
 
     private static LayerRule Rule(Deck deck, Mesh mesh) => deck.Model.LayerIntegration switch
     {
