@@ -31,6 +31,7 @@ public class FrictionBlockTests
         Close.To(energies[ends[2]].SpentInFriction - energies[ends[0]].SpentInFriction, energies[ends[2]].PutIn - energies[ends[0]].PutIn, 1e-3, 0, "work put in over the loop");
         Assert.True(energies.Max(e => e.Balance) < 1e-9 && energies.Max(e => e.PathError) < 1e-3, $"{energies.Max(e => e.Balance)} {energies.Max(e => e.PathError)}");
         Assert.All(energies, e => Assert.True(e.SpentInLayers == 0));
+        Assert.All(history.Fronts, f => Assert.True(f.JPath is null && f.JRotation is null));
     }
 
     private static string Deck(string elements) => FormattableString.Invariant($$"""
