@@ -70,6 +70,10 @@ public sealed record LayerDeck
     [Key("contact stiffness", "Stiffness of the layer when pressed together; left out: the stiffness of the peel curve.", Dimension = Dimension.LayerStiffness, Example = "1000 MPa/mm", Above = 0)]
     public double? ContactStiffness { get; init; }
 
+    /// <summary>Coefficient of friction of faces that are not bonded, or no longer; null: none.</summary>
+    [Key("friction", "Coefficient of friction (Coulomb) of the faces where they never were bonded or have separated, once pressed together; left out: none. They stick with the contact stiffness.", Example = "0.3", Above = 0, AtMost = 5)]
+    public double? Friction { get; init; }
+
     /// <summary>Bulk properties of the layer's material.</summary>
     [Key("bulk", "Properties of the layer's material, for stiffness and free opening by temperature.")]
     public BulkDeck? Bulk { get; init; }

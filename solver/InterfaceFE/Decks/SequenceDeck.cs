@@ -16,7 +16,6 @@ public enum GripHold
 
 /// <summary>A grip: a place that the sequence fixes, moves or loads.</summary>
 [Block("A place that the sequence fixes, moves or loads: a pin at a point, a block on a stretch of an edge, or a whole edge.")]
-[NotBuiltYet("load train")]
 public sealed record GripDeck
 {
     /// <summary>Edge or edges; with several, each is a body of its own and may only be fixed.</summary>
@@ -42,6 +41,19 @@ public sealed record GripDeck
     /// <summary>How the nodes are held together.</summary>
     [Key("hold", "Whether the place moves as one rigid body or each point by itself.", Default = "rigid")]
     public GripHold Hold { get; init; }
+
+    /// <summary>Load train between the grip and the crosshead; null: none, the grip itself is driven.</summary>
+    [Key("load train", "What stands between the grip and the crosshead of the machine; what the sequence pulls, pushes or fixes along the pull is then the crosshead.")]
+    public LoadTrainDeck? LoadTrain { get; init; }
+}
+
+/// <summary>A load train.</summary>
+[Block("Machine, load cell and fixtures in series with a grip, as a spring along its pull. Adds the column `NAME crosshead [mm]` to grips.csv.")]
+public sealed record LoadTrainDeck
+{
+    /// <summary>Stiffness [N/mm].</summary>
+    [Key("stiffness", "Force per travel of the crosshead with a rigid specimen.", Dimension = Dimension.Stiffness, Example = "5 kN/mm", Above = 0)]
+    public required double Stiffness { get; init; }
 }
 
 /// <summary>A point on an edge: a share of its length or a distance from its start. Written as start, middle, end or a length.</summary>

@@ -34,12 +34,16 @@ internal sealed class ElementTable
             {
                 int slot = _blockStart[b] + e;
                 local.Clear();
-                arms.Clear();
-                _transforms[slot] = Link(model.Unknowns, model.Mesh, Blocks[b].Nodes(e), Blocks[b].OutOfPlaneUnknown, local, arms);
-                if (model.Unknowns.Turns && arms.Count > 0)
+                local.AddRange(Blocks[b].OwnUnknowns(e));
+                if (local.Count == 0)
                 {
-                    _arms[slot] = [.. arms];
-                    _turning.Add(slot);
+                    arms.Clear();
+                    _transforms[slot] = Link(model.Unknowns, model.Mesh, Blocks[b].Nodes(e), Blocks[b].OutOfPlaneUnknown, local, arms);
+                    if (model.Unknowns.Turns && arms.Count > 0)
+                    {
+                        _arms[slot] = [.. arms];
+                        _turning.Add(slot);
+                    }
                 }
                 unknowns.AddRange(local);
                 start[slot + 1] = unknowns.Count;
@@ -57,8 +61,8 @@ internal sealed class ElementTable
             SlotStart = start,
             SlotUnknowns = [.. unknowns],
         };
-        FirstPressureBlock = model.Solids.Count + model.OpenFaces.Count;
-        FirstLayerBlock = FirstPressureBlock + model.Pressures.Count;
+        FirstLayerBlock = Blocks.Count - model.Layers.Count;
+        FirstPressureBlock = FirstLayerBlock - model.Pressures.Count;
         SolidBlocks = model.Solids.Count;
     }
 

@@ -101,7 +101,8 @@ public sealed class EnergyLedger
         EnergyState now = _equilibrium.Energy;
         double thermal = 0.5 * (_energy.ByTemperature + now.ByTemperature) * (_equilibrium.Temperature - _temperature);
         double turnover = 0.5 * (Math.Abs(putIn) + Math.Abs(thermal) + Math.Abs(now.StoredInAdherends - _energy.StoredInAdherends)
-            + Math.Abs(now.StoredInLayers - _energy.StoredInLayers) + Math.Abs(now.SpentInLayers - _energy.SpentInLayers) + Math.Abs(now.SpentInYielding - _energy.SpentInYielding));
+            + Math.Abs(now.StoredInLayers - _energy.StoredInLayers) + Math.Abs(now.SpentInLayers - _energy.SpentInLayers) + Math.Abs(now.SpentInYielding - _energy.SpentInYielding)
+            + Math.Abs(now.StoredInLoadTrains - _energy.StoredInLoadTrains) + Math.Abs(now.SpentInFriction - _energy.SpentInFriction));
         return new Stride(putIn, thermal, internalWork, magnitude, turnover);
     }
 

@@ -232,7 +232,7 @@ public sealed class FullEquilibrium : IEquilibrium
         int changed = 0;
         GrowingElements = 0;
         _table.Turn(_u);
-        double storedSolids = 0, storedLayers = 0, spent = 0, yielding = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
+        double storedSolids = 0, storedTrains = 0, friction = 0, storedLayers = 0, spent = 0, yielding = 0, byTemperature = 0, layersByTemperature = 0, dissipatedByTemperature = 0;
         for (int block = 0; block < _table.Blocks.Count; block++)
         {
             IElementBlock elements = _table.Blocks[block];
@@ -260,6 +260,7 @@ public sealed class FullEquilibrium : IEquilibrium
                         changed++;
                 }
                 byTemperature += answer.StoredByTemperature;
+                friction += answer.SpentInFriction;
                 if (layer)
                 {
                     storedLayers += answer.Stored;
@@ -278,11 +279,13 @@ public sealed class FullEquilibrium : IEquilibrium
                     storedSolids += answer.Stored;
                     yielding += answer.Dissipated;
                 }
+                else if (elements is LoadTrainBlock)
+                    storedTrains += answer.Stored;
                 else
                     storedLayers += answer.Stored;
             }
         }
-        Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature) { SpentInYielding = yielding };
+        Energy = new EnergyState(storedSolids, storedLayers, spent, byTemperature) { SpentInYielding = yielding, StoredInLoadTrains = storedTrains, SpentInFriction = friction };
         LayerWorkByProgress = layersByTemperature * (_temperatureEnd - _temperatureStart);
         DissipationByProgress = dissipatedByTemperature * (_temperatureEnd - _temperatureStart);
 

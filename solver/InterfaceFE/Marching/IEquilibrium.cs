@@ -112,9 +112,15 @@ public readonly record struct EnergyState(double StoredInAdherends, double Store
     /// <summary>Dissipated by yielding of the adherends.</summary>
     public double SpentInYielding { get; init; }
 
-    /// <summary>Dissipated by layers and yielding.</summary>
-    public double Spent => SpentInLayers + SpentInYielding;
+    /// <summary>Elastic energy of the load trains.</summary>
+    public double StoredInLoadTrains { get; init; }
+
+    /// <summary>Spent in friction of the layers' faces.</summary>
+    public double SpentInFriction { get; init; }
+
+    /// <summary>Dissipated by layers, yielding and friction.</summary>
+    public double Spent => SpentInLayers + SpentInYielding + SpentInFriction;
 
     /// <summary>Sum of all.</summary>
-    public double Total => StoredInAdherends + StoredInLayers + Spent;
+    public double Total => StoredInAdherends + StoredInLayers + StoredInLoadTrains + Spent;
 }

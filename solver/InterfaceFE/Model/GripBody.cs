@@ -24,4 +24,8 @@ public sealed class GripBody
 /// <summary>A grip of the deck: its bodies.</summary>
 /// <param name="Name">Name in the deck.</param>
 /// <param name="Bodies">Indices of its bodies; one, unless the deck lists several edges.</param>
-public sealed record Grip(string Name, IReadOnlyList<int> Bodies);
+public sealed record Grip(string Name, IReadOnlyList<int> Bodies)
+{
+    /// <summary>Its load trains, one for each axis along which it is pulled; empty when the grip itself is driven.</summary>
+    public IReadOnlyList<LoadTrain> LoadTrains { get; init; } = [];
+}

@@ -30,10 +30,14 @@ public static class GripPlanner
                 }
                 own.Add(same);
             }
-            grips.Add(new Grip(name, own));
+            grips.Add(new Grip(name, own) { LoadTrains = grip.LoadTrain is { } train ? [.. Pulled(deck, name).Select(component => new LoadTrain(own[0], component, train.Stiffness))] : [] });
         }
         return (bodies, grips);
     }
+
+    /// <summary>Axes along which the sequence pulls or pushes a grip.</summary>
+    private static IEnumerable<GripComponent> Pulled(Deck deck, string name) =>
+        deck.Sequence.Select(s => s.Pull ?? s.Push).Where(p => p?.Grip == name).Select(p => SequencePlanner.Of(p!.Along).Component).Distinct();
 
     private static GripBody Body(string name, GripDeck grip, string edgeText, MeshedEdge edge, Mesh mesh)
     {

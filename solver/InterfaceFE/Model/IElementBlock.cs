@@ -64,7 +64,11 @@ public readonly ref struct ElementBuffers
 /// <param name="LargestDamage">Largest damage of its points; 0 for a solid.</param>
 /// <param name="LeastDamage">Least damage of its points; 0 for a solid.</param>
 /// <param name="Growing">Whether damage grows at any of its points.</param>
-public readonly record struct ElementAnswer(double Stored, double Dissipated, double StoredByTemperature, double DissipatedByTemperature, double LargestDamage, double LeastDamage, bool Growing);
+public readonly record struct ElementAnswer(double Stored, double Dissipated, double StoredByTemperature, double DissipatedByTemperature, double LargestDamage, double LeastDamage, bool Growing)
+{
+    /// <summary>Energy spent in friction since the start [mJ], not part of <see cref="Dissipated"/>.</summary>
+    public double SpentInFriction { get; init; }
+}
 
 /// <summary>
 /// Elements of one kind and one material. An element has two native unknowns (ux, uy) per node, in the order of <see cref="Nodes"/>, and where its group strains out of plane one more. Pure functions of the
@@ -95,6 +99,9 @@ public interface IElementBlock
 
     /// <summary>Nodes of an element.</summary>
     ReadOnlySpan<int> Nodes(int element);
+
+    /// <summary>Unknowns of an element that acts on unknowns of the model themselves, in native order; empty for elements whose native unknowns are those of their nodes.</summary>
+    ReadOnlySpan<int> OwnUnknowns(int element) => default;
 
     /// <summary>Evaluates an element.</summary>
     /// <param name="element">Element index.</param>

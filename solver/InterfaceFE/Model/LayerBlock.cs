@@ -127,7 +127,10 @@ public sealed class LayerBlock : IElementBlock
         if (rate)
             for (int i = 0; i < into.LoadRate.Length; i++)
                 into.LoadRate[i] *= _freeOpeningPerKelvin;
-        return new ElementAnswer(sums.Stored, sums.Dissipated, -_freeOpeningPerKelvin * (_kinematics is null ? PeelResultant(xy, into.Force) : sums.PeelResultant), _freeOpeningPerKelvin * sums.DissipatedByFreeOpening, sums.LargestDamage, sums.LeastDamage, sums.Growing);
+        return new ElementAnswer(sums.Stored, sums.Dissipated, -_freeOpeningPerKelvin * (_kinematics is null ? PeelResultant(xy, into.Force) : sums.PeelResultant), _freeOpeningPerKelvin * sums.DissipatedByFreeOpening, sums.LargestDamage, sums.LeastDamage, sums.Growing)
+        {
+            SpentInFriction = sums.SpentInFriction,
+        };
     }
 
     /// <summary>The law's answer and the separation (free opening taken off) at each integration point of an element, without changing any state.</summary>

@@ -19,7 +19,7 @@ public static class ModelBuilder
         PlaneElasticity[][] materials = [.. mesh.Adherends.Select(a => MaterialFactory.Rows(deck, a))];
         OutOfPlaneGroups? outOfPlane = deck.Model.OutOfPlane == OutOfPlane.UniformStrain ? new OutOfPlaneGroups(mesh, deck.Model.Width, deck.Model.StrainOutOfPlane) : null;
         (IReadOnlyList<GripBody> bodies, IReadOnlyList<Grip> grips) = GripPlanner.Plan(deck, mesh);
-        var unknowns = new UnknownMap(mesh, bodies, outOfPlane, turns);
+        var unknowns = new UnknownMap(mesh, bodies, outOfPlane, turns, [.. grips.SelectMany(g => g.LoadTrains)]);
         SolidBlock[] solids = [.. mesh.Adherends.Select((a, i) => SolidBlock.Create(mesh, a, materials[i], deck.StressFreeTemperature,
             a.PlyOfRow.Count == 0 ? MaterialFactory.Yielding(deck, a.Material) : null, unknowns.LinkOf(i), turns))];
         double[] across = [.. mesh.Adherends.Select((_, i) => FreeAcross(deck, mesh, materials, outOfPlane, i))];
@@ -30,6 +30,7 @@ public static class ModelBuilder
             Mesh = mesh,
             Unknowns = unknowns,
             Solids = solids,
+            LoadTrains = unknowns.LoadTrains.Count > 0 ? [new LoadTrainBlock(unknowns)] : [],
             OpenFaces = openFaces,
             Pressures = PressurePlanner.Plan(deck, mesh),
             Layers = layers,
@@ -43,6 +44,8 @@ public static class ModelBuilder
     {
         LayerDeck layer = deck.Layers![joint.Layer];
         ILayerLaw law = LayerLawFactory.Create(joint.Layer, layer, deck.Model.OutOfPlane, deck.Model.AmbientPressure);
+        if (layer.Friction is { } friction)
+            law = new FrictionLaw(law, friction, neverBonded: false);
         double along = 0.5 * (Along(joint.UpperAdherend) + Along(joint.LowerAdherend));
         double out3 = 0.5 * (across[joint.UpperAdherend] + across[joint.LowerAdherend]);
         double perKelvin = LayerLawFactory.Bulk(layer, deck.Model.OutOfPlane)?.FreeOpening(1, along, out3) ?? 0;
@@ -103,8 +106,13 @@ public static class ModelBuilder
         return sum / weights;
     }
 
-    private static LayerBlock OpenFaces(Deck deck, Mesh mesh, MeshedJoint joint, LayerBlock layer) =>
-        new(mesh, joint, new ClosingLaw(layer.Law.Stiffness.Contact, OnsetShare * layer.Thickness), layer.Thickness, Rule(deck, mesh), 0, deck.StressFreeTemperature, bonded: false, Kinematics(deck, joint));
+    private static LayerBlock OpenFaces(Deck deck, Mesh mesh, MeshedJoint joint, LayerBlock layer)
+    {
+        ILayerLaw law = new ClosingLaw(layer.Law.Stiffness.Contact, OnsetShare * layer.Thickness);
+        if (deck.Layers![joint.Layer].Friction is { } friction)
+            law = new FrictionLaw(law, friction, neverBonded: true);
+        return new LayerBlock(mesh, joint, law, layer.Thickness, Rule(deck, mesh), 0, deck.StressFreeTemperature, bonded: false, Kinematics(deck, joint));
+    }
 
     /// <summary>Null where faces lie on each other and turn little: then nothing but the jump counts.</summary>
     private static LayerKinematics? Kinematics(Deck deck, MeshedJoint joint)

@@ -42,9 +42,15 @@ public sealed class SequencePlanner
         return [.. deck.Sequence.Select((stage, i) => planner.Stage(stage, i + 1))];
     }
 
-    /// <summary>Unknowns of a component of a grip: one for a pin or a rigid body, one per node for each point; none for the rotation of points.</summary>
+    /// <summary>
+    /// Unknowns of a component of a grip that the sequence acts on: one for a pin or a rigid body, one per node for each point; none for the rotation of points; the crosshead's along the axis of a
+    /// load train.
+    /// </summary>
     public static IReadOnlyList<int> Unknowns(UnknownMap map, Grip grip, GripComponent component)
     {
+        foreach (LoadTrain train in grip.LoadTrains)
+            if (train.Component == component)
+                return [map.OfCrosshead(train)];
         var list = new List<int>();
         foreach (int body in grip.Bodies)
         {

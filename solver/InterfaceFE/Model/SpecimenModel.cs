@@ -14,6 +14,9 @@ public sealed class SpecimenModel
     /// <summary>Blocks of the adherends, in order.</summary>
     public required IReadOnlyList<SolidBlock> Solids { get; init; }
 
+    /// <summary>Springs of the load trains: one block, or none.</summary>
+    public IReadOnlyList<LoadTrainBlock> LoadTrains { get; init; } = [];
+
     /// <summary>Unbonded stretches of the joints, which can close; joints without any are left out.</summary>
     public required IReadOnlyList<LayerBlock> OpenFaces { get; init; }
 
@@ -32,6 +35,6 @@ public sealed class SpecimenModel
     /// <summary>Stress-free temperature [K].</summary>
     public required double StressFreeTemperature { get; init; }
 
-    /// <summary>All blocks: solids, open faces, pressures, layers.</summary>
-    public IReadOnlyList<IElementBlock> Blocks => [.. Solids, .. OpenFaces, .. Pressures, .. Layers];
+    /// <summary>All blocks: solids, load trains, open faces, pressures, layers.</summary>
+    public IReadOnlyList<IElementBlock> Blocks => [.. Solids, .. LoadTrains, .. OpenFaces, .. Pressures, .. Layers];
 }

@@ -1,4 +1,5 @@
 using System.Globalization;
+using InterfaceFE.Decks;
 using InterfaceFE.Geometry;
 
 namespace InterfaceFE.Model;
@@ -6,7 +7,7 @@ namespace InterfaceFE.Model;
 /// <summary>
 /// How nodal displacements follow from the unknowns. A node has unknowns of its own unless it belongs to a rigid body; then ux = Ux - θ·(y - yp) and uy = Uy + θ·(x - xp)
 /// with the body's unknowns (Ux, Uy, θ) and pin (xp, yp), or with finite rotation ux = Ux + (cos θ - 1)·(x - xp) - sin θ·(y - yp) and uy = Uy + sin θ·(x - xp) + (cos θ - 1)·(y - yp). Unknowns are grouped in vertices: the coincident nodes of a joint are one vertex, a body is one.
-/// Everything that a deck grips is a root vertex, and so is the elongation of a group of adherends out of plane, where there is one. The constructor throws <see cref="ArgumentException"/> when bodies overlap.
+/// Everything that a deck grips is a root vertex, and so are the crosshead of each load train and the elongation of a group of adherends out of plane, where there is one. The constructor throws <see cref="ArgumentException"/> when bodies overlap.
 /// </summary>
 public sealed class UnknownMap
 {
@@ -15,14 +16,17 @@ public sealed class UnknownMap
     private readonly int[] _ofNode;
     private readonly int[] _bodyOfNode;
     private readonly int[] _ofBody;
+    private readonly int[] _ofCrosshead;
 
     /// <summary>Numbers the unknowns of a mesh with the given bodies.</summary>
     /// <param name="mesh">The mesh.</param>
     /// <param name="bodies">What grips hold.</param>
     /// <param name="outOfPlane">Groups that strain out of plane together; null: none does.</param>
     /// <param name="turns">Whether rotations are finite.</param>
-    public UnknownMap(Mesh mesh, IReadOnlyList<GripBody> bodies, OutOfPlaneGroups? outOfPlane = null, bool turns = false)
+    /// <param name="loadTrains">Springs between grips and crossheads; null: none.</param>
+    public UnknownMap(Mesh mesh, IReadOnlyList<GripBody> bodies, OutOfPlaneGroups? outOfPlane = null, bool turns = false, IReadOnlyList<LoadTrain>? loadTrains = null)
     {
+        LoadTrains = loadTrains ??= [];
         OutOfPlane = outOfPlane;
         _mesh = mesh;
         _bodies = bodies;
@@ -114,6 +118,16 @@ public sealed class UnknownMap
             root.Add(true);
             changeable.Add(false);
         }
+        _ofCrosshead = new int[loadTrains.Count];
+        for (int t = 0; t < loadTrains.Count; t++)
+        {
+            _ofCrosshead[t] = vertexOfUnknown.Count;
+            vertexOfUnknown.Add(x.Count);
+            x.Add(bodies[loadTrains[t].Body].PinX);
+            y.Add(bodies[loadTrains[t].Body].PinY);
+            root.Add(true);
+            changeable.Add(false);
+        }
         FirstOutOfPlane = vertexOfUnknown.Count;
         for (int tied = 0; tied < (outOfPlane?.Count ?? 0); tied++)
         {
@@ -167,6 +181,15 @@ public sealed class UnknownMap
     /// <summary>First of the three unknowns of a rigid body; -1 for a body of points.</summary>
     public int OfBody(int body) => _ofBody[body];
 
+    /// <summary>Unknown of a component of a body: of the rigid body, or of the first node of a body of points, which has x and y alone.</summary>
+    public int OfBody(int body, GripComponent component) => (_bodies[body].Rigid ? _ofBody[body] : _ofNode[_bodies[body].Nodes[0]]) + (int)component;
+
+    /// <summary>The load trains.</summary>
+    public IReadOnlyList<LoadTrain> LoadTrains { get; }
+
+    /// <summary>Unknown of the crosshead of a load train.</summary>
+    public int OfCrosshead(LoadTrain loadTrain) => _ofCrosshead[LoadTrains.ToList().FindIndex(t => ReferenceEquals(t, loadTrain))];
+
     /// <summary>Unknown of ux of a node (uy is the next one); -1 when the node follows a rigid body.</summary>
     public int OfNode(int node) => _ofNode[node];
 
@@ -211,6 +234,9 @@ public sealed class UnknownMap
                 return string.Create(CultureInfo.InvariantCulture, $"the grip on {_bodies[b].Name} ({_bodies[b].PinX:G6} mm, {_bodies[b].PinY:G6} mm), {what}");
             }
         }
+        int train = Array.IndexOf(_ofCrosshead, unknown);
+        if (train >= 0)
+            return $"the crosshead of the grip on {_bodies[LoadTrains[train].Body].Name}, along {(LoadTrains[train].Component == GripComponent.X ? "x" : "y")}";
         if (unknown >= FirstOutOfPlane)
             return $"the elongation out of plane of '{_mesh.Adherends[OutOfPlane!.FirstOf(unknown - FirstOutOfPlane)].Name}' and what is bonded to it";
         int node = Array.FindIndex(_ofNode, first => first >= 0 && (first == unknown || first + 1 == unknown));

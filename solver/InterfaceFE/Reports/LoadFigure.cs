@@ -42,7 +42,7 @@ internal static class LoadFigure
                 {
                     XTitle = grip.Turned ? $"Rotation of {name} (degrees)" : $"Displacement of {name} (mm)",
                     YTitle = grip.Turned ? $"Moment ({unit})" : $"Force ({unit})",
-                    Curves = Curves(x, y, stable, grip.Turned ? "moment" : "force"),
+                    Curves = [.. Curves(x, y, stable, grip.Turned ? "moment" : "force"), .. grip.HasLoadTrain && !grip.Turned ? [Crosshead(history, index, y)] : (Curve[])[]],
                     Notes = Peak(summary, grip, x, y, scale, unit),
                 },
             ],
@@ -82,6 +82,9 @@ internal static class LoadFigure
         }
         return curves;
     }
+
+    private static Curve Crosshead(RunHistory history, int index, double[] y) =>
+        new("force against travel of the crosshead", [.. history.Points.Select(p => p.Grips[index].Crosshead ?? double.NaN)], y, 1);
 
     private static List<Note> Peak(RunSummary summary, GripInfo grip, double[] x, double[] y, double scale, string unit)
     {

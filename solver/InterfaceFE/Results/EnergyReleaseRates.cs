@@ -43,6 +43,8 @@ public sealed class EnergyReleaseRates
         _aheadFrom = Math.Min(tip + 0.85 * (ahead - tip), tip + 0.95 * (ahead - tip));
         _aheadTo = Math.Max(tip + 0.85 * (ahead - tip), tip + 0.95 * (ahead - tip));
         RotationReason = CheckRotation(tip) ?? (isHeavy ? "weight acts on the arms" : null);
+        if (model.Layers[front.Joint].Law is FrictionLaw)
+            PathReason = RotationReason = "friction of the faces behind the front does work that the formula leaves out";
     }
 
     /// <summary>Why J by path has no value; null when it has.</summary>

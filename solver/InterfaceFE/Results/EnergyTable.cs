@@ -9,11 +9,19 @@ public sealed class EnergyTable : IDisposable
         "spent in friction [mJ]", "thermal [mJ]", "released in jumps [mJ]", "balance", "path error",
     ];
 
+    private const string LoadTrains = "stored in load trains [mJ]";
+
     private readonly CsvTable _table;
+    private readonly bool _loadTrains;
 
     /// <summary>Creates the file and writes its header.</summary>
     /// <param name="path">File; its folder must exist.</param>
-    public EnergyTable(string path) => _table = new CsvTable(path, Header);
+    /// <param name="loadTrains">Whether there are load trains, whose energy then has a column, the last one.</param>
+    public EnergyTable(string path, bool loadTrains)
+    {
+        _loadTrains = loadTrains;
+        _table = new CsvTable(path, loadTrains ? [.. Header, LoadTrains] : Header);
+    }
 
     /// <summary>Writes to a writer, which is closed with the table.</summary>
     internal EnergyTable(TextWriter writer) => _table = new CsvTable(writer, Header);
@@ -26,8 +34,10 @@ public sealed class EnergyTable : IDisposable
             .Add(row.PutIn).Add(row.StoredInAdherends).Add(row.StoredInLayers)
             .Add(row.SpentInLayers).Add(row.SpentInYielding).Add(row.SpentInFriction)
             .Add(row.Thermal).Add(row.ReleasedInJumps)
-            .Add(row.Balance).Add(row.PathError)
-            .EndRow();
+            .Add(row.Balance).Add(row.PathError);
+        if (_loadTrains)
+            _table.Add(row.StoredInLoadTrains);
+        _table.EndRow();
     }
 
     /// <inheritdoc/>

@@ -1,3 +1,4 @@
+using InterfaceFE.Decks;
 using InterfaceFE.Marching;
 using InterfaceFE.Model;
 
@@ -51,6 +52,18 @@ public sealed class GripReader(SpecimenModel model, IReadOnlyList<GripInfo> grip
                 forceY += equilibrium.GripForce(first + 1);
             }
         }
-        return new GripReading((x * info.DirectionX + y * info.DirectionY) / points, forceX * info.DirectionX + forceY * info.DirectionY, rotation, moment, forceX, forceY);
+        double? crosshead = null;
+        foreach (LoadTrain train in grip.LoadTrains)
+        {
+            int unknown = map.OfCrosshead(train);
+            bool alongX = train.Component == GripComponent.X;
+            if (alongX)
+                forceX += equilibrium.ExternalForce(unknown);
+            else
+                forceY += equilibrium.ExternalForce(unknown);
+            if ((alongX ? info.DirectionX : info.DirectionY) is var sense && sense != 0)
+                crosshead = sense * equilibrium.AcceptedDisplacement[unknown];
+        }
+        return new GripReading((x * info.DirectionX + y * info.DirectionY) / points, forceX * info.DirectionX + forceY * info.DirectionY, rotation, moment, forceX, forceY) { Crosshead = crosshead };
     }
 }

@@ -2,7 +2,7 @@ namespace InterfaceFE.Results;
 
 /// <summary>
 /// grips.csv: one row per accepted point with the readings of all grips and gauges. A grip that is moved has displacement, force, rotation and moment (the last two
-/// empty for a pin), one that is only fixed its force along x and y.
+/// empty for a pin) and, behind a load train, the crosshead's displacement; one that is only fixed has its force along x and y.
 /// </summary>
 public sealed class GripTable : IDisposable
 {
@@ -44,7 +44,11 @@ public sealed class GripTable : IDisposable
         {
             GripReading reading = row.Grips[i];
             if (_grips[i].Moved)
+            {
                 _table.Add(reading.Displacement).Add(reading.Force).Add(reading.Rotation).Add(reading.Moment);
+                if (_grips[i].HasLoadTrain)
+                    _table.Add(reading.Crosshead);
+            }
             else
                 _table.Add(reading.ForceX).Add(reading.ForceY);
         }
@@ -60,9 +64,13 @@ public sealed class GripTable : IDisposable
     {
         List<string> header = ["point", "stage", "progress", "time [s]", "temperature [°C]"];
         foreach (GripInfo grip in grips)
+        {
             header.AddRange(grip.Moved
                 ? [$"{grip.Name} displacement [mm]", $"{grip.Name} force [N]", $"{grip.Name} rotation [rad]", $"{grip.Name} moment [N mm]"]
                 : [$"{grip.Name} force x [N]", $"{grip.Name} force y [N]"]);
+            if (grip.Moved && grip.HasLoadTrain)
+                header.Add($"{grip.Name} crosshead [mm]");
+        }
         foreach (GaugeInfo gauge in gauges)
             header.Add($"{gauge.Name} [{gauge.Unit}]");
         header.AddRange(["load factor", "stable"]);

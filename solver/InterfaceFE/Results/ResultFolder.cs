@@ -26,7 +26,7 @@ public sealed class ResultFolder : IDisposable
         {
             opened.Add(_grips = new GripTable(Path.Combine(folder, "grips.csv"), history.Grips, history.Gauges));
             opened.Add(_fronts = new FrontTable(Path.Combine(folder, "front.csv")));
-            opened.Add(_energies = new EnergyTable(Path.Combine(folder, "energy.csv")));
+            opened.Add(_energies = new EnergyTable(Path.Combine(folder, "energy.csv"), history.Grips.Any(g => g.HasLoadTrain)));
             opened.Add(_iterations = new ConvergenceTable(Path.Combine(folder, "convergence.csv")));
             _fields = new FieldSeries(folder, history.Mesh);
             history.Points.ForEach(Write);

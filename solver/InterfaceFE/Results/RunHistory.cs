@@ -53,7 +53,11 @@ public sealed class RunHistory
 /// <param name="Turned">Whether a stage turns it: its curve is moment against rotation.</param>
 /// <param name="X">x of its pin [mm].</param>
 /// <param name="Y">y of its pin [mm].</param>
-public sealed record GripInfo(string Name, bool Moved, double DirectionX, double DirectionY, bool Turned, double X, double Y);
+public sealed record GripInfo(string Name, bool Moved, double DirectionX, double DirectionY, bool Turned, double X, double Y)
+{
+    /// <summary>Whether a load train stands between it and the crosshead.</summary>
+    public bool HasLoadTrain { get; init; }
+}
 
 /// <summary>A gauge as results know it.</summary>
 /// <param name="Name">Name in the deck.</param>
@@ -67,7 +71,11 @@ public sealed record GaugeInfo(string Name, string Unit);
 /// <param name="Moment">Moment on the specimen about the pin [N·mm]; null for a pin.</param>
 /// <param name="ForceX">Force on the specimen along x [N].</param>
 /// <param name="ForceY">Force on the specimen along y [N].</param>
-public sealed record GripReading(double Displacement, double Force, double? Rotation, double? Moment, double ForceX, double ForceY);
+public sealed record GripReading(double Displacement, double Force, double? Rotation, double? Moment, double ForceX, double ForceY)
+{
+    /// <summary>Displacement of the crosshead along the pull [mm]; null without a load train.</summary>
+    public double? Crosshead { get; init; }
+}
 
 /// <summary>An accepted point.</summary>
 public sealed record PointRow
@@ -160,6 +168,9 @@ public sealed record EnergyRow
 
     /// <summary>Elastic energy of the adherends.</summary>
     public required double StoredInAdherends { get; init; }
+
+    /// <summary>Elastic energy of the load trains; null when there are none.</summary>
+    public double? StoredInLoadTrains { get; init; }
 
     /// <summary>Elastic energy of the layers.</summary>
     public required double StoredInLayers { get; init; }

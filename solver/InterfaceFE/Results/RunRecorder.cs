@@ -233,8 +233,9 @@ public sealed class RunRecorder : IMarchObserver
 
     private bool Yielded(int adherend) => _fields.Yielding[adherend].LargestAnywhere > 0;
 
-    private static EnergyRow Energy(MarchPoint point) => new()
+    private EnergyRow Energy(MarchPoint point) => new()
     {
+        StoredInLoadTrains = _model.LoadTrains.Count > 0 ? point.Energy.State.StoredInLoadTrains : null,
         Point = point.Number,
         Stage = point.Stage,
         PutIn = point.Energy.PutIn,
@@ -242,7 +243,7 @@ public sealed class RunRecorder : IMarchObserver
         StoredInLayers = point.Energy.State.StoredInLayers,
         SpentInLayers = point.Energy.State.SpentInLayers,
         SpentInYielding = point.Energy.State.SpentInYielding,
-        SpentInFriction = 0,
+        SpentInFriction = point.Energy.State.SpentInFriction,
         Thermal = point.Energy.Thermal,
         ReleasedInJumps = 0,
         Balance = point.Energy.Balance,

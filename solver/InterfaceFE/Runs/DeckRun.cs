@@ -132,7 +132,7 @@ public static class DeckRun
             (GripComponent component, int sense) = SequencePlanner.Of(pull.Along);
             (x, y) = component == GripComponent.X ? (sense, 0) : (0, sense);
         }
-        return new GripInfo(grip.Name, pull is not null || turned, x, y, turned, body.PinX, body.PinY);
+        return new GripInfo(grip.Name, pull is not null || turned, x, y, turned, body.PinX, body.PinY) { HasLoadTrain = grip.LoadTrains.Count > 0 };
     }
 
     private static void Count(RunSummary summary, RunHistory history, FullEquilibrium equilibrium)

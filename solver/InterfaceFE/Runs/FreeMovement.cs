@@ -97,6 +97,9 @@ internal static class FreeMovement
                 if (map.OfNode(node) is >= 0 and int own && unknown >= own && unknown <= own + 1)
                     return (node, model.Mesh.X[node], model.Mesh.Y[node], unknown - own);
         }
+        foreach (LoadTrain train in map.LoadTrains)
+            if (map.OfCrosshead(train) == unknown)
+                return Place(model, map.OfBody(train.Body, train.Component));
         throw new InvalidOperationException($"Unknown {unknown} is held but belongs to no grip.");
     }
 

@@ -24,6 +24,9 @@ public enum Dimension
     /// <summary>Traction per separation, internal unit MPa/mm.</summary>
     LayerStiffness,
 
+    /// <summary>Stiffness of a spring, internal unit N/mm.</summary>
+    Stiffness,
+
     /// <summary>Fracture energy per area, internal unit N/mm (equal to kJ/m²).</summary>
     Toughness,
 

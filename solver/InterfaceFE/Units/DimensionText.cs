@@ -12,6 +12,7 @@ public static class DimensionText
         new(Dimension.Moment, "a moment", "N*mm", "12 N*m", new(1, 1, 0, 0, 0)),
         new(Dimension.Stress, "a stress or modulus", "MPa", "70 GPa", new(-2, 1, 0, 0, 0)),
         new(Dimension.LayerStiffness, "a stiffness of a layer (traction per separation)", "MPa/mm", "1.5 MPa/mm", new(-3, 1, 0, 0, 0)),
+        new(Dimension.Stiffness, "a stiffness (force per travel)", "N/mm", "5 kN/mm", new(-1, 1, 0, 0, 0)),
         new(Dimension.Toughness, "a toughness (energy per area)", "N/mm", "2.0 kJ/m^2", new(-1, 1, 0, 0, 0)),
         new(Dimension.Temperature, "a temperature", "°C", "20 °C", new(0, 0, 0, 1, 0)),
         new(Dimension.TemperatureDifference, "a difference of temperature", "K", "60 K", new(0, 0, 0, 1, 0)),
@@ -42,7 +43,7 @@ public static class DimensionText
         if (powers == Powers(Dimension.Moment))
             return "a moment or an energy";
         foreach (Row row in Rows)
-            if (row.Powers == powers && row.Dimension is not Dimension.Temperature)
+            if (row.Powers == powers && row.Dimension is not (Dimension.Temperature or Dimension.Stiffness))
                 return row.Words;
         return "in " + InBaseUnits(powers);
     }

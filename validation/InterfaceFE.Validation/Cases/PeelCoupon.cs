@@ -75,10 +75,12 @@ public sealed record PeelCoupon
     /// <param name="travel">Opening of the pins at the end [mm].</param>
     /// <param name="elementLength">Element length along the joint [mm]; null: the default.</param>
     /// <param name="march">Settings of the march, as a deck writes them; null: the defaults.</param>
-    public string Deck(double travel, double? elementLength = null, string? march = null)
+    /// <param name="loadTrain">Stiffness of a load train at the upper end [N/mm]; null: none.</param>
+    public string Deck(double travel, double? elementLength = null, string? march = null, double? loadTrain = null)
     {
         string curve = $"{{law: bilinear, stiffness: {LayerStiffness} MPa/mm, strength: {Strength} MPa, toughness: {Toughness} N/mm}}";
         string elements = elementLength is { } length ? $", element length: {length} mm" : "";
+        string train = loadTrain is { } stiffness ? FormattableString.Invariant($", load train: {{stiffness: {stiffness:R} N/mm}}") : "";
         return $$"""
             title: Double cantilever beam, {{Name}}
             model: {width: {{Width}} mm, out of plane: {{OutOfPlane}}, rotation: small}
@@ -92,7 +94,7 @@ public sealed record PeelCoupon
             joints:
               bond: {layer: bond, upper: bottom of upper arm, lower: top of lower arm, starter crack: {from: start, length: {{Crack}} mm}{{elements}} }
             grips:
-              upper end: {on: left end of upper arm}
+              upper end: {on: left end of upper arm{{train}} }
               lower end: {on: left end of lower arm}
             sequence:
               - fix: {lower end: [x, y], upper end: [x]}

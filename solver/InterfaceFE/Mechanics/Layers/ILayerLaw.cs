@@ -59,6 +59,9 @@ public struct LayerResponse
     /// <summary>Energy dissipated since the virgin state [N/mm]; never falls.</summary>
     public double Dissipated { get; set; }
 
+    /// <summary>Energy spent in friction since the virgin state [N/mm], not part of <see cref="Dissipated"/>; never falls.</summary>
+    public double SpentInFriction { get; set; }
+
     /// <summary>d dissipated / d opening in the tentative stride [MPa]; 0 where nothing grows.</summary>
     public double DissipatedByOpening { get; set; }
 

@@ -38,6 +38,9 @@ public readonly record struct LayerElementSums(double Stored, double Dissipated,
     /// <summary>Integral of the peel traction [N]; told by <see cref="TurningLayerElement"/> alone.</summary>
     public double PeelResultant { get; init; }
 
+    /// <summary>Energy spent in friction since the virgin state [mJ].</summary>
+    public double SpentInFriction { get; init; }
+
     /// <summary>Whether damage grows at some point.</summary>
     public bool Growing => (Branches & (LayerBranches.Growing | LayerBranches.Releasing)) != 0;
 
@@ -97,7 +100,7 @@ public static class LayerElement
         jumpGradient.Clear();
         jumpRate.Clear();
         jumpTangent.Clear();
-        double stored = 0, dissipated = 0, dissipatedByFree = 0, damage = 0, leastDamage = 1;
+        double stored = 0, dissipated = 0, friction = 0, dissipatedByFree = 0, damage = 0, leastDamage = 1;
         LayerBranches branches = LayerBranches.None;
         for (int p = 0; p < rule.Count; p++)
         {
@@ -108,6 +111,7 @@ public static class LayerElement
             double weight = rule.Weights[p] * frame.Stretch * width;
             stored += weight * answer.Stored;
             dissipated += weight * answer.Dissipated;
+            friction += weight * answer.SpentInFriction;
             dissipatedByFree -= weight * answer.DissipatedByOpening;
             damage = Math.Max(damage, answer.Damage);
             leastDamage = Math.Min(leastDamage, answer.Damage);
@@ -122,7 +126,7 @@ public static class LayerElement
         SpreadVector(jumpGradient[..(2 * n)], dissipatedGradient);
         SpreadVector(jumpRate[..(2 * n)], loadRate);
         SpreadTangent(jumpTangent, 2 * n, tangent);
-        return new LayerElementSums(stored, dissipated, dissipatedByFree, damage, leastDamage, branches);
+        return new LayerElementSums(stored, dissipated, dissipatedByFree, damage, leastDamage, branches) { SpentInFriction = friction };
     }
 
     /// <summary>Opening and sliding at a station.</summary>

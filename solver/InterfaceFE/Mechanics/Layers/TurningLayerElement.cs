@@ -68,7 +68,7 @@ public static class TurningLayerElement
         tangent.Clear();
         dissipatedGradient.Clear();
         loadRate.Clear();
-        double stored = 0, dissipated = 0, dissipatedByFree = 0, damage = 0, leastDamage = 1, resultant = 0;
+        double stored = 0, dissipated = 0, dissipatedByFree = 0, damage = 0, leastDamage = 1, resultant = 0, friction = 0;
         LayerBranches branches = LayerBranches.None;
         for (int p = 0; p < rule.Count; p++)
         {
@@ -81,6 +81,7 @@ public static class TurningLayerElement
             dissipated += weight * answer.Dissipated;
             dissipatedByFree -= weight * answer.DissipatedByOpening;
             resultant += weight * answer.Peel;
+            friction += weight * answer.SpentInFriction;
             damage = Math.Max(damage, answer.Damage);
             leastDamage = Math.Min(leastDamage, answer.Damage);
             branches |= (LayerBranches)(1 << (int)answer.Branch) | (separation.Opening < 0 ? LayerBranches.Pressed : 0);
@@ -99,7 +100,7 @@ public static class TurningLayerElement
             place.SecondChanges(kinematics, shapes, slopes, weight * answer.Peel, weight * answer.Shear, geometric);
             AddTurning(tangent, turn, geometric, -weight * (answer.Peel * place.Across + answer.Shear * place.Along));
         }
-        return new LayerElementSums(stored, dissipated, dissipatedByFree, damage, leastDamage, branches) { PeelResultant = resultant };
+        return new LayerElementSums(stored, dissipated, dissipatedByFree, damage, leastDamage, branches) { PeelResultant = resultant, SpentInFriction = friction };
     }
 
     /// <summary>Opening and sliding at a station, and how the layer stands there.</summary>

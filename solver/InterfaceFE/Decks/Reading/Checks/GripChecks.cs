@@ -24,7 +24,14 @@ internal static class GripChecks
             RefuseWith("with several edges each is held whole and by itself; make a grip for each edge", ["at", "from", "to", "pin"], path, context);
         if (grip.Hold == GripHold.EachPoint)
             RefuseWith("with each point by itself there is no block to be pulled or turned", ["pin"], path, context);
+        if (grip.LoadTrain is not null && WhyOnlyFixed(grip) is { } why)
+            context.Fail(path + ".load train", why);
+        else if (grip.LoadTrain is not null && !IsPulled(deck, grip))
+            context.FailAt(context.Find(path + ".load train", out _).Key, path + ".load train", "has nothing to do: no stage pulls or pushes this grip; it acts along the pull");
     }
+
+    private static bool IsPulled(Deck deck, GripDeck grip) =>
+        deck.Sequence is null || deck.Sequence.Any(s => (s?.Pull ?? s?.Push)?.Grip is { } name && deck.Grips.TryGetValue(name, out GripDeck? pulled) && ReferenceEquals(pulled, grip));
 
     private static void RefuseWith(string reason, string[] keys, string path, ReadContext context)
     {
