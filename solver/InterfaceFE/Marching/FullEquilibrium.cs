@@ -138,6 +138,9 @@ public sealed class FullEquilibrium : IEquilibrium
     /// <summary>Number of factorisations so far.</summary>
     public long Factorisations => _factor.Factorisations;
 
+    /// <summary>Arithmetic of all factorisations so far, in whole factorisations.</summary>
+    public double WholeFactorisations => _factor.WholeFactorisations;
+
     /// <summary>Number of solves so far, each with its refinement.</summary>
     public long Solves { get; private set; }
 
@@ -146,6 +149,13 @@ public sealed class FullEquilibrium : IEquilibrium
 
     /// <summary>Time by phase.</summary>
     public PhaseClock Clock { get; init; } = new();
+
+    /// <summary>Threads that a factorisation may use, 1 or 2; the numbers are the same to the last bit.</summary>
+    public int Threads
+    {
+        get => _factor.Threads;
+        init => _factor.Threads = value;
+    }
 
     /// <summary>Whether the latest factorisation met numbers that are not finite.</summary>
     public bool FactorOverflows => _factor.Outcome.Status == FactorStatus.NotFinite;

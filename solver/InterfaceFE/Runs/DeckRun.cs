@@ -54,13 +54,14 @@ public static class DeckRun
             sink.Say(note);
         FullEquilibrium equilibrium;
         using (clock.In(Phase.Plan))
-            equilibrium = new FullEquilibrium(model) { Clock = clock };
+            equilibrium = new FullEquilibrium(model) { Clock = clock, Threads = Math.Min(2, Environment.ProcessorCount) };
         sink.Say(string.Create(CultureInfo.InvariantCulture, $"model: {model.Unknowns.Count} unknowns, {model.Solids.Sum(s => s.Count)} elements in adherends, {model.Layers.Sum(l => l.Count)} in joints"));
         RunRecorder recorder;
         using (clock.In(Phase.Recording))
             recorder = new RunRecorder(equilibrium, history, gauges, deck.Keep?.Fields.Points ?? new KeepDeck().Fields.Points, sink);
         MarchOutcome outcome = new March(equilibrium, Settings(deck, model), recorder, replay).Run(cancellation);
         recorder.Finish();
+        sink.Say(string.Create(CultureInfo.InvariantCulture, $"factorisations: {equilibrium.Factorisations}, along what changed; their arithmetic is worth {equilibrium.WholeFactorisations:0.#} whole ones"));
         var summary = new RunSummary { Status = Status(outcome.Status), Cause = outcome.Cause, Title = deck.Title };
         summary.Warnings.AddRange(meshing.Warnings);
         using (clock.In(Phase.Recording))
