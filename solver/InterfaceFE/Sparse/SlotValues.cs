@@ -67,7 +67,7 @@ internal sealed unsafe class SlotValues
         {
             int column = sequence[c], skipped = c - _map.FirstRow(slot, c);
             lower += skipped;
-                upper += skipped;
+            upper += skipped;
             for (int r = c; r < count; r++)
             {
                 double below = matrix[sequence[r] * count + column], above = matrix[column * count + sequence[r]];
