@@ -12,9 +12,6 @@ namespace InterfaceFE.Sparse;
 /// </summary>
 public sealed unsafe class BorderedFactor
 {
-    private const int MostRefinements = 4;
-    private const double Target = 1e-15;
-
     private readonly WorkingFactor _factor;
     private readonly SparsePlan _plan;
     private readonly FrontFactor _fronts;
@@ -27,12 +24,9 @@ public sealed unsafe class BorderedFactor
     private readonly List<Share> _heldMoves = [];
     private double[] _corner = [];
     private double[] _shares = [];
-    private double[] _residual = [];
-    private double[] _borderResidual = [];
-    private double[] _correction = [];
-    private double[] _borderCorrection = [];
-    private double[] _trial = [];
-    private double[] _borderTrial = [];
+    private readonly Refinement _refinement;
+    private double[] _right = [];
+    private double[] _solution = [];
     private DenseRoot? _symmetricRoot;
     private DenseRoot? _generalRoot;
     private DenseRoot? _root;
@@ -50,6 +44,7 @@ public sealed unsafe class BorderedFactor
         _block = new BorderBlock(_plan.RootUnknownCount);
         _isHeld = new bool[_plan.RootUnknownCount];
         _x = new AlignedBuffer(_plan.UnknownCount);
+        _refinement = new Refinement(new Whole(this));
     }
 
     /// <summary>Number of rows of the border.</summary>
@@ -175,35 +170,23 @@ public sealed unsafe class BorderedFactor
     {
         if (_root is null || _generation != _factor.Generation)
             throw new InvalidOperationException("The border has not been factored since it or its factor changed: call Factor first.");
-        MakeRoom();
         SolveOnce(b, g, x, y);
         BackwardError = double.NaN;
         if (!_factor.IsRefined)
             return;
-        BackwardError = Measure(b, g, x, y);
-        for (int step = 0; step < MostRefinements && BackwardError > Target; step++)
+        int n = _plan.UnknownCount, all = n + Rows;
+        if (_right.Length < all)
         {
-            x.CopyTo(_trial);
-            y.CopyTo(_borderTrial);
-            Array.Clear(_correction);
-            SolveOnce(_residual, _borderResidual.AsSpan(0, Rows), _correction, _borderCorrection.AsSpan(0, Rows));
-            for (int i = 0; i < x.Length; i++)
-                x[i] += _correction[i];
-            for (int i = 0; i < Rows; i++)
-                y[i] += _borderCorrection[i];
-            double error = Measure(b, g, x, y);
-            if (error < BackwardError)
-            {
-                bool isSlow = error > 0.5 * BackwardError;
-                BackwardError = error;
-                if (isSlow)
-                    break;
-                continue;
-            }
-            _trial.AsSpan(0, x.Length).CopyTo(x);
-            _borderTrial.AsSpan(0, Rows).CopyTo(y);
-            break;
+            _right = new double[all + Rows];
+            _solution = new double[all + Rows];
         }
+        b.CopyTo(_right);
+        g.CopyTo(_right.AsSpan(n));
+        x.CopyTo(_solution);
+        y.CopyTo(_solution.AsSpan(n));
+        (_, BackwardError) = _refinement.Run(_right.AsSpan(0, all), _solution.AsSpan(0, all));
+        _solution.AsSpan(0, n).CopyTo(x);
+        _solution.AsSpan(n, Rows).CopyTo(y);
     }
 
     private DenseRoot RootFor(bool isSymmetric)
@@ -270,6 +253,8 @@ public sealed unsafe class BorderedFactor
     {
         int interior = _plan.InteriorUnknownCount, size = _plan.UnknownCount;
         double* work = _x.Start;
+        if (_shares.Length < _vectors.Count)
+            _shares = new double[2 * _vectors.Count];
         for (int i = 0; i < size; i++)
             work[i] = b[_plan.OldOf[i]];
         _factor.Substitution.Forward(work, _plan.Whole);
@@ -292,70 +277,79 @@ public sealed unsafe class BorderedFactor
             x[_plan.OldOf[i]] = work[i];
     }
 
-    /// <summary>Sets the residuals; returns the largest over the sum of magnitudes of its row.</summary>
-    private double Measure(ReadOnlySpan<double> b, ReadOnlySpan<double> g, ReadOnlySpan<double> x, ReadOnlySpan<double> y)
+    private void ClearHeld(Span<double> vector)
     {
-        _factor.Residual(b, x, _residual, _correction);
-        Span<double> sizes = _correction;
+        for (int i = 0; i < _isHeld.Length; i++)
+            if (_isHeld[i])
+                vector[_plan.OldOf[_plan.InteriorUnknownCount + i]] = 0;
+    }
+
+    /// <summary>Adds the border's products to those of the matrix; with their magnitudes where room for them is given.</summary>
+    /// <param name="x">Unknowns, then those of the border.</param>
+    /// <param name="product">Products by row, the border's rows last; added to, times <paramref name="sign"/>.</param>
+    /// <param name="size">Magnitudes, added to; empty where they are not wanted.</param>
+    /// <param name="sign">1 or -1.</param>
+    private void AddBorder(ReadOnlySpan<double> x, Span<double> product, Span<double> size, double sign)
+    {
+        int n = _plan.UnknownCount;
         foreach (Share share in _columnShares)
         {
             ReadOnlySpan<int> unknowns = _vectors.Unknowns(share.Of);
             ReadOnlySpan<double> values = _vectors.Values(share.Of);
-            double factor = share.Value * y[share.Row];
             for (int i = 0; i < unknowns.Length; i++)
-            {
-                _residual[unknowns[i]] -= values[i] * factor;
-                sizes[unknowns[i]] += Math.Abs(values[i] * factor);
-            }
-        }
-        double largest = 0;
-        for (int i = 0; i < _isHeld.Length; i++)
-            if (_isHeld[i])
-                _residual[_plan.OldOf[_plan.InteriorUnknownCount + i]] = 0;
-        for (int i = 0; i < x.Length; i++)
-            largest = Math.Max(largest, _residual[i] == 0 ? 0 : Math.Abs(_residual[i]) / sizes[i]);
-        Span<double> borderSizes = _borderCorrection;
-        for (int i = 0; i < Rows; i++)
-        {
-            _borderResidual[i] = g[i];
-            borderSizes[i] = Math.Abs(g[i]);
-            for (int j = 0; j < Rows; j++)
-            {
-                _borderResidual[i] -= _corner[i * Rows + j] * y[j];
-                borderSizes[i] += Math.Abs(_corner[i * Rows + j] * y[j]);
-            }
+                Add(unknowns[i], values[i] * share.Value * x[n + share.Row], product, size);
         }
         foreach (Share share in _rowShares)
         {
             ReadOnlySpan<int> unknowns = _vectors.Unknowns(share.Of);
             ReadOnlySpan<double> values = _vectors.Values(share.Of);
             for (int i = 0; i < unknowns.Length; i++)
-            {
-                double product = share.Value * values[i] * x[unknowns[i]];
-                _borderResidual[share.Row] -= product;
-                borderSizes[share.Row] += Math.Abs(product);
-            }
+                Add(n + share.Row, values[i] * share.Value * x[unknowns[i]], product, size);
         }
         for (int i = 0; i < Rows; i++)
-            largest = Math.Max(largest, _borderResidual[i] == 0 ? 0 : Math.Abs(_borderResidual[i]) / borderSizes[i]);
-        return largest;
+            for (int j = 0; j < Rows; j++)
+                Add(n + i, _corner[i * Rows + j] * x[n + j], product, size);
+
+        void Add(int row, double value, Span<double> products, Span<double> sizes)
+        {
+            products[row] += sign * value;
+            if (!sizes.IsEmpty)
+                sizes[row] += Math.Abs(value);
+        }
     }
 
-    private void MakeRoom()
+    /// <summary>The matrix with its border, the border's unknowns last.</summary>
+    private sealed class Whole(BorderedFactor border) : IRefinable
     {
-        if (_residual.Length == 0)
+        private int Interior => border._plan.UnknownCount;
+
+        public int Count => Interior + border.Rows;
+
+        public void Residual(ReadOnlySpan<double> b, ReadOnlySpan<double> x, Span<double> residual, Span<double> size)
         {
-            _residual = new double[_plan.UnknownCount];
-            _correction = new double[_plan.UnknownCount];
-            _trial = new double[_plan.UnknownCount];
+            border._factor.Residual(b[..Interior], x[..Interior], residual[..Interior], size[..Interior]);
+            for (int i = Interior; i < Count; i++)
+            {
+                residual[i] = b[i];
+                size[i] = Math.Abs(b[i]);
+            }
+            border.AddBorder(x, residual, size, -1);
+            border.ClearHeld(residual);
         }
-        if (_shares.Length < _vectors.Count)
-            _shares = new double[2 * _vectors.Count];
-        if (_borderResidual.Length >= Rows)
-            return;
-        _borderResidual = new double[2 * Rows];
-        _borderCorrection = new double[2 * Rows];
-        _borderTrial = new double[2 * Rows];
+
+        public void Multiply(ReadOnlySpan<double> x, Span<double> product)
+        {
+            border._factor.Multiply(x[..Interior], product[..Interior]);
+            product[Interior..].Clear();
+            border.AddBorder(x, product, [], 1);
+            border.ClearHeld(product);
+        }
+
+        public void Correct(ReadOnlySpan<double> b, Span<double> x)
+        {
+            x.Clear();
+            border.SolveOnce(b[..Interior], b[Interior..], x[..Interior], x[Interior..]);
+        }
     }
 
     /// <summary>A share of a vector, or of a held root unknown, in a row or column.</summary>

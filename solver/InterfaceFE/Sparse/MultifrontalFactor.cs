@@ -36,7 +36,7 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         _solver = new FrontSolver(plan, _fronts.Store);
         _isHeld = new bool[plan.RootUnknownCount];
         _x = new AlignedBuffer(plan.UnknownCount);
-        _refinement = new Refinement(plan, _values, SolveOnce);
+        _refinement = new Refinement(new Unbordered(this));
     }
 
     /// <summary>The plan that this factor follows.</summary>
@@ -155,7 +155,7 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         BackwardError = double.NaN;
         SolveWith(root, b, x);
         if (IsRefined && !_isStale)
-            (RefinementSteps, BackwardError) = _refinement.Run(b, x, _isHeld);
+            (RefinementSteps, BackwardError) = _refinement.Run(b, x);
     }
 
     /// <summary>
@@ -386,5 +386,32 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         return tally.FirstZero < 0
             ? new FactorOutcome(FactorStatus.Done, -1, -1, smallest)
             : new FactorOutcome(FactorStatus.ZeroPivot, Plan.OldOf[tally.FirstZero], -1, smallest);
+    }
+
+    private void ClearHeld(Span<double> vector)
+    {
+        for (int i = 0; i < _isHeld.Length; i++)
+            if (_isHeld[i])
+                vector[Plan.OldOf[Plan.InteriorUnknownCount + i]] = 0;
+    }
+
+    /// <summary>The matrix for the held choice of the present solve.</summary>
+    private sealed class Unbordered(MultifrontalFactor factor) : IRefinable
+    {
+        public int Count => factor.Size;
+
+        public void Residual(ReadOnlySpan<double> b, ReadOnlySpan<double> x, Span<double> residual, Span<double> size)
+        {
+            factor._values.Residual(b, x, residual, size);
+            factor.ClearHeld(residual);
+        }
+
+        public void Multiply(ReadOnlySpan<double> x, Span<double> product)
+        {
+            factor._values.Multiply(x, product);
+            factor.ClearHeld(product);
+        }
+
+        public void Correct(ReadOnlySpan<double> b, Span<double> x) => factor.SolveOnce(b, x);
     }
 }

@@ -1,8 +1,5 @@
 namespace InterfaceFE.Sparse;
 
-/// <summary>Solves for a correction: x for the right side b, zero at held unknowns.</summary>
-internal delegate void CorrectionSolve(ReadOnlySpan<double> b, Span<double> x);
-
 /// <summary>
 /// Improves solutions with the true matrix. First by iterative refinement in working precision (R. D. Skeel, Math. Comp. 35 (1980) 817, for the componentwise measure). Where
 /// that stalls, because pivots were lifted far, by flexible GMRES with the factor as preconditioner (Y. Saad, SIAM J. Sci. Comput. 14 (1993) 461): k lifted pivots are a
@@ -17,9 +14,7 @@ internal sealed class Refinement
     private const int Restarts = 3;
     private const int LargestExponent = 1000;
 
-    private readonly SparsePlan _plan;
-    private readonly SlotValues _values;
-    private readonly CorrectionSolve _solve;
+    private readonly IRefinable _system;
     private double[] _residual = [];
     private double[] _size = [];
     private double[] _correction = [];
@@ -31,22 +26,18 @@ internal sealed class Refinement
     private readonly double[] _sine = new double[Directions];
     private readonly double[] _projected = new double[Directions + 1];
 
-    public Refinement(SparsePlan plan, SlotValues values, CorrectionSolve solve)
-    {
-        _plan = plan;
-        _values = values;
-        _solve = solve;
-    }
+    /// <summary>Refines solutions of a system.</summary>
+    public Refinement(IRefinable system) => _system = system;
 
     /// <summary>Refines a solution in place. Returns the steps taken and the componentwise backward error left.</summary>
-    public (int Steps, double Error) Run(ReadOnlySpan<double> b, Span<double> x, ReadOnlySpan<bool> isHeld)
+    public (int Steps, double Error) Run(ReadOnlySpan<double> b, Span<double> x)
     {
         MakeRoom();
-        double error = Measure(b, x, isHeld);
+        double error = Measure(b, x);
         int steps = 0;
         while (steps < MostSteps && error > Target)
         {
-            double improved = Step(b, x, isHeld, error);
+            double improved = Step(b, x, error);
             steps++;
             bool isSlow = !(improved < 0.5 * error);
             error = Math.Min(error, improved);
@@ -56,17 +47,17 @@ internal sealed class Refinement
         for (int restart = 0; restart < Restarts && error > GoodEnough; restart++)
         {
             x.CopyTo(_best);
-            (int directions, double improved) = Project(b, x, isHeld);
+            (int directions, double improved) = Project(b, x);
             steps += directions;
             if (!(improved < error))
             {
                 _best.CopyTo(x);
-                Measure(b, x, isHeld);
+                Measure(b, x);
                 break;
             }
             error = improved;
             // A plain step after the projection takes off what the projection's own round-off left.
-            error = Math.Min(error, Step(b, x, isHeld, error));
+            error = Math.Min(error, Step(b, x, error));
             steps++;
         }
         return (steps, error);
@@ -74,34 +65,34 @@ internal sealed class Refinement
 
     private void MakeRoom()
     {
-        if (_residual.Length == _plan.UnknownCount)
+        if (_residual.Length == _system.Count)
             return;
-        _residual = new double[_plan.UnknownCount];
-        _size = new double[_plan.UnknownCount];
-        _correction = new double[_plan.UnknownCount];
-        _best = new double[_plan.UnknownCount];
+        _residual = new double[_system.Count];
+        _size = new double[_system.Count];
+        _correction = new double[_system.Count];
+        _best = new double[_system.Count];
+        _basis = [];
     }
 
     /// <summary>One correction; taken back when it does not improve. Returns the error after it; the residual belongs to what x then is.</summary>
-    private double Step(ReadOnlySpan<double> b, Span<double> x, ReadOnlySpan<bool> isHeld, double error)
+    private double Step(ReadOnlySpan<double> b, Span<double> x, double error)
     {
         x.CopyTo(_best);
-        _solve(_residual, _correction);
+        _system.Correct(_residual, _correction);
         for (int i = 0; i < x.Length; i++)
             x[i] += _correction[i];
-        double improved = Measure(b, x, isHeld);
+        double improved = Measure(b, x);
         if (improved < error)
             return improved;
         _best.CopyTo(x);
-        Measure(b, x, isHeld);
+        Measure(b, x);
         return improved;
     }
 
-    /// <summary>Sets the residual (zero at held unknowns) and returns its largest share of |K||x| + |b|.</summary>
-    private double Measure(ReadOnlySpan<double> b, ReadOnlySpan<double> x, ReadOnlySpan<bool> isHeld)
+    /// <summary>Sets the residual and returns its largest share of |K||x| + |b|.</summary>
+    private double Measure(ReadOnlySpan<double> b, ReadOnlySpan<double> x)
     {
-        _values.Residual(b, x, _residual, _size);
-        ClearHeld(_residual, isHeld);
+        _system.Residual(b, x, _residual, _size);
         double largest = 0;
         for (int i = 0; i < _residual.Length; i++)
         {
@@ -112,24 +103,17 @@ internal sealed class Refinement
         return double.IsNaN(largest) ? double.PositiveInfinity : largest;
     }
 
-    private void ClearHeld(Span<double> vector, ReadOnlySpan<bool> isHeld)
-    {
-        for (int i = 0; i < isHeld.Length; i++)
-            if (isHeld[i])
-                vector[_plan.OldOf[_plan.InteriorUnknownCount + i]] = 0;
-    }
-
     /// <summary>Minimises the residual over a Krylov space of preconditioned directions and adds the result to x.</summary>
-    private (int Directions, double Error) Project(ReadOnlySpan<double> b, Span<double> x, ReadOnlySpan<bool> isHeld)
+    private (int Directions, double Error) Project(ReadOnlySpan<double> b, Span<double> x)
     {
         if (_basis.Length == 0)
         {
             _basis = new double[Directions + 1][];
             _preconditioned = new double[Directions][];
             for (int k = 0; k <= Directions; k++)
-                _basis[k] = new double[_plan.UnknownCount];
+                _basis[k] = new double[_system.Count];
             for (int k = 0; k < Directions; k++)
-                _preconditioned[k] = new double[_plan.UnknownCount];
+                _preconditioned[k] = new double[_system.Count];
         }
         double start = Norm(_residual);
         if (!(start > 0) || !double.IsFinite(start))
@@ -141,23 +125,22 @@ internal sealed class Refinement
         int count = 0;
         while (count < Directions && Math.Abs(_projected[count]) > 1e-16 * start)
         {
-            double next = Expand(count, isHeld);
+            double next = Expand(count);
             Rotate(count);
             count++;
             if (!(next > 0))
                 break;
         }
         Combine(count, x);
-        return (count, Measure(b, x, isHeld));
+        return (count, Measure(b, x));
     }
 
     /// <summary>Adds a direction and its orthonormal image. Returns the length of the new part of the image.</summary>
-    private double Expand(int k, ReadOnlySpan<bool> isHeld)
+    private double Expand(int k)
     {
         double[] image = _basis[k + 1];
-        _solve(_basis[k], _preconditioned[k]);
-        _values.Multiply(_preconditioned[k], image);
-        ClearHeld(image, isHeld);
+        _system.Correct(_basis[k], _preconditioned[k]);
+        _system.Multiply(_preconditioned[k], image);
         for (int j = 0; j <= k; j++)
             _hessenberg[j * Directions + k] = 0;
         // Twice is enough to keep the images orthogonal.

@@ -22,7 +22,7 @@ public class RandomSystemTests
     public void Paths_and_many_right_sides_give_the_values_of_whole_solves() => Gen.Int[0, int.MaxValue].Sample(seed => SolvesInParts(seed), iter: 100, threads: 1);
 
     [Fact]
-    public void Bordered_systems_are_solved_to_round_off_or_tell_what_is_left() => Gen.Int[0, int.MaxValue].Sample(seed => SolvesBordered(seed), iter: 100, threads: 1);
+    public void Bordered_systems_are_solved_to_round_off() => Gen.Int[0, int.MaxValue].Sample(seed => SolvesBordered(seed), iter: 100, threads: 1);
 
     private static void SolvesAsDense(int seed)
     {
@@ -149,11 +149,7 @@ public class RandomSystemTests
         border.Solve(b, g, x, y);
         double[] right = [.. b, .. g], solution = [.. x, .. y];
         double error = Checks.BackwardError(whole, right, solution, []);
-        if (factor.LiftedPivots == 0)
-            Close.To(0, error, absolute: 1e-13, what: "backward error");
-        else
-            // Where the border alone holds what is free in the matrix, plain refinement may stall far from round-off; then it says so.
-            Assert.True(error <= Math.Max(1e-13, border.BackwardError), $"backward error {error}, told {border.BackwardError}");
+        Close.To(0, error, absolute: 1e-12, what: "backward error");
     }
 
     /// <summary>Vertices with 0 to 5 unknowns, some in pieces of their own, joined by random slots of one to twelve unknowns; definite, indefinite or, where general, unsymmetric.</summary>
