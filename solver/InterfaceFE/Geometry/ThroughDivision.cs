@@ -8,8 +8,8 @@ internal static class ThroughDivision
     private const int MostTries = 64;
 
     /// <summary>
-    /// Eight-node elements through a strip that yields: with them moment and springback of a bar bent far beyond yield come within 1 %, and first yield, seen at the outermost
-    /// integration points, comes 7 % late (measured).
+    /// Eight-node elements through a strip that yields: with them moment and springback of a bar bent far beyond yield come within 1 % (measured against 24), and first yield, seen at the outermost
+    /// integration points, comes 7 % late (they lie 0.4226/6 of half the thickness below the face).
     /// </summary>
     private const int WhereItYields = 6;
 
