@@ -53,8 +53,8 @@ internal sealed class ChangedFronts
     public double Complete(UnknownScales scales)
     {
         if (!IsWhole && scales.AnyMoved)
-            for (int front = 0; front < _plan.FrontCount; front++)
-                if (_store.Tallies[front].HasLooked && _marks[front] != OnPath && HasMovedRow(front, scales))
+            for (int front = NextLooked(0); front >= 0; front = NextLooked(front + 1))
+                if (_marks[front] != OnPath && HasMovedRow(front, scales))
                     Mark(front);
         double work = 0;
         for (int front = Last(_plan.FrontCount + 1); front >= 0; front = Last(front))
@@ -93,6 +93,12 @@ internal sealed class ChangedFronts
     }
 
     private int Last(int end) => _marks.AsSpan(0, end).LastIndexOfAnyExcept((byte)0);
+
+    private int NextLooked(int from)
+    {
+        int found = _store.HasLooked.AsSpan(from).IndexOf(true);
+        return found < 0 ? -1 : from + found;
+    }
 
     private bool HasMovedRow(int front, UnknownScales scales)
     {

@@ -40,6 +40,7 @@ internal sealed unsafe class FrontStore
         _sizes = new AlignedBuffer(plan.UnknownCount);
         _rowSizes = new AlignedBuffer(plan.RowStart[^1]);
         Tallies = new PivotTally[plan.FrontCount];
+        HasLooked = new bool[plan.FrontCount];
     }
 
     /// <summary>1 for a symmetric matrix, 2 for a general one.</summary>
@@ -59,6 +60,9 @@ internal sealed unsafe class FrontStore
 
     /// <summary>What was noted of the pivots in each front's subtree.</summary>
     public PivotTally[] Tallies { get; }
+
+    /// <summary>Whether a pivot of a front was looked at closely: its treatment then depends on the scales of the front's rows too.</summary>
+    public bool[] HasLooked { get; }
 
     /// <summary>Panel of a front, or the root's dense block.</summary>
     public double* Panel(int half, int front) => _panels[half].Start + _plan.PanelStart[front];

@@ -50,6 +50,7 @@ internal sealed unsafe class FrontWorker
         Assemble(front, _sizes.Start);
         _tally = PivotTally.Empty;
         _notFinite = -1;
+        _store.HasLooked[front] = false;
         Eliminate(front, _sizes.Start);
         for (int c = _plan.ChildStart[front]; c < _plan.ChildStart[front + 1]; c++)
             _tally.Join(_store.Tallies[_plan.Children[c]]);
@@ -231,7 +232,7 @@ internal sealed unsafe class FrontWorker
                 Mirror(p, stride, k + 1);
                 Mirror(q, stride, k + 1);
                 noise = _look.Noise(front, k0 + k, size);
-                _tally.HasLooked = true;
+                _store.HasLooked[front] = true;
             }
             double pivot = PivotJudge.Take(ref _tally, place, computed, scale, soft, noise, growth), inverse = 1 / pivot;
             if (!double.IsFinite(pivot) || !double.IsFinite(inverse))

@@ -24,9 +24,6 @@ internal struct PivotTally
     /// <summary>Largest sum of magnitudes that went into a pivot, over the scale of its unknown; about 2 for a definite matrix.</summary>
     public double Growth;
 
-    /// <summary>Whether a pivot of the front itself was looked at closely: its treatment then depends on the scales of the front's rows too.</summary>
-    public bool HasLooked;
-
     /// <summary>Nothing noted yet.</summary>
     public static PivotTally Empty => new() { FirstZero = -1, SmallestRatio = double.PositiveInfinity };
 
