@@ -127,25 +127,11 @@ public class EnergyLedgerTests
         return (equilibrium, ledger.Account());
     }
 
-    private sealed class Sabotaged(ILayerLaw inner, double stored, double dissipated) : ILayerLaw
+    private sealed class Sabotaged(ILayerLaw inner, double stored, double dissipated) : WrappedLaw(inner)
     {
-        public int StateSize => inner.StateSize;
-
-        public bool HasSymmetricTangent => inner.HasSymmetricTangent;
-
-        public LayerStiffness Stiffness => inner.Stiffness;
-
-        public double PeelToughness => inner.PeelToughness;
-
-        public double ShearToughness => inner.ShearToughness;
-
-        public double FinalOpening => inner.FinalOpening;
-
-        public double FinalSliding => inner.FinalSliding;
-
-        public LayerResponse Update(in Separation separation, in LawPoint at, ReadOnlySpan<double> accepted, Span<double> tentative)
+        public override LayerResponse Update(in Separation separation, in LawPoint at, ReadOnlySpan<double> accepted, Span<double> tentative)
         {
-            LayerResponse answer = inner.Update(separation, at, accepted, tentative);
+            LayerResponse answer = Inner.Update(separation, at, accepted, tentative);
             answer.Stored *= 1 + stored;
             answer.Dissipated *= 1 + dissipated;
             return answer;

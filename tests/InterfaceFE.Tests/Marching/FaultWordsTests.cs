@@ -97,25 +97,11 @@ public class FaultWordsTests
     };
 
     /// <summary>A law that answers NaN from an opening on.</summary>
-    private sealed class WithoutAnswer(ILayerLaw inner, double from, bool tangentOnly) : ILayerLaw
+    private sealed class WithoutAnswer(ILayerLaw inner, double from, bool tangentOnly) : WrappedLaw(inner)
     {
-        public int StateSize => inner.StateSize;
-
-        public bool HasSymmetricTangent => inner.HasSymmetricTangent;
-
-        public LayerStiffness Stiffness => inner.Stiffness;
-
-        public double PeelToughness => inner.PeelToughness;
-
-        public double ShearToughness => inner.ShearToughness;
-
-        public double FinalOpening => inner.FinalOpening;
-
-        public double FinalSliding => inner.FinalSliding;
-
-        public LayerResponse Update(in Separation separation, in LawPoint at, ReadOnlySpan<double> accepted, Span<double> tentative)
+        public override LayerResponse Update(in Separation separation, in LawPoint at, ReadOnlySpan<double> accepted, Span<double> tentative)
         {
-            LayerResponse answer = inner.Update(separation, at, accepted, tentative);
+            LayerResponse answer = Inner.Update(separation, at, accepted, tentative);
             if (separation.Opening <= from)
                 return answer;
             answer.PeelByOpening = double.NaN;

@@ -9,7 +9,7 @@ namespace InterfaceFE.Mechanics.Layers;
 /// With u = 1 - ξ and p(y) = (exp(y) - 1)/y, r(y) = (exp(y) - 1 - y)/y²: T = S·u·p(a·u)/p(a), area left = S·(wf - w0)·u²·r(a·u)/p(a).
 /// These have no cancellation for a ≤ 1; above, the plain forms are used, which have none there and cannot overflow.
 /// </remarks>
-public sealed class ExponentialCurve : ITractionCurve
+public sealed class ExponentialCurve : RisingCurve
 {
     private readonly double _length;
     private readonly double _lastShare;
@@ -21,12 +21,9 @@ public sealed class ExponentialCurve : ITractionCurve
     /// <param name="finalSeparation">wf [mm], above w0 = S/k.</param>
     /// <exception cref="ArgumentOutOfRangeException">A number is nonsense, or the toughness is outside its range.</exception>
     public ExponentialCurve(double stiffness, double strength, double toughness, double finalSeparation)
+        : base(stiffness, strength, toughness)
     {
-        Stiffness = Admissible.Positive(stiffness, nameof(stiffness));
-        Strength = Admissible.Positive(strength, nameof(strength));
-        Toughness = Admissible.Positive(toughness, nameof(toughness));
         FinalSeparation = Admissible.Positive(finalSeparation, nameof(finalSeparation));
-        ElasticLimit = Admissible.Positive(strength / stiffness, "strength/stiffness");
         if (FinalSeparation <= ElasticLimit)
             throw new ArgumentOutOfRangeException(nameof(finalSeparation), finalSeparation, Admissible.Text($"finalSeparation must be above strength/stiffness = {ElasticLimit:R} mm"));
         _length = FinalSeparation - ElasticLimit;
@@ -42,30 +39,8 @@ public sealed class ExponentialCurve : ITractionCurve
     public double Decay { get; }
 
     /// <inheritdoc/>
-    public double ElasticLimit { get; }
-
-    /// <inheritdoc/>
-    public double FinalSeparation { get; }
-
-    /// <inheritdoc/>
-    public double Stiffness { get; }
-
-    /// <inheritdoc/>
-    public double Strength { get; }
-
-    /// <inheritdoc/>
-    public double Toughness { get; }
-
-    /// <inheritdoc/>
-    public double PeakSeparation => ElasticLimit;
-
-    /// <inheritdoc/>
-    public double Traction(double separation)
+    private protected override double TractionBeyond(double separation)
     {
-        if (separation >= FinalSeparation)
-            return 0;
-        if (separation <= ElasticLimit)
-            return Stiffness * separation;
         if (Decay > 1)
             return Strength * (Math.Exp(-Decay * ((separation - ElasticLimit) / _length)) - _lastShare) / (1 - _lastShare);
         double u = (FinalSeparation - separation) / _length;
@@ -73,12 +48,8 @@ public sealed class ExponentialCurve : ITractionCurve
     }
 
     /// <inheritdoc/>
-    public double Slope(double separation)
+    private protected override double SlopeBeyond(double separation)
     {
-        if (separation >= FinalSeparation)
-            return 0;
-        if (separation < ElasticLimit)
-            return Stiffness;
         if (Decay > 1)
             return -Strength * Decay / _length * Math.Exp(-Decay * ((separation - ElasticLimit) / _length)) / (1 - _lastShare);
         double u = (FinalSeparation - separation) / _length;
@@ -86,12 +57,8 @@ public sealed class ExponentialCurve : ITractionCurve
     }
 
     /// <inheritdoc/>
-    public double Area(double separation)
+    private protected override double AreaBeyond(double separation)
     {
-        if (separation >= FinalSeparation)
-            return Toughness;
-        if (separation <= ElasticLimit)
-            return 0.5 * Stiffness * separation * separation;
         double u = (FinalSeparation - separation) / _length;
         return Toughness - Strength * _length * AreaLeft(Decay, u);
     }

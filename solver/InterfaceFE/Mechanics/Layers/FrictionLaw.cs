@@ -7,11 +7,10 @@ namespace InterfaceFE.Mechanics.Layers;
 /// where pressure and sliding go in proportion over the stride; faces that part lose the little that sticking stored. The tangent is skew while slipping: dτ/dw = ±μ·dp/dw, dp/dv = 0.
 /// </summary>
 /// <remarks>State: that of the inner law, then vs [mm], v - vs [mm], pressure [MPa], energy spent [N/mm], and 1 once friction acts.</remarks>
-public sealed class FrictionLaw : ILayerLaw
+public sealed class FrictionLaw : WrappedLaw
 {
     private const int OwnState = 5;
 
-    private readonly ILayerLaw _inner;
     private readonly double _coefficient, _stiffness;
     private readonly bool _neverBonded;
 
@@ -21,40 +20,24 @@ public sealed class FrictionLaw : ILayerLaw
     /// <param name="neverBonded">Whether friction acts from the start.</param>
     /// <exception cref="ArgumentOutOfRangeException">The coefficient or the contact stiffness is not above 0.</exception>
     public FrictionLaw(ILayerLaw inner, double coefficient, bool neverBonded)
+        : base(inner)
     {
-        ArgumentNullException.ThrowIfNull(inner);
-        _inner = inner;
         _coefficient = Admissible.Positive(coefficient, nameof(coefficient));
         _stiffness = Admissible.Positive(inner.Stiffness.Contact, nameof(inner));
         _neverBonded = neverBonded;
     }
 
     /// <inheritdoc/>
-    public int StateSize => _inner.StateSize + OwnState;
+    public override int StateSize => Inner.StateSize + OwnState;
 
     /// <inheritdoc/>
-    public bool HasSymmetricTangent => false;
+    public override bool HasSymmetricTangent => false;
 
     /// <inheritdoc/>
-    public LayerStiffness Stiffness => _inner.Stiffness;
-
-    /// <inheritdoc/>
-    public double PeelToughness => _inner.PeelToughness;
-
-    /// <inheritdoc/>
-    public double ShearToughness => _inner.ShearToughness;
-
-    /// <inheritdoc/>
-    public double FinalOpening => _inner.FinalOpening;
-
-    /// <inheritdoc/>
-    public double FinalSliding => _inner.FinalSliding;
-
-    /// <inheritdoc/>
-    public LayerResponse Update(in Separation separation, in LawPoint at, ReadOnlySpan<double> accepted, Span<double> tentative)
+    public override LayerResponse Update(in Separation separation, in LawPoint at, ReadOnlySpan<double> accepted, Span<double> tentative)
     {
-        int n = _inner.StateSize;
-        LayerResponse answer = _inner.Update(separation, at, accepted[..n], tentative[..n]);
+        int n = Inner.StateSize;
+        LayerResponse answer = Inner.Update(separation, at, accepted[..n], tentative[..n]);
         double origin = accepted[n], spent = accepted[n + 3];
         bool acts = _neverBonded || accepted[n + 4] != 0, separated = answer.Branch == LawBranch.Separated;
         double pressure = separated ? Math.Max(-answer.Peel, 0) : 0, sliding = separation.Sliding;

@@ -35,7 +35,7 @@ public enum LayerBranches
 /// <param name="Branches">Branches met; the tangent is the virgin one when this is <see cref="LayerBranches.Elastic"/> alone.</param>
 public readonly record struct LayerElementSums(double Stored, double Dissipated, double DissipatedByFreeOpening, double LargestDamage, double LeastDamage, LayerBranches Branches)
 {
-    /// <summary>Integral of the peel traction [N]; told by <see cref="TurningLayerElement"/> alone.</summary>
+    /// <summary>Integral of the peel traction [N].</summary>
     public double PeelResultant { get; init; }
 
     /// <summary>Energy spent in friction since the virgin state [mJ].</summary>
@@ -46,6 +46,32 @@ public readonly record struct LayerElementSums(double Stored, double Dissipated,
 
     /// <summary>Whether some point is not on the virgin tension branch, so that the tangent differs from the virgin one.</summary>
     public bool Changed => (Branches & ~LayerBranches.Elastic) != 0;
+}
+
+/// <summary>Adds up the answers at the points of an element.</summary>
+internal struct LayerElementTally
+{
+    private double _stored, _dissipated, _dissipatedByFree, _resultant, _friction, _damage, _leastDamage;
+    private LayerBranches _branches;
+
+    /// <summary>Nothing yet.</summary>
+    public static LayerElementTally Empty => new() { _leastDamage = 1 };
+
+    /// <summary>The sums so far.</summary>
+    public readonly LayerElementSums Sums => new(_stored, _dissipated, _dissipatedByFree, _damage, _leastDamage, _branches) { PeelResultant = _resultant, SpentInFriction = _friction };
+
+    /// <summary>Takes the answer at a point that stands for an area [mm²].</summary>
+    public void Take(double area, in LayerResponse answer, in Separation separation)
+    {
+        _stored += area * answer.Stored;
+        _dissipated += area * answer.Dissipated;
+        _dissipatedByFree -= area * answer.DissipatedByOpening;
+        _resultant += area * answer.Peel;
+        _friction += area * answer.SpentInFriction;
+        _damage = Math.Max(_damage, answer.Damage);
+        _leastDamage = Math.Min(_leastDamage, answer.Damage);
+        _branches |= (LayerBranches)(1 << (int)answer.Branch) | (separation.Opening < 0 ? LayerBranches.Pressed : 0);
+    }
 }
 
 /// <summary>
@@ -100,8 +126,7 @@ public static class LayerElement
         jumpGradient.Clear();
         jumpRate.Clear();
         jumpTangent.Clear();
-        double stored = 0, dissipated = 0, friction = 0, dissipatedByFree = 0, damage = 0, leastDamage = 1;
-        LayerBranches branches = LayerBranches.None;
+        LayerElementTally tally = LayerElementTally.Empty;
         for (int p = 0; p < rule.Count; p++)
         {
             ReadOnlySpan<double> shapes = rule.Shapes(p);
@@ -109,13 +134,7 @@ public static class LayerElement
             Separation separation = SeparationOf(frame, displacements, shapes, freeOpening);
             LayerResponse answer = law.Update(separation, at, accepted.Slice(p * stateSize, stateSize), tentative.Slice(p * stateSize, stateSize));
             double weight = rule.Weights[p] * frame.Stretch * width;
-            stored += weight * answer.Stored;
-            dissipated += weight * answer.Dissipated;
-            friction += weight * answer.SpentInFriction;
-            dissipatedByFree -= weight * answer.DissipatedByOpening;
-            damage = Math.Max(damage, answer.Damage);
-            leastDamage = Math.Min(leastDamage, answer.Damage);
-            branches |= (LayerBranches)(1 << (int)answer.Branch) | (separation.Opening < 0 ? LayerBranches.Pressed : 0);
+            tally.Take(weight, answer, separation);
             AddVector(jumpForce, frame, shapes, weight * answer.Peel, weight * answer.Shear);
             AddVector(jumpGradient, frame, shapes, weight * answer.DissipatedByOpening, weight * answer.DissipatedBySliding);
             AddVector(jumpRate, frame, shapes, -weight * answer.PeelByOpening, -weight * answer.ShearByOpening);
@@ -126,7 +145,7 @@ public static class LayerElement
         SpreadVector(jumpGradient[..(2 * n)], dissipatedGradient);
         SpreadVector(jumpRate[..(2 * n)], loadRate);
         SpreadTangent(jumpTangent, 2 * n, tangent);
-        return new LayerElementSums(stored, dissipated, dissipatedByFree, damage, leastDamage, branches) { SpentInFriction = friction };
+        return tally.Sums;
     }
 
     /// <summary>Opening and sliding at a station.</summary>

@@ -5,7 +5,7 @@ namespace InterfaceFE.Mechanics.Layers;
 /// Γ = ½·S·w0 + ⅔·S·(wf - w0), so wf = 3·Γ/(2·S) + w0/4. It falls gently at first and lies between trapezoid and bilinear.
 /// Source: one of the shapes compared by Alfano, Compos. Sci. Technol. 66 (2006) 723-730 (from memory); area derived by integration.
 /// </summary>
-public sealed class LinearParabolicCurve : ITractionCurve
+public sealed class LinearParabolicCurve : RisingCurve
 {
     private readonly double _length;
 
@@ -15,11 +15,8 @@ public sealed class LinearParabolicCurve : ITractionCurve
     /// <param name="toughness">Area Γ [N/mm], above S²/(2k), so that the curve falls after its peak.</param>
     /// <exception cref="ArgumentOutOfRangeException">A number is not finite, not above 0, or the toughness is not above S²/(2k).</exception>
     public LinearParabolicCurve(double stiffness, double strength, double toughness)
+        : base(stiffness, strength, toughness)
     {
-        Stiffness = Admissible.Positive(stiffness, nameof(stiffness));
-        Strength = Admissible.Positive(strength, nameof(strength));
-        Toughness = Admissible.Positive(toughness, nameof(toughness));
-        ElasticLimit = Admissible.Positive(strength / stiffness, "strength/stiffness");
         FinalSeparation = 1.5 * toughness / strength + 0.25 * ElasticLimit;
         _length = FinalSeparation - ElasticLimit;
         if (!double.IsFinite(FinalSeparation) || _length <= 0)
@@ -27,50 +24,19 @@ public sealed class LinearParabolicCurve : ITractionCurve
     }
 
     /// <inheritdoc/>
-    public double ElasticLimit { get; }
-
-    /// <inheritdoc/>
-    public double FinalSeparation { get; }
-
-    /// <inheritdoc/>
-    public double Stiffness { get; }
-
-    /// <inheritdoc/>
-    public double Strength { get; }
-
-    /// <inheritdoc/>
-    public double Toughness { get; }
-
-    /// <inheritdoc/>
-    public double PeakSeparation => ElasticLimit;
-
-    /// <inheritdoc/>
-    public double Traction(double separation)
+    private protected override double TractionBeyond(double separation)
     {
-        if (separation >= FinalSeparation)
-            return 0;
-        if (separation <= ElasticLimit)
-            return Stiffness * separation;
         // With u = 1 - ξ there is no cancellation near the end.
         double u = (FinalSeparation - separation) / _length;
         return Strength * u * (2 - u);
     }
 
     /// <inheritdoc/>
-    public double Slope(double separation)
-    {
-        if (separation >= FinalSeparation)
-            return 0;
-        return separation < ElasticLimit ? Stiffness : -2 * Strength * (separation - ElasticLimit) / (_length * _length);
-    }
+    private protected override double SlopeBeyond(double separation) => -2 * Strength * (separation - ElasticLimit) / (_length * _length);
 
     /// <inheritdoc/>
-    public double Area(double separation)
+    private protected override double AreaBeyond(double separation)
     {
-        if (separation >= FinalSeparation)
-            return Toughness;
-        if (separation <= ElasticLimit)
-            return 0.5 * Stiffness * separation * separation;
         double u = (FinalSeparation - separation) / _length;
         return Toughness - Strength * _length * u * u * (1 - u / 3);
     }

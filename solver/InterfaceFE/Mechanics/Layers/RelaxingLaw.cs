@@ -11,14 +11,13 @@ namespace InterfaceFE.Mechanics.Layers;
 /// dissipated is that of the law without relaxation plus work less stored energy of the difference by the trapezoidal rule, second order in the stride.
 /// Laws that unload to the origin only: a plastic separation has no secant.
 /// </remarks>
-public sealed class RelaxingLaw : ILayerLaw
+public sealed class RelaxingLaw : WrappedLaw
 {
     private const int Opening = 0, Sliding = 1, Temperature = 2, PeelLess = 3, ShearLess = 4, StoredLess = 5, Lost = 6, LostWithout = 7, Own = 8, MostTerms = 16;
 
     /// <summary>Share of the final separation below which secants are taken at that share.</summary>
     private const double Nearly = 1e-9;
 
-    private readonly ILayerLaw _inner;
     private readonly double[] _shares;
     private readonly double[] _times;
     private readonly double _lasting;
@@ -32,8 +31,8 @@ public sealed class RelaxingLaw : ILayerLaw
     /// <exception cref="ArgumentNullException">Law or shift is missing.</exception>
     /// <exception cref="ArgumentException">The numbers are outside their range.</exception>
     public RelaxingLaw(ILayerLaw inner, ReadOnlySpan<double> shares, ReadOnlySpan<double> times, TimeShift shift)
+        : base(inner)
     {
-        ArgumentNullException.ThrowIfNull(inner);
         ArgumentNullException.ThrowIfNull(shift);
         if (shares.Length != times.Length || shares.Length is < 1 or > MostTerms)
             throw new ArgumentException(Admissible.Text($"relaxation needs as many shares as times, 1 to {MostTerms}; there are {shares.Length} shares and {times.Length} times"), nameof(shares));
@@ -46,7 +45,6 @@ public sealed class RelaxingLaw : ILayerLaw
         // A last digit of slack: shares that are meant to sum to 1.
         if (sum > 1 + 1e-12)
             throw new ArgumentException(Admissible.Text($"the shares of relaxation sum to {sum:R}; at most 1 can relax"), nameof(shares));
-        _inner = inner;
         _shares = shares.ToArray();
         _times = times.ToArray();
         _lasting = Math.Max(0, 1 - sum);
@@ -54,33 +52,18 @@ public sealed class RelaxingLaw : ILayerLaw
     }
 
     /// <inheritdoc/>
-    public int StateSize => _inner.StateSize + Own + 2 * _shares.Length;
+    public override int StateSize => Inner.StateSize + Own + 2 * _shares.Length;
 
     /// <inheritdoc/>
-    public bool HasSymmetricTangent => false;
+    public override bool HasSymmetricTangent => false;
 
     /// <inheritdoc/>
-    public bool DependsOnTime => true;
+    public override bool DependsOnTime => true;
 
     /// <inheritdoc/>
-    public LayerStiffness Stiffness => _inner.Stiffness;
-
-    /// <inheritdoc/>
-    public double PeelToughness => _inner.PeelToughness;
-
-    /// <inheritdoc/>
-    public double ShearToughness => _inner.ShearToughness;
-
-    /// <inheritdoc/>
-    public double FinalOpening => _inner.FinalOpening;
-
-    /// <inheritdoc/>
-    public double FinalSliding => _inner.FinalSliding;
-
-    /// <inheritdoc/>
-    public LayerResponse Update(in Separation separation, in LawPoint at, ReadOnlySpan<double> accepted, Span<double> tentative)
+    public override LayerResponse Update(in Separation separation, in LawPoint at, ReadOnlySpan<double> accepted, Span<double> tentative)
     {
-        int size = _inner.StateSize;
+        int size = Inner.StateSize;
         ReadOnlySpan<double> before = accepted.Slice(size, Own), peelBefore = accepted.Slice(size + Own, _shares.Length), shearBefore = accepted.Slice(size + Own + _shares.Length, _shares.Length);
         Span<double> state = tentative.Slice(size, Own), peelAfter = tentative.Slice(size + Own, _shares.Length), shearAfter = tentative.Slice(size + Own + _shares.Length, _shares.Length);
         bool open = !(separation.Opening < 0);
@@ -89,9 +72,9 @@ public sealed class RelaxingLaw : ILayerLaw
         double leastOpening = Nearly * FinalOpening, leastSliding = Math.CopySign(Nearly * FinalSliding, v);
         bool touches = !(w >= leastOpening), still = !(Math.Abs(v) >= Math.Abs(leastSliding));
         double x = touches ? leastOpening : w, y = still ? leastSliding : v;
-        LayerResponse opened = touches ? _inner.Update(new Separation(x, v), at, accepted[..size], tentative[..size]) : default;
-        LayerResponse slid = still ? _inner.Update(new Separation(separation.Opening, y), at, accepted[..size], tentative[..size]) : default;
-        LayerResponse answer = _inner.Update(separation, at, accepted[..size], tentative[..size]);
+        LayerResponse opened = touches ? Inner.Update(new Separation(x, v), at, accepted[..size], tentative[..size]) : default;
+        LayerResponse slid = still ? Inner.Update(new Separation(separation.Opening, y), at, accepted[..size], tentative[..size]) : default;
+        LayerResponse answer = Inner.Update(separation, at, accepted[..size], tentative[..size]);
         if (!touches)
             opened = answer;
         if (!still)

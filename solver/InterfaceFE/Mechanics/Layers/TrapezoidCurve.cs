@@ -5,7 +5,7 @@ namespace InterfaceFE.Mechanics.Layers;
 /// What is left out of wp and wf follows from the toughness; with both left out wp = ⅔·wf, so wf = 0.6·(2·Γ/S + w0).
 /// Source: the shape of Tvergaard and Hutchinson 1992 (from memory); area by pieces.
 /// </summary>
-public sealed class TrapezoidCurve : ITractionCurve
+public sealed class TrapezoidCurve : RisingCurve
 {
     /// <summary>Relative difference allowed between a toughness and the area of a curve that is over-determined.</summary>
     public const double ToughnessAgreement = 1e-3;
@@ -18,11 +18,8 @@ public sealed class TrapezoidCurve : ITractionCurve
     /// <param name="finalSeparation">wf [mm], above wp; NaN: left out.</param>
     /// <exception cref="ArgumentOutOfRangeException">A number is nonsense, w0 ≤ wp &lt; wf is violated, or all five numbers are given and the area differs from the toughness.</exception>
     public TrapezoidCurve(double stiffness, double strength, double toughness, double plateauEnd = double.NaN, double finalSeparation = double.NaN)
+        : base(stiffness, strength, toughness)
     {
-        Stiffness = Admissible.Positive(stiffness, nameof(stiffness));
-        Strength = Admissible.Positive(strength, nameof(strength));
-        Admissible.Positive(toughness, nameof(toughness));
-        ElasticLimit = Admissible.Positive(strength / stiffness, "strength/stiffness");
         double sum = 2 * toughness / strength + ElasticLimit;
         bool plateauGiven = !double.IsNaN(plateauEnd), finalGiven = !double.IsNaN(finalSeparation);
         if (plateauGiven)
@@ -42,50 +39,15 @@ public sealed class TrapezoidCurve : ITractionCurve
     public double PlateauEnd { get; }
 
     /// <inheritdoc/>
-    public double ElasticLimit { get; }
+    private protected override double TractionBeyond(double separation) =>
+        separation <= PlateauEnd ? Strength : Strength * ((FinalSeparation - separation) / (FinalSeparation - PlateauEnd));
 
     /// <inheritdoc/>
-    public double FinalSeparation { get; }
+    private protected override double SlopeBeyond(double separation) => separation < PlateauEnd ? 0 : -Strength / (FinalSeparation - PlateauEnd);
 
     /// <inheritdoc/>
-    public double Stiffness { get; }
-
-    /// <inheritdoc/>
-    public double Strength { get; }
-
-    /// <inheritdoc/>
-    public double Toughness { get; }
-
-    /// <inheritdoc/>
-    public double PeakSeparation => ElasticLimit;
-
-    /// <inheritdoc/>
-    public double Traction(double separation)
+    private protected override double AreaBeyond(double separation)
     {
-        if (separation >= FinalSeparation)
-            return 0;
-        if (separation <= ElasticLimit)
-            return Stiffness * separation;
-        return separation <= PlateauEnd ? Strength : Strength * ((FinalSeparation - separation) / (FinalSeparation - PlateauEnd));
-    }
-
-    /// <inheritdoc/>
-    public double Slope(double separation)
-    {
-        if (separation >= FinalSeparation)
-            return 0;
-        if (separation < ElasticLimit)
-            return Stiffness;
-        return separation < PlateauEnd ? 0 : -Strength / (FinalSeparation - PlateauEnd);
-    }
-
-    /// <inheritdoc/>
-    public double Area(double separation)
-    {
-        if (separation >= FinalSeparation)
-            return Toughness;
-        if (separation <= ElasticLimit)
-            return 0.5 * Stiffness * separation * separation;
         if (separation <= PlateauEnd)
             return Strength * (separation - 0.5 * ElasticLimit);
         double left = FinalSeparation - separation;

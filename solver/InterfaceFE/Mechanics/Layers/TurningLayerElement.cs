@@ -68,8 +68,7 @@ public static class TurningLayerElement
         tangent.Clear();
         dissipatedGradient.Clear();
         loadRate.Clear();
-        double stored = 0, dissipated = 0, dissipatedByFree = 0, damage = 0, leastDamage = 1, resultant = 0, friction = 0;
-        LayerBranches branches = LayerBranches.None;
+        LayerElementTally tally = LayerElementTally.Empty;
         for (int p = 0; p < rule.Count; p++)
         {
             ReadOnlySpan<double> shapes = rule.Shapes(p), slopes = rule.Slopes(p);
@@ -77,14 +76,7 @@ public static class TurningLayerElement
             Separation separation = new(place.Opening - freeOpening, place.Sliding);
             LayerResponse answer = law.Update(separation, at, accepted.Slice(p * stateSize, stateSize), tentative.Slice(p * stateSize, stateSize));
             double weight = rule.Weights[p] * place.Stretch * width;
-            stored += weight * answer.Stored;
-            dissipated += weight * answer.Dissipated;
-            dissipatedByFree -= weight * answer.DissipatedByOpening;
-            resultant += weight * answer.Peel;
-            friction += weight * answer.SpentInFriction;
-            damage = Math.Max(damage, answer.Damage);
-            leastDamage = Math.Min(leastDamage, answer.Damage);
-            branches |= (LayerBranches)(1 << (int)answer.Branch) | (separation.Opening < 0 ? LayerBranches.Pressed : 0);
+            tally.Take(weight, answer, separation);
             // Where nothing is carried any more the frame may be anything: faces folded back on each other have none.
             if (answer is { Peel: 0, Shear: 0, PeelByOpening: 0, PeelBySliding: 0, ShearByOpening: 0, ShearBySliding: 0 })
                 continue;
@@ -100,7 +92,7 @@ public static class TurningLayerElement
             place.SecondChanges(kinematics, shapes, slopes, weight * answer.Peel, weight * answer.Shear, geometric);
             AddTurning(tangent, turn, geometric, -weight * (answer.Peel * place.Across + answer.Shear * place.Along));
         }
-        return new LayerElementSums(stored, dissipated, dissipatedByFree, damage, leastDamage, branches) { PeelResultant = resultant, SpentInFriction = friction };
+        return tally.Sums;
     }
 
     /// <summary>Opening and sliding at a station, and how the layer stands there.</summary>
