@@ -29,7 +29,6 @@ internal sealed class TangentFactor
     private readonly double[] _skewMatrix = new double[MostInBorder * MostInBorder];
     private GeneralFactor? _general;
     private double[] _tangentSolution = [];
-    private int _skewCount;
     private bool _isSkewListed = true;
 
     /// <summary>Makes room; tangents are to be stored before anything is factored.</summary>
@@ -87,7 +86,6 @@ internal sealed class TangentFactor
         if (skew != _isSkew[slot])
         {
             _isSkew[slot] = skew;
-            _skewCount += skew ? 1 : -1;
             _isSkewListed = false;
         }
         _general?.Replace(slot, stored);
@@ -108,7 +106,7 @@ internal sealed class TangentFactor
     public void Factor()
     {
         ListSkew();
-        if (_skewCount == 0 || _skewUnknowns.Count <= MostInBorder)
+        if (_skewUnknowns.Count <= MostInBorder)
         {
             FactorSymmetric();
             return;
@@ -141,7 +139,7 @@ internal sealed class TangentFactor
     /// <summary>Solves K x = b; on entry x has the values of held unknowns.</summary>
     public void Solve(ReadOnlySpan<double> b, Span<double> x, ReadOnlySpan<int> held)
     {
-        if (_skewCount == 0)
+        if (_skewUnknowns.Count == 0)
             _symmetric.Solve(b, x, held);
         else if (_skewUnknowns.Count > MostInBorder)
             _general!.Solve(b, x, held);

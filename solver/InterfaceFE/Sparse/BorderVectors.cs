@@ -143,9 +143,7 @@ internal sealed unsafe class BorderVectors
     {
         int from = number * Lanes, end = Math.Min(Count, from + Lanes), interior = _plan.InteriorUnknownCount;
         Array.Clear(_isMarked);
-        foreach (int unknown in System.Runtime.InteropServices.CollectionsMarshal.AsSpan(_unknowns)[_start[from].._start[end]])
-            for (int front = _plan.FrontOf[_plan.NewOf[unknown]]; front >= 0 && front < _plan.FrontCount && !_isMarked[front]; front = _plan.Parent[front])
-                _isMarked[front] = true;
+        _plan.MarkPath(System.Runtime.InteropServices.CollectionsMarshal.AsSpan(_unknowns)[_start[from].._start[end]], _isMarked);
         bundle.Mark(_plan, _isMarked);
         double* work = _work.Start;
         for (int f = 0; f < bundle.FrontCount; f++)

@@ -277,13 +277,6 @@ public sealed unsafe class BorderedFactor
             x[_plan.OldOf[i]] = work[i];
     }
 
-    private void ClearHeld(Span<double> vector)
-    {
-        for (int i = 0; i < _isHeld.Length; i++)
-            if (_isHeld[i])
-                vector[_plan.OldOf[_plan.InteriorUnknownCount + i]] = 0;
-    }
-
     /// <summary>Adds the border's products to those of the matrix; with their magnitudes where room for them is given.</summary>
     /// <param name="x">Unknowns, then those of the border.</param>
     /// <param name="product">Products by row, the border's rows last; added to, times <paramref name="sign"/>.</param>
@@ -334,7 +327,7 @@ public sealed unsafe class BorderedFactor
                 size[i] = Math.Abs(b[i]);
             }
             border.AddBorder(x, residual, size, -1);
-            border.ClearHeld(residual);
+            border._plan.ClearHeld(residual, border._isHeld);
         }
 
         public void Multiply(ReadOnlySpan<double> x, Span<double> product)
@@ -342,7 +335,7 @@ public sealed unsafe class BorderedFactor
             border._factor.Multiply(x[..Interior], product[..Interior]);
             product[Interior..].Clear();
             border.AddBorder(x, product, [], 1);
-            border.ClearHeld(product);
+            border._plan.ClearHeld(product, border._isHeld);
         }
 
         public void Correct(ReadOnlySpan<double> b, Span<double> x)

@@ -230,7 +230,8 @@ internal sealed unsafe class FrontWorker
             {
                 growth = ColumnGrowth(front, p, q, stride, k0, k, width, computed);
                 Mirror(p, stride, k + 1);
-                Mirror(q, stride, k + 1);
+                if (halves == 2)
+                    Mirror(q, stride, k + 1);
                 noise = _look.Noise(front, k0 + k, size);
                 _store.HasLooked[front] = true;
             }
@@ -261,7 +262,8 @@ internal sealed unsafe class FrontWorker
             }
         }
         Mirror(p, stride, width);
-        Mirror(q, stride, width);
+        if (halves == 2)
+            Mirror(q, stride, width);
     }
 
     /// <summary>Copies the lower triangle of a block's first columns above the diagonal, where substitutions look for it.</summary>

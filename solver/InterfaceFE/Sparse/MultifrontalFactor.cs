@@ -11,7 +11,6 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     // Growth from which solves are refined. Definite matrices stay at 2, whatever the contrast of stiffness.
     private const double RefinedGrowth = 1e2;
 
-    private readonly bool _isSymmetric;
     private readonly SlotValues _values;
     private readonly FrontFactor _fronts;
     private readonly FrontSolver _solver;
@@ -30,7 +29,6 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     {
         ArgumentNullException.ThrowIfNull(plan);
         Plan = plan;
-        _isSymmetric = isSymmetric;
         _values = new SlotValues(plan, isSymmetric);
         _fronts = new FrontFactor(plan, _values, isSymmetric);
         _solver = new FrontSolver(plan, _fronts.Store);
@@ -90,10 +88,10 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
     /// <summary>Substitution through the fronts.</summary>
     internal FrontSolver Substitution => _solver;
 
-    private int Halves => _isSymmetric ? 1 : 2;
+    private int Halves => _fronts.Store.Halves;
 
     /// <summary>Whether solves are refined with the true matrix.</summary>
-    internal bool IsRefined => !_isSymmetric || LiftedPivots > 0 || Growth > RefinedGrowth;
+    internal bool IsRefined => Halves == 2 || LiftedPivots > 0 || Growth > RefinedGrowth;
 
     /// <inheritdoc/>
     /// <exception cref="ArgumentOutOfRangeException">No such slot.</exception>
@@ -153,7 +151,7 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         DenseRoot root = RootFor(heldRootUnknowns);
         RefinementSteps = 0;
         BackwardError = double.NaN;
-        SolveWith(root, b, x);
+        SolveWith(root, b, x, Plan.Whole);
         if (IsRefined && !_isStale)
             (RefinementSteps, BackwardError) = _refinement.Run(b, x);
     }
@@ -184,19 +182,7 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         }
         RefinementSteps = 0;
         BackwardError = double.NaN;
-        int interior = Plan.InteriorUnknownCount;
-        double* work = _x.Start;
-        foreach (int front in wanted.Fronts)
-            for (int i = Plan.First[front]; i < Plan.First[front + 1]; i++)
-                work[i] = b[Plan.OldOf[i]];
-        for (int i = interior; i < Size; i++)
-            work[i] = b[Plan.OldOf[i]];
-        SolvePlaced(root, x, wanted);
-        foreach (int front in wanted.Fronts)
-            for (int i = Plan.First[front]; i < Plan.First[front + 1]; i++)
-                x[Plan.OldOf[i]] = work[i];
-        for (int i = interior; i < Size; i++)
-            x[Plan.OldOf[i]] = work[i];
+        SolveWith(root, b, x, wanted);
     }
 
     /// <summary>
@@ -306,32 +292,40 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         foreach (DenseRoot? root in _roots)
             if (root is not null && root.Serves(_isHeld))
             {
-                SolveWith(root, b, x);
+                SolveWith(root, b, x, Plan.Whole);
                 return;
             }
     }
 
-    private void SolveWith(DenseRoot root, ReadOnlySpan<double> b, Span<double> x)
-    {
-        double* work = _x.Start;
-        for (int i = 0; i < Size; i++)
-            work[i] = b[Plan.OldOf[i]];
-        SolvePlaced(root, x, Plan.Whole);
-        for (int i = 0; i < Size; i++)
-            x[Plan.OldOf[i]] = work[i];
-    }
-
-    /// <summary>Solves for the right side in the work vector; held values come from x.</summary>
-    private void SolvePlaced(DenseRoot root, ReadOnlySpan<double> x, FrontPath path)
+    /// <summary>Solves along a path without refinement; held values come from x.</summary>
+    private void SolveWith(DenseRoot root, ReadOnlySpan<double> b, Span<double> x, FrontPath path)
     {
         int interior = Plan.InteriorUnknownCount;
         double* work = _x.Start;
+        foreach (int front in path.Fronts)
+            Take(Plan.First[front], Plan.First[front + 1], b);
+        Take(interior, Size, b);
         _solver.Forward(work, path);
         for (int i = 0; i < _isHeld.Length; i++)
             if (_isHeld[i])
                 work[interior + i] = x[Plan.OldOf[interior + i]];
         root.Solve(_fronts, Halves, work + interior);
         _solver.Backward(work, path);
+        foreach (int front in path.Fronts)
+            Give(Plan.First[front], Plan.First[front + 1], x);
+        Give(interior, Size, x);
+    }
+
+    private void Take(int first, int end, ReadOnlySpan<double> b)
+    {
+        for (int i = first; i < end; i++)
+            _x.Start[i] = b[Plan.OldOf[i]];
+    }
+
+    private void Give(int first, int end, Span<double> x)
+    {
+        for (int i = first; i < end; i++)
+            x[Plan.OldOf[i]] = _x.Start[i];
     }
 
     private void SolveLanes(DenseRoot root, ReadOnlySpan<double> b, Span<double> x, int count, FrontPath path)
@@ -388,13 +382,6 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
             : new FactorOutcome(FactorStatus.ZeroPivot, Plan.OldOf[tally.FirstZero], -1, smallest);
     }
 
-    private void ClearHeld(Span<double> vector)
-    {
-        for (int i = 0; i < _isHeld.Length; i++)
-            if (_isHeld[i])
-                vector[Plan.OldOf[Plan.InteriorUnknownCount + i]] = 0;
-    }
-
     /// <summary>The matrix for the held choice of the present solve.</summary>
     private sealed class Unbordered(MultifrontalFactor factor) : IRefinable
     {
@@ -403,13 +390,13 @@ public abstract unsafe class MultifrontalFactor : IWorkingFactor
         public void Residual(ReadOnlySpan<double> b, ReadOnlySpan<double> x, Span<double> residual, Span<double> size)
         {
             factor._values.Residual(b, x, residual, size);
-            factor.ClearHeld(residual);
+            factor.Plan.ClearHeld(residual, factor._isHeld);
         }
 
         public void Multiply(ReadOnlySpan<double> x, Span<double> product)
         {
             factor._values.Multiply(x, product);
-            factor.ClearHeld(product);
+            factor.Plan.ClearHeld(product, factor._isHeld);
         }
 
         public void Correct(ReadOnlySpan<double> b, Span<double> x) => factor.SolveOnce(b, x);

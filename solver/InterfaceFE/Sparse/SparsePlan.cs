@@ -161,22 +161,15 @@ public sealed class SparsePlan
     /// <exception cref="ArgumentOutOfRangeException">No such unknown.</exception>
     public FrontPath PathOf(ReadOnlySpan<int> unknowns)
     {
-        var isOn = new bool[FrontCount + 1];
-        var fronts = new List<int>();
-        int count = RootUnknownCount;
         foreach (int unknown in unknowns)
         {
             ArgumentOutOfRangeException.ThrowIfNegative(unknown, nameof(unknowns));
             ArgumentOutOfRangeException.ThrowIfGreaterThanOrEqual(unknown, UnknownCount, nameof(unknowns));
-            for (int s = FrontOf[NewOf[unknown]]; s >= 0 && s < FrontCount && !isOn[s]; s = Parent[s])
-            {
-                isOn[s] = true;
-                fronts.Add(s);
-                count += Columns(s);
-            }
         }
-        fronts.Sort();
-        return new FrontPath(fronts.ToArray(), count);
+        var isOn = new bool[FrontCount];
+        MarkPath(unknowns, isOn);
+        int[] fronts = [.. Enumerable.Range(0, FrontCount).Where(s => isOn[s])];
+        return new FrontPath(fronts, RootUnknownCount + fronts.Sum(Columns));
     }
 
     /// <summary>Floating-point operations of one factorisation of the fronts on a path.</summary>
@@ -187,6 +180,22 @@ public sealed class SparsePlan
         foreach (int s in path.Fronts)
             sum += Work[s];
         return sum;
+    }
+
+    /// <summary>Marks the fronts from some unknowns to the root.</summary>
+    internal void MarkPath(ReadOnlySpan<int> unknowns, Span<bool> isOn)
+    {
+        foreach (int unknown in unknowns)
+            for (int s = FrontOf[NewOf[unknown]]; s >= 0 && s < FrontCount && !isOn[s]; s = Parent[s])
+                isOn[s] = true;
+    }
+
+    /// <summary>Zeroes the entries of held root unknowns, which are told by their order in the dense block.</summary>
+    internal void ClearHeld(Span<double> vector, ReadOnlySpan<bool> isHeld)
+    {
+        for (int i = 0; i < isHeld.Length; i++)
+            if (isHeld[i])
+                vector[OldOf[InteriorUnknownCount + i]] = 0;
     }
 
     /// <summary>Number of pivots of a front.</summary>
